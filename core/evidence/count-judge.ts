@@ -1,0 +1,91 @@
+import type { Assessment } from './assessment.ts';
+import type { EvidenceState } from './evidence-state.ts';
+import type { Thresholds } from './thresholds.ts';
+
+/** The thresholds one guarantee on counts is judged by. */
+export interface JudgeThresholds {
+  /** Of the bound against the guarantee line. */
+  readonly line: Thresholds;
+  /** Of the opposite bound against the line, at the violation rule's level. */
+  readonly opposite: Thresholds;
+  /** Of the bound against the line moved in by the crossing rule's return distance. */
+  readonly backFromCrossing: Thresholds;
+  /** Of the opposite bound against the line moved in by the violation rule's return distance. */
+  readonly backFromViolation: Thresholds;
+  /**
+   * The line as a count per size: an estimate at or above it is never demonstrated, one at or below it never
+   * violated, so that a very bad line needs no threshold a count. 0 where this does not hold.
+   */
+  readonly rate: number;
+}
+
+/**
+ * Judges 'count nonconforming in size inspected' against a guarantee line by comparing whole counts.
+ * `ripe` says whether the window may call a violation: full, or growing with no size of its own.
+ */
+export class CountJudge {
+  readonly #by: JudgeThresholds;
+  #sureCount = 0;
+  #sureSize = 0;
+
+  constructor(by: JudgeThresholds) {
+    this.#by = by;
+  }
+
+  state(size: number, count: number, ripe: boolean): EvidenceState {
+    if (!Number.isFinite(size) || !Number.isFinite(count)) return 'unknown';
+    if (size < this.#by.line.sizeToDemonstrate(0)) return 'gathering';
+    if (this.#demonstrated(this.#by.line, size, count)) return 'demonstrated';
+    return ripe && this.#violated(size, count) ? 'violated' : 'undecided';
+  }
+
+  assess(size: number, count: number, ripe: boolean): Assessment {
+    const state = this.state(size, count, ripe);
+    return {
+      state,
+      backFromCrossing: state === 'demonstrated' && this.#demonstrated(this.#by.backFromCrossing, size, count),
+      backFromViolation: state !== 'violated' && (count <= size * this.#by.rate || size > this.#by.backFromViolation.sizeViolated(count)),
+    };
+  }
+
+  /**
+   * A size above `size` before which, with no further nonconforming unit, no assessment changes; it may be too
+   * early (asking again then is harmless), never too late. Infinity where nothing is left to change.
+   */
+  nextSize(size: number, count: number): number {
+    const { line, backFromCrossing, backFromViolation, rate } = this.#by;
+    let next = Infinity;
+    const consider = (candidate: number): void => {
+      if (candidate > size && candidate < next) next = candidate;
+    };
+    consider(line.sizeToDemonstrate(0));
+    const hopeless = rate > 0 && size < count / rate;
+    if (hopeless) consider(Math.max(size + 1, Math.floor(count / rate)));
+    else {
+      consider(line.sizeToDemonstrate(count));
+      consider(backFromCrossing.sizeToDemonstrate(count));
+    }
+    if (count > size * rate) {
+      const sure = count >= this.#sureCount && size <= this.#sureSize;
+      consider((sure ? this.#sureSize : this.#by.opposite.sizeViolated(count)) + 1);
+      if (!sure) consider(backFromViolation.sizeViolated(count) + 1);
+    }
+    return next;
+  }
+
+  #demonstrated(by: Thresholds, size: number, count: number): boolean {
+    if (this.#by.rate > 0 && count >= size * this.#by.rate) return false;
+    return size >= by.sizeToDemonstrate(count);
+  }
+
+  /** More nonconforming units in fewer inspected are no better: one known violation answers for all beyond it. */
+  #violated(size: number, count: number): boolean {
+    if (count <= size * this.#by.rate) return false;
+    if (count >= this.#sureCount && size <= this.#sureSize) return true;
+    const largest = this.#by.opposite.sizeViolated(count);
+    if (size > largest) return false;
+    this.#sureCount = count;
+    this.#sureSize = largest;
+    return true;
+  }
+}
