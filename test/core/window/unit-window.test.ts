@@ -1,0 +1,214 @@
+import fc from 'fast-check';
+import { describe, expect, it } from 'vitest';
+import { UnitWindow, type UnitWindowSettings } from '../../../core/window/unit-window.ts';
+import { UnitOracle, unitsOf } from './unit-oracle.ts';
+import { SourceNumbers, steps, type SentRecord, type Step } from './window-steps.ts';
+
+/** Admits numbered records one by one, each announced with the following ones of the same size. */
+function admit(window: UnitWindow, records: readonly SentRecord[]): void {
+  for (const { source, sequence, of, nonconforming } of records) {
+    window.admitRun(source, sequence, 1, of);
+    window.admitConforming(of - nonconforming);
+    for (let k = 0; k < nonconforming; k += 1) window.admitNonconforming();
+  }
+}
+
+function late(window: UnitWindow, { source, sequence, of, nonconforming }: SentRecord): { inspected: number; nonconforming: number } {
+  const places = Array.from({ length: nonconforming }, (_, k) => of - nonconforming + k);
+  return window.insertLate({ source, sequence, records: 1, unitsPerRecord: of, places });
+}
+
+/** Runs the steps on the window and the oracle; `agree` is called after each. */
+function run(settings: UnitWindowSettings, all: readonly Step[], agree: (window: UnitWindow, oracle: UnitOracle) => void): void {
+  let window = new UnitWindow(settings);
+  const oracle = new UnitOracle(settings.size ?? Infinity);
+  const numbers = new SourceNumbers();
+  for (const step of all) {
+    switch (step.kind) {
+      case 'frame': {
+        const records = numbers.number(step.source, step.records);
+        numbers.sent.push(...records);
+        admit(window, records);
+        for (const { source, sequence, of, nonconforming } of records) oracle.admit(unitsOf(source, sequence, of, nonconforming));
+        break;
+      }
+      case 'hole':
+        numbers.holes.push(numbers.number(step.source, step.records));
+        break;
+      case 'fill': {
+        const hole = numbers.holes.splice(step.choice % Math.max(1, numbers.holes.length), 1)[0] ?? [];
+        numbers.sent.push(...hole);
+        for (const record of hole) {
+          const kept = oracle.late(unitsOf(record.source, record.sequence, record.of, record.nonconforming));
+          expect(late(window, record)).toEqual({ inspected: kept.length, nonconforming: kept.filter((unit) => unit.nonconforming).length });
+        }
+        break;
+      }
+      case 'correct': {
+        const record = numbers.sent[step.choice % Math.max(1, numbers.sent.length)];
+        if (record === undefined) break;
+        const size = oracle.units.find((unit) => unit.source === record.source && unit.sequence === record.sequence)?.of ?? record.of;
+        const nonconforming = Math.round(step.share * (step.resize ?? size));
+        const found = window.correct(record.source, record.sequence, nonconforming, step.resize);
+        if (found === 'not here' && settings.reach !== undefined) break;
+        expect(found).toEqual(oracle.correct(record.source, record.sequence, nonconforming, step.resize));
+        break;
+      }
+      case 'clear':
+        window.clear(numbers.newest);
+        oracle.clear(numbers.newest);
+        break;
+      case 'store': {
+        const stored = structuredClone(window.snapshot());
+        window = new UnitWindow(settings);
+        window.restore(stored);
+        expect(window.snapshot()).toEqual(stored);
+        break;
+      }
+    }
+    agree(window, oracle);
+  }
+}
+
+function agreeInAll(window: UnitWindow, oracle: UnitOracle): void {
+  expect(window.inspected).toBe(oracle.units.length);
+  expect(window.nonconforming).toBe(oracle.nonconforming);
+  expect(window.newestNonconforming(Infinity)).toEqual(oracle.strip());
+  expect(window.ranges()).toEqual(oracle.ranges());
+}
+
+describe('a unit window', () => {
+  it('of the last N units equals a list of units, whatever comes', () => {
+    fc.assert(
+      fc.property(fc.integer({ min: 1, max: 40 }), steps, (size, all) => run({ size }, all, agreeInAll)),
+      { seed: 20_260_101, numRuns: 1_500 },
+    );
+  });
+
+  it('that grows until it is cleared equals a list of units, whatever comes', () => {
+    fc.assert(fc.property(steps, (all) => run({}, all, agreeInAll)), { seed: 20_260_102, numRuns: 1_500 });
+  });
+
+  it('keeps exact counts beyond its reach, and corrects only what it still knows', () => {
+    fc.assert(
+      fc.property(fc.integer({ min: 1, max: 6 }), steps, (reach, all) =>
+        run({ reach }, all, (window, oracle) => {
+          expect(window.inspected).toBe(oracle.units.length);
+          expect(window.nonconforming).toBe(oracle.nonconforming);
+          expect(window.newestNonconforming(Infinity).length).toBeLessThanOrEqual(reach);
+        }),
+      ),
+      { seed: 20_260_103, numRuns: 1_500 },
+    );
+  });
+
+  it('is the same however the same units are split into runs', () => {
+    const units = fc.array(fc.boolean(), { minLength: 1, maxLength: 60 });
+    const cuts = fc.array(fc.integer({ min: 1, max: 9 }), { minLength: 60, maxLength: 60 });
+    const size = fc.option(fc.integer({ min: 1, max: 30 }), { nil: undefined });
+    fc.assert(
+      fc.property(units, cuts, cuts, size, fc.integer({ min: 1, max: 30 }), (bad, runs, stretches, last, reach) => {
+        const settings = last === undefined ? { reach } : { size: last };
+        const singly = new UnitWindow(settings);
+        bad.forEach((nonconforming, k) => {
+          singly.admitRun(0, k + 1, 1);
+          if (nonconforming) singly.admitNonconforming();
+          else singly.admitConforming(1);
+        });
+        const split = new UnitWindow(settings);
+        for (let at = 0, run = 0, stretch = 0; at < bad.length; run += 1) {
+          const end = Math.min(bad.length, at + runs[run]!);
+          split.admitRun(0, at + 1, end - at);
+          while (at < end) {
+            if (bad[at]) {
+              split.admitNonconforming();
+              at += 1;
+              continue;
+            }
+            const nextBad = bad.indexOf(true, at);
+            const conforming = Math.min(stretches[(stretch += 1) % 60]!, (nextBad < 0 || nextBad > end ? end : nextBad) - at);
+            split.admitConforming(conforming);
+            at += conforming;
+          }
+        }
+        expect(split.snapshot()).toEqual(singly.snapshot());
+      }),
+      { seed: 20_260_104, numRuns: 1_000 },
+    );
+  });
+
+  it('says after exactly how many units each nonconforming one leaves', () => {
+    const window = new UnitWindow({ size: 10 });
+    window.admitRun(0, 1, 30);
+    window.admitConforming(2);
+    window.admitNonconforming();
+    window.admitConforming(1);
+    window.admitNonconforming();
+    expect([window.nextDeparture(), window.departureOf(2), window.departureOf(3)]).toEqual([8, 10, Infinity]);
+    window.admitConforming(7);
+    expect([window.nonconforming, window.full]).toEqual([2, true]);
+    window.admitConforming(1);
+    expect([window.nonconforming, window.nextDeparture()]).toEqual([1, 2]);
+    window.admitConforming(17);
+    expect([window.nonconforming, window.nextDeparture(), window.inspected]).toEqual([0, Infinity, 10]);
+  });
+
+  it('never tells of a departure while it grows', () => {
+    const window = new UnitWindow();
+    window.admitRun(0, 1, 1);
+    window.admitNonconforming();
+    expect([window.nextDeparture(), window.full]).toEqual([Infinity, false]);
+  });
+
+  it('does not count late records from before a restart', () => {
+    const window = new UnitWindow({ size: 10 });
+    window.admitRun(0, 1, 2);
+    window.admitConforming(2);
+    window.clear([[0, 8]]);
+    expect(window.insertLate({ source: 0, sequence: 5, records: 2, unitsPerRecord: 1, places: [0] })).toEqual({ inspected: 0, nonconforming: 0 });
+    expect(window.insertLate({ source: 0, sequence: 9, records: 2, unitsPerRecord: 1, places: [1] })).toEqual({ inspected: 2, nonconforming: 1 });
+    expect(window.newestNonconforming(1)).toEqual([{ ago: 0, record: { source: 0, sequence: 10 } }]);
+  });
+
+  it('lets the oldest units go when it is restored into a smaller window', () => {
+    const window = new UnitWindow({ size: 10 });
+    window.admitRun(0, 1, 9);
+    window.admitNonconforming();
+    window.admitConforming(8);
+    const smaller = new UnitWindow({ size: 5 });
+    smaller.restore(window.snapshot());
+    expect([smaller.inspected, smaller.nonconforming]).toEqual([5, 0]);
+    expect(smaller.ranges()).toEqual([{ source: 0, first: 5, last: 9 }]);
+  });
+
+  it('keeps 10,000,000 units at 100 per million in less than 32 KiB', () => {
+    const window = new UnitWindow({ size: 10_000_000 });
+    let [seed, most, sequence] = [7, 0, 1];
+    for (let part = 0; part < 40_000; part += 1) {
+      window.admitRun(0, sequence, 1_000);
+      sequence += 1_000;
+      seed = (seed * 48_271) % 2_147_483_647;
+      const bad = seed % 10 === 0 ? 1 : 0;
+      window.admitConforming(1_000 - bad);
+      if (bad === 1) window.admitNonconforming();
+      most = Math.max(most, window.byteLength);
+    }
+    expect(window.inspected).toBe(10_000_000);
+    expect(window.nonconforming).toBeGreaterThan(900);
+    expect(most).toBeLessThan(32 * 1_024);
+  });
+
+  it('refuses what it cannot mean', () => {
+    expect(() => new UnitWindow({ size: 0 })).toThrow('size must be a whole number');
+    expect(() => new UnitWindow({ reach: 1.5 })).toThrow('reach must be a whole number');
+    expect(() => new UnitWindow({ size: Number.NaN })).toThrow('size must be a whole number');
+    const window = new UnitWindow({ size: 3 });
+    window.admitRun(0, 1, 2);
+    expect(() => window.clear()).toThrow('between announced records');
+    expect(() => window.insertLate({ source: 1, sequence: 1, records: 1, unitsPerRecord: 1, places: [] })).toThrow('between announced records');
+    window.admitConforming(2);
+    expect(() => window.correct(0, 1, 2)).toThrow('nonconforming must be 0 to 1');
+    expect(() => window.correct(0, 1, Number.NaN)).toThrow('nonconforming must be 0 to 1');
+    expect(() => window.admitConforming(1)).toThrow('fewer announced');
+  });
+});
