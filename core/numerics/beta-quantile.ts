@@ -36,8 +36,8 @@ function smallerTailOdds(a: number, b: number, tail: number): number {
   return rootOfTail(curve, Math.log(tail), oddsStart(a, b, tail));
 }
 
-/** Odds from the gamma quantile that the smaller parameter suggests (L. N. Bolshev 1963, memory). */
-function oddsStart(a: number, b: number, tail: number): number {
+/** A first value for `betaOdds` from the gamma quantile of the smaller parameter (L. N. Bolshev 1963, memory). */
+export function oddsStart(a: number, b: number, tail: number): number {
   if (a <= b) {
     const mean = gammaLowerStart(a, tail);
     return (2 * mean) / Math.max(a + 2 * b - 1 - mean, b / 2);

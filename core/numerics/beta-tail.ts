@@ -17,7 +17,7 @@ import { NoConvergence } from './no-convergence.ts';
 export function betaTailRatio(a: number, b: number, p: number, q: number): number {
   const least = a < b ? a : b;
   if (Number.isInteger(b)) return least < 800 ? sumDownwards(a, b, p, q) : integrated(a, b, p, q);
-  return least < 60 ? continued(a, b, p, q) : integrated(a, b, p, q);
+  return least < 200 ? continued(a, b, p, q) : integrated(a, b, p, q);
 }
 
 function sumDownwards(a: number, b: number, p: number, q: number): number {

@@ -1,33 +1,75 @@
 import { demonstrationUnits } from '../../core/bound/critical-count.ts';
+import { jeffreysLower, jeffreysUpper } from '../../core/bound/jeffreys.ts';
+import { midPLower, midPUpper } from '../../core/bound/mid-p.ts';
 import { fractionLower, fractionUpper } from '../../core/bound/nonconforming-fraction.ts';
-import type { GridEvaluator, Inputs, PublishedEvaluator, VectorEvaluator } from './evaluator.ts';
+import { jeffreysRateLower, jeffreysRateUpper, rateLower, rateUpper } from '../../core/bound/rate.ts';
+import { stoppedFractionLower, stoppedFractionUpper } from '../../core/bound/stopped-sampling.ts';
+import { wilsonLower, wilsonUpper } from '../../core/bound/wilson.ts';
+import type { Tail } from '../../core/units.ts';
+import type { GridEvaluator, Inputs, PublishedEvaluator } from './evaluator.ts';
 import { bySide, numberOf, tailIn } from './inputs.ts';
 
-const exactFraction = (row: Inputs): number => {
+type SampleBound = (nonconforming: number, inspected: number, tail: Tail) => number;
+type CountBound = (count: number, exposure: number, tail: Tail) => number;
+
+const ofSample = (lower: SampleBound, upper: SampleBound) => (row: Inputs): number => {
   const [x, n, tail] = [numberOf(row, 'nonconforming'), numberOf(row, 'n'), tailIn(row)];
-  return bySide(row, { lower: () => fractionLower(x, n, tail), upper: () => fractionUpper(x, n, tail) });
+  return bySide(row, { lower: () => lower(x, n, tail), upper: () => upper(x, n, tail) });
 };
 
-const units = (row: Inputs): number =>
+const ofCount = (lower: CountBound, upper: CountBound) => (row: Inputs): number => {
+  const exposure = 'exposure' in row ? numberOf(row, 'exposure') : 1;
+  const [count, tail] = [numberOf(row, 'count'), tailIn(row)];
+  return bySide(row, { lower: () => lower(count, exposure, tail), upper: () => upper(count, exposure, tail) });
+};
+
+const exact = ofSample(fractionLower, fractionUpper);
+const jeffreys = ofSample(jeffreysLower, jeffreysUpper);
+const midP = ofSample(midPLower, midPUpper);
+const wilson = ofSample(wilsonLower, wilsonUpper);
+const garwood = ofCount(rateLower, rateUpper);
+
+const unitsToDemonstrate = (row: Inputs): number =>
   demonstrationUnits(numberOf(row, 'nonconforming'), numberOf(row, 'rate'), tailIn(row));
 
+const bound = (quantity: string, compute: (row: Inputs) => number): GridEvaluator =>
+  ({ quantity, answer: 'bound', exact: false, compute });
+
 export const attributeGrids: readonly GridEvaluator[] = [
-  {
-    quantity: 'exact (Clopper-Pearson) one-sided bound on a binomial proportion',
-    answer: 'bound',
-    exact: false,
-    compute: exactFraction,
-  },
+  bound('exact (Clopper-Pearson) one-sided bound on a binomial proportion', exact),
+  bound('mid-P one-sided bound on a binomial proportion', midP),
+  bound('Wilson score one-sided bound on a binomial proportion, no continuity correction', wilson),
+  bound('one-sided quantile of the Jeffreys posterior Beta(x+1/2, n-x+1/2)', jeffreys),
+  bound('exact (Garwood) one-sided bound on a Poisson mean, exposure 1', garwood),
   {
     quantity: 'smallest n with P(X<=nonconforming | n, rate) <= 1-confidence',
     answer: 'n',
     exact: true,
-    compute: units,
+    compute: unitsToDemonstrate,
   },
 ];
 
-export const attributePublished: readonly PublishedEvaluator[] = [
-  { quantity: 'exact (Clopper-Pearson) one-sided bound on a proportion', compute: exactFraction },
-];
+/** 'percent' and 'times 13500000' at the end of a quantity, or '(percent)' in it. */
+const scaled = (inputs: Inputs, quantity: string): number => {
+  const times = /, times (\d+)$/.exec(quantity);
+  return exact(inputs) * (times ? Number(times[1]) : 100);
+};
 
-export const attributeVectors: readonly VectorEvaluator[] = [];
+export const attributePublished: readonly PublishedEvaluator[] = [
+  { quantity: 'exact (Clopper-Pearson) one-sided bound on a proportion', compute: exact },
+  { quantity: /^exact \(Clopper-Pearson\) one-sided bound on a proportion, (percent|times \d+)$/, compute: scaled },
+  { quantity: /^(limiting|standard) quality: fraction \(percent\) .* Clopper-Pearson/, compute: scaled },
+  { quantity: 'one-sided Jeffreys posterior quantile of a proportion, Beta(x+1/2, n-x+1/2)', compute: jeffreys },
+  { quantity: 'Wilson score one-sided bound on a proportion', compute: wilson },
+  { quantity: 'mid-P one-sided bound on a proportion', compute: midP },
+  {
+    quantity: 'exact one-sided bound on a proportion, sampling stopped at the x-th event (negative binomial)',
+    compute: ofSample(stoppedFractionLower, stoppedFractionUpper),
+  },
+  { quantity: 'exact (Garwood) one-sided bound on a Poisson mean', compute: garwood },
+  {
+    quantity: 'one-sided Jeffreys posterior quantile of a Poisson rate, Gamma(x+1/2)',
+    compute: ofCount(jeffreysRateLower, jeffreysRateUpper),
+  },
+  { quantity: /^smallest n with P\(X<=nonconforming \| n, rate\) <= 1-confidence( \(Wilks\))?$/, compute: unitsToDemonstrate },
+];

@@ -1,11 +1,11 @@
-import { attributeGrids, attributePublished, attributeVectors } from './attribute.ts';
+import { attributeGrids, attributePublished } from './attribute.ts';
 import type { GridEvaluator, PublishedEvaluator, VectorEvaluator } from './evaluator.ts';
 import { measurementGrids, measurementPublished } from './measurements.ts';
 import { sequentialVectors } from './sequential.ts';
 
 const grids = [...attributeGrids, ...measurementGrids];
 const published = [...attributePublished, ...measurementPublished];
-const vectors = [...attributeVectors, ...sequentialVectors];
+const vectors = [...sequentialVectors];
 
 export function gridEvaluatorOf(quantity: string): GridEvaluator | undefined {
   return grids.find((evaluator) => evaluator.quantity === quantity);
