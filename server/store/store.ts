@@ -87,8 +87,8 @@ export interface Store {
   /** Bytes given to `commit` that are not durable yet: pause the sockets above a mark of your choice. */
   readonly waitingBytes: number;
   /**
-   * Makes a group durable; resolves after it is. Groups become durable in the order of the calls. Bodies are copied
-   * before it returns.
+   * Makes a group durable; resolves after it is. Groups become durable in the order of the calls. Bodies must not
+   * change before it resolves.
    * @throws StoreError; from the first failure on every commit fails and the condition is 'refused'
    */
   commit(group: Group): Promise<void>;

@@ -1,0 +1,56 @@
+import type Database from 'better-sqlite3';
+import { groupWriter } from './group-writer.ts';
+import type { PackedGroup } from './packed-group.ts';
+import { writeSnapshot } from './snapshot-table.ts';
+import { addSource, noteUse, revokeSource, rotateSource } from './source-table.ts';
+import type { Source, TokenGrant } from './source-register.ts';
+import { storeErrorOf } from './sqlite-fault.ts';
+import { StoreError } from './store-error.ts';
+import type { Snapshot } from './store.ts';
+import type { Calls } from './worker-answers.ts';
+
+/** What the committing thread can be asked. A type, not an interface: it has to be a Calls. */
+export type CommitCalls = {
+  readonly commit: (group: PackedGroup) => void;
+  readonly keepSnapshot: (snapshot: Snapshot) => void;
+  readonly addSource: (source: { readonly name: string; readonly stations: readonly string[]; readonly at: number }) => TokenGrant;
+  readonly rotateSource: (name: string) => TokenGrant;
+  readonly revokeSource: (source: { readonly name: string; readonly at: number }) => Source;
+  readonly noteUse: (use: { readonly id: number; readonly at: number }) => void;
+  readonly backup: (path: string) => Promise<void>;
+  readonly close: (nothing: undefined) => void;
+};
+
+/** @param close ends the thread's part: database, lock, port */
+export function commitCalls(database: Database.Database, close: () => void): CommitCalls & Calls {
+  return {
+    ...journalCalls(database),
+    addSource: ({ name, stations, at }) => addSource(database, name, stations, at),
+    rotateSource: (name) => rotateSource(database, name),
+    revokeSource: ({ name, at }) => revokeSource(database, name, at),
+    noteUse: ({ id, at }) => noteUse(database, id, at),
+    backup: async (path) => {
+      await database.backup(path);
+    },
+    close,
+  };
+}
+
+/** Once a commit has failed nothing more is written: what follows builds on what is missing. */
+function journalCalls(database: Database.Database): Pick<CommitCalls, 'commit' | 'keepSnapshot'> {
+  const write = groupWriter(database);
+  let failed: StoreError | undefined;
+  const unlessFailed = (act: () => void): void => {
+    if (failed !== undefined) throw new StoreError('refused', `An earlier write failed (${failed.message}): nothing is taken until the server is started again.`);
+    try {
+      act();
+    } catch (cause) {
+      failed = storeErrorOf(cause);
+      throw failed;
+    }
+  };
+  return {
+    commit: (group) => unlessFailed(() => write(group)),
+    keepSnapshot: (snapshot) => unlessFailed(() => writeSnapshot(database, snapshot)),
+  };
+}

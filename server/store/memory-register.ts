@@ -1,0 +1,47 @@
+import { checkSource } from './source-check.ts';
+import type { Source, SourceRegister, TokenGrant } from './source-register.ts';
+import { hashOfToken, newToken } from './source-token.ts';
+import { StoreError } from './store-error.ts';
+
+/** Sources of a memory disk, by name; the hash of the token where it has one. */
+export type KeptSources = Map<string, { source: Source; hash: string | undefined }>;
+
+const hexOf = (token: string): string => hashOfToken(token).toString('hex');
+
+/** @param run how the store runs a call: refuses when closed, turns a throw into a rejection */
+export function memoryRegister(kept: KeptSources, run: <T>(act: () => T) => Promise<T>): SourceRegister {
+  const named = (name: string): { source: Source; hash: string | undefined } => {
+    const found = kept.get(name);
+    if (found === undefined) throw new StoreError('unknown-source', `name: no source is called ${JSON.stringify(name)}.`);
+    return found;
+  };
+  const grant = (source: Source): TokenGrant => {
+    const token = newToken();
+    kept.set(source.name, { source, hash: hexOf(token) });
+    return { source, token };
+  };
+  return {
+    add: (name, stations, at) =>
+      run(() => {
+        checkSource(name, stations);
+        if (kept.has(name)) throw new StoreError('name-taken', `name: ${name} is taken by another source (revoked ones keep theirs); choose another, or rotate its token.`);
+        return grant({ id: kept.size + 1, name, stations: [...new Set(stations)], created: at, lastUsed: undefined, revoked: undefined });
+      }),
+    rotate: (name) => run(() => grant({ ...named(name).source, revoked: undefined })),
+    revoke: (name, at) =>
+      run(() => {
+        const { source } = named(name);
+        const revoked = { ...source, revoked: source.revoked ?? at };
+        kept.set(name, { source: revoked, hash: undefined });
+        return revoked;
+      }),
+    list: () => run(() => [...kept.values()].map(({ source }) => source).sort((a, b) => (a.name < b.name ? -1 : 1))),
+    ofToken: (token) => run(() => [...kept.values()].find(({ hash }) => hash === hexOf(token))?.source),
+    used: (id, at) =>
+      run(() => {
+        const found = [...kept.values()].find(({ source }) => source.id === id);
+        if (found === undefined) throw new StoreError('unknown-source', `source: no source has the id ${id}.`);
+        found.source = { ...found.source, lastUsed: at };
+      }),
+  };
+}

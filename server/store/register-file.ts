@@ -1,0 +1,58 @@
+import type Database from 'better-sqlite3';
+import { dataDirectory, type DataDirectory } from './data-directory.ts';
+import { openToWrite } from './database.ts';
+import { lockDirectory } from './directory-lock.ts';
+import { migrate, schemaVersion, schemaVersionOf } from './migrate.ts';
+import type { SourceRegister } from './source-register.ts';
+import { addSource, listSources, noteUse, revokeSource, rotateSource, sourceOfToken } from './source-table.ts';
+import { storeErrorOf } from './sqlite-fault.ts';
+
+export interface RegisterFile extends SourceRegister {
+  close(): void;
+}
+
+/**
+ * The source register of a data directory for the command line, also beside a running server, which finds the changes
+ * at the next hello. Without a server it makes the directory and brings the schema up to date.
+ *
+ * @throws StoreError 'in-use' (a server of another version has it), 'newer-schema', 'damaged', 'input-output'
+ */
+export function openRegisterFile(directory: string): RegisterFile {
+  const database = openMigrated(dataDirectory(directory));
+  return {
+    add: (name, stations, at) => promised(() => addSource(database, name, stations, at)),
+    rotate: (name) => promised(() => rotateSource(database, name)),
+    revoke: (name, at) => promised(() => revokeSource(database, name, at)),
+    list: () => promised(() => listSources(database)),
+    ofToken: (token) => promised(() => sourceOfToken(database, token)),
+    used: (id, at) => promised(() => noteUse(database, id, at)),
+    close: () => void database.close(),
+  };
+}
+
+function openMigrated(files: DataDirectory): Database.Database {
+  let database: Database.Database | undefined;
+  let unlock: (() => void) | undefined;
+  try {
+    database = openToWrite(files.database);
+    if (schemaVersionOf(database) !== schemaVersion) {
+      unlock = lockDirectory(files);
+      migrate(database);
+    }
+    return database;
+  } catch (cause) {
+    database?.close();
+    throw storeErrorOf(cause);
+  } finally {
+    unlock?.();
+  }
+}
+
+const promised = <T>(act: () => T): Promise<T> =>
+  new Promise((resolve, reject) => {
+    try {
+      resolve(act());
+    } catch (cause) {
+      reject(storeErrorOf(cause));
+    }
+  });
