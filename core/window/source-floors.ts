@@ -12,16 +12,14 @@ export class SourceFloors {
   readonly #newest = new Map<number, number>();
   #floors = new Map<number, number>();
 
-  /** Notes that records of the source up to `sequence` came in order. */
+  /** Notes that a record of the source came. */
   note(source: number, sequence: number): void {
-    this.#newest.set(source, sequence);
+    if (!((this.#newest.get(source) ?? -1) >= sequence)) this.#newest.set(source, sequence);
   }
 
   /** Restart: everything noted so far lies below, and everything in `seen` (marks have sequences, too). */
   raise(seen: Iterable<readonly [source: number, sequence: number]>): void {
-    for (const [source, sequence] of seen) {
-      this.#newest.set(source, Math.max(sequence, this.#newest.get(source) ?? 0));
-    }
+    for (const [source, sequence] of seen) this.note(source, sequence);
     this.#floors = new Map(this.#newest);
   }
 

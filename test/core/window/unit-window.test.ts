@@ -170,6 +170,43 @@ describe('a unit window', () => {
     expect(window.newestNonconforming(1)).toEqual([{ ago: 0, record: { source: 0, sequence: 10 } }]);
   });
 
+  it('shows no trace of a hole once it is filled', () => {
+    fc.assert(
+      fc.property(fc.array(fc.boolean(), { minLength: 3, maxLength: 40 }), fc.nat(100), fc.integer({ min: 1, max: 6 }), (bad, draw, most) => {
+        const records = bad.map((nonconforming, k) => ({ source: 0, sequence: k + 1, of: 1, nonconforming: nonconforming ? 1 : 0 }));
+        const at = 1 + (draw % (bad.length - 2));
+        const end = Math.min(bad.length - 1, at + most);
+        const whole = new UnitWindow();
+        admit(whole, records);
+        const filled = new UnitWindow();
+        admit(filled, [...records.slice(0, at), ...records.slice(end)]);
+        const places = records.slice(at, end).flatMap(({ nonconforming }, k) => (nonconforming === 1 ? [k] : []));
+        filled.insertLate({ source: 0, sequence: at + 1, records: end - at, unitsPerRecord: 1, places });
+        expect(filled.snapshot()).toEqual(whole.snapshot());
+      }),
+      { seed: 20_260_105, numRuns: 300 },
+    );
+  });
+
+  it('ignores late records older than the window even while a correction has left it short', () => {
+    const window = new UnitWindow({ size: 10 });
+    window.admitRun(0, 5, 3, 5);
+    window.admitConforming(15);
+    window.correct(0, 7, 0, 2);
+    expect([window.inspected, window.full]).toEqual([7, false]);
+    expect(window.insertLate({ source: 0, sequence: 2, records: 1, unitsPerRecord: 2, places: [] })).toEqual({ inspected: 0, nonconforming: 0 });
+    expect(window.inspected).toBe(7);
+  });
+
+  it('forgets the records that have left', () => {
+    const window = new UnitWindow({ size: 100 });
+    for (let sequence = 1; sequence <= 5_000; sequence += 1) {
+      window.admitRun(sequence % 2, sequence, 1);
+      window.admitConforming(1);
+    }
+    expect(window.byteLength).toBeLessThan(16 * 1_024);
+  });
+
   it('lets the oldest units go when it is restored into a smaller window', () => {
     const window = new UnitWindow({ size: 10 });
     window.admitRun(0, 1, 9);
