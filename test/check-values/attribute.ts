@@ -1,4 +1,6 @@
 import { demonstrationUnits } from '../../core/bound/critical-count.ts';
+import { lotDemonstrationUnits } from '../../core/bound/critical-lot.ts';
+import { lotLower, lotUpper } from '../../core/bound/finite-lot.ts';
 import { jeffreysLower, jeffreysUpper } from '../../core/bound/jeffreys.ts';
 import { midPLower, midPUpper } from '../../core/bound/mid-p.ts';
 import { fractionLower, fractionUpper } from '../../core/bound/nonconforming-fraction.ts';
@@ -32,6 +34,11 @@ const garwood = ofCount(rateLower, rateUpper);
 const unitsToDemonstrate = (row: Inputs): number =>
   demonstrationUnits(numberOf(row, 'nonconforming'), numberOf(row, 'rate'), tailIn(row));
 
+const lot = (row: Inputs): number => {
+  const sample = { nonconforming: numberOf(row, 'nonconforming'), sampled: numberOf(row, 'n'), lotSize: numberOf(row, 'lot_size') };
+  return bySide(row, { lower: () => lotLower(sample, tailIn(row)), upper: () => lotUpper(sample, tailIn(row)) });
+};
+
 const bound = (quantity: string, compute: (row: Inputs) => number): GridEvaluator =>
   ({ quantity, answer: 'bound', exact: false, compute });
 
@@ -46,6 +53,12 @@ export const attributeGrids: readonly GridEvaluator[] = [
     answer: 'n',
     exact: true,
     compute: unitsToDemonstrate,
+  },
+  {
+    quantity: 'exact (hypergeometric) one-sided bound on the number nonconforming in a lot',
+    answer: 'bound',
+    exact: true,
+    compute: lot,
   },
 ];
 
@@ -72,4 +85,15 @@ export const attributePublished: readonly PublishedEvaluator[] = [
     compute: ofCount(jeffreysRateLower, jeffreysRateUpper),
   },
   { quantity: /^smallest n with P\(X<=nonconforming \| n, rate\) <= 1-confidence( \(Wilks\))?$/, compute: unitsToDemonstrate },
+  {
+    quantity: 'exact (hypergeometric) one-sided upper bound on the fraction nonconforming in a finite lot',
+    compute: (row) => lot(row) / numberOf(row, 'lot_size'),
+  },
+  {
+    quantity: 'smallest n with hypergeometric P(X<=nonconforming | lot, D nonconforming) <= 1-confidence',
+    compute: (row) => {
+      const promise = { lotSize: numberOf(row, 'lot_size'), allowed: numberOf(row, 'lot_nonconforming') - 1 };
+      return lotDemonstrationUnits(numberOf(row, 'nonconforming'), promise, tailIn(row));
+    },
+  },
 ];
