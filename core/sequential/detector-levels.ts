@@ -1,0 +1,34 @@
+import type { DetectorTuning } from './detector-tuning.ts';
+
+/*
+ * The arithmetic of the mixture Shiryaev-Roberts detector on its bare levels, one per ratio, changed in
+ * place. The stored state and the simulations both go through it, so a figure shown before going live
+ * is about the very detector that runs.
+ */
+
+/** Takes the levels over trials in which nothing was found, each of the same weight (units or exposure), in one step. */
+export function settle(levels: number[], tuning: DetectorTuning, trials: number, weight: number): void {
+  for (let k = 0; k < levels.length; k++) {
+    const fall = (tuning.down[k] ?? NaN) * weight;
+    const lost = -Math.expm1(-fall * trials);
+    const level = levels[k] ?? NaN;
+    levels[k] = level * (1 - lost) + (weight * lost) / Math.expm1(fall);
+  }
+}
+
+/**
+ * Takes the levels over one trial with nonconforming units (or nonconformities) in it.
+ *
+ * @returns the level of the mixture, to be held against the threshold
+ */
+export function strike(levels: number[], tuning: DetectorTuning, found: number, weight: number): number {
+  const alone = found === 1 && weight === 1;
+  let sum = 0;
+  for (let k = 0; k < levels.length; k++) {
+    const factor = alone ? tuning.once[k] : Math.exp((tuning.up[k] ?? NaN) * found - (tuning.down[k] ?? NaN) * weight);
+    const level = ((levels[k] ?? NaN) + weight) * (factor ?? NaN);
+    levels[k] = level;
+    sum += level;
+  }
+  return sum / levels.length;
+}
