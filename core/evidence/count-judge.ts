@@ -19,6 +19,15 @@ export interface JudgeThresholds {
   readonly rate: number;
 }
 
+const stateAlone = (state: EvidenceState): Assessment => ({ state, backFromCrossing: false, backFromViolation: false });
+const plain: Readonly<Record<EvidenceState, Assessment>> = {
+  gathering: stateAlone('gathering'),
+  demonstrated: stateAlone('demonstrated'),
+  undecided: stateAlone('undecided'),
+  violated: stateAlone('violated'),
+  unknown: stateAlone('unknown'),
+};
+
 /**
  * Judges 'count nonconforming in size inspected' against a guarantee line by comparing whole counts.
  * `ripe` says whether the window may call a violation: full, or growing with no size of its own.
@@ -39,8 +48,10 @@ export class CountJudge {
     return ripe && this.#violated(size, count) ? 'violated' : 'undecided';
   }
 
-  assess(size: number, count: number, ripe: boolean): Assessment {
+  /** `waiting`: an alarm waits for its return, so that the distances are asked for too. */
+  assess(size: number, count: number, ripe: boolean, waiting: boolean): Assessment {
     const state = this.state(size, count, ripe);
+    if (!waiting) return plain[state];
     return {
       state,
       backFromCrossing: state === 'demonstrated' && this.#demonstrated(this.#by.backFromCrossing, size, count),

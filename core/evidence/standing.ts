@@ -79,6 +79,11 @@ export class Standing {
     }
   }
 
+  /** Whether a raised condition waits for its return, so that an assessment must tell the distances too. */
+  get waiting(): boolean {
+    return this.#watched.some(({ condition }) => condition.active);
+  }
+
   /** Position at which an alarm's units in a row are complete, if nothing else happens; Infinity if none waits. */
   dueAt(): number {
     let due = Infinity;

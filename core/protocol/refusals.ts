@@ -45,6 +45,7 @@ export const refusalTable = {
   replaced: { effect: 'connection', sentence: 'The same source connected again; the older connection is ended.' },
   'not-stored': { effect: 'connection', sentence: 'The server could not make the frame durable; it is not acknowledged.' },
   'unknown-station': { effect: 'set-aside', sentence: 'The plant has no such station.' },
+  'unknown-line': { effect: 'set-aside', sentence: 'The plant has no such line.' },
   'unknown-product': { effect: 'set-aside', sentence: 'The plant has no such product or characteristic.' },
   'time-implausible': { effect: 'set-aside', sentence: 'The time of inspection is too far from the server clock.' },
   'correction-unmatched': { effect: 'set-aside', sentence: 'The corrected record is unknown, of another kind, or too old.' },

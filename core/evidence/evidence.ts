@@ -1,0 +1,60 @@
+import type { Finding, InspectionPart } from '../record/part.ts';
+import type { Margin } from '../view/guarantee-view.ts';
+import type { RecordIdentity, RecordRange } from '../window/record-identity.ts';
+import type { Moment, RecordMoment } from './moment.ts';
+
+/** Some consecutive records of a part, as an evidence takes them. */
+export interface Batch {
+  readonly part: InspectionPart;
+  /** Places in the part: from (included) to `to` (excluded). */
+  readonly from: number;
+  readonly to: number;
+  /** Index of the source in the monitor's list. */
+  readonly source: number;
+  /** Sequence of the part's first record (place 0). */
+  readonly firstSequence: number;
+  /** Which of the guarantee's stations it comes from, 0-based in line order. */
+  readonly station: number;
+}
+
+/** Estimate and bounds in the quantity's own unit; undefined where there is none. */
+export interface Bounds {
+  readonly estimate: number | undefined;
+  readonly bound: number | undefined;
+  readonly opposite: number | undefined;
+}
+
+/** What became of a correction. */
+export type CorrectionFate = 'corrected' | 'not here' | 'another kind';
+
+/**
+ * The running evidence of one guarantee: a window, its figures, and the weighing of them against the line. It
+ * weighs after every record (a run of conforming units in one step where nothing can change inside it), so that
+ * how the records were cut into frames decides nothing.
+ */
+export interface Evidence {
+  /** Units (or records) admitted since the watch began; only rises. */
+  readonly position: number;
+  /** Takes records in order. `moment` stands on the part; its place is moved along. */
+  take(batch: Batch, moment: RecordMoment): void;
+  /** Records that fill a hole declared lost before: placed by their sequence. */
+  fill(batch: Batch, moment: RecordMoment): void;
+  correct(identity: RecordIdentity, station: number, finding: Finding, moment: Moment): CorrectionFate;
+  /** Forgets the window: evidence begins anew at a declared event. */
+  clear(moment: Moment): void;
+  /** The plant clock has come to `moment`: what is too old leaves a time window. */
+  moveClock(moment: Moment): void;
+  /** Moment at which the clock alone changes the window next; Infinity where it never does. */
+  nextDue(): number;
+  /** Weighs the present figures again (after something was blocked or lifted). */
+  weigh(moment: Moment): void;
+  /** Units in the finite lot the window belongs to, where the quantity asks for it. */
+  setLotSize?(size: number | undefined): void;
+  figures(): Readonly<Record<string, number>>;
+  ranges(): readonly RecordRange[];
+  bounds(): Bounds;
+  margin(): Margin;
+  warnings(): readonly string[];
+  snapshot(): unknown;
+  restore(from: unknown): void;
+}

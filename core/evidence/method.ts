@@ -1,0 +1,100 @@
+import type { Guarantee } from '../plant/guarantee.ts';
+
+/** How a guarantee's bound is computed, for people and for the record. The version rises when figures could change. */
+export interface Method {
+  readonly name: string;
+  readonly version: number;
+  readonly sentence: string;
+  readonly assumes: readonly string[];
+  readonly source: string;
+}
+
+const steady = 'The units of the window come from one steady process: each nonconforms with the same chance, independently of the others.';
+const clopperPearson = 'C. J. Clopper, E. S. Pearson, Biometrika 26 (1934), 404–413';
+
+const methods = {
+  binomial: {
+    name: 'exact binomial bound',
+    version: 1,
+    sentence: 'The largest nonconforming fraction at which so few nonconforming units would still be seen with the probability that the confidence level leaves over.',
+    assumes: [steady],
+    source: clopperPearson,
+  },
+  yield: {
+    name: 'exact binomial bound on the yield',
+    version: 1,
+    sentence: 'The smallest yield at which so many conforming units would still be seen with the probability that the confidence level leaves over.',
+    assumes: [steady],
+    source: clopperPearson,
+  },
+  poisson: {
+    name: 'exact Poisson bound',
+    version: 1,
+    sentence: 'The largest rate at which so few nonconformities in this exposure would still be seen with the probability that the confidence level leaves over.',
+    assumes: ['Nonconformities occur singly, independently and at one rate per exposure within the window.'],
+    source: 'F. Garwood, Biometrika 28 (1936), 437–442 (from memory)',
+  },
+  studentMean: {
+    name: 't bound on the mean',
+    version: 1,
+    sentence: 'The mean of the window, moved toward the line by the t quantile times its standard error.',
+    assumes: ['Values are independent and near enough to normal; skewness against the bound is watched and said.'],
+    source: 'Student, Biometrika 6 (1908), 1–25 (from memory)',
+  },
+  knownSigmaMean: {
+    name: 'z bound on the mean',
+    version: 1,
+    sentence: 'The mean of the window, moved toward the line by the normal quantile times the known standard error.',
+    assumes: ['The standard deviation is known from the stated source and still holds.', 'Values are independent.'],
+    source: 'ISO 2854:1976, section on a known variance (from memory)',
+  },
+  boundedMean: {
+    name: 'bound on the mean of a bounded measurement',
+    version: 1,
+    sentence: 'A bound that assumes no distribution, only that every value lies within the stated range.',
+    assumes: ['Values lie within the stated range and are independent.'],
+    source: 'A. Maurer, M. Pontil, Conference on Learning Theory 2009, theorem 4',
+  },
+  normalTail: {
+    name: 'normal-model bound on the fraction beyond a limit',
+    version: 1,
+    sentence: 'The distance from mean to limit in standard deviations, turned into a fraction by the noncentral t distribution.',
+    assumes: ['Values are independent and normally distributed; the fit is tested and the model is not used where it fails.'],
+    source: 'ISO 16269-6:2014, annex on one-sided normal tolerance (from memory)',
+  },
+  chained: {
+    name: 'gamma bound on the chained yield',
+    version: 1,
+    sentence: 'The losses of all stations added on a logarithmic scale, bounded by a gamma distribution with the same mean and spread.',
+    assumes: ['Stations lose units independently; units lost upstream are not inspected downstream.'],
+    source: 'M. P. Fay, E. J. Feuer, Statistics in Medicine 16 (1997), 791–801, on a logarithmic scale (own adaptation)',
+  },
+  lot: {
+    name: 'exact hypergeometric bound',
+    version: 1,
+    sentence: 'The largest number nonconforming in the lot with which so few in the sample would still be seen with the probability that the confidence level leaves over.',
+    assumes: ['The sampled units were drawn from the lot by chance.', 'The lot size is known.'],
+    source: 'hypergeometric tail inverted as for the exact binomial bound; own derivation',
+  },
+} as const satisfies Record<string, Method>;
+
+export function methodOf(guarantee: Guarantee): Method {
+  const { promise } = guarantee;
+  switch (promise.quantity) {
+    case 'nonconforming-fraction':
+      return methods.binomial;
+    case 'yield':
+      return methods.yield;
+    case 'rate':
+      return methods.poisson;
+    case 'mean':
+      if (promise.range) return methods.boundedMean;
+      return promise.sigma ? methods.knownSigmaMean : methods.studentMean;
+    case 'fraction-beyond-limit':
+      return promise.model === 'normal' ? methods.normalTail : methods.binomial;
+    case 'chained-yield':
+      return methods.chained;
+    case 'lot-fraction':
+      return methods.lot;
+  }
+}

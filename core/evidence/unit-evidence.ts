@@ -1,0 +1,243 @@
+import type { Finding } from '../record/part.ts';
+import type { Margin } from '../view/guarantee-view.ts';
+import type { RecordIdentity, RecordRange } from '../window/record-identity.ts';
+import { UnitWindow, type UnitWindowSnapshot } from '../window/unit-window.ts';
+import type { CountRule } from './count-rule.ts';
+import type { Batch, Bounds, CorrectionFate, Evidence } from './evidence.ts';
+import type { Moment, RecordMoment } from './moment.ts';
+import { nonconformingPlaces, type Limit } from './nonconforming-places.ts';
+import type { Standing } from './standing.ts';
+
+export interface UnitEvidenceSettings {
+  /** Units of the window; undefined for a growing one. */
+  readonly size: number | undefined;
+  /** Judges measurements, where the quantity counts values beyond a limit. */
+  readonly limit: Limit | undefined;
+  /** Shows the share of conforming units instead of that of nonconforming ones. */
+  readonly asYield: boolean;
+}
+
+interface UnitEvidenceSnapshot {
+  readonly position: number;
+  readonly window: UnitWindowSnapshot;
+}
+
+/**
+ * Evidence on a fraction of units: verdicts, tallies, or measurements judged by a limit, in a window of the last N
+ * units or a growing one. A run of conforming units costs one step but where a count changes inside it.
+ */
+export class UnitEvidence implements Evidence {
+  readonly window: UnitWindow;
+  readonly #settings: UnitEvidenceSettings;
+  readonly #standing: Standing;
+  #rule: CountRule;
+  #position = 0;
+  /** Position before which, with conforming units only, nothing can change. */
+  #wakeAt = 0;
+
+  constructor(settings: UnitEvidenceSettings, rule: CountRule, standing: Standing) {
+    this.#settings = settings;
+    this.#rule = rule;
+    this.#standing = standing;
+    this.window = new UnitWindow(settings.size === undefined ? {} : { size: settings.size });
+  }
+
+  get position(): number {
+    return this.#position;
+  }
+
+  /** Judges by another rule from the next weighing on: a lot of another size, say. */
+  useRule(rule: CountRule): void {
+    this.#rule = rule;
+    this.#wakeAt = 0;
+  }
+
+  take(batch: Batch, moment: RecordMoment): void {
+    const { part, from, to, source, firstSequence } = batch;
+    if (part.kind === 'exposures') return;
+    if (part.kind === 'tallies') {
+      for (let place = from; place < to; place += 1) {
+        const inspected = part.inspected[place] as number;
+        const nonconforming = part.nonconforming[place] as number;
+        moment.place = place;
+        this.window.admitRun(source, firstSequence + place, 1, inspected);
+        this.#conforming(inspected - nonconforming, moment, undefined);
+        for (let unit = 0; unit < nonconforming; unit += 1) this.#nonconforming(moment);
+      }
+      return;
+    }
+    const places = nonconformingPlaces(part, from, to, this.#settings.limit);
+    this.window.admitRun(source, firstSequence + from, to - from);
+    let done = from;
+    for (let k = 0; k < places.length; k += 1) {
+      const place = places[k] as number;
+      if (place > done) this.#conforming(place - done, moment, done);
+      moment.place = place;
+      this.#nonconforming(moment);
+      done = place + 1;
+    }
+    if (to > done) this.#conforming(to - done, moment, done);
+    moment.place = to - 1;
+  }
+
+  fill(batch: Batch, moment: RecordMoment): void {
+    const { part, from, to, source, firstSequence } = batch;
+    if (part.kind === 'exposures') return;
+    if (part.kind === 'tallies') {
+      for (let place = from; place < to; place += 1) {
+        const unitsPerRecord = part.inspected[place] as number;
+        const nonconforming = part.nonconforming[place] as number;
+        const places = Array.from({ length: nonconforming }, (_, unit) => unitsPerRecord - nonconforming + unit);
+        this.window.insertLate({ source, sequence: firstSequence + place, records: 1, unitsPerRecord, places });
+      }
+    } else {
+      const places = Array.from(nonconformingPlaces(part, from, to, this.#settings.limit), (place) => place - from);
+      this.window.insertLate({ source, sequence: firstSequence + from, records: to - from, unitsPerRecord: 1, places });
+    }
+    moment.place = to - 1;
+    this.weigh(moment);
+  }
+
+  correct(identity: RecordIdentity, _station: number, finding: Finding, moment: Moment): CorrectionFate {
+    const found = this.#counted(finding);
+    if (found === undefined) return 'another kind';
+    const change = this.window.correct(identity.source, identity.sequence, found.nonconforming, found.inspected);
+    if (change === 'not here') return 'not here';
+    this.weigh(moment);
+    return 'corrected';
+  }
+
+  clear(moment: Moment): void {
+    this.window.clear();
+    this.#standing.beginAnew();
+    this.weigh(moment);
+  }
+
+  moveClock(): void {
+    // Units leave this window by number, not by age.
+  }
+
+  nextDue(): number {
+    return Infinity;
+  }
+
+  weigh(moment: Moment): void {
+    const { inspected, nonconforming } = this.window;
+    const ripe = this.window.size === undefined || this.window.full;
+    this.#standing.weigh(this.#rule.judge.assess(inspected, nonconforming, ripe, this.#standing.waiting), this.#position, moment);
+    this.#wakeAt = this.#nextWake(inspected, nonconforming);
+  }
+
+  figures(): Readonly<Record<string, number>> {
+    const { inspected, nonconforming, size } = this.window;
+    return { inspected, nonconforming, ...(size === undefined ? {} : { windowUnits: size }) };
+  }
+
+  ranges(): readonly RecordRange[] {
+    return this.window.ranges();
+  }
+
+  bounds(): Bounds {
+    const { inspected, nonconforming } = this.window;
+    if (inspected === 0) return { estimate: undefined, bound: undefined, opposite: undefined };
+    const estimate = nonconforming / inspected;
+    const bound = this.#rule.upper(inspected, nonconforming);
+    const opposite = this.#rule.lower(inspected, nonconforming);
+    return this.#settings.asYield ? { estimate: 1 - estimate, bound: 1 - bound, opposite: 1 - opposite } : { estimate, bound, opposite };
+  }
+
+  margin(): Margin {
+    const { inspected, nonconforming, size } = this.window;
+    const { thresholds } = this.#rule;
+    const least = thresholds.sizeToDemonstrate(0);
+    if (inspected < least) return { unitsToGather: least - inspected };
+    const needed = thresholds.sizeToDemonstrate(nonconforming);
+    if (inspected >= needed) {
+      let more = 0;
+      while (inspected >= thresholds.sizeToDemonstrate(nonconforming + more + 1)) more += 1;
+      return { canTake: more };
+    }
+    return { conformingToDemonstrate: this.#conformingNeeded(inspected, nonconforming, size ?? Infinity) };
+  }
+
+  warnings(): readonly string[] {
+    return [];
+  }
+
+  snapshot(): UnitEvidenceSnapshot {
+    return { position: this.#position, window: this.window.snapshot() };
+  }
+
+  restore(from: UnitEvidenceSnapshot): void {
+    this.#position = from.position;
+    this.window.restore(from.window);
+    this.#wakeAt = 0;
+  }
+
+  /** Conforming units in a row until demonstrated: by growing, and by old nonconforming units leaving. */
+  #conformingNeeded(inspected: number, nonconforming: number, size: number): number {
+    for (let leaving = 0; leaving <= nonconforming; leaving += 1) {
+      const needed = this.#rule.thresholds.sizeToDemonstrate(nonconforming - leaving);
+      const departed = leaving === 0 ? 0 : this.window.departureOf(leaving);
+      if (needed > size) continue;
+      const wait = Math.max(departed, needed - Math.min(size, inspected));
+      const relief = this.window.departureOf(leaving + 1);
+      if (wait < relief || leaving === nonconforming) return wait;
+    }
+    return Infinity;
+  }
+
+  /** What a finding says in units; undefined where it is of another kind than this evidence counts. */
+  #counted(finding: Finding): { nonconforming: number; inspected: number | undefined } | undefined {
+    switch (finding.kind) {
+      case 'verdict':
+        return { nonconforming: finding.nonconforming ? 1 : 0, inspected: undefined };
+      case 'tally':
+        return { nonconforming: finding.nonconforming, inspected: finding.inspected };
+      case 'measurement': {
+        const { limit } = this.#settings;
+        if (limit === undefined) return undefined;
+        const beyond = limit.side === 'below' ? finding.value < limit.value : finding.value > limit.value;
+        return { nonconforming: beyond ? 1 : 0, inspected: undefined };
+      }
+      case 'exposure':
+        return undefined;
+    }
+  }
+
+  /**
+   * Admits conforming units and stops wherever something can change. `from` is the place of the first one, to be
+   * moved along; undefined where they belong to the one record the moment stands on.
+   */
+  #conforming(units: number, moment: RecordMoment, from: number | undefined): void {
+    let left = units;
+    let place = from;
+    while (left > 0) {
+      const step = Math.min(left, Math.max(1, this.#wakeAt - this.#position));
+      this.window.admitConforming(step);
+      this.#position += step;
+      left -= step;
+      if (place !== undefined) {
+        place += step;
+        moment.place = place - 1;
+      }
+      if (this.#position >= this.#wakeAt) this.weigh(moment);
+    }
+  }
+
+  #nonconforming(moment: RecordMoment): void {
+    this.window.admitNonconforming();
+    this.#position += 1;
+    this.weigh(moment);
+  }
+
+  #nextWake(inspected: number, nonconforming: number): number {
+    let wait = this.window.nextDeparture();
+    if (!this.window.full) {
+      const size = this.window.size ?? Infinity;
+      const grown = this.#rule.judge.nextSize(inspected, nonconforming);
+      wait = Math.min(wait, Math.min(grown, size) - inspected);
+    }
+    return Math.min(this.#position + Math.max(1, wait), this.#standing.dueAt());
+  }
+}

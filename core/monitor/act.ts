@@ -1,0 +1,7 @@
+/** What a person did that changes an alarm or the evidence; kept in the journal like a record. */
+export type Act =
+  | { readonly kind: 'acknowledge'; readonly alarm: number; readonly by: string; readonly note: string }
+  | { readonly kind: 'restart'; readonly guarantee: string; readonly by: string; readonly reason: string };
+
+/** Why an act changed nothing. */
+export type ActFault = 'no-such-alarm' | 'already-acknowledged' | 'no-such-guarantee';

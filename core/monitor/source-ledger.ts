@@ -1,0 +1,81 @@
+/** Sequences a source declared lost and has not sent since; both ends included. */
+export interface Hole {
+  readonly first: number;
+  readonly last: number;
+}
+
+/** Where a frame belongs in the order of its source. */
+export type Admission =
+  | { readonly kind: 'new' }
+  /** The first `skip` records are known already; the rest is new. */
+  | { readonly kind: 'tail'; readonly skip: number }
+  /** Every record is known already: acknowledged again, counted never again. */
+  | { readonly kind: 'repeat' }
+  /** Fills sequences declared lost before. */
+  | { readonly kind: 'late' }
+  /** Records are missing between `expected` and the frame. */
+  | { readonly kind: 'gap'; readonly expected: number };
+
+export interface LedgerSnapshot {
+  readonly next: number;
+  readonly holes: readonly Hole[];
+}
+
+/** Holes remembered for a source; the oldest is given up beyond that, and can no longer be filled. */
+export const mostHoles = 4096;
+
+/** What is known of one source's sequence: which records were taken, so that each counts once. */
+export class SourceLedger {
+  #next = 1;
+  #holes: Hole[] = [];
+
+  /** The sequence expected next, 1 or more: where a source resumes. */
+  get next(): number {
+    return this.#next;
+  }
+
+  get holes(): readonly Hole[] {
+    return this.#holes;
+  }
+
+  /** Where a frame of `records` records from sequence `first` on belongs; changes nothing. */
+  place(first: number, records: number): Admission {
+    if (first === this.#next) return { kind: 'new' };
+    if (first > this.#next) return { kind: 'gap', expected: this.#next };
+    const last = first + records - 1;
+    if (last >= this.#next) return { kind: 'tail', skip: this.#next - first };
+    return this.#holes.some((hole) => hole.first <= first && last <= hole.last) ? { kind: 'late' } : { kind: 'repeat' };
+  }
+
+  /** Takes records in order, up to but not including `next`. */
+  advance(next: number): void {
+    this.#next = next;
+  }
+
+  /** Remembers sequences declared lost, just below `next`. */
+  declareLost(first: number, records: number): void {
+    this.#holes.push({ first, last: first + records - 1 });
+    if (this.#holes.length > mostHoles) this.#holes.shift();
+  }
+
+  /** A late frame filled these sequences: what is left of their hole stays open. */
+  fill(first: number, records: number): void {
+    const last = first + records - 1;
+    this.#holes = this.#holes.flatMap((hole) => {
+      if (last < hole.first || first > hole.last) return [hole];
+      const rest: Hole[] = [];
+      if (hole.first < first) rest.push({ first: hole.first, last: first - 1 });
+      if (last < hole.last) rest.push({ first: last + 1, last: hole.last });
+      return rest;
+    });
+  }
+
+  snapshot(): LedgerSnapshot {
+    return { next: this.#next, holes: [...this.#holes] };
+  }
+
+  restore(from: LedgerSnapshot): void {
+    this.#next = from.next;
+    this.#holes = [...from.holes];
+  }
+}

@@ -1,0 +1,291 @@
+import type { AlarmGrounds } from '../alarm/alarm.ts';
+import { groundsSentence } from '../alarm/grounds-sentence.ts';
+import { allowanceUsed } from '../evidence/allowance.ts';
+import type { Batch, Evidence } from '../evidence/evidence.ts';
+import { evidenceOf } from '../evidence/evidence-of.ts';
+import { methodOf } from '../evidence/method.ts';
+import { clockMoment, type Moment, type RecordMoment } from '../evidence/moment.ts';
+import { Standing, type StandingSnapshot, type Surroundings } from '../evidence/standing.ts';
+import { TipTrail, type TipTrailSnapshot } from '../evidence/tip-trail.ts';
+import { guaranteeLineOf } from '../plant/guarantee-line.ts';
+import type { AlarmRule, Guarantee } from '../plant/guarantee.ts';
+import type { Correction, InspectionPart, LineMark } from '../record/part.ts';
+import type { ShiftCalendar } from '../shift/shift-calendar.ts';
+import type { EpochMs } from '../units.ts';
+import type { BadDataLog } from './bad-data-log.ts';
+import { LostRecords, type LostRecordsSnapshot } from './lost-records.ts';
+import { MinuteTally, type MinuteCount } from './minute-tally.ts';
+import { noteMinutes } from './note-minutes.ts';
+import { Period, type PeriodSnapshot } from './period.ts';
+import { silentFrom, type LineCondition, type WatchedStream } from './silence-watch.ts';
+import type { Stretch } from './stretches.ts';
+
+/** What a watch needs from its monitor. */
+export interface WatchSurroundings extends Surroundings {
+  readonly calendar: ShiftCalendar;
+  readonly line: LineCondition;
+  /** One per station of the guarantee, in line order. */
+  readonly streams: readonly WatchedStream[];
+  readonly badData: readonly BadDataLog[];
+  /** The plant clock, ms. */
+  readonly now: () => EpochMs;
+  /** Something falls due at this moment that may not have been foreseen. */
+  readonly mayBeDue: (at: number) => void;
+  readonly plantVersion: () => string;
+  readonly sourceName: (index: number) => string;
+}
+
+export interface WatchSnapshot {
+  readonly evidence: unknown;
+  readonly standing: StandingSnapshot;
+  readonly period: PeriodSnapshot;
+  readonly lost: LostRecordsSnapshot;
+  readonly trail: TipTrailSnapshot;
+  readonly minutes: readonly MinuteCount[];
+  readonly newest: number;
+  readonly badData: boolean;
+}
+
+type SilenceRule = Extract<AlarmRule, { kind: 'silence' }>;
+type BadDataRule = Extract<AlarmRule, { kind: 'bad-data' }>;
+
+/** Watches one guarantee: its evidence, its standing, and the rules that need no bound. */
+export class Watch {
+  readonly guarantee: Guarantee;
+  readonly around: WatchSurroundings;
+  readonly standing: Standing;
+  readonly evidence: Evidence;
+  readonly lost = new LostRecords();
+  readonly trail = new TipTrail();
+  readonly minutes = new MinuteTally();
+  /** Set by everything that changes what a screen shows; whoever shows it resets it. */
+  changed = true;
+  /** Newest time of inspection, ms; 0 before the first record. */
+  newest = 0;
+  readonly #period: Period;
+  readonly #silence: SilenceRule | undefined;
+  readonly #badDataRule: BadDataRule | undefined;
+  #badData = false;
+  /** Nothing falls due before this; records only move it on, but for windows that go by time. */
+  #dueKnown = Infinity;
+  readonly #dueMovesWithRecords: boolean;
+
+  constructor(guarantee: Guarantee, around: WatchSurroundings) {
+    this.guarantee = guarantee;
+    this.around = around;
+    this.#dueMovesWithRecords = guarantee.window.kind === 'time' || guarantee.window.kind === 'shift';
+    this.#period = new Period(guarantee.window.kind, around.calendar);
+    this.#silence = guarantee.rules.find((rule): rule is SilenceRule => rule.kind === 'silence');
+    this.#badDataRule = guarantee.rules.find((rule): rule is BadDataRule => rule.kind === 'bad-data');
+    this.standing = new Standing(guarantee, around, {
+      figures: () => this.evidence.figures(),
+      grounds: (rule, moment) => this.#grounds(rule, moment, this.evidence.figures()),
+    });
+    this.evidence = evidenceOf(guarantee, this.standing);
+  }
+
+  /** Takes a part's records in order. `late`: they fill a hole declared lost before. */
+  take(part: InspectionPart, stretches: readonly Stretch[], base: Omit<Batch, 'from' | 'to' | 'part'>, moment: RecordMoment, late: boolean): void {
+    this.changed = true;
+    const lot = part.origin.lot ?? this.around.line.lot;
+    for (const { from, to, minute } of stretches) {
+      noteMinutes(this.minutes, this.guarantee, part, from, to, minute);
+      moment.place = from;
+      if (moment.at > this.newest) this.newest = moment.at;
+      const belonging = this.#period.of(minute, lot);
+      if (belonging === 'past') continue;
+      if (belonging === 'begins anew') this.#beginAnew(moment);
+      this.#heard(moment);
+      const batch: Batch = { ...base, part, from, to };
+      if (late) this.evidence.fill(batch, moment);
+      else if (this.lost.none) this.evidence.take(batch, moment);
+      else this.#takeSingly(batch, moment);
+      if (moment.at > this.newest) this.newest = moment.at;
+    }
+    this.trail.wake(this.around.now());
+    if (this.#dueKnown === Infinity || this.#dueMovesWithRecords) this.#refreshDue();
+  }
+
+  correct(correction: Correction, source: number, station: number, moment: Moment): ReturnType<Evidence['correct']> {
+    this.changed = true;
+    return this.evidence.correct({ source, sequence: correction.corrects }, station, correction.finding, moment);
+  }
+
+  /** Records of one of its stations are gone. */
+  lose(source: number, first: number, records: number, moment: Moment): void {
+    this.changed = true;
+    this.lost.declare(source, first, records, this.evidence.position, moment.at);
+    this.#settleLost(moment);
+    this.#refreshDue();
+  }
+
+  fillLost(source: number, first: number, records: number, moment: Moment): void {
+    this.lost.fill(source, first, records);
+    this.#settleLost(moment);
+  }
+
+  /** A named person restarts the evidence after a declared event. */
+  restart(moment: Moment): void {
+    this.changed = true;
+    this.#beginAnew(moment);
+  }
+
+  /** The next moment at which the clock alone changes something; Infinity where nothing waits. */
+  due(): number {
+    let due = Math.min(this.#period.until, this.evidence.nextDue(), this.trail.due);
+    if (this.#silence && !this.standing.isBlockedBy('silence')) due = Math.min(due, this.#silentFrom(this.#silence));
+    if (this.#badDataRule && this.#badData) due = Math.min(due, this.#badDataFall(this.#badDataRule));
+    if (this.guarantee.window.kind === 'time') due = Math.min(due, this.lost.oldestAt + this.guarantee.window.spanMs);
+    this.#dueKnown = due;
+    return due;
+  }
+
+  /** The plant clock has come to `at`, a moment that `due` named (or later). */
+  moveClock(at: EpochMs): void {
+    this.changed = true;
+    const moment = clockMoment(at);
+    if (this.#period.until <= at) {
+      this.#period.end();
+      this.#beginAnew(moment);
+    }
+    if (this.evidence.nextDue() <= at) this.evidence.moveClock(moment);
+    if (this.#silence && !this.standing.isBlockedBy('silence') && this.#silentFrom(this.#silence) <= at) this.#fallSilent(this.#silence, moment);
+    if (this.#badDataRule && this.#badData) this.weighBadData(at);
+    this.#settleLost(moment);
+    if (this.trail.due <= at) this.trail.mark(at, this.tip());
+  }
+
+  /** Its line said something of itself. A line that stands is not silent; a lot that starts begins a lot's window. */
+  lineMarked(mark: LineMark, moment: Moment): void {
+    this.changed = true;
+    if (mark.kind === 'line-stopped') this.#heard(moment);
+    if (mark.kind === 'lot-start') {
+      this.evidence.setLotSize?.(mark.size);
+      if (this.#period.of(moment.at, mark.lot) === 'begins anew' && this.guarantee.window.kind === 'lot') this.#beginAnew(moment);
+    }
+    this.#refreshDue();
+  }
+
+  /** Weighs the bad-data rule after something was noted, or fell out, at one of its stations. */
+  weighBadData(at: EpochMs): void {
+    const rule = this.#badDataRule;
+    if (!rule) return;
+    const badRecords = this.#badRecords(rule, at);
+    if (!this.#badData && badRecords > rule.moreThan) {
+      this.#badData = true;
+      this.changed = true;
+      this.around.desk.raise(this.guarantee, rule, at, () => this.#grounds('bad-data', clockMoment(at), { badRecords, withinMs: rule.withinMs }));
+      this.#refreshDue();
+    } else if (this.#badData && badRecords <= rule.moreThan / 2) {
+      this.#badData = false;
+      this.changed = true;
+      this.around.desk.returned(this.guarantee.id, 'bad-data', at);
+    }
+  }
+
+  /** Allowance used by the bound now. */
+  tip(): number | undefined {
+    const { line, target } = guaranteeLineOf(this.guarantee.promise);
+    return allowanceUsed(this.evidence.bounds().bound, line, target);
+  }
+
+  snapshot(): WatchSnapshot {
+    return {
+      evidence: this.evidence.snapshot(),
+      standing: this.standing.snapshot(),
+      period: this.#period.snapshot(),
+      lost: this.lost.snapshot(),
+      trail: this.trail.snapshot(),
+      minutes: this.minutes.snapshot(),
+      newest: this.newest,
+      badData: this.#badData,
+    };
+  }
+
+  restore(from: WatchSnapshot): void {
+    this.evidence.restore(from.evidence);
+    this.standing.restore(from.standing);
+    this.#period.restore(from.period);
+    this.lost.restore(from.lost);
+    this.trail.restore(from.trail);
+    this.minutes.restore(from.minutes);
+    this.newest = from.newest;
+    this.#badData = from.badData;
+    this.changed = true;
+  }
+
+  #refreshDue(): void {
+    this.around.mayBeDue(this.due());
+  }
+
+  /** While losses are in the window, each record may be the one that pushes the last of them out. */
+  #takeSingly(batch: Batch, moment: RecordMoment): void {
+    for (let place = batch.from; place < batch.to; place += 1) {
+      this.evidence.take({ ...batch, from: place, to: place + 1 }, moment);
+      this.#settleLost(moment);
+    }
+  }
+
+  #beginAnew(moment: Moment): void {
+    this.lost.clear();
+    this.standing.lift('lost');
+    this.evidence.clear(moment);
+  }
+
+  #heard(moment: Moment): void {
+    if (!this.standing.isBlockedBy('silence')) return;
+    this.standing.lift('silence');
+    this.evidence.weigh(moment);
+    this.around.desk.returned(this.guarantee.id, 'silence', moment.at);
+  }
+
+  #silentFrom(rule: SilenceRule): number {
+    return silentFrom(this.around.streams, this.around.line, this.guarantee.product, rule.afterMs);
+  }
+
+  #fallSilent(rule: SilenceRule, moment: Moment): void {
+    this.standing.block('silence', 'No record comes although the line is said to run.');
+    this.evidence.weigh(moment);
+    this.around.desk.raise(this.guarantee, rule, moment.at, () => this.#grounds('silence', moment, { silentMs: rule.afterMs }));
+  }
+
+  #badRecords(rule: BadDataRule, at: number): number {
+    return this.around.badData.reduce((sum, log) => sum + log.within(at, rule.withinMs), 0);
+  }
+
+  /** When the oldest bad record that still counts falls out of the rule's span. */
+  #badDataFall(rule: BadDataRule): number {
+    return this.around.badData.reduce((due, log) => Math.min(due, log.nextFall(this.around.now(), rule.withinMs)), Infinity);
+  }
+
+  /** Lost data counts as trouble where people can be hurt: the state is unknown while they would be in the window. */
+  #settleLost(moment: Moment): void {
+    const { window } = this.guarantee;
+    if (window.kind === 'units') this.lost.forget(this.evidence.position - window.units, -1);
+    if (window.kind === 'time') this.lost.forget(-1, moment.at - window.spanMs);
+    if (!this.guarantee.safetyRelevant) return;
+    const { records } = this.lost;
+    const blocked = this.standing.isBlockedBy('lost');
+    if (records > 0) this.standing.block('lost', `${records} records of this window were lost.`);
+    else this.standing.lift('lost');
+    if (records > 0 !== blocked) this.evidence.weigh(moment);
+  }
+
+  #grounds(rule: AlarmRule['kind'], moment: Moment, figures: Readonly<Record<string, number>>): AlarmGrounds {
+    const { promise, tail, looks } = this.guarantee;
+    const { line, side } = guaranteeLineOf(promise);
+    const method = methodOf(this.guarantee);
+    const noBound = rule === 'silence' || rule === 'bad-data';
+    return {
+      source: moment.source,
+      sequence: moment.sequence,
+      plantVersion: this.around.plantVersion(),
+      method: noBound ? rule : method.name,
+      methodVersion: method.version,
+      lookRule: noBound ? 'no bound' : looks === 'all looks' ? 'all looks' : 'one look',
+      figures: { ...figures, line, tail },
+      records: this.evidence.ranges().map(({ source, first, last }) => ({ source: this.around.sourceName(source), first, last })),
+      sentence: groundsSentence(rule, promise.quantity, side, figures),
+    };
+  }
+}
