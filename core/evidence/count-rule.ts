@@ -1,7 +1,7 @@
 import { fractionLower, fractionUpper } from '../bound/nonconforming-fraction.ts';
 import { demonstrationUnits, violationUnits } from '../bound/critical-count.ts';
 import type { Guarantee } from '../plant/guarantee.ts';
-import type { Fraction, Tail, UnitCount } from '../units.ts';
+import type { Fraction, Tail } from '../units.ts';
 import { CountJudge } from './count-judge.ts';
 import { RememberedThresholds, type Thresholds } from './thresholds.ts';
 
