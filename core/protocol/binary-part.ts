@@ -1,10 +1,11 @@
 import {
   checkedCorrection, checkedExposures, checkedFinding, checkedMeasurements, checkedTallies, checkedTime, checkedVerdicts,
 } from '../record/checked-part.ts';
-import { checkedMoment, checkedReason, checkedSequence } from '../record/checked-words.ts';
+import { checkedMoment, checkedReason, checkedSequence, largestWhole } from '../record/checked-words.ts';
 import type { Finding, InspectionPart, LineMark, Lost, Origin, Part } from '../record/part.ts';
 import { refuse } from '../record/refusal.ts';
 import type { TimeColumn } from '../record/time-column.ts';
+import { latestMs } from '../units.ts';
 import { bitsForm, findings, kinds, noName, partHeadBytes, timeForm } from './binary-layout.ts';
 import { nameAt, type Table } from './binary-table.ts';
 import type { ByteCursor } from './byte-cursor.ts';
@@ -60,7 +61,7 @@ function inspectionPart(cursor: ByteCursor, origin: Origin, kind: InspectionPart
   const { form, records, listed } = head;
   if (form > (kind === 'verdicts' ? 7 : 3)) refuse('reserved-not-zero', 'form', form, 'a form of this layout version');
   if (kind !== 'verdicts' && listed !== 0) refuse('reserved-not-zero', 'listed', listed, 'zero but for verdicts and reasons');
-  const time = checkedTime(timeOf(cursor, form & 3, records), records);
+  const time = timeOf(cursor, form & 3, records);
   switch (kind) {
     case 'verdicts':
       return checkedVerdicts(origin, records, time, placesOf(cursor, form, records, listed));
@@ -76,16 +77,26 @@ function inspectionPart(cursor: ByteCursor, origin: Origin, kind: InspectionPart
 }
 
 function timeOf(cursor: ByteCursor, form: number, records: number): TimeColumn {
-  if (form === timeForm.each) return { kind: 'each', times: cursor.f64Column(records, 'time') };
-  const at = cursor.take(form === timeForm.steady ? 16 : 8, 'time');
-  if (form === timeForm.steady) return { kind: 'steady', start: cursor.f64(at), step: cursor.f64(at + 8) };
-  if (form !== timeForm.offsets) refuse('unknown-kind', 'form', form, 'times that are steady, offsets or each');
-  const base = cursor.f64(at);
-  const offsets = cursor.take(records * 4, 'time');
-  const times = new Float64Array(records);
-  for (let i = 0; i < records; i += 1) times[i] = base + cursor.u32(offsets + i * 4);
+  switch (form) {
+    case timeForm.steady: {
+      const at = cursor.take(16, 'time');
+      return checkedTime({ kind: 'steady', start: cursor.f64(at), step: cursor.f64(at + 8) }, records);
+    }
+    case timeForm.each:
+      return checkedTime({ kind: 'each', times: cursor.f64Column(records, 'time') }, records);
+    case timeForm.offsets:
+      return offsetTimes(cursor, records);
+    default:
+      return refuse('unknown-kind', 'form', form, 'times that are steady, offsets or each');
+  }
+}
+
+function offsetTimes(cursor: ByteCursor, records: number): TimeColumn {
+  const base = checkedMoment(cursor.f64(cursor.take(8, 'time')), 'time[0]');
+  const column: TimeColumn = { kind: 'each', times: cursor.offsetColumn(base, records, 'time') };
   cursor.align('time');
-  return { kind: 'each', times };
+  // Whole offsets from a whole base are whole; only near the end of all times can one be too late.
+  return base + largestWhole <= latestMs ? column : checkedTime(column, records);
 }
 
 function placesOf(cursor: ByteCursor, form: number, records: number, listed: number): Uint32Array {

@@ -1,3 +1,4 @@
+import { noPlaces } from '../record/no-places.ts';
 import { refuse } from '../record/refusal.ts';
 
 /** Typed arrays take the machine's byte order; where that is not the wire's, columns are read number by number. */
@@ -54,6 +55,7 @@ export class ByteCursor {
   /** A copy of `count` u32, so that nothing keeps or shares the message's memory. */
   u32Column(count: number, field: string): Uint32Array {
     const from = this.take(count * 4, field);
+    if (count === 0) return noPlaces;
     const column = new Uint32Array(count);
     if (sameOrder && count > fewEntries) {
       new Uint8Array(column.buffer).set(this.bytes.subarray(from, from + count * 4));
@@ -71,6 +73,15 @@ export class ByteCursor {
     } else {
       for (let i = 0; i < count; i += 1) column[i] = this.#view.getFloat64(from + i * 8, true);
     }
+    return column;
+  }
+
+  /** `count` u32 offsets, each added to `base`. */
+  offsetColumn(base: number, count: number, field: string): Float64Array {
+    const from = this.take(count * 4, field);
+    const view = this.#view;
+    const column = new Float64Array(count);
+    for (let i = 0; i < count; i += 1) column[i] = base + view.getUint32(from + i * 4, true);
     return column;
   }
 

@@ -1,3 +1,4 @@
+import { noPlaces } from '../record/no-places.ts';
 import { refuse } from '../record/refusal.ts';
 import type { TimeColumn } from '../record/time-column.ts';
 import { expectFields, objectAt } from './json-object.ts';
@@ -6,6 +7,7 @@ import { expectFields, objectAt } from './json-object.ts';
 
 export function wholeColumn(value: unknown, field: string, most: number): Uint32Array {
   const items = arrayAt(value, field, most);
+  if (items.length === 0) return noPlaces;
   const column = new Uint32Array(items.length);
   for (let i = 0; i < items.length; i += 1) {
     const item = items[i];

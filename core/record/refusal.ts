@@ -39,8 +39,7 @@ function shown(value: unknown): string {
   if (typeof value === 'string') return JSON.stringify(value.length > 40 ? `${value.slice(0, 40)}…` : value).slice(0, 70);
   if (Array.isArray(value)) return `an array of ${value.length}`;
   if (value instanceof Uint32Array || value instanceof Float64Array) return `an array of ${value.length}`;
-  if (typeof value === 'object' && value !== null) return 'an object';
-  return String(value);
+  return typeof value === 'number' || typeof value === 'boolean' || value === null ? String(value) : 'an object';
 }
 
 /** Ends the present check. A field that is missing is always refused as such, whatever was to be checked. */

@@ -1,4 +1,5 @@
 import { frameOf } from './frame-of.ts';
+import { noPlaces } from './no-places.ts';
 import type { Frame, Part } from './part.ts';
 import { timeAt, type TimeColumn } from './time-column.ts';
 
@@ -48,7 +49,7 @@ function tailOfPart(part: Part, skip: number): Part {
 
 function placesFrom(places: Uint32Array, skip: number): Uint32Array {
   const begin = places.findIndex((place) => place >= skip);
-  return begin < 0 ? new Uint32Array(0) : places.subarray(begin).map((place) => place - skip);
+  return begin < 0 ? noPlaces : places.subarray(begin).map((place) => place - skip);
 }
 
 /** Every record keeps its time to the millisecond: a broken step would round differently from a later start. */
