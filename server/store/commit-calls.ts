@@ -1,4 +1,6 @@
+import { existsSync } from 'node:fs';
 import type Database from 'better-sqlite3';
+import { makePrivate } from './data-directory.ts';
 import { groupWriter } from './group-writer.ts';
 import type { PackedGroup } from './packed-group.ts';
 import { writeSnapshot } from './snapshot-table.ts';
@@ -21,7 +23,7 @@ export type CommitCalls = {
   readonly close: (nothing: undefined) => void;
 };
 
-/** @param close ends the thread's part: database, lock, port */
+/** @param close gives back database and lock */
 export function commitCalls(database: Database.Database, close: () => void): CommitCalls & Calls {
   return {
     ...journalCalls(database),
@@ -29,9 +31,7 @@ export function commitCalls(database: Database.Database, close: () => void): Com
     rotateSource: (name) => rotateSource(database, name),
     revokeSource: ({ name, at }) => revokeSource(database, name, at),
     noteUse: ({ id, at }) => noteUse(database, id, at),
-    backup: async (path) => {
-      await database.backup(path);
-    },
+    backup: (path) => backupTo(database, path),
     close,
   };
 }
@@ -53,4 +53,10 @@ function journalCalls(database: Database.Database): Pick<CommitCalls, 'commit' |
     commit: (group) => unlessFailed(() => write(group)),
     keepSnapshot: (snapshot) => unlessFailed(() => writeSnapshot(database, snapshot)),
   };
+}
+
+async function backupTo(database: Database.Database, path: string): Promise<void> {
+  if (existsSync(path)) throw new StoreError('input-output', `The file ${path} exists: name one that does not.`);
+  makePrivate(path);
+  await database.backup(path);
 }

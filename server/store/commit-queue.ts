@@ -14,6 +14,9 @@ interface Settle {
 
 type Waiting = Settle & ({ readonly kind: 'group'; readonly group: WaitingGroup } | { readonly kind: 'snapshot'; readonly snapshot: Snapshot });
 
+/** The part of the channel that is needed to commit. */
+export type Committing = Pick<WorkerChannel<CommitCalls & Calls>, 'call'>;
+
 export interface CommitLimits {
   readonly groupBytes: number;
   readonly groupEntries: number;
@@ -21,7 +24,7 @@ export interface CommitLimits {
 
 /** Groups and snapshots on their way to the committing thread, in order; groups that wait share a transaction. */
 export class CommitQueue {
-  readonly #channel: WorkerChannel<CommitCalls & Calls>;
+  readonly #channel: Committing;
   readonly #limits: CommitLimits;
   readonly #waiting: Waiting[] = [];
   #underWay = 0;
@@ -29,7 +32,7 @@ export class CommitQueue {
   /** The newest group or snapshot given; all before it are settled when it is. */
   #last: Promise<void> | undefined;
 
-  constructor(channel: WorkerChannel<CommitCalls & Calls>, limits: CommitLimits) {
+  constructor(channel: Committing, limits: CommitLimits) {
     this.#channel = channel;
     this.#limits = limits;
   }

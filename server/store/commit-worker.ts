@@ -1,4 +1,4 @@
-import { parentPort, workerData } from 'node:worker_threads';
+import { workerData } from 'node:worker_threads';
 import type Database from 'better-sqlite3';
 import { commitCalls } from './commit-calls.ts';
 import type { DataDirectory } from './data-directory.ts';
@@ -25,7 +25,6 @@ answerCalls(() => {
   const close = (): void => {
     database?.close();
     unlock();
-    parentPort?.close();
   };
   try {
     database = openToWrite(directory.database, mostPages);

@@ -28,7 +28,8 @@ export function dataDirectory(path: string): DataDirectory {
   return files;
 }
 
-function makePrivate(file: string): void {
+/** Makes a file where there is none and takes the rights of all but its owner away. */
+export function makePrivate(file: string): void {
   closeSync(openSync(file, 'a', 0o600));
   if ((statSync(file).mode & 0o077) !== 0) chmodSync(file, 0o600);
 }

@@ -26,7 +26,7 @@ export type ReadCalls = {
   readonly close: (nothing: undefined) => void;
 };
 
-/** @param close ends the thread's part: database, port */
+/** @param close gives back the database */
 export function readCalls(database: Database.Database, close: () => void): ReadCalls & Calls {
   const journal = journalReader(database);
   return {

@@ -1,4 +1,4 @@
-import { parentPort, workerData } from 'node:worker_threads';
+import { workerData } from 'node:worker_threads';
 import type { DataDirectory } from './data-directory.ts';
 import { openToRead } from './database.ts';
 import { readCalls } from './read-calls.ts';
@@ -6,9 +6,5 @@ import { answerCalls } from './worker-answers.ts';
 
 answerCalls(() => {
   const database = openToRead((workerData as DataDirectory).database);
-  const close = (): void => {
-    database.close();
-    parentPort?.close();
-  };
-  return { opened: undefined, calls: readCalls(database, close) };
+  return { opened: undefined, calls: readCalls(database, () => void database.close()) };
 });

@@ -28,7 +28,7 @@ export function handingOver<T extends object>(answer: T, buffers: readonly Trans
 }
 
 /**
- * Answers the calls of the thread that started this one, in the order they come in.
+ * Answers the calls of the thread that started this one, in the order they come in; the thread ends after 'close'.
  *
  * @param start opens what the calls need; its failure is the answer to the start
  */
@@ -50,6 +50,7 @@ export function answerCalls<T>(start: () => { readonly opened: T; readonly calls
         const answer = (calls[name] as (argument: unknown) => unknown)(argument);
         if (answer instanceof Promise) answer.then((value) => reply(ask, value), (cause: unknown) => fail(ask, cause));
         else reply(ask, answer);
+        if (name === 'close') port.close();
       } catch (cause) {
         fail(ask, cause);
       }
