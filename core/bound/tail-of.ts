@@ -1,4 +1,4 @@
-import { exactDecimal } from '../numerics/exact-decimal.ts';
+import { decimalComplement } from '../numerics/exact-decimal.ts';
 import type { Tail } from '../units.ts';
 import { OutOfDomain, requireInside } from './out-of-domain.ts';
 
@@ -13,10 +13,8 @@ import { OutOfDomain, requireInside } from './out-of-domain.ts';
  * @source own derivation
  */
 export function tailOfConfidence(confidence: number | string): Tail {
-  const decimal = exactDecimal(confidence);
-  if (decimal === undefined) throw new OutOfDomain('confidence', confidence, 'a decimal number above 0 and below 1');
-  const complement = 10n ** BigInt(decimal.scale) - decimal.digits;
-  const tail = Number(`${String(complement)}e-${decimal.scale}`);
+  const tail = decimalComplement(confidence);
+  if (tail === undefined) throw new OutOfDomain('confidence', confidence, 'a decimal number above 0 and below 1');
   requireInside('tail', tail);
   return tail as Tail;
 }

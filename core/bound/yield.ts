@@ -1,5 +1,7 @@
+import { decimalComplement } from '../numerics/exact-decimal.ts';
 import type { Fraction, Tail } from '../units.ts';
 import { fractionLower, fractionUpper, requireSample } from './nonconforming-fraction.ts';
+import { OutOfDomain } from './out-of-domain.ts';
 
 /**
  * Exact lower bound on a line's yield, from the conforming side, so that it keeps all its digits
@@ -28,4 +30,17 @@ export function yieldLower(nonconforming: number, inspected: number, tail: Tail)
 export function yieldUpper(nonconforming: number, inspected: number, tail: Tail): Fraction {
   requireSample(nonconforming, inspected, tail);
   return fractionUpper(inspected - nonconforming, inspected, tail);
+}
+
+/**
+ * The nonconforming fraction that a guaranteed yield allows, complemented in decimals: a yield of at
+ * least 0.985 means at most 0.015 nonconforming, so the limits of `critical-count` serve both.
+ *
+ * @param yieldLine above 0, below 1
+ * @throws OutOfDomain
+ */
+export function lineOfYield(yieldLine: number): Fraction {
+  const line = decimalComplement(yieldLine);
+  if (line === undefined || !(line > 0)) throw new OutOfDomain('yieldLine', yieldLine, 'a number above 0 and below 1');
+  return line as Fraction;
 }

@@ -17,3 +17,10 @@ export function exactDecimal(value: number | string): ExactDecimal | undefined {
   const exact = shift >= 0 ? digits : digits * 10n ** BigInt(-shift);
   return exact > 0n && exact < 10n ** BigInt(scale) ? { digits: exact, scale } : undefined;
 }
+
+/** 1 - value in decimal digits, as the nearest double; undefined when the value is no decimal above 0 and below 1. */
+export function decimalComplement(value: number | string): number | undefined {
+  const decimal = exactDecimal(value);
+  if (decimal === undefined) return undefined;
+  return Number(`${String(10n ** BigInt(decimal.scale) - decimal.digits)}e-${decimal.scale}`);
+}

@@ -41,6 +41,19 @@ export function gammaLowerRatio(a: number, mean: number): number {
   return sum / a;
 }
 
+/**
+ * P(G > mean) of a gamma distribution of shape a; for a chi-square value c with f degrees of freedom
+ * take a = f/2 and mean = c/2.
+ *
+ * @param a above 0
+ * @param mean 0 or more
+ */
+export function gammaUpperTail(a: number, mean: number): number {
+  if (mean === 0) return 1;
+  const density = Math.exp(lnGammaDensity(a, mean));
+  return mean < a ? 1 - density * gammaLowerRatio(a, mean) : density * gammaUpperRatio(a, mean);
+}
+
 function sumDownwards(a: number, mean: number): number {
   let term = 1;
   let sum = 1;

@@ -1,4 +1,4 @@
-import { demonstrationUnits } from '../../core/bound/critical-count.ts';
+import { demonstrationUnits, violationUnits } from '../../core/bound/critical-count.ts';
 import { lotDemonstrationUnits } from '../../core/bound/critical-lot.ts';
 import { lotLower, lotUpper } from '../../core/bound/finite-lot.ts';
 import { jeffreysLower, jeffreysUpper } from '../../core/bound/jeffreys.ts';
@@ -7,6 +7,7 @@ import { fractionLower, fractionUpper } from '../../core/bound/nonconforming-fra
 import { jeffreysRateLower, jeffreysRateUpper, rateLower, rateUpper } from '../../core/bound/rate.ts';
 import { stoppedFractionLower, stoppedFractionUpper } from '../../core/bound/stopped-sampling.ts';
 import { wilsonLower, wilsonUpper } from '../../core/bound/wilson.ts';
+import { demonstrationExposure } from '../../core/bound/critical-exposure.ts';
 import type { Tail } from '../../core/units.ts';
 import type { GridEvaluator, Inputs, PublishedEvaluator } from './evaluator.ts';
 import { bySide, numberOf, tailIn } from './inputs.ts';
@@ -38,6 +39,15 @@ const lot = (row: Inputs): number => {
   const sample = { nonconforming: numberOf(row, 'nonconforming'), sampled: numberOf(row, 'n'), lotSize: numberOf(row, 'lot_size') };
   return bySide(row, { lower: () => lotLower(sample, tailIn(row)), upper: () => lotUpper(sample, tailIn(row)) });
 };
+
+const unitsOfLot = (row: Inputs): number => {
+  const promise = { lotSize: numberOf(row, 'lot_size'), allowed: numberOf(row, 'lot_nonconforming') - 1 };
+  return lotDemonstrationUnits(numberOf(row, 'nonconforming'), promise, tailIn(row));
+};
+
+/** P(X = 0) >= confidence says the same as P(X >= 1) <= 1 - confidence. */
+const unitsWithoutEvent = (row: Inputs): number =>
+  violationUnits(numberOf(row, 'nonconforming') + 1, numberOf(row, 'rate'), tailIn(row));
 
 const bound = (quantity: string, compute: (row: Inputs) => number): GridEvaluator =>
   ({ quantity, answer: 'bound', exact: false, compute });
@@ -91,9 +101,15 @@ export const attributePublished: readonly PublishedEvaluator[] = [
   },
   {
     quantity: 'smallest n with hypergeometric P(X<=nonconforming | lot, D nonconforming) <= 1-confidence',
-    compute: (row) => {
-      const promise = { lotSize: numberOf(row, 'lot_size'), allowed: numberOf(row, 'lot_nonconforming') - 1 };
-      return lotDemonstrationUnits(numberOf(row, 'nonconforming'), promise, tailIn(row));
-    },
+    compute: unitsOfLot,
   },
+  {
+    quantity: 'largest n with P(X=0 | n, rate) >= confidence',
+    compute: unitsWithoutEvent,
+  },
+  {
+    quantity: /^smallest n with Poisson P\(0 \| n\*[\d.]+\) <= 1-confidence$/,
+    compute: (row) => Math.ceil(demonstrationExposure(numberOf(row, 'nonconforming'), numberOf(row, 'rate'), tailIn(row))),
+  },
+  { quantity: 'rule of three: n times the 95 % upper bound for 0 of n', compute: (row) => rateUpper(0, 1, tailIn(row)) },
 ];

@@ -16,7 +16,8 @@ export interface Published {
 
 /**
  * Every published row to its printed digits. A row marked as not agreeing is named with its reason;
- * what core finds there is held against the recomputed value instead.
+ * what core finds there is held against the recomputed value instead. The relative error that is
+ * reported is always the one against the recomputed value; the printed one is rounded.
  */
 export function checkPublished(rows: readonly Published[]): readonly Outcome[] {
   return rows.flatMap((row): readonly Outcome[] => {
@@ -26,7 +27,7 @@ export function checkPublished(rows: readonly Published[]): readonly Outcome[] {
     const outcome = outcomeOf(`${name}: printed ${row.value_text}`, () => {
       const found = evaluator.compute(row.inputs, row.quantity);
       if (!row.agrees) return { ...against(found, row.recomputed), found: String(found) };
-      return { error: relativeError(found, Number(row.value_text)), within: asPrinted(found, row), found: String(found) };
+      return { ...against(found, row.recomputed), within: asPrinted(found, row), found: String(found) };
     });
     if (row.agrees || outcome.kind !== 'met') return [outcome];
     return [{ kind: 'disputed', row: name, reason: reasonOf(row) }];

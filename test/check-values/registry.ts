@@ -1,3 +1,4 @@
+import { attributeVectors } from './attribute-vectors.ts';
 import { attributeGrids, attributePublished } from './attribute.ts';
 import type { GridEvaluator, PublishedEvaluator, VectorEvaluator } from './evaluator.ts';
 import { measurementGrids, measurementPublished } from './measurements.ts';
@@ -5,7 +6,7 @@ import { sequentialVectors } from './sequential.ts';
 
 const grids = [...attributeGrids, ...measurementGrids];
 const published = [...attributePublished, ...measurementPublished];
-const vectors = [...sequentialVectors];
+const vectors = [...attributeVectors, ...sequentialVectors];
 
 export function gridEvaluatorOf(quantity: string): GridEvaluator | undefined {
   return grids.find((evaluator) => evaluator.quantity === quantity);
