@@ -11,8 +11,8 @@ export function settle(levels: number[], tuning: DetectorTuning, trials: number,
   for (let k = 0; k < levels.length; k++) {
     const fall = (tuning.down[k] ?? NaN) * weight;
     const lost = -Math.expm1(-fall * trials);
-    const level = levels[k] ?? NaN;
-    levels[k] = level * (1 - lost) + (weight * lost) / Math.expm1(fall);
+    const rest = weight === 1 ? (tuning.rests[k] ?? NaN) : weight / Math.expm1(fall);
+    levels[k] = (levels[k] ?? NaN) * (1 - lost) + rest * lost;
   }
 }
 

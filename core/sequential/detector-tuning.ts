@@ -13,7 +13,9 @@ export interface DetectorTuning {
   readonly once: readonly number[];
   /** level at which it alarms: the units (or exposure) between false calls that are guaranteed */
   readonly threshold: number;
-  /** level it rests at while nothing is found */
+  /** level each ratio rests at while units pass one by one and nothing is found */
+  readonly rests: readonly number[];
+  /** their average: where the detector rests */
   readonly rest: number;
 }
 
@@ -34,9 +36,10 @@ export function fractionDetector(baseline: number, unitsBetweenFalseCalls: numbe
   requireRatios(watched, 1 / baseline);
   const down = watched.map((ratio) => Math.log1p(-baseline) - Math.log1p(-ratio * baseline));
   const up = watched.map((ratio, k) => Math.log(ratio) + (down[k] ?? NaN));
-  const rest = down.reduce((sum, b) => sum + 1 / Math.expm1(b), 0) / watched.length;
+  const rests = down.map((b) => 1 / Math.expm1(b));
+  const rest = averageOf(rests);
   requireAbove('unitsBetweenFalseCalls', unitsBetweenFalseCalls, rest);
-  return { down, up, once: watched, threshold: unitsBetweenFalseCalls, rest };
+  return { down, up, once: watched, threshold: unitsBetweenFalseCalls, rests, rest };
 }
 
 /**
@@ -54,9 +57,14 @@ export function rateDetector(baseline: number, exposureBetweenFalseCalls: number
   requireRatios(ratios, Infinity);
   const down = ratios.map((ratio) => (ratio - 1) * baseline);
   const up = ratios.map((ratio) => Math.log(ratio));
-  const rest = down.reduce((sum, b) => sum + 1 / b, 0) / ratios.length;
+  const rest = averageOf(down.map((b) => 1 / b));
   requireAbove('exposureBetweenFalseCalls', exposureBetweenFalseCalls, rest);
-  return { down, up, once: up.map((u, k) => Math.exp(u - (down[k] ?? NaN))), threshold: exposureBetweenFalseCalls, rest };
+  const once = up.map((u, k) => Math.exp(u - (down[k] ?? NaN)));
+  return { down, up, once, threshold: exposureBetweenFalseCalls, rests: down.map((b) => 1 / Math.expm1(b)), rest };
+}
+
+function averageOf(levels: readonly number[]): number {
+  return levels.reduce((sum, level) => sum + level, 0) / levels.length;
 }
 
 function requireRatios(ratios: readonly number[], below: number): void {
