@@ -11,5 +11,5 @@ export function foundText(value: unknown): string {
   if (value === undefined || value === null) return 'nothing';
   if (typeof value === 'string') return `'${value.length > 58 ? `${value.slice(0, 57)}…` : value}'`;
   if (Array.isArray(value)) return value.length === 0 ? 'an empty list' : 'a list';
-  return typeof value === 'object' ? 'a mapping' : String(value as number | boolean);
+  return typeof value === 'number' || typeof value === 'boolean' ? String(value) : 'a mapping';
 }

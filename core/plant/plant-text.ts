@@ -1,4 +1,4 @@
-import { Composer, LineCounter, Parser, type CST, type Document } from 'yaml';
+import { Composer, LineCounter, Parser, type CST } from 'yaml';
 import { fault, type Result } from '../result.ts';
 import type { PlantFault, Place } from './plant-fault.ts';
 import { plantTreeOf, type PlantTree } from './plant-tree.ts';
@@ -29,9 +29,8 @@ export function plantTreeOfText(text: string): Result<PlantTree, readonly PlantF
   const second = documents[1];
   if (second !== undefined) return refused(placeAt(second.range[0]), 'a second document', 'one document in the file');
   if (broken.length > 0) return fault(broken.map(({ pos, message }) => malformed(placeAt(pos[0]), text, pos[0], message)));
-  return documents[0] === undefined
-    ? refused(whole, 'an empty file', 'a plant file')
-    : plantTreeOf(documents[0] as Document.Parsed, placeAt);
+  const contents = documents[0]?.contents ?? undefined;
+  return contents === undefined ? refused(whole, 'an empty file', 'a plant file') : plantTreeOf(contents, placeAt);
 }
 
 function refused({ line, column }: Place, found: string, expected: string): Result<never, readonly PlantFault[]> {

@@ -1,4 +1,4 @@
-import { isAlias, isMap, isScalar, isSeq, type Document, type Node } from 'yaml';
+import { isAlias, isMap, isScalar, isSeq, type Node } from 'yaml';
 import { fault, ok, type Result } from '../result.ts';
 import { fieldText, type FieldPath } from './field-path.ts';
 import { plantFaultOf, type Complaint, type Place, type PlantFault } from './plant-fault.ts';
@@ -11,7 +11,7 @@ export interface PlantTree {
 }
 
 /** Most values in a file once aliases are written out: stops a small file from growing into a huge one. */
-export const mostValues = 500_000;
+export const mostValues = 250_000;
 
 const deepest = 32;
 /** Names with a meaning of their own in the language: as fields they would be lost without a word. */
@@ -19,11 +19,11 @@ const reserved: ReadonlySet<string> = new Set(['__proto__', 'constructor', 'prot
 
 /** Turns a parsed document into plain values; duplicate names, unknown aliases and odd names are faults. */
 export function plantTreeOf(
-  document: Document.Parsed,
+  contents: Node,
   placeAt: (offset: number) => Place,
 ): Result<PlantTree, readonly PlantFault[]> {
   const walk = new Walk();
-  const value = walk.valueOf(document.contents, [], 0);
+  const value = walk.valueOf(contents, [], 0);
   const placeOf: PlantTree['placeOf'] = (path, part) => {
     for (let length = path.length; length >= 0; length -= 1) {
       const found = walk.offsets.get(fieldText(path.slice(0, length)));
@@ -54,7 +54,10 @@ class Walk {
     if (node?.anchor !== undefined && this.#aliasesOpen === 0) this.#anchors.set(node.anchor, node);
     if (isSeq<Node>(node)) return node.items.map((item, at) => this.valueOf(item, [...path, at], name));
     if (isMap<Node, Node | null>(node)) return this.#mapping(node.items, path, name);
-    return isScalar(node) ? node.value : null;
+    const plain = isScalar(node) ? node.value : null;
+    return plain !== null && typeof plain === 'object'
+      ? this.#complain(path, undefined, 'text, a number, true or false: no other type of value')
+      : plain;
   }
 
   #aliased(source: string, path: FieldPath, name: number): unknown {

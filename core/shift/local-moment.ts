@@ -1,4 +1,4 @@
-import { Temporal } from 'temporal-polyfill';
+import type { Temporal } from 'temporal-polyfill';
 
 /**
  * The moment at which a plant's wall clock first shows a local time or a later one.
