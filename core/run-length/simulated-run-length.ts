@@ -1,0 +1,132 @@
+import { requireInside, requireWhole } from '../bound/out-of-domain.ts';
+import type { Uniform } from './seeded-uniform.ts';
+import type { Watch } from './watch.ts';
+
+/** A mean with its standard error, from the runs finished so far. */
+export interface SimulatedUnits {
+  /** mean units to the alarm; NaN before the first run is finished */
+  readonly units: number;
+  /** standard error of that mean; NaN before the second run is finished */
+  readonly standardError: number;
+  readonly runs: number;
+  /** share of the wanted runs that are finished, 0 to 1 */
+  readonly done: number;
+}
+
+export interface Simulation {
+  readonly watch: Watch;
+  /** runs wanted, whole, 1 or more */
+  readonly runs: number;
+  /** numbers with a fixed seed */
+  readonly uniform: Uniform;
+}
+
+/** Nonconforming units simulated between two reports: a few milliseconds. */
+const stepsPerReport = 20_000;
+/** Nonconforming units between two changes tried on the same long good run. */
+const apart = 100;
+
+/**
+ * Mean units from a fresh start to the alarm at one rate, by simulating nonconforming units only. A
+ * generator: it hands over the figure so far every few milliseconds, and whoever runs it stops when
+ * the figure is good enough, or when asked to.
+ *
+ * @param rate nonconforming fraction, above 0, below 1
+ * @throws OutOfDomain
+ * @source event-driven simulation; the gap to the next nonconforming unit is geometric
+ */
+export function* simulateRunLength({ watch, runs, uniform }: Simulation, rate: number): Generator<SimulatedUnits, SimulatedUnits, undefined> {
+  requireInside('rate', rate);
+  requireWhole('runs', runs, 1);
+  const tally = new Tally(runs);
+  const conforming = gapsAt(rate, uniform);
+  watch.reset();
+  let units = 0;
+  for (let steps = 1; tally.count < runs; steps++) {
+    const gap = conforming();
+    units += gap + 1;
+    if (watch.strike(gap)) {
+      tally.add(units);
+      watch.reset();
+      units = 0;
+    }
+    if (steps % stepsPerReport === 0) yield tally.figure();
+  }
+  return tally.figure();
+}
+
+/**
+ * Mean units to the alarm after a change at any moment, once the line has long run at its normal rate
+ * without one. Reports as `simulateRunLength`.
+ *
+ * @param normal nonconforming fraction before the change, above 0, below 1
+ * @param rate and after it, likewise
+ * @throws OutOfDomain
+ * @source event-driven simulation: one long good run, left for a change every hundred nonconforming units
+ */
+export function* simulateDelay({ watch, runs, uniform }: Simulation, normal: number, rate: number): Generator<SimulatedUnits, SimulatedUnits, undefined> {
+  requireInside('normal', normal);
+  requireInside('rate', rate);
+  requireWhole('runs', runs, 1);
+  const tally = new Tally(runs);
+  const before = gapsAt(normal, uniform);
+  const after = gapsAt(rate, uniform);
+  watch.reset();
+  let sinceAlarm = 0;
+  for (let steps = 1; tally.count < runs; steps++) {
+    if (watch.strike(before())) {
+      watch.reset();
+      sinceAlarm = 0;
+    } else if (++sinceAlarm % apart === 0) {
+      watch.mark();
+      /* The change may come at any unit, so part of a good stretch lies behind it; the geometric gap has no memory. */
+      let gap = after();
+      let units = gap + 1;
+      let alarm = watch.strike(before() + gap);
+      while (!alarm) {
+        gap = after();
+        units += gap + 1;
+        alarm = watch.strike(gap);
+        if (++steps % stepsPerReport === 0) yield tally.figure();
+      }
+      tally.add(units);
+      watch.back();
+    }
+    if (steps % stepsPerReport === 0) yield tally.figure();
+  }
+  return tally.figure();
+}
+
+/** Conforming units before the next nonconforming one. */
+function gapsAt(rate: number, uniform: Uniform): () => number {
+  const perUnit = 1 / Math.log1p(-rate);
+  return () => Math.floor(Math.log(uniform()) * perUnit);
+}
+
+class Tally {
+  count = 0;
+  #mean = 0;
+  #squares = 0;
+  readonly #wanted: number;
+
+  constructor(wanted: number) {
+    this.#wanted = wanted;
+  }
+
+  add(units: number): void {
+    this.count += 1;
+    const off = units - this.#mean;
+    this.#mean += off / this.count;
+    this.#squares += off * (units - this.#mean);
+  }
+
+  figure(): SimulatedUnits {
+    const { count } = this;
+    return {
+      units: count > 0 ? this.#mean : NaN,
+      standardError: Math.sqrt(this.#squares / (count - 1) / count),
+      runs: count,
+      done: count / this.#wanted,
+    };
+  }
+}
