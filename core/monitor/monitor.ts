@@ -3,6 +3,7 @@ import { clockMoment, RecordMoment } from '../evidence/moment.ts';
 import type { Plant } from '../plant/plant.ts';
 import type { RefusalCode } from '../protocol/refusals.ts';
 import type { Correction, Frame, InspectionPart, LineMark, Lost, Part } from '../record/part.ts';
+import { timeAt } from '../record/time-column.ts';
 import { tailOf } from '../record/tail-of.ts';
 import { ShiftCalendar } from '../shift/shift-calendar.ts';
 import type { EpochMs } from '../units.ts';
@@ -11,10 +12,10 @@ import type { ClosedMinute } from './closed-minute.ts';
 import { Clockwork } from './clockwork.ts';
 import type { Happening } from './happening.ts';
 import type { NotCounted, Receipt } from './receipt.ts';
-import { Routes } from './routes.ts';
+import { Routes, type KnownRoute } from './routes.ts';
 import type { SourceLedger } from './source-ledger.ts';
 import { SourceList } from './source-list.ts';
-import { cutByMinute } from './stretches.ts';
+import { cutByMinute, type Stretch } from './stretches.ts';
 import { StreamList } from './stream-list.ts';
 import { Watch } from './watch.ts';
 
@@ -42,6 +43,8 @@ export class Monitor {
   readonly #clockwork: Clockwork;
   readonly #routes: Routes;
   readonly #moment = new RecordMoment();
+  /** Whether the plant clock follows the records of the frame in hand. */
+  #follows = false;
   #happenings: Happening[] = [];
   #minutes: ClosedMinute[] = [];
 
@@ -86,9 +89,15 @@ export class Monitor {
     return decided;
   }
 
-  /** Takes a frame of a source, at plant clock `at`. A frame that is not taken changes nothing but the clock. */
-  takeFrame(source: string, frame: Frame, at: EpochMs): Receipt {
-    this.advance(at);
+  /**
+   * Takes a frame of a source. A frame that is not taken changes nothing but the clock.
+   *
+   * @param at plant clock; undefined where the clock follows the records: it then goes on record by record, so that
+   *           how records were cut into frames decides nothing
+   */
+  takeFrame(source: string, frame: Frame, at: EpochMs | undefined): Receipt {
+    if (at !== undefined) this.advance(at);
+    this.#follows = at === undefined;
     const { index, ledger } = this.sources.of(source);
     const admission = ledger.place(frame.first, frame.records);
     switch (admission.kind) {
@@ -151,6 +160,7 @@ export class Monitor {
     const notCounted: NotCounted[] = [];
     let sequence = frame.first;
     for (const part of frame.parts) {
+      if (this.#follows && !('time' in part)) this.advance(part.at as EpochMs);
       this.#takePart(part, source, sequence, late, notCounted, ledger);
       sequence += part.records;
     }
@@ -187,15 +197,24 @@ export class Monitor {
       this.#setAside(notCounted, sequence, part.records, route.kind, route.kind === 'unknown-product' ? part.origin.station : undefined);
       return;
     }
-    const { stretches, implausible } = cutByMinute(part.time, part.records, this.now + believedAheadMs);
+    const { stretches, implausible } = cutByMinute(part.time, part.records, this.#follows ? Infinity : this.now + believedAheadMs);
     for (const { from, to } of implausible) this.#setAside(notCounted, sequence + from, to - from, 'time-implausible', part.origin.station);
-    route.activity.at = this.now;
-    route.activity.product = part.origin.product;
+    if (stretches.length === 0) return;
     this.#moment.begin(this.sources.nameOf(source), sequence, part.time);
+    if (this.#follows) for (const stretch of stretches) this.#takeStretches(route, part, [stretch], source, sequence, late);
+    else this.#takeStretches(route, part, stretches, source, sequence, late);
+  }
+
+  #takeStretches(route: KnownRoute, part: InspectionPart, stretches: readonly Stretch[], source: number, sequence: number, late: boolean): void {
+    const heardUntil = this.#follows ? timeAt(part.time, (stretches[0] as Stretch).to - 1) : this.now;
+    if (this.#follows) this.advance(timeAt(part.time, (stretches[0] as Stretch).from) as EpochMs);
+    route.activity.at = Math.max(this.now, heardUntil);
+    route.activity.product = part.origin.product;
     for (const { watch, station } of route.watches) {
       watch.take(part, stretches, { source, firstSequence: sequence, station }, this.#moment, late);
       if (late) watch.fillLost(source, sequence, part.records, this.#moment);
     }
+    this.advance(heardUntil as EpochMs);
     if (route.watches.length > 0) this.#clockwork.minuteOpen();
   }
 

@@ -158,7 +158,8 @@ export class Watch {
   /** Its line said something of itself. A line that stands is not silent; a lot that starts begins a lot's window. */
   lineMarked(mark: LineMark, moment: Moment): void {
     this.changed = true;
-    if (mark.kind === 'line-stopped') this.#heard(moment);
+    const movedOn = mark.kind === 'changeover' && this.guarantee.product !== undefined && mark.product !== this.guarantee.product;
+    if (mark.kind === 'line-stopped' || movedOn) this.#heard(moment);
     if (mark.kind === 'lot-start') {
       this.evidence.setLotSize?.(mark.size);
       if (this.#period.of(moment.at, mark.lot) === 'begins anew' && this.guarantee.window.kind === 'lot') this.#beginAnew(moment);
