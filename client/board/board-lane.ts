@@ -1,0 +1,102 @@
+import { html, LitElement, nothing, type TemplateResult } from 'lit';
+import { isWaiting } from '../attention.ts';
+import { written, type Formats } from '../format.ts';
+import { laneSentence } from '../lane-sentence.ts';
+import { base } from '../look/base.ts';
+import { stateMark } from '../parts/state-mark.ts';
+import { AcknowledgeRequest } from '../alarms/acknowledge-request.ts';
+import { guaranteePath } from '../route.ts';
+import { promisedLimit, ruleWord, standing, stateWord } from '../words.ts';
+import type { AllowanceScale } from './allowance-scale.ts';
+import { boardLaneStyle } from './board-lane-style.ts';
+import type { LaneSize } from './lane-heights.ts';
+import type { Lane } from './lane.ts';
+import { lanePlot } from './lane-plot.ts';
+import { lanePlotStyle } from './lane-plot-style.ts';
+
+/** How a lane is laid out: columns at a desk, the same with fewer and larger words on a wall, a card on a phone. */
+export type LaneForm = 'desk' | 'wall' | 'card';
+
+/** One guarantee's lane: name, drawing, state, figures, what a person may do. */
+export class BoardLane extends LitElement {
+  static override properties = {
+    lane: { attribute: false },
+    scale: { attribute: false },
+    height: { attribute: false },
+    size: { reflect: true },
+    form: { reflect: true },
+    tone: { reflect: true },
+    formats: { attribute: false },
+    plantNow: { attribute: false },
+  };
+
+  static override styles = [base, lanePlotStyle, boardLaneStyle];
+
+  declare lane: Lane | undefined;
+  declare scale: AllowanceScale | undefined;
+  declare height: number;
+  declare size: LaneSize;
+  declare form: LaneForm;
+  declare tone: Lane['tone'];
+  declare formats: Formats | undefined;
+  declare plantNow: number;
+
+  protected override render(): TemplateResult | typeof nothing {
+    const { lane, scale, formats } = this;
+    if (lane === undefined || scale === undefined || formats === undefined) return nothing;
+    return html`<article part="lane">
+      ${this.#who(lane, formats)}
+      <div class="plot">
+        <svg class="drawing" width=${scale.width} height=${this.height} aria-hidden="true">${lanePlot({ scale, height: this.height, view: lane.view, tone: lane.tone })}</svg>
+      </div>
+      ${this.#state(lane, formats)} ${this.#figure(lane, formats)} ${this.form === 'wall' ? nothing : this.#act(lane, formats)}
+    </article>`;
+  }
+
+  #who({ card, view }: Lane, formats: Formats): TemplateResult {
+    const place = [card.lineName, card.stationNames.join(' to ')].filter((name) => name !== '').join(', ');
+    return html`<div class="who">
+      <a href=${guaranteePath(card.id)} aria-label=${this.lane === undefined ? card.name : laneSentence(formats, this.lane, this.plantNow)}>${card.name}</a>
+      <span class="sub">${this.form === 'wall' ? card.lineName : place}</span>
+      ${card.safetyRelevant ? html`<span class="sub safety">Safety-relevant${this.form === 'wall' ? '' : ': advisory only'}</span>` : nothing}
+      ${view.lot === undefined || this.size !== 'large' || card.safetyRelevant ? nothing : html`<span class="sub">Lot ${view.lot}</span>`}
+    </div>`;
+  }
+
+  #state({ card, view, alarms }: Lane, formats: Formats): TemplateResult {
+    const alarm = alarms[0];
+    return html`<div class="state">
+      <b class="word"><svg class="mark" viewBox="0 0 16 16" aria-hidden="true">${stateMark(view.state)}</svg>${stateWord[view.state]}</b>
+      <span class="sub standing">${standing(formats, card, view)}</span>
+      ${alarm === undefined ? nothing : html`<span class="sub alarm">Alarm: ${ruleWord[alarm.rule].toLowerCase()}</span>`}
+    </div>`;
+  }
+
+  #figure({ card, view }: Lane, formats: Formats): TemplateResult {
+    const gathering = view.state === 'gathering' && card.window.kind === 'units' && view.figures['inspected'] !== undefined;
+    const figure = formats.figureBesideLine(card, view.bound);
+    return html`<div class="figure">
+      ${gathering
+        ? html`<b>${formats.percent(view.figures['filled'] ?? 0)}</b><span class="sub">of the window filled</span>`
+        : html`<b>${written(figure)}</b><span class="sub">${promisedLimit(formats, card)}</span>`}
+      <span class="sub level">${formats.confidence(card.confidence)}, ${view.lookRule}</span>
+    </div>`;
+  }
+
+  #act({ view, alarms }: Lane, formats: Formats): TemplateResult {
+    const waiting = alarms.find(isWaiting);
+    const known = alarms.find((alarm) => alarm.state.kind === 'acknowledged');
+    const age = view.newest === undefined ? 'no record yet' : `${formats.span(this.plantNow - view.newest)} ago`;
+    return html`<div class="act">
+      ${waiting === undefined
+        ? nothing
+        : html`<button @click=${() => this.dispatchEvent(new AcknowledgeRequest(waiting))} aria-label="Acknowledge: ${this.lane?.card.name ?? ''}, ${ruleWord[waiting.rule]}">Acknowledge</button>`}
+      ${waiting === undefined && known?.state.kind === 'acknowledged'
+        ? html`<span class="sub known">Acknowledged, ${known.state.acknowledgement.by}</span>`
+        : nothing}
+      <span class="sub age">${age}</span>
+    </div>`;
+  }
+}
+
+customElements.define('board-lane', BoardLane);

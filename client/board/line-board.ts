@@ -1,0 +1,134 @@
+import { html, LitElement, nothing, type PropertyValues, type TemplateResult } from 'lit';
+import { repeat } from 'lit/directives/repeat.js';
+import type { LivePicture } from '../feed/live-picture.ts';
+import type { Formats } from '../format.ts';
+import { base } from '../look/base.ts';
+import { styled } from '../look/styled.ts';
+import { counted } from '../words.ts';
+import './board-lane.ts';
+import { boardPlan, type BoardPlan } from './board-plan.ts';
+import { BoardRoom } from './board-room.ts';
+import { boardScale } from './board-scale.ts';
+import { lanesOf, type Lane } from './lane.ts';
+import { groupedByLine, nextOrder, orderedLanes, type LaneGroup } from './lane-order.ts';
+import { lanePlotStyle } from './lane-plot-style.ts';
+import { laneTops, slideLanes } from './lane-slide.ts';
+import { lineBoardStyle } from './line-board-style.ts';
+import { OrderHold } from './order-hold.ts';
+
+/** All guarantees of the plant, one lane each, sharing one guarantee line; trouble rises to the top. */
+export class LineBoard extends LitElement {
+  static override properties = {
+    picture: { attribute: false },
+    formats: { attribute: false },
+    plantNow: { attribute: false },
+    wall: { type: Boolean, reflect: true },
+    grouped: { type: Boolean },
+  };
+
+  static override styles = [base, lanePlotStyle, lineBoardStyle];
+
+  declare picture: LivePicture | undefined;
+  declare formats: Formats | undefined;
+  declare plantNow: number;
+  declare wall: boolean;
+  declare grouped: boolean;
+
+  readonly #room = new BoardRoom(this);
+  readonly #hold = new OrderHold(this, () => performance.now());
+  #order: readonly string[] = [];
+  #held = false;
+  #lanes: readonly Lane[] = [];
+  #tops: ReadonlyMap<string, number> = new Map();
+
+  protected override willUpdate(changed: PropertyValues): void {
+    if (this.picture === undefined) return;
+    if (changed.has('picture')) this.#lanes = lanesOf(this.picture);
+    const wanted = nextOrder(this.#order, this.#lanes);
+    this.#held = wanted !== this.#order && wanted.length === this.#order.length && this.#hold.holds;
+    if (!this.#held) this.#order = wanted;
+    const list = this.renderRoot.querySelector('.lanes');
+    this.#tops = list === null ? new Map() : laneTops(list);
+  }
+
+  protected override updated(): void {
+    const list = this.renderRoot.querySelector('.lanes');
+    if (list !== null) slideLanes(list, this.#tops);
+  }
+
+  protected override render(): TemplateResult | typeof nothing {
+    const { picture, formats } = this;
+    if (picture === undefined || formats === undefined) return nothing;
+    if (picture.cards.length === 0) return this.#noGuarantees();
+    const lanes = orderedLanes(this.#order, this.#lanes);
+    const groups = this.grouped ? groupedByLine(lanes) : [{ line: '', lanes }];
+    const room = this.#room.room;
+    const typePx = room?.typePx ?? 15;
+    const headings = this.grouped ? groups.length * typePx * 2.2 : 0;
+    const plan = room === undefined ? undefined : boardPlan(room, this.#lanes, this.wall, headings + typePx * (this.wall ? 1 : 3.6));
+    return html`
+      ${this.#lanes.every((lane) => lane.view.newest === undefined) ? this.#noRecords() : nothing}
+      <div class="board sheet" ${styled({ '--columns': plan?.columns ?? '1fr' })}>
+        ${plan === undefined ? html`<div class="lanes"></div>` : this.#board(plan, groups, formats)}
+      </div>
+      ${this.wall ? nothing : this.#foot(formats)}
+    `;
+  }
+
+  #board(plan: BoardPlan, groups: readonly LaneGroup[], formats: Formats): TemplateResult {
+    const typePx = plan.form === 'wall' ? (this.#room.room?.typePx ?? 15) : (this.#room.room?.typePx ?? 15) * 0.86;
+    return html`
+      <div class=${`scale ${plan.form}`}>
+        <span class="quiet">Guarantee</span>
+        <div>${boardScale(plan.scale, formats, typePx)}</div>
+        <span class="quiet">Evidence</span>
+        <span class="quiet end">Bound</span>
+        ${plan.form === 'desk' ? html`<span class="quiet end">Newest record</span>` : nothing}
+      </div>
+      <div class="lanes">
+        ${groups.map((group) => html`
+          ${group.line === '' ? nothing : html`<h2 class="group">${group.line}<span class="quiet">${this.#groupWords(group.lanes, formats)}</span></h2>`}
+          <ol aria-label=${group.line === '' ? 'Guarantees, most allowance used first' : `Guarantees of ${group.line}`}>
+            ${repeat(group.lanes, (lane) => lane.card.id, (lane) => this.#lane(lane, plan, formats))}
+          </ol>`)}
+      </div>`;
+  }
+
+  #lane(lane: Lane, plan: BoardPlan, formats: Formats): TemplateResult {
+    const measure = lane.needsPerson ? plan.loud : plan.calm;
+    const height = plan.form === 'card' ? 'auto' : `${measure.height}px`;
+    return html`<li data-id=${lane.card.id} ${styled({ height, '--lane-type': `${measure.typePx.toFixed(2)}px` })}>
+      <board-lane .lane=${lane} .scale=${plan.scale} .height=${measure.height} .size=${measure.size} .form=${plan.form}
+        .tone=${lane.tone} .formats=${formats} .plantNow=${this.plantNow}></board-lane>
+    </li>`;
+  }
+
+  #groupWords(lanes: readonly Lane[], formats: Formats): string {
+    const needing = lanes.filter((lane) => lane.needsPerson).length;
+    return needing === 0 ? counted(formats, lanes.length, 'guarantee') : `${formats.count(needing)} of ${counted(formats, lanes.length, 'guarantee')} need you`;
+  }
+
+  #foot(formats: Formats): TemplateResult {
+    const levels = [...new Set(this.#lanes.map((lane) => lane.card.confidence))].map((level) => formats.confidence(level));
+    return html`<p class="foot quiet">
+      ${this.#held ? html`<strong>The lanes wait with their new order while you are among them.</strong> ` : nothing}
+      The dot is what was seen, the tip of the whisker the ${levels.length === 1 ? `${levels[0] ?? ''} ` : ''}bound. A tip left of the guarantee line: demonstrated. Small strokes below: where the tip stood in the last hour. An upright mark: the opposite bound has passed the line too. Scale: allowance used, 0 % at the target, 100 % on the line.
+    </p>`;
+  }
+
+  #noGuarantees(): TemplateResult {
+    return html`<section class="empty sheet lanes">
+      <h2>This plant has no guarantees yet</h2>
+      <p>A guarantee says what was promised of a product: a quantity, a side and a value. Name one in the plant file and reload it; its lane appears here.</p>
+    </section>`;
+  }
+
+  #noRecords(): TemplateResult {
+    return html`<section class="empty note sheet">
+      <h2>No records yet</h2>
+      <p>No source has sent a verdict, count or measurement. The lanes below fill as soon as the first one does.</p>
+    </section>`;
+  }
+}
+
+customElements.define('line-board', LineBoard);

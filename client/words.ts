@@ -1,0 +1,126 @@
+import type { Alarm } from '../core/alarm/alarm.ts';
+import type { EvidenceState, LookRule } from '../core/evidence/evidence-state.ts';
+import type { Priority, RuleKind, WindowRule } from '../core/plant/guarantee.ts';
+import type { GuaranteeCard, GuaranteeView } from '../core/view/guarantee-view.ts';
+import { written, type Formats } from './format.ts';
+
+export const stateWord: Readonly<Record<EvidenceState, string>> = {
+  gathering: 'Gathering',
+  demonstrated: 'Demonstrated',
+  undecided: 'Undecided',
+  violated: 'Violated',
+  unknown: 'Unknown',
+};
+
+export const stateMeaning: Readonly<Record<EvidenceState, string>> = {
+  gathering: 'Even a faultless window of this size could not prove the guarantee yet.',
+  demonstrated: 'The bound stands on the good side of the guarantee line.',
+  undecided: 'The proof that the guarantee holds is lost; that it does not hold is not proven.',
+  violated: 'The evidence says that the guarantee does not hold.',
+  unknown: 'Nothing can be said: data are missing or contradictory, or the sum failed.',
+};
+
+export const ruleWord: Readonly<Record<RuleKind, string>> = {
+  crossing: 'Bound crossed the guarantee line',
+  violation: 'Guarantee violated',
+  deterioration: 'Rate has risen',
+  silence: 'No records',
+  'bad-data': 'Bad data',
+};
+
+export const priorityWord: Readonly<Record<Priority, string>> = { high: 'High priority', medium: 'Medium priority', low: 'Low priority' };
+
+export const alarmStateWord: Readonly<Record<Alarm['state']['kind'], string>> = {
+  raised: 'Active, not acknowledged',
+  acknowledged: 'Active, acknowledged',
+  returned: 'Back to normal, not acknowledged',
+  ended: 'Ended',
+};
+
+export const lookMeaning: Readonly<Record<LookRule, string>> = {
+  'one look':
+    'Valid at one look fixed in advance. Whoever looks again and again will see it on the wrong side more often than its level says; the alarm rules allow for that.',
+  'all looks': 'Valid at all looks: it may be read at any moment, as often as you like, and stopped at will.',
+};
+
+export const counted = (formats: Formats, value: number, one: string, many = `${one}s`): string =>
+  `${formats.count(value)} ${value === 1 ? one : many}`;
+
+/** What is counted against the guarantee: units, or nonconformities where exposure is counted. */
+const fault = (card: GuaranteeCard): string => (card.quantity === 'rate' ? 'nonconformity' : 'nonconforming unit');
+const faults = (card: GuaranteeCard): string => (card.quantity === 'rate' ? 'nonconformities' : 'nonconforming units');
+
+/** The line with its side: 'at most 200 ppm'. */
+export const promisedLimit = (formats: Formats, card: GuaranteeCard): string =>
+  `${card.side === 'at-most' ? 'at most' : 'at least'} ${written(formats.figure(card, card.guaranteeLine))}`;
+
+/** What was promised, as a clause: 'at most 200 ppm nonconforming'. */
+export function promiseWords(formats: Formats, card: GuaranteeCard): string {
+  const limit = promisedLimit(formats, card);
+  switch (card.quantity) {
+    case 'nonconforming-fraction':
+      return `${limit} nonconforming`;
+    case 'yield':
+      return `yield ${limit}`;
+    case 'chained-yield':
+      return `yield over ${counted(formats, card.stationNames.length, 'station')} ${limit}`;
+    case 'rate':
+      return limit;
+    case 'mean':
+      return `mean ${limit}`;
+    case 'lot-fraction':
+      return `${limit} of the lot nonconforming`;
+    case 'fraction-beyond-limit': {
+      const beyond = card.specificationLimit;
+      return beyond === undefined ? `${limit} beyond the specification limit` : `${limit} ${beyond.side} ${formats.plain(beyond.value)}`;
+    }
+  }
+}
+
+export function windowWords(formats: Formats, window: WindowRule, card?: Pick<GuaranteeCard, 'quantity'>): string {
+  switch (window.kind) {
+    case 'units':
+      return `the last ${counted(formats, window.units, card?.quantity === 'rate' ? 'record' : 'unit')}`;
+    case 'time':
+      return `the last ${formats.span(window.spanMs)}`;
+    case 'lot':
+      return 'this lot';
+    case 'shift':
+      return 'this shift';
+    case 'run':
+      return 'since evidence was restarted';
+  }
+}
+
+/** The margin in the words of someone who counts units; undefined where there is none to tell. */
+export function marginWords(formats: Formats, card: GuaranteeCard, view: GuaranteeView): string | undefined {
+  const { canTake, conformingToDemonstrate, unitsToGather, clearance } = view.margin;
+  const unit = card.quantity === 'rate' ? 'faultless record' : 'conforming unit';
+  if (unitsToGather !== undefined) return `${counted(formats, unitsToGather, unit)} more until it can be demonstrated`;
+  if (conformingToDemonstrate !== undefined && view.state !== 'demonstrated') {
+    return `Demonstrated again after ${counted(formats, conformingToDemonstrate, unit)} in a row`;
+  }
+  if (canTake !== undefined) {
+    return canTake === 0 ? `Can take no more ${faults(card)}` : `Can take ${counted(formats, canTake, `more ${fault(card)}`, `more ${faults(card)}`)}`;
+  }
+  if (clearance === undefined || card.scale.kind !== 'measure') return undefined;
+  const far = written({ text: formats.plain(Math.abs(clearance)), unit: card.scale.unit });
+  return clearance >= 0 ? `Bound stands ${far} inside the line` : `Bound stands ${far} beyond the line`;
+}
+
+export const driftWord = { rising: 'Bound rising', falling: 'Bound falling', steady: 'Bound steady' } as const;
+
+/** What stands under the state: why it is unknown, or else the margin and where the bound is going. */
+export function standing(formats: Formats, card: GuaranteeCard, view: GuaranteeView): string {
+  if (view.state === 'unknown') return view.remark ?? stateMeaning.unknown;
+  const parts = [marginWords(formats, card, view), view.drift === 'rising' ? 'Bound rising' : undefined];
+  const words = parts.filter((part) => part !== undefined).join('. ');
+  return words === '' ? (view.remark ?? stateMeaning[view.state]) : words;
+}
+
+/** "2 of 8 guarantees need you." */
+export function headline(formats: Formats, needing: number, all: number): string {
+  if (all === 0) return 'No guarantees yet.';
+  if (needing === 0) return all === 1 ? 'The guarantee needs nothing from you.' : `None of ${formats.count(all)} guarantees needs you.`;
+  return `${formats.count(needing)} of ${counted(formats, all, 'guarantee')} ${needing === 1 ? 'needs' : 'need'} you.`;
+}

@@ -1,0 +1,138 @@
+import { createReadStream, existsSync } from 'node:fs';
+import { createServer, type IncomingMessage, type ServerResponse } from 'node:http';
+import type { AddressInfo } from 'node:net';
+import { extname, join } from 'node:path';
+import { WebSocketServer, type WebSocket } from 'ws';
+import type { Alarm } from '../../core/alarm/alarm.ts';
+import { liveProtocol, type LiveChange, type LiveMessage, type LiveWatch } from '../../core/live/message.ts';
+import type { GuaranteeView } from '../../core/view/guarantee-view.ts';
+import { historyOf, pictureOf, stripOf } from './fake-answers.ts';
+import { guaranteesOf, plantStart, snapshotOf, type FakeGuarantee } from './fake-plant.ts';
+
+export interface FakeOptions {
+  readonly guarantees?: number;
+  readonly clockRate?: number;
+  /** No source has sent anything yet. */
+  readonly noRecords?: boolean;
+}
+
+export interface FakeServer {
+  readonly url: string;
+  /** First messages of the dashboards that came, in order. */
+  readonly watches: LiveWatch[];
+  readonly posts: { readonly path: string; readonly body: Readonly<Record<string, string>> }[];
+  readonly tell: (views: readonly GuaranteeView[], alarms?: readonly Alarm[]) => void;
+  readonly view: (id: string) => GuaranteeView;
+  /** Says nothing any more, the sockets stay open. */
+  readonly fallSilent: () => void;
+  /** Cuts every live socket and refuses new ones until `returnLive`. */
+  readonly cutLive: () => void;
+  readonly returnLive: () => void;
+  /** Answers the next posts with this refusal. */
+  readonly refusePosts: (message: string | undefined) => void;
+  readonly stop: () => Promise<void>;
+}
+
+const root = new URL('../../.build/client/', import.meta.url).pathname;
+const types: Readonly<Record<string, string>> = { '.html': 'text/html; charset=utf-8', '.js': 'text/javascript', '.css': 'text/css', '.svg': 'image/svg+xml', '.woff2': 'font/woff2' };
+const policy = "default-src 'self'; connect-src 'self' ws:; style-src 'self'; script-src 'self'; img-src 'self'; font-src 'self'; object-src 'none'; base-uri 'none'";
+
+function sendFile(path: string, response: ServerResponse): void {
+  const file = path !== '/' && existsSync(join(root, path)) ? join(root, path) : join(root, 'index.html');
+  response.writeHead(200, { 'content-type': types[extname(file)] ?? 'application/octet-stream', 'content-security-policy': policy });
+  createReadStream(file).pipe(response);
+}
+
+async function bodyOf(request: IncomingMessage): Promise<Record<string, string>> {
+  let text = '';
+  for await (const chunk of request) text += String(chunk);
+  return JSON.parse(text) as Record<string, string>;
+}
+
+/** The client's other side for tests and pictures: the built files, a scripted plant, the live socket. */
+export async function startFake(options: FakeOptions = {}): Promise<FakeServer> {
+  const bare = (of: FakeGuarantee): FakeGuarantee =>
+    options.noRecords !== true ? of : { card: of.card, view: { ...of.view, state: 'gathering', newest: undefined, estimate: undefined, bound: undefined, oppositeBound: undefined, drift: undefined, figures: { inspected: 0, filled: 0 }, margin: { unitsToGather: 14_978 }, alarmIds: [], warnings: [], lot: undefined, allowance: { estimate: undefined, bound: undefined, opposite: undefined, trail: [] } } };
+  const guarantees = guaranteesOf(options.guarantees ?? 8).map(bare);
+  const first = snapshotOf(guarantees, options.clockRate ?? 1);
+  const views = new Map(first.views.map((view) => [view.id, view]));
+  const alarms = new Map((options.noRecords === true ? [] : first.alarms).map((alarm) => [alarm.id, alarm]));
+  const watches: LiveWatch[] = [];
+  const posts: { path: string; body: Record<string, string> }[] = [];
+  const startedAt = performance.now();
+  const plantNow = (): number => Math.round(plantStart + (performance.now() - startedAt) * (options.clockRate ?? 1));
+  let revision = 1;
+  let refused: string | undefined;
+  let silent = false;
+  let cut = false;
+
+  async function answer(request: IncomingMessage, response: ServerResponse): Promise<void> {
+    const url = new URL(request.url ?? '/', 'http://fake');
+    const json = (value: unknown, status = 200): void => {
+      response.writeHead(status, { 'content-type': 'application/json' }).end(JSON.stringify(value));
+    };
+    if (!url.pathname.startsWith('/api/')) { sendFile(url.pathname, response); return; }
+    const [, , kind, id = '', what] = url.pathname.split('/');
+    if (request.method === 'POST') {
+      const body = await bodyOf(request);
+      posts.push({ path: url.pathname, body });
+      if (refused !== undefined) { json({ message: refused }, 409); return; }
+      if (what === 'acknowledge') acknowledge(Number(id), body);
+      response.writeHead(204).end();
+      return;
+    }
+    if (kind === 'alarms') { json([]); return; }
+    const of = guarantees.find(({ card }) => card.id === decodeURIComponent(id));
+    if (of === undefined) { json({ message: 'no such guarantee' }, 404); return; }
+    const ask = (name: string): number => Number(url.searchParams.get(name));
+    json(what === 'history' ? historyOf(of, ask('from'), ask('to'), ask('points')) : what === 'strip' ? stripOf(of) : pictureOf(of));
+  }
+
+  function acknowledge(id: number, body: Record<string, string>): void {
+    const alarm = alarms.get(id);
+    if (alarm === undefined) return;
+    tell([], [{ ...alarm, state: { kind: 'acknowledged', acknowledgement: { by: body['by'] ?? '', at: plantNow() as never, note: body['note'] ?? '' } } }]);
+  }
+
+  const http = createServer((request, response) => { void answer(request, response); });
+  const live = new WebSocketServer({ noServer: true, handleProtocols: (asked) => (asked.has(liveProtocol) ? liveProtocol : false) });
+  const send = (socket: WebSocket, message: LiveMessage): void => { if (!silent) socket.send(JSON.stringify(message)); };
+  http.on('upgrade', (request, socket, head) => {
+    if (cut || request.url !== '/live') { socket.destroy(); return; }
+    live.handleUpgrade(request, socket, head, (dashboard) => {
+      dashboard.once('message', (data) => {
+        watches.push(JSON.parse((data as Buffer).toString('utf8')) as LiveWatch);
+        send(dashboard, { ...first, revision, at: plantNow(), views: [...views.values()], alarms: [...alarms.values()] });
+      });
+    });
+  });
+
+  function tell(changed: readonly GuaranteeView[], changedAlarms: readonly Alarm[] = []): void {
+    revision += 1;
+    for (const view of changed) views.set(view.id, view);
+    for (const alarm of changedAlarms) alarms.set(alarm.id, alarm);
+    const change: LiveChange = { type: 'change', revision, at: plantNow(), views: changed, alarms: changedAlarms };
+    for (const dashboard of live.clients) send(dashboard, change);
+  }
+
+  const beat = setInterval(() => {
+    for (const dashboard of live.clients) send(dashboard, { type: 'beat', revision, at: plantNow() });
+  }, 1000);
+  await new Promise<void>((resolve) => { http.listen(0, '127.0.0.1', resolve); });
+
+  return {
+    url: `http://127.0.0.1:${(http.address() as AddressInfo).port}`,
+    watches, posts, tell,
+    view: (id) => views.get(id)!,
+    fallSilent: () => { silent = true; },
+    cutLive: () => { cut = true; for (const dashboard of live.clients) dashboard.terminate(); },
+    returnLive: () => { cut = false; silent = false; },
+    refusePosts: (message) => { refused = message; },
+    stop: async () => {
+      clearInterval(beat);
+      for (const dashboard of live.clients) dashboard.terminate();
+      http.closeAllConnections();
+      await new Promise((resolve) => { http.close(resolve); });
+    },
+  };
+}
