@@ -158,7 +158,7 @@ describe('the page for people who connect a source', () => {
       for (const field of fields.filter((name) => name !== 'kind')) expect(`${kind}: ${row}`).toContain(`\`${field}\``);
     }
     for (const field of rowFields) expect(page).toContain(`\`${field}\``);
-    for (const [name, value] of Object.entries(sourceLimits)) expect(page).toContain(`| \`${name}\` | ${value.toLocaleString('en')} |`);
+    for (const [name, value] of Object.entries<number>({ ...sourceLimits })) expect(page).toContain(`| \`${name}\` | ${value.toLocaleString('en')} |`);
   });
 
   it('shows text frames that are read as they stand', () => {
