@@ -43,9 +43,9 @@ export class RecordRuns {
     return this.#end;
   }
 
-  /** First ordinal that is indexed; `end` if there is none. */
-  get start(): number {
-    return this.#startOf(0);
+  /** First ordinal of a row; `end` beyond the last. */
+  startOf(run: number): number {
+    return run < this.#rows.length ? this.#rows.get(ordinal, run) : this.#end;
   }
 
   /** Appends records of one source, each of `unitsPerRecord` units. */
@@ -65,7 +65,7 @@ export class RecordRuns {
     if (run < 0) return undefined;
     const per = this.#rows.get(units, run);
     const first = this.#rows.get(ordinal, run) + (wanted - this.#rows.get(sequence, run)) * per;
-    return first < this.#startOf(run + 1) ? { run, first, end: first + per } : undefined;
+    return first < this.startOf(run + 1) ? { run, first, end: first + per } : undefined;
   }
 
   /** The record whose unit has this ordinal, or undefined if it is not indexed. */
@@ -83,7 +83,7 @@ export class RecordRuns {
 
   /** Puts late records before row `run`; everything newer moves on. Returns the first one's ordinal. */
   insert(run: number, from: number, firstSequence: number, records: number, unitsPerRecord: number): number {
-    const at = this.#startOf(run);
+    const at = this.startOf(run);
     this.#rows.open(run, 1);
     this.#write(run, from, firstSequence, at, unitsPerRecord);
     this.#move(run + 1, records * unitsPerRecord);
@@ -99,7 +99,7 @@ export class RecordRuns {
     const { run } = place;
     const [from, per] = [rows.get(source, run), rows.get(units, run)];
     const hasBefore = place.first > rows.get(ordinal, run);
-    const hasAfter = place.end < this.#startOf(run + 1);
+    const hasAfter = place.end < this.startOf(run + 1);
     const own = hasBefore ? run + 1 : run;
     if (hasBefore) rows.open(own, 1);
     if (hasAfter) {
@@ -114,15 +114,25 @@ export class RecordRuns {
 
   /** Forgets the runs that end at or before the ordinal. */
   dropBefore(first: number): void {
-    while (this.#rows.length > 0 && this.#startOf(1) <= first) this.#rows.dropOldest(1);
+    while (this.#rows.length > 0 && this.startOf(1) <= first) this.#rows.dropOldest(1);
+  }
+
+  /** Forgets the records that end at or before the ordinal. */
+  trimBefore(first: number): void {
+    this.dropBefore(first);
+    if (this.#rows.length === 0) return;
+    const [at, per] = [this.#rows.get(ordinal, 0), this.#rows.get(units, 0)];
+    const left = Math.max(0, Math.floor((first - at) / per));
+    this.#rows.set(sequence, 0, this.#rows.get(sequence, 0) + left);
+    this.#rows.set(ordinal, 0, at + left * per);
   }
 
   /** Records with a unit from ordinal `first` to before `end`, joined source by source. */
   ranges(first: number, end: number): RecordRange[] {
     const found: RecordRange[] = [];
     for (let run = 0; run < this.#rows.length; run += 1) {
-      const from = Math.max(first, this.#startOf(run));
-      const to = Math.min(end, this.#startOf(run + 1));
+      const from = Math.max(first, this.startOf(run));
+      const to = Math.min(end, this.startOf(run + 1));
       if (from >= to) continue;
       found.push({ source: this.#rows.get(source, run), first: this.#sequenceAt(run, from), last: this.#sequenceAt(run, to - 1) });
     }
@@ -136,24 +146,13 @@ export class RecordRuns {
 
   /** @param first records wholly before this ordinal are left out */
   snapshot(first: number): RecordRunsSnapshot {
-    this.dropBefore(first);
-    const columns = this.#rows.snapshot();
-    const [, sequences, ordinals, per] = columns as [Float64Array, Float64Array, Float64Array, Float64Array];
-    if (sequences.length > 0) {
-      const left = Math.max(0, Math.floor((first - (ordinals[0] as number)) / (per[0] as number)));
-      sequences[0] = (sequences[0] as number) + left;
-      ordinals[0] = (ordinals[0] as number) + left * (per[0] as number);
-    }
-    return { columns, end: this.#end };
+    this.trimBefore(first);
+    return { columns: this.#rows.snapshot(), end: this.#end };
   }
 
   restore(snapshot: RecordRunsSnapshot): void {
     this.#rows.restore(snapshot.columns);
     this.#end = snapshot.end;
-  }
-
-  #startOf(run: number): number {
-    return run < this.#rows.length ? this.#rows.get(ordinal, run) : this.#end;
   }
 
   #sequenceAt(run: number, wanted: number): number {
@@ -172,7 +171,7 @@ export class RecordRuns {
     return (
       rows.get(source, run) === from &&
       rows.get(units, run) === unitsPerRecord &&
-      rows.get(sequence, run) + (this.#startOf(run + 1) - rows.get(ordinal, run)) / unitsPerRecord === firstSequence
+      rows.get(sequence, run) + (this.startOf(run + 1) - rows.get(ordinal, run)) / unitsPerRecord === firstSequence
     );
   }
 

@@ -236,7 +236,7 @@ export class UnitWindow {
       forgotten: this.#forgotten,
       rolled: this.#rolled,
       places: this.#places.snapshot()[0] as Float64Array,
-      runs: this.#runs.snapshot(Math.max(this.#start, this.#known)),
+      runs: this.#runs.snapshot(this.#start),
       floors: this.#floors.snapshot(),
     };
   }
@@ -280,11 +280,11 @@ export class UnitWindow {
     this.#known = Math.max(this.#known, this.#places.get(0, over - 1) + 1);
     this.#forgotten += over;
     this.#places.dropOldest(over);
-    this.#runs.dropBefore(this.#known);
   }
 
   #resize(place: RecordPlace, row: number, sequence: number, units: number, shift: number): void {
     this.#runs.resize(place, sequence, units, shift);
+    this.#runs.dropBefore(this.#start);
     this.#places.shift(0, row, shift);
     this.#next += shift;
   }
