@@ -42,7 +42,8 @@ export function layeredNoncentralT(t: number, df: number, noncentrality: number)
   const end = Math.log((middle - away * reach) / Math.abs(t));
   const best = away < 0 ? Math.min(0, end) : Math.max(0, end);
   const top = -df * spreadExponent(best, Math.exp(best));
-  let sum = purePart(edge, away, df, top);
+  const bulkIsPure = edge * away < 0;
+  let sum = bulkIsPure ? Math.exp(-logSpreadDensity(df)) - purePart(edge, -away, df, top) : purePart(edge, away, df, top);
   let first = 0;
   let second = 0;
   let firstT = 0;

@@ -23,9 +23,9 @@ function rootOf(tailAt: TailAt, tail: number, start: number, rising: boolean): n
   for (let round = 0; round < 200; round++) {
     const { logTail, slope, bend } = tailAt(x);
     const z = logTail < -1.2 ? normalQuantileOfLogTail(logTail) : normalQuantileOfTail(Math.exp(logTail));
-    const small = logTail >= 0 || z < wanted ? !rising : rising;
-    if (small) low = x;
-    else high = x;
+    const tailTooLarge = logTail > -0.6 || z < wanted;
+    if (tailTooLarge === rising) high = x;
+    else low = x;
     const hazard = densityOverTail(z);
     const speed = -slope / hazard;
     const newton = (wanted - z) / speed;
@@ -67,6 +67,17 @@ export function noncentralityOfTail(tail: number, df: number, t: number): number
   );
 }
 
+/** Where the normal approximation of the noncentral t has this tail; with few degrees of freedom a widened Student t. */
+function quantileStart(tail: number, df: number, noncentrality: number): number {
+  const z = normalQuantileOfTail(tail);
+  const shrink = 1 - 0.25 / df;
+  const widening = (z * z) / (2 * df);
+  const lead = shrink * shrink - widening;
+  const root = noncentrality * noncentrality * widening + z * z * lead;
+  if (lead > 0.3 && root >= 0) return (shrink * noncentrality + Math.sqrt(root)) / lead;
+  return tQuantileOfTail(tail, df) * Math.sqrt(1 + (noncentrality * noncentrality) / (2 * df)) + noncentrality;
+}
+
 /**
  * The t beyond which the noncentral t distribution has this upper tail.
  *
@@ -78,7 +89,6 @@ export function noncentralityOfTail(tail: number, df: number, t: number): number
  */
 export function noncentralTQuantileOfTail(tail: number, df: number, noncentrality: number): number {
   if (tail > 0.5) return -noncentralTQuantileOfTail(1 - tail, df, -noncentrality);
-  const start = tQuantileOfTail(tail, df) * Math.sqrt(1 + (noncentrality * noncentrality) / (2 * df)) + noncentrality;
   const place = rootOf(
     (s) => {
       const t = Math.sinh(s);
@@ -87,7 +97,7 @@ export function noncentralTQuantileOfTail(tail: number, df: number, noncentralit
       return { logTail: at.logTail, slope: at.byT * speed, bend: at.twiceByT * speed * speed + at.byT * t };
     },
     tail,
-    Math.asinh(start),
+    Math.asinh(quantileStart(tail, df, noncentrality)),
     false,
   );
   return Math.sinh(place);

@@ -37,13 +37,11 @@ function peakOf(t: number, df: number, noncentrality: number): number {
     const pull = t * w * hazard(y);
     const rise = -df * Math.expm1(2 * u) - pull;
     const bend = 2 * df * w * w + Math.max(0, pull) + t * w * pull * Math.max(0, hazard(y) - y);
+    if (rise * rise < 1e-4 * bend) return u;
     if (rise > 0) low = u;
     else high = u;
     const newton = u + rise / bend;
-    const next = newton > low && newton < high ? newton : 0.5 * (low + high);
-    const step = next - u;
-    u = next;
-    if (Math.abs(step) * Math.sqrt(bend) < 0.01 || high - low < 1e-15) break;
+    u = newton > low && newton < high ? newton : 0.5 * (low + high);
   }
   return u;
 }
