@@ -8,6 +8,9 @@ import type { Line, Plant, Product, Shift } from './plant.ts';
 import { weekdayOf } from './roster-text.ts';
 import { checkShifts } from './shift-overlaps.ts';
 
+/** Tells whether the form of a part of the file was without complaint. */
+export type Soundness = (part: FieldPath) => boolean;
+
 const everyDay = [1, 2, 3, 4, 5, 6, 7];
 
 /**
@@ -16,7 +19,7 @@ const everyDay = [1, 2, 3, 4, 5, 6, 7];
  * @param sound whether the form of a part was without complaint; parts that are not are left out
  * @returns what could be made of it; whole if nothing was complained of
  */
-export function plantOf(file: PlantFile, sound: (part: FieldPath) => boolean, complain: Complain): Plant {
+export function plantOf(file: PlantFile, sound: Soundness, complain: Complain): Plant {
   const lines = sound(['lines']) ? file.lines.map(lineOf) : undefined;
   const products = sound(['products']) ? file.products.map(productOf) : undefined;
   const shifts = sound(['shifts']) ? (file.shifts ?? []).map(shiftOf) : [];
@@ -32,7 +35,7 @@ export function plantOf(file: PlantFile, sound: (part: FieldPath) => boolean, co
 
 function soundGuarantees(
   file: PlantFile,
-  sound: (part: FieldPath) => boolean,
+  sound: Soundness,
   directory: Directory,
   complain: Complain,
 ): readonly Guarantee[] {

@@ -4,7 +4,7 @@ import type { Complain } from './complain.ts';
 import type { FieldPath } from './field-path.ts';
 import { complaintOfIssue } from './issue-complaint.ts';
 import { plantFaultOf, type Complaint, type PlantFault } from './plant-fault.ts';
-import { plantOf } from './plant-of.ts';
+import { plantOf, type Soundness } from './plant-of.ts';
 import { plantSchema, type PlantFile } from './plant-schema.ts';
 import { plantTreeOfText } from './plant-text.ts';
 import type { PlantTree } from './plant-tree.ts';
@@ -41,9 +41,6 @@ export function readPlant(text: string, version: string): Result<PlantReading, r
   const plant = sound([]) ? plantOf(checked.output as PlantFile, sound, complain) : undefined;
   return plant === undefined || complaints.length > 0 ? fault(faultsOf(complaints, tree.value)) : ok({ plant, version });
 }
-
-/** Tells whether the form of a part of the file was without complaint. */
-export type Soundness = (part: FieldPath) => boolean;
 
 function soundnessOf(complaints: readonly Complaint[]): Soundness {
   const faulty = new Set<string>();

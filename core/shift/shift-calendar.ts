@@ -81,8 +81,7 @@ function instancesBegunOn(day: Temporal.PlainDate, shifts: readonly Shift[], tim
       name,
       since: momentOf(day, fromMinute, timeZone),
       until: momentOf(toMinute > fromMinute ? day : day.add({ days: 1 }), toMinute, timeZone),
-    }))
-    .filter((shift) => shift.since < shift.until);
+    }));
 }
 
 function momentOf(day: Temporal.PlainDate, minute: number, timeZone: string): EpochMs {
