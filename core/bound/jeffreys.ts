@@ -11,7 +11,8 @@ import { fractionOfOdds, requireSample } from './nonconforming-fraction.ts';
  * @param tail all of alpha in one tail, above 0, below 1
  * @returns in (0, 1]
  * @throws OutOfDomain naming the argument; NoConvergence
- * @coverage near 1 - tail on average over rates, well below it at some near 0 and 1; at one look fixed in advance
+ * @coverage 1 - tail on average only; at 95 % and 1 to 300 units down to 0.83 for fractions up to 1/2, and 0 above its value for a
+ *   wholly nonconforming sample (enumerated); one look fixed in advance
  * @source H. Jeffreys 1961; L. D. Brown, T. T. Cai, A. DasGupta 2001 (memory)
  */
 export function jeffreysUpper(nonconforming: number, inspected: number, tail: Tail): Fraction {
@@ -23,7 +24,7 @@ export function jeffreysUpper(nonconforming: number, inspected: number, tail: Ta
  * Lower quantile of the same posterior; arguments, errors and source as of `jeffreysUpper`.
  *
  * @returns in [0, 1)
- * @coverage as `jeffreysUpper`
+ * @coverage the mirror of `jeffreysUpper`: 0 below its value for a faultless sample
  */
 export function jeffreysLower(nonconforming: number, inspected: number, tail: Tail): Fraction {
   requireSample(nonconforming, inspected, tail);

@@ -35,7 +35,7 @@ export function rateLower(count: number, exposure: number, tail: Tail): number {
  * Mid-P upper bound on a rate: P(X < x) + P(X = x)/2 = tail. Arguments and errors as of `rateUpper`.
  *
  * @returns for no nonconformity and tails from 1/2 up exactly 0
- * @coverage near 1 - tail on average over rates, below it at some; at one look fixed in advance
+ * @coverage near 1 - tail on average, never below 1 - 2 tail; at one look fixed in advance
  * @source H. O. Lancaster 1961 (memory)
  */
 export function midPRateUpper(count: number, exposure: number, tail: Tail): number {
@@ -47,7 +47,7 @@ export function midPRateUpper(count: number, exposure: number, tail: Tail): numb
  * Mid-P lower bound on a rate, the mirror of `midPRateUpper`.
  *
  * @returns for no nonconformity and tails up to 1/2 exactly 0
- * @coverage near 1 - tail on average over rates, below it at some; at one look fixed in advance
+ * @coverage near 1 - tail on average, never below 1 - 2 tail; at one look fixed in advance
  * @source H. O. Lancaster 1961 (memory)
  */
 export function midPRateLower(count: number, exposure: number, tail: Tail): number {
@@ -58,7 +58,7 @@ export function midPRateLower(count: number, exposure: number, tail: Tail): numb
 /**
  * Upper quantile of the Jeffreys posterior Gamma(x + 1/2) of a rate. Arguments and errors as of `rateUpper`.
  *
- * @coverage near 1 - tail on average over rates, below it at some; at one look fixed in advance
+ * @coverage 1 - tail on average only; at 95 % down to 0.85, the lower quantile 0 below its value for no nonconformity; one look
  * @source H. Jeffreys 1961 (memory)
  */
 export function jeffreysRateUpper(count: number, exposure: number, tail: Tail): number {

@@ -22,8 +22,11 @@ export function betaOdds(a: number, b: number, tail: number): number {
 }
 
 function smallerTailOdds(a: number, b: number, tail: number): number {
+  const lnTail = Math.log(tail);
   const total = a + b;
   const peak = lnLogitPeak(a, b);
+  const leading = leadingOdds(a, b, lnTail, peak);
+  if (leading !== undefined) return leading;
   const curve = (odds: number, point: TailPoint): void => {
     const q = 1 / (1 + odds);
     const p = odds * q;
@@ -33,7 +36,15 @@ function smallerTailOdds(a: number, b: number, tail: number): number {
     point.slope = 1 / ratio;
     point.bend = point.slope * (a * q - b * p - point.slope);
   };
-  return rootOfTail(curve, Math.log(tail), oddsStart(a, b, tail));
+  return rootOfTail(curve, lnTail, oddsStart(a, b, tail));
+}
+
+/** p from tail = p^a/(a B(a, b)), where (a + b) p is so far below 1 that nothing is missing; else undefined. */
+export function leadingOdds(a: number, b: number, lnTail: number, peak: number): number | undefined {
+  if (lnTail > -30 * a) return undefined;
+  const share = a / (a + b);
+  const odds = Math.exp((lnTail + Math.log(a) - peak) / a + Math.log(share) + (b / a) * Math.log1p(-share));
+  return odds * (a + b) < 1e-17 ? odds : undefined;
 }
 
 /** A first value for `betaOdds` from the gamma quantile of the smaller parameter (L. N. Bolshev 1963, memory). */

@@ -1,4 +1,4 @@
-import { gammaLowerStart, gammaUpperStart } from './gamma-start.ts';
+import { gammaLowerStart, gammaUpperStart, leadingPower } from './gamma-start.ts';
 import { gammaLowerRatio, gammaUpperRatio, lnGammaDensity } from './gamma-tail.ts';
 import { rootOfTail, type TailPoint } from './tail-root.ts';
 
@@ -8,7 +8,7 @@ import { rootOfTail, type TailPoint } from './tail-root.ts';
  *
  * @param a shape, above 0
  * @param tail above 0, below 1
- * @returns above 0
+ * @returns above 0, possibly below the smallest double (then 0)
  * @throws NoConvergence
  * @source Newton-Halley iteration on ln(tail), own derivation
  */
@@ -31,6 +31,10 @@ export function gammaOfLowerTail(a: number, tail: number): number {
 }
 
 function lowerRoot(a: number, tail: number): number {
+  if (Math.log(tail) < -30 * a) {
+    const mean = leadingPower(a, tail);
+    if (mean < 1e-17) return mean;
+  }
   const curve = (mean: number, point: TailPoint): void => {
     const ratio = gammaLowerRatio(a, mean);
     point.lnTail = lnGammaDensity(a, mean) + Math.log(ratio);

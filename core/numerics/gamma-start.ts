@@ -21,8 +21,8 @@ function cubeRootAt(a: number, z: number): number {
   return 1 - 1 / (9 * a) + z / (3 * Math.sqrt(a));
 }
 
-/** (tail Gamma(a + 1))^(1/a): the tail without its exponential factor. */
-function leadingPower(a: number, tail: number): number {
+/** (tail Gamma(a + 1))^(1/a): the tail without its exponential factor, exact where the mean is far below 1. */
+export function leadingPower(a: number, tail: number): number {
   const lnGamma = 0.5 * Math.log(2 * Math.PI * a) + a * Math.log(a) - a + stirlingError(a);
-  return Math.max(Math.exp((Math.log(tail) + lnGamma) / a), 1e-300);
+  return Math.exp((Math.log(tail) + lnGamma) / a);
 }

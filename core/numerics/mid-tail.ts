@@ -1,7 +1,7 @@
 import { deviance, lnLogitPeak } from './beta-density.ts';
-import { oddsStart } from './beta-quantile.ts';
+import { leadingOdds, oddsStart } from './beta-quantile.ts';
 import { betaTailRatio } from './beta-tail.ts';
-import { gammaLowerStart, gammaUpperStart } from './gamma-start.ts';
+import { gammaLowerStart, gammaUpperStart, leadingPower } from './gamma-start.ts';
 import { gammaLowerRatio, gammaUpperRatio, lnGammaDensity } from './gamma-tail.ts';
 import { rootOfTail, type TailPoint } from './tail-root.ts';
 
@@ -11,7 +11,7 @@ import { rootOfTail, type TailPoint } from './tail-root.ts';
  */
 
 /**
- * Odds of p at which P(X < x) + P(X = x)/2 = tail for X binomial(n, p).
+ * Odds (1 - p)/p at which P(X < x) + P(X = x)/2 = tail for X binomial(n, p).
  *
  * @param x whole, 1 to n - 1
  * @param tail above 0, at most 1/2
@@ -21,16 +21,18 @@ import { rootOfTail, type TailPoint } from './tail-root.ts';
 export function midBinomialOdds(x: number, n: number, tail: number): number {
   const miss = n - x;
   const peak = lnLogitPeak(miss, x + 1);
+  const leading = leadingOdds(miss, x + 1, Math.log(tail) + Math.LN2, peak);
+  if (leading !== undefined) return leading;
   const curve = (odds: number, point: TailPoint): void => {
-    const q = 1 / (1 + odds);
-    const p = odds * q;
-    const excess = p < q ? (n + 1) * p - (x + 1) : miss - (n + 1) * q;
+    const p = 1 / (1 + odds);
+    const q = odds * p;
+    const excess = q < p ? miss - (n + 1) * q : (n + 1) * p - (x + 1);
     const density = peak - deviance(n + 1, q, p, excess);
     write(point, density, betaTailRatio(miss, x + 1, q, p), {
-      half: 0.5 / (miss * p), share: (x * q) / (miss * p), first: -excess, second: -excess - 1, sign: -1,
+      half: 0.5 / (miss * p), share: (x * q) / (miss * p), first: excess, second: excess + 1, sign: 1,
     });
   };
-  return rootOfTail(curve, Math.log(tail), 1 / oddsStart(miss + 0.5, x + 0.5, tail));
+  return rootOfTail(curve, Math.log(tail), oddsStart(miss + 0.5, x + 0.5, tail));
 }
 
 /** Mean at which P(X < x) + P(X = x)/2 = tail for a Poisson count, 1 or more; the rest as above. */
@@ -45,6 +47,10 @@ export function midPoissonAbove(x: number, tail: number): number {
 
 /** Mean at which P(X > x) + P(X = x)/2 = tail for a Poisson count, 1 or more; the rest as above. */
 export function midPoissonBelow(x: number, tail: number): number {
+  if (Math.log(tail) < -30 * x) {
+    const leading = leadingPower(x, 2 * tail);
+    if (leading < 1e-17) return leading;
+  }
   const curve = (mean: number, point: TailPoint): void => {
     write(point, lnGammaDensity(x, mean), gammaLowerRatio(x, mean), {
       half: 0.5 / x, share: mean / x, first: x - mean, second: x + 1 - mean, sign: 1,
