@@ -3,7 +3,7 @@ import { listText, within, type Complain } from './complain.ts';
 import { characteristicsNamed, type Directory } from './directory.ts';
 import type { Guarantee } from './guarantee.ts';
 import type { GuaranteeFile } from './guarantee-schema.ts';
-import type { MeasureReader } from './mean-of.ts';
+import type { MeasureReader } from './measure-reader.ts';
 import { promiseOf } from './promise-of.ts';
 import { rulesOf } from './rules-of.ts';
 import { windowOf } from './window-of.ts';

@@ -1,14 +1,7 @@
 import type { Complain } from './complain.ts';
-import type { FieldPath } from './field-path.ts';
-import type { Measure } from './figure-schemas.ts';
 import type { GuaranteeFile } from './guarantee-schema.ts';
-import type { PromiseReading } from './promise-of.ts';
-
-/** Reads measured values of one characteristic; complains where a unit is written that is not the characteristic's. */
-export interface MeasureReader {
-  readonly unit: string;
-  read(measure: Measure, path: FieldPath): number | undefined;
-}
+import type { MeasureReader } from './measure-reader.ts';
+import type { PromiseReading } from './promise-reading.ts';
 
 type MeanFile = Extract<GuaranteeFile, { quantity: 'mean' }>;
 type Side = 'at-least' | 'at-most';

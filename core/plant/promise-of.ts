@@ -1,26 +1,11 @@
 import type { Complain } from './complain.ts';
 import type { Measure, Share } from './figure-schemas.ts';
-import type { Promised } from './guarantee.ts';
 import type { GuaranteeFile } from './guarantee-schema.ts';
-import { meanOf, type MeasureReader } from './mean-of.ts';
+import { meanOf } from './mean-of.ts';
+import type { MeasureReader } from './measure-reader.ts';
+import type { Counted, PromiseReading } from './promise-reading.ts';
 import { rateOf } from './rate-of.ts';
 import type { Fraction } from '../units.ts';
-
-/** The promise in nonconforming fractions, each the exact complement where the promise is a yield. */
-export interface Counted {
-  readonly line: Fraction;
-  readonly target: Fraction;
-  /** Normal rate of the well line. */
-  readonly well: Fraction | undefined;
-}
-
-/** What was promised, with the normal rate in the same scale. */
-export interface PromiseReading {
-  readonly promise: Promised;
-  readonly normalRate: number | undefined;
-  /** Where the evidence is units counted as conforming or not, one station or several. */
-  readonly counted: Counted | undefined;
-}
 
 /** Reads line, target and normal rate of a guarantee and checks that they stand in order; complains where not. */
 export function promiseOf(file: GuaranteeFile, measure: MeasureReader, complain: Complain): PromiseReading | undefined {

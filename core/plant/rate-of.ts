@@ -1,7 +1,7 @@
 import type { Amount } from '../figure/amount.ts';
 import type { Complain } from './complain.ts';
 import type { GuaranteeFile } from './guarantee-schema.ts';
-import type { PromiseReading } from './promise-of.ts';
+import type { PromiseReading } from './promise-reading.ts';
 
 /** Reads a rate guarantee; target and normal rate are given over the same exposure as the line, so none is rescaled. */
 export function rateOf(file: Extract<GuaranteeFile, { quantity: 'rate' }>, complain: Complain): PromiseReading | undefined {

@@ -2,7 +2,7 @@ import type { SpanMs, Tail } from '../units.ts';
 import type { AlarmsFile } from './alarm-schema.ts';
 import type { Complain } from './complain.ts';
 import type { AlarmRule, Priority, ReturnRule, WindowRule } from './guarantee.ts';
-import type { Counted } from './promise-of.ts';
+import type { Counted } from './promise-reading.ts';
 
 /** What the defaults of the alarm rules depend on. */
 export interface RuleSetting {

@@ -4,7 +4,7 @@ import type { Complain } from './complain.ts';
 import { mostWindowUnits } from './figure-schemas.ts';
 import type { WindowRule } from './guarantee.ts';
 import type { WindowFile } from './guarantee-schema.ts';
-import type { PromiseReading } from './promise-of.ts';
+import type { PromiseReading } from './promise-reading.ts';
 import { windowProposal } from './window-proposal.ts';
 
 /** Most steps of a window of time; each holds its own sums. */
