@@ -1,6 +1,6 @@
 import type { Correction, Frame, InspectionPart, LineMark, Lost, Part } from '../record/part.ts';
-import { bitsForm, findings, headBytes, kinds, layoutVersion, magic0, magic1, noName, partHeadBytes, tableStart, timeForm } from './binary-layout.ts';
-import { FrameNames } from './frame-names.ts';
+import { bitsForm, findings, kinds, layoutVersion, magic0, magic1, noName, partHeadBytes, tableStart, timeForm } from './binary-layout.ts';
+import { namesOf, type FrameNames } from './frame-names.ts';
 import { earliest, planOf, type PartPlan } from './part-size.ts';
 import { utf8Of } from './utf8.ts';
 import type { TimeColumn } from '../record/time-column.ts';
@@ -14,19 +14,18 @@ const twoTo32 = 4_294_967_296;
  * @returns bytes of their own, a multiple of 8
  */
 export function binaryOfFrame(frame: Frame): Uint8Array<ArrayBuffer> {
-  const names = new FrameNames(frame);
-  const table = names.tableBytes();
+  const names = namesOf(frame);
   const reasons = frame.parts.map((part) => ('reason' in part ? utf8Of(part.reason) : noReason));
   const plans = frame.parts.map((part, i) => planOf(part, (reasons[i] as Uint8Array).length));
-  const bytes = new Uint8Array(plans.reduce((size, plan) => size + plan.bytes, tableStart + table.length));
+  let at = tableStart + names.table.length;
+  const bytes = new Uint8Array(plans.reduce((size, plan) => size + plan.bytes, at));
   const view = new DataView(bytes.buffer);
   view.setUint8(0, magic0);
   view.setUint8(1, magic1);
   view.setUint8(2, layoutVersion);
   view.setUint16(4, frame.parts.length, true);
   setU64(view, 8, frame.first);
-  bytes.set(table, tableStart);
-  let at = headBytes - 8 + table.length;
+  bytes.set(names.table, tableStart);
   frame.parts.forEach((part, i) => {
     const plan = plans[i] as PartPlan;
     writePart(view, at, part, plan, names, reasons[i] as Uint8Array);

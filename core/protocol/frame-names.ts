@@ -1,14 +1,18 @@
 import type { Frame, Origin, Part } from '../record/part.ts';
 import { noName, originBytes, padded } from './binary-layout.ts';
 
-/** Names and origins one frame uses, each once, in the order of their first use, with their places. */
+/** Names and origins a frame uses, each once, in the order of their first use, with their places. */
 export class FrameNames {
   readonly #names = new Map<string, number>();
   readonly #origins: Origin[] = [];
   #nameBytes = 0;
 
-  constructor(frame: Frame) {
-    for (const part of frame.parts) this.#note(part);
+  /** The table's counts, its size and itself, as they stand in a frame from byte 16 on. */
+  readonly table: Uint8Array;
+
+  constructor(parts: readonly Part[]) {
+    for (const part of parts) this.#note(part);
+    this.table = this.#tableBytes();
   }
 
   #note(part: Part): void {
@@ -44,8 +48,7 @@ export class FrameNames {
     return this.#origins.findIndex((known) => sameOrigin(known, origin));
   }
 
-  /** The table's counts, its size and itself, as they stand in a frame from byte 16 on. */
-  tableBytes(): Uint8Array {
+  #tableBytes(): Uint8Array {
     const size = padded(this.#origins.length * originBytes + this.#nameBytes);
     const bytes = new Uint8Array(8 + size);
     const view = new DataView(bytes.buffer);
@@ -66,6 +69,26 @@ export class FrameNames {
     }
     return bytes;
   }
+}
+
+const namesOfOrigin = new WeakMap<Origin, FrameNames>();
+
+/** The names of a frame; those of an origin that fills frames alone are gathered once, as long as it is in use. */
+export function namesOf({ parts }: Frame): FrameNames {
+  const origin = onlyOrigin(parts);
+  if (origin === undefined) return new FrameNames(parts);
+  const known = namesOfOrigin.get(origin) ?? new FrameNames(parts);
+  namesOfOrigin.set(origin, known);
+  return known;
+}
+
+function onlyOrigin(parts: readonly Part[]): Origin | undefined {
+  let only: Origin | undefined;
+  for (const part of parts) {
+    if (!('origin' in part) || (only !== undefined && part.origin !== only)) return undefined;
+    only = part.origin;
+  }
+  return only;
 }
 
 function sameOrigin(one: Origin, other: Origin): boolean {

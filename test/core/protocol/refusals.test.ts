@@ -53,6 +53,7 @@ const refused: readonly (readonly [string, object, RefusalCode, string])[] = [
   ['a broken millisecond', frame({ ...tallies, time: [at + 0.5] }), 'bad-time', 'parts[0].time[0]'],
   ['a time before 1970', frame({ ...tallies, time: -1 }), 'bad-time', 'parts[0].time.start'],
   ['a pace that runs backwards', frame({ ...tallies, time: { start: at, step: -1 } }), 'bad-time', 'parts[0].time.step'],
+  ['a pace that runs past the year 9999', frame({ ...units, time: { start: 253_402_300_799_000, step: 200 } }), 'bad-time', 'parts[0].time.step'],
   ['too few times', frame({ ...units, time: [at, at] }), 'wrong-length', 'parts[0].time'],
   ['a correction of itself', frame({ ...correction, corrects: 5 }), 'bad-correction', 'parts[0].corrects'],
   ['a correction without a reason', frame({ ...correction, reason: '' }), 'bad-text', 'parts[0].reason'],
