@@ -17,7 +17,7 @@ export const usualTuning = 5;
  * @param tuning in measurements, above 0
  * @returns any real number; absolute error about 1e-14, or 1e-15 of the value where that is more
  * @throws OutOfDomain; NoConvergence
- * @coverage at all looks for Gaussian measurements; NOT for measurements skewed against the bound, see `skewedAgainst`
+ * @coverage at all looks for Gaussian measurements; NOT for measurements skewed against the bound, see `skewAgainstBound`
  * @source own one-sided truncation of the t e-process of H. Wang, A. Ramdas, arXiv 2310.03722 (abstract read);
  *   the kernel by own derivation: (1 + t^2/n)^(n/2) P(T_n <= t) is an incomplete beta kernel
  */
@@ -53,21 +53,6 @@ export function allLooksMeanDistanceUnknownSigma(measurements: number, squares: 
   const t = crossingPoint((u) => logStudentMixture(Math.sign(u), u * u, n) - enough, Math.sqrt(2 * Math.max(enough, 0)));
   if (!(t * t < most)) return Infinity;
   return t * Math.sqrt(((n + tuning) * squares) / (n * n * n - n * tuning * t * t));
-}
-
-/**
- * Whether measurements are skewed so far against a bound that the Gaussian evidence must not be used:
- * a long tail on the bound's own side lets the average run away from the mean.
- *
- * @param side 'lower' for a lower bound on the mean, hurt by a long tail downwards
- * @param skewness sample skewness, any real number
- * @param measurements 1 or more
- * @returns true also where the skewness is not a number, while there is anything to judge
- * @source limit of two standard errors and 0.3 found by simulation, own
- */
-export function skewedAgainst(side: 'lower' | 'upper', skewness: number, measurements: number): boolean {
-  const against = side === 'lower' ? -skewness : skewness;
-  return !(against <= 2 * Math.sqrt(6 / measurements) + 0.3);
 }
 
 function base(n: number, tuning: number): number {
