@@ -66,6 +66,8 @@ describe('a sound plant file', () => {
   it('keeps a confidence level as its exact tail', () => {
     expect(guaranteeIn(`${changed('20000', '200000')}\nconfidence: 99.9999 %`).tail).toBe(1e-6);
     expect(guaranteeIn(`${leak}\nconfidence: 0.9`).tail).toBe(0.1);
+    // the violation rule is never laxer than the bound itself
+    expect(guaranteeIn(`${changed('20000', '200000')}\nconfidence: 99.99 %`).rules[1]).toMatchObject({ kind: 'violation', tail: 0.0001 });
   });
 
   it('reads the other quantities', () => {
@@ -161,6 +163,17 @@ const badGuarantees: readonly (readonly [guarantee: () => string, line: number, 
   [() => 'id: c\nquantity: chained-yield\nstations: [A.crimp, A.final]\ncharacteristics: [finish, finish, finish]\nat-least: 97 %\nwindow: run', at(3), 'guarantees[0].characteristics', 'one characteristic for each station'],
   [() => 'id: c\nquantity: chained-yield\nstations: [A.crimp, A.final]\ncharacteristics: [finish, finish]\nat-least: 97 %\nwindow: { units: 98 }', at(5), 'guarantees[0].window.units', 'at least 99 units'],
   [() => 'id: l\nquantity: lot-fraction\nstation: A.final\ncharacteristic: finish\nat-most: 1 %\nwindow: run', at(5), 'guarantees[0].window', 'a lot fraction is about one lot'],
+  [() => 'id: y\nquantity: yield\nstation: A.final\ncharacteristic: finish\nat-least: 98.5 %\nwindow: shift\ntarget: 98.5 %', at(6), 'guarantees[0].target', 'a target above the guarantee line'],
+  [() => 'id: y\nquantity: yield\nstation: A.final\ncharacteristic: finish\nat-least: 98.5 %\nwindow: shift\nnormal-rate: 98.5 %', at(6), 'guarantees[0].normal-rate', 'a normal rate above the guarantee line'],
+  [() => 'id: y\nquantity: yield\nstation: A.final\ncharacteristic: finish\nat-least: 98.5 %\nwindow: shift'.replace('98.5', '100'), at(4), 'guarantees[0].at-least', 'no evidence can demonstrate 100 %'],
+  [() => 'id: r\nquantity: rate\nstation: A.crimp\ncharacteristic: finish\nat-most: 2 per 100 m\nwindow: run\ntarget: 2 per 100 m', at(6), 'guarantees[0].target', 'a target below the guarantee line'],
+  [() => 'id: r\nquantity: rate\nstation: A.crimp\ncharacteristic: finish\nat-most: 2 per 100 m\nwindow: run\nnormal-rate: 2 per 100 m', at(6), 'guarantees[0].normal-rate', 'a normal rate below the guarantee line'],
+  [() => 'id: r\nquantity: rate\nstation: A.crimp\ncharacteristic: finish\nat-most: 2 per 100 m\nwindow: run'.replace('2 per', '0 per'), at(4), 'guarantees[0].at-most', 'an amount above 0'],
+  [() => 'id: m\nquantity: mean\nstation: A.crimp\nproduct: BH-4\ncharacteristic: force\nat-least: 400\ntarget: 450\nwindow: run\nnormal-rate: 400', at(8), 'guarantees[0].normal-rate', 'a mean of the well line above'],
+  [() => 'id: m\nquantity: mean\nstation: A.crimp\nproduct: BH-4\ncharacteristic: force\nat-least: 400\ntarget: 450\nwindow: run\nsigma: { value: 0, source: study }', at(8), 'guarantees[0].sigma.value', 'a standard deviation above 0'],
+  [() => 'id: m\nquantity: mean\nstation: A.crimp\nproduct: BH-4\ncharacteristic: force\nat-least: 400\ntarget: 450\nwindow: run\nsigma: { value: 9, source: study }\nrange: { from: 0, to: 900 }', at(8), 'guarantees[0].sigma', 'either sigma or range'],
+  [() => 'id: m\nquantity: mean\nstation: A.crimp\nproduct: BH-4\ncharacteristic: force\nat-least: 400\ntarget: 450\nwindow: run'.replace('force', 'finish'), at(4), 'guarantees[0].characteristic', 'with a unit of measure'],
+  [() => `${leak}\nsafety-relevant: true\nalarms:\n  bad-data: off`, at(9), 'guarantees[0].alarms.bad-data', 'lost data counts as trouble'],
   [() => `${leak}\nconstructor: 1`, at(0), 'guarantees[0]', 'plain words'],
   [() => `${leak}\n__proto__: 1`, at(0), 'guarantees[0]', 'plain words'],
 ];

@@ -44,6 +44,7 @@ describe('proposed window', () => {
   it('a line that is never nonconforming needs the smallest window that can demonstrate anything', () => {
     // ln(0.05) / ln(1 - 0.001) = 2994.2…
     expect(proposal(0.001, 0, 0.05)).toBe(2995);
+    expect(proposal(0.001, 0, 0.05, 2994)).toBeUndefined();
   });
 
   it('there is none where the normal rate is too near the line', () => {
