@@ -34,7 +34,7 @@ export class RunningMoments {
    */
   constructor(reference: number) {
     if (!Number.isFinite(reference)) throw new OutOfDomain('reference', reference, 'a finite number');
-    this.reference = reference;
+    this.reference = reference + 0; // no -0, which JSON does not keep
   }
 
   static restore(from: MomentsSnapshot): RunningMoments {

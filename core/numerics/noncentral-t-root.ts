@@ -1,3 +1,4 @@
+import { gammaOfLowerTail, gammaOfUpperTail } from './gamma-quantile.ts';
 import { NoConvergence } from './no-convergence.ts';
 import { noncentralTUpper } from './noncentral-t.ts';
 import { normalDensity, normalQuantileOfLogTail, normalQuantileOfTail, normalTail } from './normal.ts';
@@ -43,6 +44,13 @@ function within(low: number, high: number, x: number): number {
   return high === Infinity ? x + 2 * (1 + Math.abs(x)) : 0.5 * (low + high);
 }
 
+/** Where the normal approximation of the noncentral t has this tail; far out, where chi-square alone decides, that. */
+function noncentralityStart(tail: number, df: number, t: number): number {
+  if (t * t < 30 * df) return t * (1 - 0.25 / df) - normalQuantileOfTail(tail) * Math.sqrt(1 + (t * t) / (2 * df));
+  const halfSquare = t > 0 ? gammaOfLowerTail(df / 2, tail) : gammaOfUpperTail(df / 2, tail);
+  return t * Math.sqrt(halfSquare / (df / 2));
+}
+
 /**
  * The noncentrality at which the noncentral t distribution has this upper tail beyond t.
  *
@@ -50,19 +58,18 @@ function within(low: number, high: number, x: number): number {
  * @param df   degrees of freedom, 1 to 1e12
  * @param t    any finite number
  * @throws NoConvergence
- * @source root of noncentralTUpper; start from NIST-type normal approximation of the noncentral t (Abramowitz and Stegun
- *   26.7.10, from memory)
+ * @source root of noncentralTUpper; start from the normal approximation in M. Abramowitz, I. A. Stegun (eds), Handbook of
+ *   Mathematical Functions, 26.7.10 (from memory)
  */
 export function noncentralityOfTail(tail: number, df: number, t: number): number {
   if (tail > 0.5) return -noncentralityOfTail(1 - tail, df, -t);
-  const start = t * (1 - 0.25 / df) - normalQuantileOfTail(tail) * Math.sqrt(1 + (t * t) / (2 * df));
   return rootOf(
     (noncentrality) => {
       const at = noncentralTUpper(t, df, noncentrality);
       return { logTail: at.logTail, slope: at.byNoncentrality, bend: at.twiceByNoncentrality };
     },
     tail,
-    start,
+    noncentralityStart(tail, df, t),
     true,
   );
 }

@@ -13,7 +13,7 @@ export interface NoncentralTail {
 
 const peakDensity = 0.3989422804014327;
 /** Below this many degrees of freedom the integrand falls slowly to the left, and its left end is drawn in. */
-const fewDegrees = 4;
+const fewDegrees = 12;
 const drawIn = 0.25;
 /** Where the integrand is below exp(-45) of its peak it is not seen in a double. */
 const negligible = 45;
