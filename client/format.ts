@@ -32,7 +32,8 @@ export interface Formats {
   readonly moment: (at: number) => string;
 }
 
-export const written = (figure: Figure): string => (figure.unit === '' ? figure.text : `${figure.text} ${figure.unit}`);
+/** A figure and its unit in one, held together at the end of a line. */
+export const written = (figure: Figure): string => (figure.unit === '' ? figure.text : `${figure.text}\u00a0${figure.unit}`);
 
 /** Decimals that leave three significant digits of `span`, at most 12. */
 const decimalsFor = (span: number): number =>
@@ -73,7 +74,6 @@ function numberWriter(locale: string | undefined): (value: number, decimals: num
 export function formatsFor(locale: string | undefined, timeZone: string, shareUnit: ShareUnit): Formats {
   const number = numberWriter(locale);
   const plain = new Intl.NumberFormat(locale, { maximumSignificantDigits: 4 });
-  const percent = new Intl.NumberFormat(locale, { style: 'percent', maximumFractionDigits: 0 });
   const time = (options: Intl.DateTimeFormatOptions): ((at: number) => string) => {
     const writer = new Intl.DateTimeFormat(locale, { timeZone, ...options });
     return (at) => writer.format(at);
@@ -100,8 +100,8 @@ export function formatsFor(locale: string | undefined, timeZone: string, shareUn
     },
     count: (value) => number(value, Number.isInteger(value) ? 0 : 2),
     plain: (value) => plain.format(value),
-    percent: (share) => percent.format(share),
-    confidence: (level) => `${number(Number(level) * 100, Math.max(0, level.length - 4))} %`,
+    percent: (share) => `${number(share * 100, 0)}\u00a0%`,
+    confidence: (level) => `${number(Number(level) * 100, Math.max(0, level.length - 4))}\u00a0%`,
     span: (ms) => writeSpan(ms, (value) => number(value, 0)),
     clock: time({ hour: '2-digit', minute: '2-digit', second: '2-digit' }),
     minute: time({ hour: '2-digit', minute: '2-digit' }),

@@ -96,7 +96,7 @@ export function windowWords(formats: Formats, window: WindowRule, card?: Pick<Gu
 export function marginWords(formats: Formats, card: GuaranteeCard, view: GuaranteeView): string | undefined {
   const { canTake, conformingToDemonstrate, unitsToGather, clearance } = view.margin;
   const unit = card.quantity === 'rate' ? 'faultless record' : 'conforming unit';
-  if (unitsToGather !== undefined) return `${counted(formats, unitsToGather, unit)} more until it can be demonstrated`;
+  if (unitsToGather !== undefined) return `Needs ${counted(formats, unitsToGather, `more ${unit}`)}`;
   if (conformingToDemonstrate !== undefined && view.state !== 'demonstrated') {
     return `Demonstrated again after ${counted(formats, conformingToDemonstrate, unit)} in a row`;
   }
@@ -108,12 +108,25 @@ export function marginWords(formats: Formats, card: GuaranteeCard, view: Guarant
   return clearance >= 0 ? `Bound stands ${far} inside the line` : `Bound stands ${far} beyond the line`;
 }
 
+/** The margin in three words, for a lane one line high. */
+export function marginBrief(formats: Formats, view: GuaranteeView): string | undefined {
+  const { canTake, conformingToDemonstrate, unitsToGather } = view.margin;
+  if (view.state === 'unknown') return undefined;
+  if (unitsToGather !== undefined) return `${formats.count(unitsToGather)} to go`;
+  if (view.state !== 'demonstrated' && conformingToDemonstrate !== undefined) return `${formats.count(conformingToDemonstrate)} to go`;
+  return canTake === undefined ? undefined : `can take ${formats.count(canTake)}`;
+}
+
+/** Whether the state already says what the alarm says. */
+export const saidByState = (state: EvidenceState, rule: RuleKind): boolean =>
+  (state === 'violated' && rule === 'violation') || (state === 'undecided' && rule === 'crossing') || (state === 'unknown' && rule === 'silence');
+
 export const driftWord = { rising: 'Bound rising', falling: 'Bound falling', steady: 'Bound steady' } as const;
 
 /** What stands under the state: why it is unknown, or else the margin and where the bound is going. */
 export function standing(formats: Formats, card: GuaranteeCard, view: GuaranteeView): string {
   if (view.state === 'unknown') return view.remark ?? stateMeaning.unknown;
-  const parts = [marginWords(formats, card, view), view.drift === 'rising' ? 'Bound rising' : undefined];
+  const parts = [marginWords(formats, card, view), view.drift === 'rising' ? 'Rising' : undefined];
   const words = parts.filter((part) => part !== undefined).join('. ');
   return words === '' ? (view.remark ?? stateMeaning[view.state]) : words;
 }

@@ -20,6 +20,8 @@ export const boardLaneStyle = css`
   .who { padding-left: 1.1em; }
   .figure { justify-items: end; text-align: right; white-space: nowrap; }
   .figure b { font-weight: 700; font-size: 1.08em; }
+  .unit { font-size: 0.82em; font-weight: 600; margin-left: 0.3em; }
+  .unit:empty { display: none; }
   .act { justify-items: end; text-align: right; padding-right: 1.1em; }
   .act button { position: relative; z-index: 1; padding-block: 0.15em; }
   .sub { font-size: 0.86em; color: var(--quiet); }
@@ -34,10 +36,14 @@ export const boardLaneStyle = css`
   .safety { font-weight: 650; color: var(--ink); }
   .plot { align-self: stretch; margin-top: -1px; min-width: 0; }
 
-  :host([size='medium']) .level, :host([size='medium']) .alarm, :host([size='medium'][tone='calm']) .who .sub + .sub:not(.safety) { display: none; }
+  :host([size='medium']) :is(.level, .alarm) { display: none; }
+  :host([size='medium']:not([form='wall'])) .who:has(.safety) { grid-template-columns: auto 1fr; column-gap: 0.7em; }
+  :host([size='medium']:not([form='wall'])) .who:has(.safety) a { grid-column: 1 / -1; }
   :host([size='small']) :is(.who, .state, .figure) { display: flex; align-items: baseline; gap: 0.6em; white-space: nowrap; }
-  :host([size='small']) :is(.level, .alarm, .figure .sub, .known) { display: none; }
-  :host([size='small']) .standing, :host([size='small']) .who .sub { overflow: hidden; text-overflow: ellipsis; }
+  :host([size='small']) :is(.level, .alarm, .figure .sub, .known, .safety ~ .sub) { display: none; }
+  :host([size='small']) .state { align-items: center; justify-content: space-between; }
+  :host([size='small']) .state .standing { padding-right: 0.6em; }
+  :host([size='small']) .safety { font-weight: 600; }
   :host([size='small']) .figure { justify-content: flex-end; }
   :host([size='small']) .act { display: flex; align-items: center; justify-content: flex-end; gap: 0.5em; }
   :host([size='small']) .act:has(button) .age { display: none; }
@@ -45,11 +51,15 @@ export const boardLaneStyle = css`
   :host([size='small']) .word .mark { align-self: center; }
 
   :host([form='wall']) { --line-pen: 6; }
-  :host([form='wall']) .sub { font-size: 0.58em; }
+  :host([form='wall']) .sub { font-size: 0.56em; }
+  :host([form='wall'][size='medium']) a { font-size: var(--name-type, 1em); }
+  :host([form='wall'][size='medium']) .who .sub { font-size: max(0.6em, calc(var(--name-type, 1em) * 0.56)); }
+  :host([form='wall'][size='medium']) .safety { display: inline; }
+  :host([form='wall']) .unit { font-size: 0.62em; }
   :host([form='wall']) :is(.standing, .alarm, .level) { display: none; }
   :host([form='wall']:not([tone='calm'])[size='medium']) .standing { display: block; }
   :host([form='wall'][size='small']) .who .sub { font-size: 0.8em; }
-  :host([form='wall']) .who { white-space: nowrap; }
+  :host([form='wall']) .who { white-space: nowrap; line-height: 1.12; }
   :host([form='wall']) article { border-top-width: 2px; }
 
   :host([form='card']) article {

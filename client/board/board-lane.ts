@@ -1,12 +1,13 @@
 import { html, LitElement, nothing, type TemplateResult } from 'lit';
+import type { GuaranteeCard, GuaranteeView } from '../../core/view/guarantee-view.ts';
 import { isWaiting } from '../attention.ts';
-import { written, type Formats } from '../format.ts';
+import type { Formats } from '../format.ts';
 import { laneSentence } from '../lane-sentence.ts';
 import { base } from '../look/base.ts';
 import { stateMark } from '../parts/state-mark.ts';
 import { AcknowledgeRequest } from '../alarms/acknowledge-request.ts';
 import { guaranteePath } from '../route.ts';
-import { promisedLimit, ruleWord, standing, stateWord } from '../words.ts';
+import { marginBrief, marginWords, promisedLimit, ruleWord, saidByState, standing, stateWord } from '../words.ts';
 import type { AllowanceScale } from './allowance-scale.ts';
 import { boardLaneStyle } from './board-lane-style.ts';
 import type { LaneSize } from './lane-heights.ts';
@@ -54,22 +55,32 @@ export class BoardLane extends LitElement {
   }
 
   #who({ card, view }: Lane, formats: Formats): TemplateResult {
-    const place = [card.lineName, card.stationNames.join(' to ')].filter((name) => name !== '').join(', ');
     return html`<div class="who">
       <a href=${guaranteePath(card.id)} aria-label=${this.lane === undefined ? card.name : laneSentence(formats, this.lane, this.plantNow)}>${card.name}</a>
-      <span class="sub">${this.form === 'wall' ? card.lineName : place}</span>
-      ${card.safetyRelevant ? html`<span class="sub safety">Safety-relevant${this.form === 'wall' ? '' : ': advisory only'}</span>` : nothing}
+      <span class="sub">${this.#place(card)}</span>
+      ${card.safetyRelevant ? html`<span class="sub safety">${this.size === 'large' ? 'Safety-relevant: advisory only' : 'Safety-relevant'}</span>` : nothing}
       ${view.lot === undefined || this.size !== 'large' || card.safetyRelevant ? nothing : html`<span class="sub">Lot ${view.lot}</span>`}
     </div>`;
+  }
+
+  /** Line and stations, as far as the lane has room to say. */
+  #place({ lineName, stationNames, safetyRelevant }: GuaranteeCard): string {
+    const spare = this.form !== 'wall' && (this.size === 'large' || (this.size === 'medium' && !safetyRelevant && stationNames.length === 1));
+    return spare && stationNames.length > 0 ? `${lineName}, ${stationNames.join(' to ')}` : lineName;
   }
 
   #state({ card, view, alarms }: Lane, formats: Formats): TemplateResult {
     const alarm = alarms[0];
     return html`<div class="state">
       <b class="word"><svg class="mark" viewBox="0 0 16 16" aria-hidden="true">${stateMark(view.state)}</svg>${stateWord[view.state]}</b>
-      <span class="sub standing">${standing(formats, card, view)}</span>
-      ${alarm === undefined ? nothing : html`<span class="sub alarm">Alarm: ${ruleWord[alarm.rule].toLowerCase()}</span>`}
+      <span class="sub standing">${this.#standing(card, view, formats)}</span>
+      ${alarm === undefined || saidByState(view.state, alarm.rule) ? nothing : html`<span class="sub alarm">Alarm: ${ruleWord[alarm.rule].toLowerCase()}</span>`}
     </div>`;
+  }
+
+  #standing(card: GuaranteeCard, view: GuaranteeView, formats: Formats): string | undefined {
+    if (this.size === 'small') return marginBrief(formats, view);
+    return this.form === 'wall' && view.state !== 'unknown' ? marginWords(formats, card, view) : standing(formats, card, view);
   }
 
   #figure({ card, view }: Lane, formats: Formats): TemplateResult {
@@ -78,7 +89,7 @@ export class BoardLane extends LitElement {
     return html`<div class="figure">
       ${gathering
         ? html`<b>${formats.percent(view.figures['filled'] ?? 0)}</b><span class="sub">of the window filled</span>`
-        : html`<b>${written(figure)}</b><span class="sub">${promisedLimit(formats, card)}</span>`}
+        : html`<b>${figure.text}<span class="unit">${figure.unit}</span></b><span class="sub">${promisedLimit(formats, card)}</span>`}
       <span class="sub level">${formats.confidence(card.confidence)}, ${view.lookRule}</span>
     </div>`;
   }
@@ -92,7 +103,7 @@ export class BoardLane extends LitElement {
         ? nothing
         : html`<button @click=${() => this.dispatchEvent(new AcknowledgeRequest(waiting))} aria-label="Acknowledge: ${this.lane?.card.name ?? ''}, ${ruleWord[waiting.rule]}">Acknowledge</button>`}
       ${waiting === undefined && known?.state.kind === 'acknowledged'
-        ? html`<span class="sub known">Acknowledged, ${known.state.acknowledgement.by}</span>`
+        ? html`<span class="sub known">Acknowledged<br />by ${known.state.acknowledgement.by}</span>`
         : nothing}
       <span class="sub age">${age}</span>
     </div>`;

@@ -9,6 +9,8 @@ export interface LaneMeasure {
   readonly height: number;
   readonly size: LaneSize;
   readonly typePx: number;
+  /** Type of the name, where it differs: on a wall the longest name decides. */
+  readonly nameTypePx: number;
 }
 
 /** How the board is laid out in the room it has. */
@@ -26,13 +28,12 @@ const cardBelow = 60;
 
 export function columnsOf(form: LaneForm, width: number, typePx: number): readonly number[] {
   if (form === 'card') return [0, width, 0, 0, 0];
-  const parts = form === 'wall' ? [0.235, 0.2, 0.145] : [];
-  if (form === 'wall') return [width * 0.235, width * 0.42, width * (parts[1] ?? 0), width * (parts[2] ?? 0), 0];
+  if (form === 'wall') return [width * 0.25, width * 0.37, width * 0.215, width * 0.165, 0];
   const tight = width < typePx * 78;
-  const who = typePx * (tight ? 13 : 16.5);
-  const state = typePx * (tight ? 13.5 : 18);
+  const who = typePx * (tight ? 13 : 15.5);
+  const state = typePx * (tight ? 14 : 20);
   const figure = typePx * (tight ? 8.5 : 9.5);
-  const act = typePx * (tight ? 8.8 : 9.5);
+  const act = typePx * (tight ? 9.6 : 10.2);
   return [who, width - who - state - figure - act, state, figure, act];
 }
 
@@ -43,10 +44,12 @@ const limitsFor = (form: LaneForm, room: Room): HeightLimits =>
 
 /** On a wall the words grow with their lane, up to what the name and the state still fit into. */
 function wallMeasure(height: number, nameChars: number, nameWidth: number): LaneMeasure {
-  const byName = nameWidth / (Math.max(12, nameChars) * 0.56 + 1.6);
-  const two = Math.min(height * 0.31, byName, 104);
-  const one = Math.min(height * 0.62, byName, 40);
-  return height > 92 ? { height, size: 'medium', typePx: two } : { height, size: 'small', typePx: one };
+  const byName = nameWidth / (Math.max(12, nameChars) * 0.54 + 1.6);
+  const two = Math.min(height * 0.33, nameWidth * 0.082);
+  const one = Math.min(height * 0.62, byName * 0.7);
+  return height > 92
+    ? { height, size: 'medium', typePx: two, nameTypePx: Math.min(two, byName) }
+    : { height, size: 'small', typePx: one, nameTypePx: one };
 }
 
 /** @param extra  px of the room that group headings and the foot take */
@@ -55,19 +58,20 @@ export function boardPlan(room: Room, lanes: readonly Lane[], wall: boolean, ext
   const columns = columnsOf(form, room.width, room.typePx);
   const loud = lanes.filter((lane) => lane.needsPerson).length;
   const heights = laneHeights(Math.max(0, room.height - extra), loud, lanes.length - loud, limitsFor(form, room));
-  const longest = Math.max(...lanes.map((lane) => lane.card.name.length), 0);
-  const measure = (height: number): LaneMeasure => {
-    if (form === 'card') return { height: Math.round(room.typePx * 3), size: 'large', typePx: room.typePx };
+  const measure = (height: number, needing: boolean): LaneMeasure => {
+    const longest = Math.max(...lanes.filter((lane) => lane.needsPerson === needing).map((lane) => lane.card.name.length), 0);
+    if (form === 'card') return { height: Math.round(room.typePx * 3), size: 'large', typePx: room.typePx, nameTypePx: room.typePx };
     if (form === 'wall') return wallMeasure(height, longest, columns[0] ?? 0);
     const size = laneSizeOf(height, room.typePx * 1.25);
-    return { height, size, typePx: room.typePx * (size === 'small' ? 0.93 : 1) };
+    const typePx = room.typePx * (size === 'small' ? 0.93 : 1);
+    return { height, size, typePx, nameTypePx: typePx };
   };
   return {
     form,
     columns: columns.filter((width) => width > 0).map((width) => `${Math.round(width)}px`).join(' '),
     scale: allowanceScale(Math.max(120, Math.round(columns[1] ?? 0))),
-    loud: measure(heights.loud),
-    calm: measure(heights.calm),
+    loud: measure(heights.loud, true),
+    calm: measure(heights.calm, false),
     fits: heights.fits,
   };
 }

@@ -6,10 +6,10 @@ import { ticks, type AllowanceScale } from './allowance-scale.ts';
 export function boardScale(scale: AllowanceScale, formats: Formats, typePx: number): SVGTemplateResult {
   const height = Math.round(typePx * 2.1);
   const middle = typePx * 4.4;
-  let free = 0;
+  let free = Number.NEGATIVE_INFINITY;
   const shown = ticks.filter((at) => {
     const { x } = scale.placeOf(at);
-    const clear = at === 1 || (Math.abs(x - scale.lineX) > middle + typePx * 1.4 && x - free > typePx * 3.2);
+    const clear = at === 1 || (Math.abs(x - scale.lineX) > middle + typePx * 1.4 && x - free > typePx * 3.2 && x > typePx * 1.6);
     if (clear) free = x;
     return clear;
   });

@@ -15,10 +15,8 @@ export const lanePlotStyle = css`
   .trail line { stroke: var(--trail); }
   .tip { fill: var(--pen); }
   .dot { fill: var(--sheet); stroke: var(--pen); }
-  .gathering .whisker { stroke-dasharray: 0.1 9; stroke-linecap: round; }
-  .gathering .tip { fill: var(--sheet); stroke: var(--pen); stroke-width: 2; }
-  .unknown .whisker { stroke-dasharray: 8 6; }
-  .unknown .tip { fill: var(--sheet); stroke: var(--pen); stroke-width: 2; }
+  .gathering .whisker { stroke-linecap: round; }
+  .gathering .tip, .unknown .tip { fill: var(--sheet); stroke: var(--pen); stroke-width: calc(var(--line-pen, 2.5) * 0.8); }
   @media (forced-colors: active) {
     .line, .whisker, .opposite, .dot, .more, .trail line { stroke: CanvasText; }
     .tip { fill: CanvasText; }

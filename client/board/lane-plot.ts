@@ -1,4 +1,5 @@
 import { nothing, svg, type SVGTemplateResult } from 'lit';
+import type { EvidenceState } from '../../core/evidence/evidence-state.ts';
 import type { GuaranteeView } from '../../core/view/guarantee-view.ts';
 import type { Tone } from '../attention.ts';
 import { ticks, type AllowanceScale, type Place } from './allowance-scale.ts';
@@ -55,11 +56,17 @@ function tip(place: Place, pen: Pen): SVGTemplateResult {
   return svg`<path class="tip" d="M${x - head * 1.15} ${y - head} L${x} ${y} L${x - head * 1.15} ${y + head} Z"></path>${more}`;
 }
 
-function whisker(scale: AllowanceScale, pen: Pen, from: number, to: number | undefined): SVGTemplateResult {
+/** Dotted while gathering, dashed when unknown; the rhythm follows the pen. */
+function dashes(state: EvidenceState, body: number): string | typeof nothing {
+  if (state === 'gathering') return `0.1 ${body * 2.2}`;
+  return state === 'unknown' ? `${body * 2} ${body * 1.4}` : nothing;
+}
+
+function whisker(scale: AllowanceScale, pen: Pen, from: number, to: number | undefined, state: EvidenceState): SVGTemplateResult {
   const start = scale.placeOf(from).x;
   const end = to === undefined ? undefined : scale.placeOf(to);
   const stop = end === undefined ? scale.width - 6 : Math.max(start, end.x - pen.head * 0.9);
-  return svg`<line class="whisker" x1=${start} x2=${stop} y1=${pen.y} y2=${pen.y} stroke-width=${pen.body}></line>
+  return svg`<line class="whisker" x1=${start} x2=${stop} y1=${pen.y} y2=${pen.y} stroke-width=${state === 'gathering' ? pen.body * 0.8 : pen.body} stroke-dasharray=${dashes(state, pen.body)}></line>
     ${end === undefined ? nothing : tip(end, pen)}`;
 }
 
@@ -80,7 +87,7 @@ export function lanePlot({ scale, height, view, tone }: LanePlotInput): SVGTempl
     ${guaranteeLine(scale, height)}
     <g class=${`marks ${tone} ${view.state}`}>
       ${trail(scale, pen, height, view.allowance.trail)}
-      ${start === undefined ? nothing : whisker(scale, pen, start, bound)}
+      ${start === undefined ? nothing : whisker(scale, pen, start, bound, view.state)}
       ${opposite(scale, pen, view.allowance.opposite)}
       ${estimate === undefined ? nothing : svg`<circle class="dot" cx=${scale.placeOf(estimate).x} cy=${pen.y} r=${pen.dot} stroke-width=${Math.max(2, pen.body * 0.6)}></circle>`}
     </g>`;

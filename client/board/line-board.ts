@@ -1,5 +1,6 @@
 import { html, LitElement, nothing, type PropertyValues, type TemplateResult } from 'lit';
 import { repeat } from 'lit/directives/repeat.js';
+import { caution } from '../../core/guarantee/caution.ts';
 import type { LivePicture } from '../feed/live-picture.ts';
 import type { Formats } from '../format.ts';
 import { base } from '../look/base.ts';
@@ -65,7 +66,7 @@ export class LineBoard extends LitElement {
     const room = this.#room.room;
     const typePx = room?.typePx ?? 15;
     const headings = this.grouped ? groups.length * typePx * 2.2 : 0;
-    const plan = room === undefined ? undefined : boardPlan(room, this.#lanes, this.wall, headings + typePx * (this.wall ? 1 : 3.6));
+    const plan = room === undefined ? undefined : boardPlan(room, this.#lanes, this.wall, headings + typePx * (this.wall ? 1 : 5.2));
     return html`
       ${this.#lanes.every((lane) => lane.view.newest === undefined) ? this.#noRecords() : nothing}
       <div class="board sheet" ${styled({ '--columns': plan?.columns ?? '1fr' })}>
@@ -97,7 +98,7 @@ export class LineBoard extends LitElement {
   #lane(lane: Lane, plan: BoardPlan, formats: Formats): TemplateResult {
     const measure = lane.needsPerson ? plan.loud : plan.calm;
     const height = plan.form === 'card' ? 'auto' : `${measure.height}px`;
-    return html`<li data-id=${lane.card.id} ${styled({ height, '--lane-type': `${measure.typePx.toFixed(2)}px` })}>
+    return html`<li data-id=${lane.card.id} ${styled({ height, '--lane-type': `${measure.typePx.toFixed(2)}px`, '--name-type': `${measure.nameTypePx.toFixed(2)}px` })}>
       <board-lane .lane=${lane} .scale=${plan.scale} .height=${measure.height} .size=${measure.size} .form=${plan.form}
         .tone=${lane.tone} .formats=${formats} .plantNow=${this.plantNow}></board-lane>
     </li>`;
@@ -112,6 +113,7 @@ export class LineBoard extends LitElement {
     const levels = [...new Set(this.#lanes.map((lane) => lane.card.confidence))].map((level) => formats.confidence(level));
     return html`<p class="foot quiet">
       ${this.#held ? html`<strong>The lanes wait with their new order while you are among them.</strong> ` : nothing}
+      ${this.#lanes.some((lane) => lane.card.safetyRelevant) ? html`<strong>${caution.title}.</strong> ${caution.sentences.join(' ')}<br />` : nothing}
       The dot is what was seen, the tip of the whisker the ${levels.length === 1 ? `${levels[0] ?? ''} ` : ''}bound. A tip left of the guarantee line: demonstrated. Small strokes below: where the tip stood in the last hour. An upright mark: the opposite bound has passed the line too. Scale: allowance used, 0 % at the target, 100 % on the line.
     </p>`;
   }

@@ -61,7 +61,7 @@ export function nextPicture(old: LivePicture | undefined, told: LiveMessage, hea
       const next = set(old, told, heardAt);
       return {
         ...next,
-        plant: 'shift' in told ? { ...old.plant, shift: told.shift } : old.plant,
+        plant: 'shift' in told ? { ...old.plant, shift: told.shift ?? undefined } : old.plant,
         views: patched(old.views, told.views, (view) => view.id),
         alarms: patched(old.alarms, told.alarms, (alarm) => alarm.id),
       };

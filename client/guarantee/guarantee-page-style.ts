@@ -44,9 +44,10 @@ export const guaranteePageStyle = css`
   @media (max-width: 760px) {
     .head { grid-template-columns: minmax(0, 1fr); padding: 0.8rem 0.9rem 0.3rem; }
     .part { padding: 0.8rem 0.9rem; }
-    .columns { display: contents; }
-    .side { display: contents; }
-    .main { order: 2; }
+    .columns, .side, .main { display: contents; }
+    .main > * { order: 2; }
+    .figures-part { order: 3; }
+    .restart-part { order: 4; }
     fieldset { width: 100%; }
     label { flex: 1; padding: 0.7em 0.1em; }
     .how dl div { grid-template-columns: 1fr; gap: 0; }

@@ -11,7 +11,7 @@ import { written, type Formats } from '../format.ts';
 import { base } from '../look/base.ts';
 import '../parts/caution-block.ts';
 import { stateMark } from '../parts/state-mark.ts';
-import { driftWord, promiseWords, standing, stateMeaning, stateWord } from '../words.ts';
+import { driftWord, marginWords, promiseWords, stateMeaning, stateWord } from '../words.ts';
 import { guaranteePageStyle } from './guarantee-page-style.ts';
 import './guarantee-picture.ts';
 import { guaranteeRecords, type GuaranteeRecords } from './guarantee-records.ts';
@@ -81,8 +81,8 @@ export class GuaranteePage extends LitElement {
         </div>
         <div class="side">
           ${this.#alarms(lane, picture, formats)}
-          <section class="sheet part"><h2>Present window</h2>${windowFigures(formats, lane.card, lane.view, this.plantNow)}</section>
-          <section class="sheet part"><restart-evidence .personName=${this.personName} .send=${this.#restart}></restart-evidence></section>
+          <section class="sheet part figures-part"><h2>Present window</h2>${windowFigures(formats, lane.card, lane.view, this.plantNow)}</section>
+          <section class="sheet part restart-part"><restart-evidence .personName=${this.personName} .send=${this.#restart}></restart-evidence></section>
         </div>
       </div>`;
   }
@@ -96,8 +96,8 @@ export class GuaranteePage extends LitElement {
       </div>
       <div>
         <p class="word"><svg viewBox="0 0 16 16" aria-hidden="true">${stateMark(view.state)}</svg>${stateWord[view.state]}<b>${written(formats.figureBesideLine(card, view.bound))}</b></p>
-        <p>${standing(formats, card, view)}. ${stateMeaning[view.state]}</p>
-        ${view.drift === undefined ? nothing : html`<p class="quiet">${driftWord[view.drift]} over the last hour.</p>`}
+        <p>${stateMeaning[view.state]}</p>
+        <p>${[view.state === 'unknown' ? view.remark : marginWords(formats, card, view), view.drift === undefined ? undefined : `${driftWord[view.drift]} over the last hour`].filter((part) => part !== undefined).map((part) => `${part}. `)}</p>
         ${view.remark === undefined || view.state === 'unknown' ? nothing : html`<p>${view.remark}</p>`}
         ${view.warnings.map((warning) => html`<p class="warning"><b>Mind:</b> ${warning}</p>`)}
       </div>

@@ -69,7 +69,7 @@ export class HistoryChart extends LitElement {
       `estimate ${figure(history.estimate[step])}`,
       `${counted(formats, history.inspected[step] ?? 0, card.scale.kind === 'rate' ? card.scale.unit : 'unit', card.scale.kind === 'rate' ? card.scale.unit : 'units')}, ${formats.count(history.nonconforming[step] ?? 0)} nonconforming in this step`,
       ...(state === undefined ? [] : [stateWord[state].toLowerCase()]),
-    ].join(' · ');
+    ].join(', ');
   }
 
   #ground(frame: HistoryFrame, card: GuaranteeCard, history: History, formats: Formats): SVGTemplateResult {

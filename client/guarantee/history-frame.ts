@@ -35,7 +35,7 @@ export function valueRange(card: Pick<GuaranteeCard, 'guaranteeLine' | 'target' 
 export function historyFrame(width: number, card: GuaranteeCard, history: History): HistoryFrame {
   const narrow = width < 560;
   const left = narrow ? 8 : 84;
-  const right = width - (narrow ? 8 : 92);
+  const right = width - (narrow ? 8 : 104);
   const top = 26;
   const bottom = top + (narrow ? 190 : 250);
   const [low, high] = valueRange(card, history);

@@ -8,6 +8,7 @@ export const mastheadStyle = css`
   nav a:hover { background: var(--raised); }
   nav a[aria-current='page'] { box-shadow: inset 0 -3px 0 var(--ink); border-radius: 5px 5px 0 0; }
   dl { grid-column: 1 / -1; display: flex; flex-wrap: wrap; gap: 0 1.6rem; color: var(--quiet); }
+  .mark { color: var(--ink); font-weight: 700; }
   .clock { color: var(--ink); font-weight: 600; }
   .live, .not-live { color: var(--ink); white-space: nowrap; }
   .not-live { background: var(--ink); color: var(--paper); padding: 0 0.5em; border-radius: 3px; }
@@ -21,9 +22,10 @@ export const mastheadStyle = css`
   }
   :host([wall]) header { grid-template-columns: 1fr auto auto; padding: 0.8rem 0 0.8rem; column-gap: 2rem; }
   :host([wall]) .says { font-size: 3.5rem; }
+  :host([wall]) .mark { display: none; }
   :host([wall]) nav { order: 3; opacity: 0.85; }
   :host([wall]) nav a { display: none; }
   :host([wall]) dl { grid-column: auto; font-size: 1.2rem; display: grid; grid-template-columns: auto auto; gap: 0 1.6rem; justify-items: end; align-items: center; line-height: 1.2; }
-  :host([wall]) dl div:nth-child(2) { grid-row: 1 / 3; grid-column: 2; }
+  :host([wall]) dl div:nth-child(3) { grid-row: 1 / 3; grid-column: 2; }
   :host([wall]) .clock { font-size: 3.5rem; line-height: 1; font-weight: 650; }
 `;

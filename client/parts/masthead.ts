@@ -43,6 +43,7 @@ export class PageMasthead extends LitElement {
         <view-panel .settings=${this.settings} .wall=${this.wall}></view-panel>
       </nav>
       <dl>
+        <div class="mark"><dt class="unseen">Program</dt><dd>Vouchline</dd></div>
         <div><dt class="unseen">Plant and shift</dt><dd>${picture.plant.name}${this.#shift(picture, formats)}</dd></div>
         <div><dt class="unseen">Plant clock</dt><dd class="clock">${this.wall ? formats.minute(this.plantNow) : formats.clock(this.plantNow)}</dd></div>
         <div><dt class="unseen">Connection</dt><dd>${this.#liveness(picture, formats, freshness)}</dd></div>
