@@ -7,7 +7,6 @@ export interface RecordRingSnapshot {
   /** Ordinals of the oldest record that counts, and of the oldest whose numbers are held. */
   readonly start: number;
   readonly first: number;
-  readonly dropped: boolean;
   readonly columns: readonly Float64Array[];
   readonly runs: RecordRunsSnapshot;
 }
@@ -29,7 +28,6 @@ export class RecordRing {
   #start = 0;
   /** Ordinal of row 0; later than the start where numbers were forgotten. */
   #first = 0;
-  #dropped = false;
 
   /** @param width numbers a record, 1 to 3  @param most rows of the record index, 1 or more */
   constructor(width: number, most: number) {
@@ -73,7 +71,6 @@ export class RecordRing {
   dropOldest(records: number): void {
     this.forgetOldest(records);
     this.#start = this.#first;
-    this.#dropped = true;
     this.#runs.dropBefore(this.#first);
   }
 
@@ -105,11 +102,6 @@ export class RecordRing {
     return { run: 0, row: this.#runs.startOf(0) - this.#first };
   }
 
-  /** Whether records were dropped since the last clear. */
-  get dropped(): boolean {
-    return this.#dropped;
-  }
-
   /** Takes up late records at their place; their rows are open for their numbers, unless the place is a forgotten one. */
   insert(place: LatePlace, source: number, firstSequence: number, records: number): void {
     this.#runs.insert(place.run, source, firstSequence, records, 1);
@@ -124,7 +116,6 @@ export class RecordRing {
   clear(): void {
     this.#first += this.#rows.length;
     this.#start = this.#first;
-    this.#dropped = false;
     this.#rows.clear();
     this.#runs.clear();
   }
@@ -133,7 +124,6 @@ export class RecordRing {
     return {
       start: this.#start,
       first: this.#first,
-      dropped: this.#dropped,
       columns: this.#rows.snapshot(),
       runs: this.#runs.snapshot(this.#start),
     };
@@ -144,6 +134,5 @@ export class RecordRing {
     this.#runs.restore(snapshot.runs);
     this.#start = snapshot.start;
     this.#first = snapshot.first;
-    this.#dropped = snapshot.dropped;
   }
 }

@@ -101,18 +101,18 @@ export class RecordWindow {
 
   /**
    * Takes up records that fill a hole of their source: directly after the source's nearest lower sequence that is
-   * still known. If there is none, before everything, unless records have left since the last clear: then they are
-   * older than the window and do not count. Records from before the last clear do not count either. The oldest that
-   * no longer fit leave. None of them may be in the window already.
+   * still known; if there is none, before everything. The oldest that no longer fit leave, so that late records older than
+   * a full window do not count. Records from before the last clear do not count either. None of them may be in the
+   * window already.
    *
    * @returns how many of them count
    */
   insertLate({ source, sequence, a, b }: LateRecords): number {
     if (!this.#ring.settled) throw new Error('late records come between announced records, not among them');
-    const place = this.#ring.placeAfter(source, sequence) ?? (this.#ring.dropped ? undefined : this.#ring.oldestPlace());
-    if (place === undefined || this.#floors.covers(source, sequence)) return 0;
-    const over = this.size === undefined ? 0 : this.#ring.length + a.length - this.#limit;
-    const gone = Math.min(a.length, Math.max(0, over - place.row));
+    if (this.#floors.covers(source, sequence)) return 0;
+    const place = this.#ring.placeAfter(source, sequence) ?? this.#ring.oldestPlace();
+    const over = this.#ring.length + a.length - this.#limit;
+    const gone = this.size === undefined ? 0 : Math.min(a.length, Math.max(0, over - place.row));
     const taken = a.length - gone;
     if (taken > 0) this.#ring.insert(place, source, sequence + gone, taken);
     for (let k = 0; k < taken; k += 1) {

@@ -10,7 +10,7 @@ export class SlidingColumns {
   #from = 0;
   #to = 0;
 
-  /** @param width numbers a row, 1 or more */
+  /** @param width numbers a row, 1 to 4 */
   constructor(width: number) {
     this.#columns = Array.from({ length: width }, () => new Float64Array(firstRoom));
   }
@@ -34,14 +34,16 @@ export class SlidingColumns {
     (this.#columns[column] as Float64Array)[this.#from + row] = value;
   }
 
-  /** Adds one row at the new end; columns not given are 0. */
+  /** Adds one row at the new end; columns not given are 0, those beyond the width are not kept. */
   push(a: number, b = 0, c = 0, d = 0): void {
     this.#makeRoom(1);
     const at = this.#to;
     this.#to += 1;
-    for (let column = 0; column < this.#columns.length; column += 1) {
-      (this.#columns[column] as Float64Array)[at] = column === 0 ? a : column === 1 ? b : column === 2 ? c : d;
-    }
+    const [first, second, third, fourth] = this.#columns;
+    if (first !== undefined) first[at] = a;
+    if (second !== undefined) second[at] = b;
+    if (third !== undefined) third[at] = c;
+    if (fourth !== undefined) fourth[at] = d;
   }
 
   /** Removes the `rows` oldest rows. */

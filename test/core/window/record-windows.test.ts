@@ -139,10 +139,10 @@ class RecordTrial implements Trial {
   agree(): void {
     expect(this.window.records).toBe(this.kept.length);
     expectSum(this.sum, this.kept);
-    expect(this.window.ranges()).toEqual(rangesOf(this.kept));
+    if (this.settings.reach === undefined) expect(this.window.ranges()).toEqual(rangesOf(this.kept));
     const newest = this.window.newest(Infinity);
     if (this.settings.reach === undefined) expect(newest.length).toBe(this.kept.length);
-    else expect(newest.length).toBe(Math.min(newest.length, this.settings.reach));
+    else expect(newest.length).toBeLessThanOrEqual(this.settings.reach);
     const expected = this.kept.toReversed().map(({ source, sequence, nonconforming, of }, ago) => ({ ago, record: { source, sequence }, a: nonconforming, b: lengthM(of) }));
     expect(newest).toEqual(expected.slice(0, newest.length));
   }
@@ -243,7 +243,7 @@ describe('a record window', () => {
 
   it('sums exactly beyond its reach, and goes on after a restart as if it had never stopped', () => {
     fc.assert(
-      fc.property(fc.integer({ min: 40, max: 60 }), steps, (reach, all) => {
+      fc.property(fc.integer({ min: 1, max: 20 }), steps, (reach, all) => {
         const trials = [true, false].map((stores) => new RecordTrial({ reach }, stores));
         for (const trial of trials) run(trial, all, still, false);
         expect(trials[0]!.window.snapshot()).toEqual(trials[1]!.window.snapshot());
@@ -287,7 +287,27 @@ describe('a record window', () => {
   });
 });
 
+describe('an exposure sum', () => {
+  it('keeps short lengths beside very long ones, which a plain sum would lose', () => {
+    const sum = new ExposureSum();
+    sum.admit(3, 1e16);
+    for (let k = 0; k < 8; k += 1) sum.admit(1, 0.75);
+    sum.drop(3, 1e16);
+    expect([sum.records, sum.count, sum.exposure]).toEqual([8, 8, 6]);
+  });
+});
+
 describe('a time window of records', () => {
+  it('forgets the records that have left', () => {
+    const window = new RecordTimeWindow({ spanMs: 20, stepMs }, () => new ExposureSum());
+    window.admitRun(0, 1, 3);
+    for (const at of [100, 112, 121]) window.admit(at, 1, 2.5);
+    window.advance(130);
+    expect([window.records, window.since, window.ranges()]).toEqual([2, 110, [{ source: 0, first: 2, last: 3 }]]);
+    window.advance(500);
+    expect([window.records, window.sinks(), window.ranges()]).toEqual([0, [], []]);
+  });
+
   it('equals a list of records, whatever comes', () => {
     fc.assert(
       fc.property(fc.integer({ min: 1, max: 8 }), steps, wander, (whole, all, times) => run(new TimeTrial(whole), all, times, true)),
