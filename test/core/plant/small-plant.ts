@@ -6,7 +6,7 @@ ${head}lines:
   - id: A
     stations: [{ id: A.crimp }, { id: A.leak }, { id: A.final }]
   - id: B
-    stations: [{ id: B.leak }]
+    stations: [{ id: B.crimp }, { id: B.leak }]
 products:
   - id: BH-4
     characteristics: [{ id: tightness }, { id: force, unit: N }, { id: finish }]
