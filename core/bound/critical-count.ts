@@ -2,7 +2,7 @@ import { tailAtMost } from '../numerics/exact-binomial.ts';
 import { lnBinomialLower, lnBinomialUpper } from '../numerics/binomial-tail.ts';
 import { gammaLowerStart, gammaUpperStart } from '../numerics/gamma-start.ts';
 import { lastWhere } from '../numerics/integer-search.ts';
-import { normalQuantileOfTail } from '../numerics/normal.ts';
+import { normalStart } from '../numerics/normal-start.ts';
 import type { Tail } from '../units.ts';
 import { OutOfDomain, requireInside, requireWhole } from './out-of-domain.ts';
 
@@ -26,7 +26,7 @@ import { OutOfDomain, requireInside, requireWhole } from './out-of-domain.ts';
  */
 export function demonstratedCount(inspected: number, line: number, tail: Tail): number {
   requireLine(inspected, line, tail, 1);
-  const guess = countNear(inspected, line, -normalQuantileOfTail(tail)) - 0.5;
+  const guess = countNear(inspected, line, -normalStart(Math.log(tail))) - 0.5;
   return lastWhere((x) => demonstrates(x, inspected, line, tail), 0, inspected - 1, guess);
 }
 
@@ -40,7 +40,7 @@ export function demonstratedCount(inspected: number, line: number, tail: Tail): 
  */
 export function violatedCount(inspected: number, line: number, tail: Tail): number {
   requireLine(inspected, line, tail, 1);
-  const guess = countNear(inspected, line, normalQuantileOfTail(tail)) + 0.5;
+  const guess = countNear(inspected, line, normalStart(Math.log(tail))) + 0.5;
   return lastWhere((x) => !violates(x, inspected, line, tail), 0, inspected, guess) + 1;
 }
 
@@ -56,7 +56,7 @@ export function violatedCount(inspected: number, line: number, tail: Tail): numb
  */
 export function demonstrationUnits(nonconforming: number, line: number, tail: Tail): number {
   requireLine(nonconforming, line, tail, 0);
-  const mean = gammaUpperStart(nonconforming + 1, tail);
+  const mean = gammaUpperStart(nonconforming + 1, Math.log(tail));
   const guess = unitsNear(mean, nonconforming, line);
   return lastWhere((n) => n <= nonconforming || !demonstrates(nonconforming, n, line, tail), nonconforming, mostUnits, guess) + 1;
 }
@@ -74,7 +74,7 @@ export function demonstrationUnits(nonconforming: number, line: number, tail: Ta
 export function violationUnits(nonconforming: number, line: number, tail: Tail): number {
   requireLine(nonconforming, line, tail, 0);
   if (nonconforming === 0) return 0;
-  const mean = gammaLowerStart(nonconforming, tail);
+  const mean = gammaLowerStart(nonconforming, Math.log(tail));
   const guess = unitsNear(mean, nonconforming - 1, line);
   const last = lastWhere((n) => violates(nonconforming, n, line, tail), nonconforming, mostUnits, guess);
   return last < nonconforming ? 0 : last;

@@ -1,6 +1,6 @@
 import { gammaOfLowerTail, gammaOfUpperTail } from '../numerics/gamma-quantile.ts';
 import { lastWhere } from '../numerics/integer-search.ts';
-import { normalQuantileOfTail } from '../numerics/normal.ts';
+import { normalStart } from '../numerics/normal-start.ts';
 import { lnPoissonLower, lnPoissonUpper } from '../numerics/poisson-tail.ts';
 import type { Tail } from '../units.ts';
 import { OutOfDomain, requireInside, requirePositive, requireWhole } from './out-of-domain.ts';
@@ -20,7 +20,7 @@ import { OutOfDomain, requireInside, requirePositive, requireWhole } from './out
 export function demonstratedNonconformities(exposure: number, line: number, tail: Tail): number {
   const mean = expectedAt(exposure, line, tail);
   const lnTail = Math.log(tail);
-  const guess = countNear(mean, -normalQuantileOfTail(tail)) - 0.5;
+  const guess = countNear(mean, -normalStart(lnTail)) - 0.5;
   return lastWhere((x) => lnPoissonLower(x, mean) <= lnTail, 0, mostCount, guess);
 }
 
@@ -35,7 +35,7 @@ export function demonstratedNonconformities(exposure: number, line: number, tail
 export function violatedNonconformities(exposure: number, line: number, tail: Tail): number {
   const mean = expectedAt(exposure, line, tail);
   const lnTail = Math.log(tail);
-  const guess = countNear(mean, normalQuantileOfTail(tail)) + 0.5;
+  const guess = countNear(mean, normalStart(lnTail)) + 0.5;
   return lastWhere((x) => lnPoissonUpper(x, mean) > lnTail, 0, mostCount, guess) + 1;
 }
 

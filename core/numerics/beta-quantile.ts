@@ -1,7 +1,7 @@
 import { betaTailRatio } from './beta-tail.ts';
 import { deviance, lnLogitPeak } from './beta-density.ts';
 import { gammaLowerStart, gammaUpperStart } from './gamma-start.ts';
-import { rootOfTail, type TailPoint } from './tail-root.ts';
+import { rootOfTail, writePoint, type TailPoint } from './tail-root.ts';
 
 /**
  * The odds p/(1 - p) at which a beta distribution has the wanted lower tail: I_p(a, b) = tail.
@@ -32,11 +32,11 @@ function smallerTailOdds(a: number, b: number, tail: number): number {
     const p = odds * q;
     const ratio = betaTailRatio(a, b, p, q);
     const excess = p < q ? a - total * p : total * q - b;
-    point.lnTail = peak - deviance(total, p, q, excess) + Math.log(ratio);
-    point.slope = 1 / ratio;
-    point.bend = point.slope * (a * q - b * p - point.slope);
+    const spread = total * p * q;
+    const lnTailHere = peak - deviance(total, p, q, excess) + Math.log(ratio);
+    writePoint(point, lnTailHere, 1 / ratio, excess, -spread, -spread * (q - p));
   };
-  return rootOfTail(curve, lnTail, oddsStart(a, b, tail));
+  return rootOfTail(curve, lnTail, oddsStart(a, b, lnTail));
 }
 
 /** p from tail = p^a/(a B(a, b)), where (a + b) p is so far below 1 that nothing is missing; else undefined. */
@@ -48,11 +48,11 @@ export function leadingOdds(a: number, b: number, lnTail: number, peak: number):
 }
 
 /** A first value for `betaOdds` from the gamma quantile of the smaller parameter (L. N. Bolshev 1963, memory). */
-export function oddsStart(a: number, b: number, tail: number): number {
+export function oddsStart(a: number, b: number, lnTail: number): number {
   if (a <= b) {
-    const mean = gammaLowerStart(a, tail);
+    const mean = gammaLowerStart(a, lnTail);
     return (2 * mean) / Math.max(a + 2 * b - 1 - mean, b / 2);
   }
-  const mean = gammaUpperStart(b, tail);
+  const mean = gammaUpperStart(b, lnTail);
   return Math.max(b + 2 * a - 1 - mean, a / 1e3) / (2 * mean);
 }

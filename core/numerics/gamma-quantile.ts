@@ -1,6 +1,6 @@
 import { gammaLowerStart, gammaUpperStart, leadingPower } from './gamma-start.ts';
 import { gammaLowerRatio, gammaUpperRatio, lnGammaDensity } from './gamma-tail.ts';
-import { rootOfTail, type TailPoint } from './tail-root.ts';
+import { rootOfTail, writePoint, type TailPoint } from './tail-root.ts';
 
 /**
  * The mean at which a gamma distribution of shape a (scale 1) has this upper tail. Half a chi-square
@@ -17,11 +17,10 @@ export function gammaOfUpperTail(a: number, tail: number): number {
   if (tail > 0.5) return lowerRoot(a, 1 - tail);
   const curve = (mean: number, point: TailPoint): void => {
     const ratio = gammaUpperRatio(a, mean);
-    point.lnTail = lnGammaDensity(a, mean) + Math.log(ratio);
-    point.slope = -1 / ratio;
-    point.bend = point.slope * (a - mean - point.slope);
+    writePoint(point, lnGammaDensity(a, mean) + Math.log(ratio), -1 / ratio, a - mean, -mean, -mean);
   };
-  return rootOfTail(curve, Math.log(tail), gammaUpperStart(a, tail));
+  const lnTail = Math.log(tail);
+  return rootOfTail(curve, lnTail, gammaUpperStart(a, lnTail));
 }
 
 /** The mean at which the lower tail has this size; all else as of `gammaOfUpperTail`. */
@@ -31,15 +30,14 @@ export function gammaOfLowerTail(a: number, tail: number): number {
 }
 
 function lowerRoot(a: number, tail: number): number {
-  if (Math.log(tail) < -30 * a) {
-    const mean = leadingPower(a, tail);
+  const lnTail = Math.log(tail);
+  if (lnTail < -30 * a) {
+    const mean = leadingPower(a, lnTail);
     if (mean < 1e-17) return mean;
   }
   const curve = (mean: number, point: TailPoint): void => {
     const ratio = gammaLowerRatio(a, mean);
-    point.lnTail = lnGammaDensity(a, mean) + Math.log(ratio);
-    point.slope = 1 / ratio;
-    point.bend = point.slope * (a - mean - point.slope);
+    writePoint(point, lnGammaDensity(a, mean) + Math.log(ratio), 1 / ratio, a - mean, -mean, -mean);
   };
-  return rootOfTail(curve, Math.log(tail), gammaLowerStart(a, tail));
+  return rootOfTail(curve, lnTail, gammaLowerStart(a, lnTail));
 }

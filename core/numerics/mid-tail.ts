@@ -3,7 +3,7 @@ import { leadingOdds, oddsStart } from './beta-quantile.ts';
 import { betaTailRatio } from './beta-tail.ts';
 import { gammaLowerStart, gammaUpperStart, leadingPower } from './gamma-start.ts';
 import { gammaLowerRatio, gammaUpperRatio, lnGammaDensity } from './gamma-tail.ts';
-import { rootOfTail, type TailPoint } from './tail-root.ts';
+import { rootOfTail, writePoint, type TailPoint } from './tail-root.ts';
 
 /*
  * The mid tail counts the observed value half: P(X < x) + P(X = x)/2. With g the density that belongs
@@ -21,59 +21,67 @@ import { rootOfTail, type TailPoint } from './tail-root.ts';
 export function midBinomialOdds(x: number, n: number, tail: number): number {
   const miss = n - x;
   const peak = lnLogitPeak(miss, x + 1);
-  const leading = leadingOdds(miss, x + 1, Math.log(tail) + Math.LN2, peak);
+  const lnTail = Math.log(tail);
+  const leading = leadingOdds(miss, x + 1, lnTail + Math.LN2, peak);
   if (leading !== undefined) return leading;
   const curve = (odds: number, point: TailPoint): void => {
     const p = 1 / (1 + odds);
     const q = odds * p;
     const excess = q < p ? miss - (n + 1) * q : (n + 1) * p - (x + 1);
     const density = peak - deviance(n + 1, q, p, excess);
+    const spread = (n + 1) * p * q;
     write(point, density, betaTailRatio(miss, x + 1, q, p), {
-      half: 0.5 / (miss * p), share: (x * q) / (miss * p), first: excess, second: excess + 1, sign: 1,
+      half: 0.5 / (miss * p), share: (x * q) / (miss * p), d1: excess, apart: 1, d2: -spread, d3: -spread * (p - q), sign: 1,
     });
   };
-  return rootOfTail(curve, Math.log(tail), oddsStart(miss + 0.5, x + 0.5, tail));
+  return rootOfTail(curve, lnTail, oddsStart(miss + 0.5, x + 0.5, lnTail));
 }
 
 /** Mean at which P(X < x) + P(X = x)/2 = tail for a Poisson count, 1 or more; the rest as above. */
 export function midPoissonAbove(x: number, tail: number): number {
   const curve = (mean: number, point: TailPoint): void => {
     write(point, lnGammaDensity(x + 1, mean), gammaUpperRatio(x + 1, mean), {
-      half: 0.5 / mean, share: x / mean, first: x + 1 - mean, second: x - mean, sign: -1,
+      half: 0.5 / mean, share: x / mean, d1: x + 1 - mean, apart: -1, d2: -mean, d3: -mean, sign: -1,
     });
   };
-  return rootOfTail(curve, Math.log(tail), gammaUpperStart(x + 0.5, tail));
+  const lnTail = Math.log(tail);
+  return rootOfTail(curve, lnTail, gammaUpperStart(x + 0.5, lnTail));
 }
 
 /** Mean at which P(X > x) + P(X = x)/2 = tail for a Poisson count, 1 or more; the rest as above. */
 export function midPoissonBelow(x: number, tail: number): number {
-  if (Math.log(tail) < -30 * x) {
-    const leading = leadingPower(x, 2 * tail);
+  const lnTail = Math.log(tail);
+  if (lnTail < -30 * x) {
+    const leading = leadingPower(x, lnTail + Math.LN2);
     if (leading < 1e-17) return leading;
   }
   const curve = (mean: number, point: TailPoint): void => {
     write(point, lnGammaDensity(x, mean), gammaLowerRatio(x, mean), {
-      half: 0.5 / x, share: mean / x, first: x - mean, second: x + 1 - mean, sign: 1,
+      half: 0.5 / x, share: mean / x, d1: x - mean, apart: 1, d2: -mean, d3: -mean, sign: 1,
     });
   };
-  return rootOfTail(curve, Math.log(tail), gammaLowerStart(x + 0.5, tail));
+  return rootOfTail(curve, lnTail, gammaLowerStart(x + 0.5, lnTail));
 }
 
 interface MidTerms {
   /** half the chance of x, over the density */
   readonly half: number;
-  /** slope of the neighbouring tail over the slope of this one */
+  /** density of the neighbouring tail over the density of this one */
   readonly share: number;
-  /** d ln(slope) of this tail and of its neighbour */
-  readonly first: number;
-  readonly second: number;
+  /** derivatives of ln(density) of this tail; the neighbour's first one is `apart` larger, the others are the same */
+  readonly d1: number;
+  readonly d2: number;
+  readonly d3: number;
+  readonly apart: 1 | -1;
   readonly sign: 1 | -1;
 }
 
+/** The mean of two densities, of which the neighbour has the weight share/(1 + share). */
 function write(point: TailPoint, lnDensity: number, ratio: number, terms: MidTerms): void {
-  const { half, share, first, second, sign } = terms;
+  const { half, share, d1, d2, d3, apart, sign } = terms;
   const tail = ratio - half;
-  point.lnTail = lnDensity + Math.log(tail);
-  point.slope = (sign * 0.5 * (1 + share)) / tail;
-  point.bend = (sign * 0.5 * (first + share * second)) / tail - point.slope * point.slope;
+  const weight = share / (1 + share);
+  const mixed = weight * (1 - weight);
+  const slope = (sign * 0.5 * (1 + share)) / tail;
+  writePoint(point, lnDensity + Math.log(tail), slope, d1 + apart * weight, d2 + mixed, d3 + apart * mixed * (1 - 2 * weight));
 }

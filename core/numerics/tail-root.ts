@@ -1,43 +1,66 @@
 import { NoConvergence } from './no-convergence.ts';
 
-/** A tail probability at one place of its parameter, in logarithms of both. */
+/** ln of a tail probability at one place of its parameter, and its derivatives in ln(parameter). */
 export interface TailPoint {
-  /** ln of the tail probability */
   lnTail: number;
-  /** d lnTail / d ln parameter; not 0 */
+  /** first derivative; not 0 */
   slope: number;
-  /** second derivative, likewise */
-  bend: number;
+  second: number;
+  third: number;
+  fourth: number;
 }
 
 /** Writes the tail at a positive parameter into `point`; no object is made in the loop. */
 export type TailCurve = (parameter: number, point: TailPoint) => void;
 
+/**
+ * Fills a point from the tail, its slope (the density over the tail, signed) and the first three
+ * derivatives of ln(density): all further derivatives of ln(tail) follow from these.
+ */
+export function writePoint(point: TailPoint, lnTail: number, slope: number, d1: number, d2: number, d3: number): void {
+  const drift = d1 - slope;
+  const second = slope * drift;
+  const third = second * drift + slope * (d2 - second);
+  point.lnTail = lnTail;
+  point.slope = slope;
+  point.second = second;
+  point.third = third;
+  point.fourth = third * drift + 2 * second * (d2 - second) + slope * (d3 - third);
+}
+
 const mostSteps = 200;
 
 /**
  * The positive parameter (a mean, or odds) at which a log-concave tail has the wanted size.
- * Halley's method on ln(tail) in ln(parameter); where its correction is large only part of it is
- * taken, and a plain Newton step on a concave curve cannot miss for good.
+ * Near the answer one step of the inverse series of order five is enough; far from it Halley's step
+ * is taken, of whose correction only part is trusted: a plain Newton step on a concave curve cannot
+ * miss for good.
  *
  * @param lnTail ln of the wanted tail probability; finite
  * @param start above 0, any quality
  * @throws NoConvergence when the steps do not settle
- * @source Halley's method; the remaining error of a step is of the order of the cube of the gap
+ * @source reversion of series (DLMF 3.3(v), 1.9(vi)); what a step leaves is of the order of gap^5
  */
 export function rootOfTail(curve: TailCurve, lnTail: number, start: number): number {
-  const point: TailPoint = { lnTail: 0, slope: 0, bend: 0 };
+  const point: TailPoint = { lnTail: 0, slope: 0, second: 0, third: 0, fourth: 0 };
   let parameter = start;
   for (let i = 0; i < mostSteps; i++) {
     curve(parameter, point);
     const gap = point.lnTail - lnTail;
     const newton = -gap / point.slope;
-    const correction = 1 + (0.5 * newton * point.bend) / point.slope;
-    const step = newton / (correction > 0.5 ? (correction < 4 ? correction : 4) : 0.5);
+    const bent = (0.5 * newton * point.second) / point.slope;
+    const near = Math.abs(bent) < 0.1;
+    const step = near ? reverted(newton, bent, point) : newton / (bent > -0.5 ? (bent < 3 ? 1 + bent : 4) : 0.5);
     if (!Number.isFinite(step)) break;
     parameter *= Math.exp(step > 30 ? 30 : step < -30 ? -30 : step);
     const size = Math.abs(gap);
-    if (size * size * size <= 1e-15 * Math.abs(point.slope) && size < 0.01) return parameter;
+    if (near && size < 0.02 && size * size * size * size * size <= 1e-14 * Math.abs(point.slope)) return parameter;
   }
   throw new NoConvergence(`the parameter with ln(tail) = ${lnTail}, from ${start}`);
+}
+
+function reverted(newton: number, bent: number, point: TailPoint): number {
+  const third = ((newton * newton) / 6) * (point.third / point.slope);
+  const fourth = ((newton * newton * newton) / 24) * (point.fourth / point.slope);
+  return newton * (1 - bent + 2 * bent * bent - third + 5 * bent * (third - bent * bent) - fourth);
 }

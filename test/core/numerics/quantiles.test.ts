@@ -6,7 +6,7 @@ import { gammaOfLowerTail, gammaOfUpperTail } from '../../../core/numerics/gamma
 import { gammaUpperTail } from '../../../core/numerics/gamma-tail.ts';
 import { NoConvergence } from '../../../core/numerics/no-convergence.ts';
 import { lnPoissonLower, lnPoissonUpper } from '../../../core/numerics/poisson-tail.ts';
-import { rootOfTail } from '../../../core/numerics/tail-root.ts';
+import { rootOfTail, writePoint, type TailPoint } from '../../../core/numerics/tail-root.ts';
 
 const seed = { seed: 20_240_501, numRuns: 400 };
 const shape = fc.oneof(
@@ -114,15 +114,9 @@ describe('the binomial and Poisson tails', () => {
 
 describe('the solver', () => {
   it('says so when it does not settle', () => {
-    const flat = (_: number, point: { lnTail: number; slope: number; bend: number }): void => {
-      point.lnTail = 1;
-      point.slope = 1;
-      point.bend = 0;
-    };
+    const flat = (_: number, point: TailPoint): void => writePoint(point, 1, 1, 1, 0, 0);
     expect(() => rootOfTail(flat, 0, 1)).toThrow(NoConvergence);
-    const broken = (_: number, point: { lnTail: number; slope: number; bend: number }): void => {
-      point.lnTail = NaN;
-    };
+    const broken = (_: number, point: TailPoint): void => writePoint(point, NaN, 1, 1, 0, 0);
     expect(() => rootOfTail(broken, 0, 1)).toThrow(NoConvergence);
   });
 });
