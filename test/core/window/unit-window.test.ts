@@ -225,6 +225,17 @@ describe('a unit window', () => {
     expect(window.inspected).toBe(7);
   });
 
+  it('no longer knows a record whose last units a correction took away', () => {
+    const window = new UnitWindow({ size: 10 });
+    window.admitRun(1, 1, 1, 6);
+    window.admitConforming(6);
+    window.admitRun(0, 1, 8);
+    window.admitConforming(8);
+    expect(window.correct(1, 1, 0, 3)).toEqual({ before: 0, after: 0 });
+    expect([window.inspected, window.correct(1, 1, 0)]).toEqual([8, 'not here']);
+    expect(window.insertLate({ source: 1, sequence: 2, records: 1, unitsPerRecord: 1, places: [] })).toEqual({ inspected: 0, nonconforming: 0 });
+  });
+
   it('forgets the records that have left', () => {
     const window = new UnitWindow({ size: 100 });
     for (let sequence = 1; sequence <= 5_000; sequence += 1) {
