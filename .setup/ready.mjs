@@ -1,8 +1,7 @@
 // Makes a fresh clone ready: installs what package-lock.json names, builds what is older than its sources.
 // Uses nothing but Node, so that it can run before anything is installed. Progress goes to standard error.
 import { spawnSync } from 'node:child_process';
-import { createHash } from 'node:crypto';
-import { chmodSync, cpSync, existsSync, mkdirSync, readdirSync, readFileSync, statSync, writeFileSync } from 'node:fs';
+import { chmodSync, cpSync, existsSync, mkdirSync, readdirSync, readFileSync, statSync, utimesSync, writeFileSync } from 'node:fs';
 import { join, relative } from 'node:path';
 import { fileURLToPath } from 'node:url';
 
@@ -35,13 +34,14 @@ function checkNode() {
 }
 
 function install() {
-  const lock = createHash('sha256').update(readFileSync(join(top, 'package-lock.json'))).digest('hex');
-  const marker = join(top, 'node_modules', '.installed-lock');
-  if (existsSync(marker) && readFileSync(marker, 'utf8') === lock) return;
+  const lock = join(top, 'package-lock.json');
+  const installed = join(top, 'node_modules', '.package-lock.json'); // npm writes it at the end of every install
+  if (existsSync(installed) && statSync(installed).mtimeMs >= statSync(lock).mtimeMs) return;
   say('Installing packages (the database driver is compiled here, which takes a minute or two) …');
   // The driver is compiled from the registry's source: no binary is fetched from elsewhere.
   run('npm', ['ci', '--no-audit', '--no-fund'], { npm_config_build_from_source: 'true' });
-  writeFileSync(marker, lock);
+  const now = new Date();
+  utimesSync(installed, now, now);
 }
 
 function* filesIn(folder) {
@@ -93,4 +93,5 @@ for (const part of parts) {
   say(`Building the ${part.name} …`);
   part.build();
   writeFileSync(stamp, `${new Date(began).toISOString()}\n`);
+  utimesSync(stamp, began / 1000, began / 1000); // A source edited during the build is newer than the stamp.
 }

@@ -1,4 +1,5 @@
 import type { Finding, InspectionPart } from '../record/part.ts';
+import type { Picture } from '../view/history.ts';
 import type { Margin } from '../view/guarantee-view.ts';
 import type { RecordIdentity, RecordRange } from '../window/record-identity.ts';
 import type { Moment, RecordMoment } from './moment.ts';
@@ -22,6 +23,15 @@ export interface Bounds {
   readonly estimate: number | undefined;
   readonly bound: number | undefined;
   readonly opposite: number | undefined;
+}
+
+/** The units of a window in order. */
+export interface WindowStrip {
+  readonly units: number;
+  readonly full: number | undefined;
+  /** Nonconforming units, newest first; the record is absent where it is beyond the window's reach. */
+  readonly nonconforming: readonly { readonly ago: number; readonly record: RecordIdentity | undefined }[];
+  readonly count: number;
 }
 
 /** What became of a correction. */
@@ -55,6 +65,10 @@ export interface Evidence {
   bounds(): Bounds;
   margin(): Margin;
   warnings(): readonly string[];
+  /** The window's units with the newest nonconforming ones, at most `most`; absent where a window has no single units. */
+  strip?(most: number): WindowStrip;
+  /** The picture that suits the quantity; absent where the bound over time says it all. */
+  picture?(): Picture;
   snapshot(): unknown;
   restore(from: unknown): void;
 }

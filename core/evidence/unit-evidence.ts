@@ -3,7 +3,7 @@ import type { Margin } from '../view/guarantee-view.ts';
 import type { RecordIdentity, RecordRange } from '../window/record-identity.ts';
 import { UnitWindow, type UnitWindowSnapshot } from '../window/unit-window.ts';
 import type { CountRule } from './count-rule.ts';
-import type { Batch, Bounds, CorrectionFate, Evidence } from './evidence.ts';
+import type { Batch, Bounds, CorrectionFate, Evidence, WindowStrip } from './evidence.ts';
 import type { Moment, RecordMoment } from './moment.ts';
 import { nonconformingPlaces, type Limit } from './nonconforming-places.ts';
 import type { Standing } from './standing.ts';
@@ -162,6 +162,11 @@ export class UnitEvidence implements Evidence {
 
   warnings(): readonly string[] {
     return [];
+  }
+
+  strip(most: number): WindowStrip {
+    const { inspected, nonconforming, size } = this.window;
+    return { units: inspected, full: size, nonconforming: this.window.newestNonconforming(most), count: nonconforming };
   }
 
   snapshot(): UnitEvidenceSnapshot {

@@ -37,7 +37,8 @@ export interface LiveChange {
   readonly at: number;
   readonly views: readonly GuaranteeView[];
   readonly alarms: readonly Alarm[];
-  readonly shift?: PlantCard['shift'];
+  /** Present where the shift changed; null between shifts. */
+  readonly shift?: NonNullable<PlantCard['shift']> | null;
 }
 
 /** Sent every second while nothing changes, so that silence of the connection shows. */

@@ -19,8 +19,8 @@ export interface SourceHost {
   /** The sequence a source is to send next. */
   readonly nextOf: (source: string) => number;
   readonly now: () => number;
-  /** Counts what came, for the operators. */
-  readonly note: (what: 'frame' | 'refused', records: number) => void;
+  readonly frameRead: (records: number) => void;
+  readonly frameRefused: () => void;
 }
 
 /** WebSocket close codes: RFC 6455 section 7.4.1, and from the range for applications (4000 on). */
@@ -93,7 +93,7 @@ export class SourceConnection {
       return;
     }
     const frame = read.value;
-    this.#host.note('frame', frame.records);
+    this.#host.frameRead(frame.records);
     this.#host.inbox.put({
       kind: 'frame',
       sender: this.sender,
@@ -109,8 +109,7 @@ export class SourceConnection {
   }
 
   #refuse(refusal: Refusal): void {
-    this.#host.note('refused', 0);
-    this.#host.inbox.put({ kind: 'refused', sender: this.sender, frames: 1 });
+    this.#host.frameRefused();
     this.#answer(refusedMessage(refusal, this.#host.nextOf(this.sender.name)));
     if (endsConnection(refusal.code)) this.#close(refusal.code);
   }

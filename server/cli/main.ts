@@ -1,0 +1,28 @@
+#!/usr/bin/env node
+import { Command } from 'commander';
+import { CommandFault, exitCode } from './exit-codes.ts';
+import { serveCommand } from './serve-command.ts';
+import { sourceCommand } from './source-command.ts';
+
+const program = new Command('vouchline')
+  .description('Tells a plant, while it runs, whether it can still vouch for what it promised.')
+  .addCommand(serveCommand())
+  .addCommand(sourceCommand())
+  .showHelpAfterError('(vouchline --help and vouchline COMMAND --help say what can be given)')
+  .configureOutput({ outputError: (text, write) => write(text) })
+  .exitOverride((error) => {
+    process.exitCode = error.exitCode === 0 ? exitCode.done : exitCode.badInput;
+    throw error;
+  });
+
+try {
+  await program.parseAsync();
+} catch (cause) {
+  if (cause instanceof CommandFault) {
+    process.stderr.write(`${cause.message}\n`);
+    process.exitCode = cause.code;
+  } else if (!(cause instanceof Error && 'exitCode' in cause)) {
+    process.stderr.write(`${cause instanceof Error ? (cause.stack ?? cause.message) : String(cause)}\n`);
+    process.exitCode = exitCode.failed;
+  }
+}

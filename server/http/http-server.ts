@@ -1,0 +1,47 @@
+import { existsSync, readFileSync } from 'node:fs';
+import { fileURLToPath } from 'node:url';
+import fastifyStatic from '@fastify/static';
+import { fastify, type FastifyInstance } from 'fastify';
+
+/** Where the built dashboard lies, beside the built server. */
+const clientFolder = fileURLToPath(new URL('../../client', import.meta.url));
+/** The same, when the server runs from its sources (tests). */
+const builtClientFolder = fileURLToPath(new URL('../../.build/client', import.meta.url));
+
+const securityHeaders = {
+  'content-security-policy':
+    "default-src 'self'; script-src 'self'; style-src 'self' 'unsafe-inline'; img-src 'self' data:; connect-src 'self'; font-src 'self'; object-src 'none'; base-uri 'none'; form-action 'self'; frame-ancestors 'none'",
+  'x-content-type-options': 'nosniff',
+  'referrer-policy': 'no-referrer',
+  'cross-origin-opener-policy': 'same-origin',
+  'cross-origin-resource-policy': 'same-origin',
+} as const;
+
+/** Requests other than record uploads are small, bytes. */
+const bodyLimit = 65_536;
+
+/** An HTTP server with the dashboard's files, safe headers and one form of error; routes are added by the caller. */
+export async function httpServer(): Promise<FastifyInstance> {
+  const http = fastify({ bodyLimit, forceCloseConnections: true, requestTimeout: 60_000, return503OnClosing: true });
+  http.addHook('onSend', async (_request, reply) => {
+    reply.headers(securityHeaders);
+  });
+  http.setErrorHandler((error: Error & { statusCode?: number; field?: string }, _request, reply) => {
+    const status = error.statusCode ?? 500;
+    const message = status >= 500 ? 'The server could not do this; its log says why.' : error.message;
+    void reply.status(status).send({ error: message, ...(error.field === undefined ? {} : { field: error.field }) });
+  });
+  const folder = existsSync(`${clientFolder}/index.html`) ? clientFolder : builtClientFolder;
+  const page = existsSync(`${folder}/index.html`) ? readFileSync(`${folder}/index.html`, 'utf8') : undefined;
+  if (page !== undefined) {
+    await http.register(fastifyStatic, { root: folder, index: 'index.html', maxAge: '1y', immutable: true, setHeaders: (response, path) => {
+      if (path.endsWith('.html')) void response.header('cache-control', 'no-cache');
+    } });
+  }
+  http.setNotFoundHandler((request, reply) => {
+    const wantsPage = request.method === 'GET' && !request.url.startsWith('/api/') && (request.headers.accept ?? '').includes('text/html');
+    if (wantsPage && page !== undefined) return reply.header('cache-control', 'no-cache').type('text/html').send(page);
+    return reply.status(404).send({ error: `there is nothing at ${request.url.slice(0, 200)}` });
+  });
+  return http;
+}

@@ -1,0 +1,41 @@
+import * as v from 'valibot';
+
+const personName = v.pipe(v.string(), v.trim(), v.minLength(1, 'say who you are'), v.maxLength(80, 'at most 80 characters'));
+const words = (most: number): v.GenericSchema<string> => v.pipe(v.string(), v.trim(), v.maxLength(most, `at most ${most} characters`));
+const wholeText = v.pipe(v.string(), v.regex(/^\d{1,15}$/, 'a whole number'), v.transform(Number));
+
+export const acknowledgeRequest = v.strictObject({ by: personName, note: v.optional(words(500), '') });
+export const restartRequest = v.strictObject({ by: personName, reason: v.pipe(words(500), v.minLength(1, 'say why the evidence is restarted')) });
+export const alarmParams = v.object({ id: wholeText });
+export const guaranteeParams = v.object({ id: v.pipe(v.string(), v.maxLength(64)) });
+
+const range = { from: wholeText, to: wholeText };
+export const historyQuery = v.strictObject({ ...range, points: v.optional(v.pipe(wholeText, v.minValue(1), v.maxValue(10_000)), '600') });
+export const eventsQuery = v.strictObject({
+  from: v.optional(wholeText, '0'),
+  to: v.optional(wholeText, '253402300799999'),
+  guarantee: v.optional(v.pipe(v.string(), v.maxLength(64))),
+  before: v.optional(wholeText),
+  limit: v.optional(v.pipe(wholeText, v.minValue(1), v.maxValue(10_000)), '1000'),
+});
+export const alarmsQuery = v.strictObject({ before: v.optional(wholeText), limit: v.optional(v.pipe(wholeText, v.minValue(1), v.maxValue(1_000)), '50') });
+
+/** A request that does not fit: which field, what it held, what was expected. */
+export class BadRequest extends Error {
+  readonly statusCode = 400;
+  readonly field: string;
+
+  constructor(field: string, message: string) {
+    super(message);
+    this.field = field;
+  }
+}
+
+/** @throws BadRequest naming the first field that does not fit */
+export function checked<S extends v.GenericSchema>(schema: S, value: unknown): v.InferOutput<S> {
+  const result = v.safeParse(schema, value);
+  if (result.success) return result.output;
+  const issue = result.issues[0];
+  const field = v.getDotPath(issue) ?? '';
+  throw new BadRequest(field, `${field === '' ? 'the request' : field}: got ${issue.received}; expected ${issue.expected ?? issue.message}${issue.expected ? ` (${issue.message})` : ''}`);
+}

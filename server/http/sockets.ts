@@ -1,0 +1,83 @@
+import type { IncomingMessage, Server } from 'node:http';
+import type { Duplex } from 'node:stream';
+import { WebSocketServer, type WebSocket } from 'ws';
+import { liveProtocol } from '../../core/live/message.ts';
+import { sourceProtocol } from '../../core/protocol/source-messages.ts';
+import { bearerToken } from '../ingest/bearer-token.ts';
+import type { Sender } from '../pipeline/arrival.ts';
+
+/** Who may connect, and what happens then. */
+export interface SocketHost {
+  /** Largest message of a source, bytes. */
+  readonly frameBytes: number;
+  readonly senderOf: (token: string) => Promise<Sender | undefined>;
+  readonly onSource: (socket: WebSocket, sender: Sender) => void;
+  readonly onDashboard: (socket: WebSocket) => void;
+  /** Why no source is taken now; undefined if they are. */
+  readonly closedBecause: () => string | undefined;
+  readonly mostDashboards: number;
+  readonly onError: (cause: Error) => void;
+}
+
+const offered = (request: IncomingMessage): readonly string[] => (request.headers['sec-websocket-protocol'] ?? '').split(',').map((name) => name.trim());
+
+/**
+ * Answers upgrade requests on /source and /live. A request that cannot be served is answered in HTTP before the
+ * upgrade, with the refusal's code as the body.
+ *
+ * @returns how to stop: no upgrade is answered any more
+ */
+export function serveSockets(server: Server, host: SocketHost): () => void {
+  const sources = new WebSocketServer({ noServer: true, maxPayload: host.frameBytes, perMessageDeflate: false, handleProtocols: () => sourceProtocol });
+  const dashboards = new WebSocketServer({ noServer: true, maxPayload: 1_024, perMessageDeflate: false, handleProtocols: () => liveProtocol });
+
+  async function upgradeSource(request: IncomingMessage, socket: Duplex, head: Buffer): Promise<void> {
+    const closed = host.closedBecause();
+    if (closed !== undefined) return refuse(socket, 503, closed);
+    if (!offered(request).includes(sourceProtocol)) return refuse(socket, 400, 'subprotocol-missing');
+    const token = bearerToken(request.headers);
+    if (token === undefined) return refuse(socket, 401, 'token-missing');
+    const sender = await host.senderOf(token);
+    if (sender === undefined) return refuse(socket, 401, 'token-unknown');
+    sources.handleUpgrade(request, socket, head, (opened) => {
+      opened.on('error', host.onError);
+      host.onSource(opened, sender);
+    });
+  }
+
+  function upgradeDashboard(request: IncomingMessage, socket: Duplex, head: Buffer): void {
+    if (!offered(request).includes(liveProtocol)) return refuse(socket, 400, 'subprotocol-missing');
+    if (dashboards.clients.size >= host.mostDashboards) return refuse(socket, 503, 'too-many-dashboards');
+    dashboards.handleUpgrade(request, socket, head, (opened) => {
+      opened.on('error', host.onError);
+      host.onDashboard(opened);
+    });
+  }
+
+  function onUpgrade(request: IncomingMessage, socket: Duplex, head: Buffer): void {
+    socket.on('error', host.onError);
+    const path = (request.url ?? '').split('?')[0];
+    if (path === '/live') upgradeDashboard(request, socket, head);
+    else if (path === '/source') {
+      upgradeSource(request, socket, head).catch((cause: unknown) => {
+        host.onError(cause as Error);
+        refuse(socket, 500, 'not-stored');
+      });
+    } else refuse(socket, 404, 'no-such-socket');
+  }
+
+  server.on('upgrade', onUpgrade);
+  return () => {
+    server.off('upgrade', onUpgrade);
+    sources.close();
+    dashboards.close();
+  };
+}
+
+const reasons: Readonly<Record<number, string>> = { 400: 'Bad Request', 401: 'Unauthorized', 404: 'Not Found', 500: 'Internal Server Error', 503: 'Service Unavailable' };
+
+function refuse(socket: Duplex, status: number, code: string): void {
+  if (socket.destroyed) return;
+  const body = JSON.stringify({ code });
+  socket.end(`HTTP/1.1 ${status} ${reasons[status] ?? ''}\r\nContent-Type: application/json\r\nContent-Length: ${Buffer.byteLength(body)}\r\nConnection: close\r\n\r\n${body}`);
+}

@@ -1,0 +1,94 @@
+import type { WebSocket } from 'ws';
+import type { SourceLimits } from '../../core/protocol/limits.ts';
+import type { RefusalCode } from '../../core/protocol/refusals.ts';
+import type { Sender } from '../pipeline/arrival.ts';
+import type { PlantServer } from '../pipeline/plant-server.ts';
+import type { Store } from '../store/store.ts';
+import { everyStation } from './allowed-stations.ts';
+import { SourceConnection } from './source-connection.ts';
+
+export interface SourceDeskSetting {
+  readonly plant: PlantServer;
+  readonly store: Store;
+  readonly limits: SourceLimits;
+  /** For the operators' measures. */
+  readonly frameRead: (records: number) => void;
+  readonly frameRefused: () => void;
+}
+
+/** All sources connected now; one connection a source. */
+export class SourceDesk {
+  readonly #setting: SourceDeskSetting;
+  readonly #connections = new Map<number, SourceConnection>();
+  /** Refused frames since the last report, by source. */
+  readonly #refused = new Map<number, { readonly sender: Sender; frames: number }>();
+
+  constructor(setting: SourceDeskSetting) {
+    this.#setting = setting;
+  }
+
+  get connected(): number {
+    return this.#connections.size;
+  }
+
+  /** Whose token this is, if it is one in force; notes that it was used. */
+  async senderOf(token: string): Promise<Sender | undefined> {
+    const { store, plant } = this.#setting;
+    const source = await store.sources.ofToken(token);
+    if (source === undefined) return undefined;
+    await store.sources.used(source.id, plant.now);
+    return { id: source.id, name: source.name, stations: source.stations };
+  }
+
+  connect(socket: WebSocket, sender: Sender): void {
+    this.#connections.get(sender.id)?.end('replaced');
+    const { plant, limits, frameRead } = this.#setting;
+    const connection = new SourceConnection(socket, sender, {
+      inbox: plant.inbox,
+      limits,
+      nextOf: (source) => plant.monitor.sources.nextOf(source),
+      now: () => plant.now,
+      frameRead,
+      frameRefused: () => this.noteRefused(sender),
+    });
+    this.#connections.set(sender.id, connection);
+    const leave = plant.flow.add(socket);
+    socket.on('close', () => {
+      leave();
+      if (this.#connections.get(sender.id) === connection) this.#connections.delete(sender.id);
+    });
+  }
+
+  /** A frame or upload of this source was refused: counted as bad data with the next report. */
+  noteRefused(sender: Sender): void {
+    this.#setting.frameRefused();
+    const known = this.#refused.get(sender.id);
+    if (known) known.frames += 1;
+    else this.#refused.set(sender.id, { sender, frames: 1 });
+  }
+
+  /** Hands the refusals counted since the last time to the monitor, one entry a source, however many they were. */
+  reportRefused(): void {
+    for (const { sender, frames } of this.#refused.values()) {
+      const stations = sender.stations.includes(everyStation) ? this.#everyStation() : sender.stations;
+      this.#setting.plant.inbox.put({ kind: 'refused', sender: { ...sender, stations }, frames });
+    }
+    this.#refused.clear();
+  }
+
+  /** Ends every connection with a refusal. */
+  end(code: RefusalCode): void {
+    for (const connection of this.#connections.values()) connection.end(code);
+  }
+
+  /** Makes durable and answers what was received, then tells the sources that the server stops. */
+  async stop(reason: string): Promise<void> {
+    this.reportRefused();
+    await this.#setting.plant.settled();
+    for (const connection of this.#connections.values()) connection.stopping(reason);
+  }
+
+  #everyStation(): readonly string[] {
+    return this.#setting.plant.monitor.plant.lines.flatMap(({ stations }) => stations.map(({ id }) => id));
+  }
+}

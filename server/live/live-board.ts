@@ -1,0 +1,145 @@
+import type { Alarm } from '../../core/alarm/alarm.ts';
+import type { LiveChange, LiveSnapshot, PlantCard } from '../../core/live/message.ts';
+import type { Happening } from '../../core/monitor/happening.ts';
+import type { Monitor } from '../../core/monitor/monitor.ts';
+import type { Watch } from '../../core/monitor/watch.ts';
+import { cardOf } from '../../core/view/card-of.ts';
+import { viewOf } from '../../core/view/view-of.ts';
+
+interface Kept {
+  revision: number;
+  json: string;
+}
+
+/** Ended alarms kept for dashboards beside the standing ones. */
+const mostEnded = 200;
+
+/** What holds for a whole run of the server. */
+export interface LiveSetting {
+  readonly boot: string;
+  readonly clockRate: number;
+  readonly demo: boolean;
+}
+
+/**
+ * The newest of everything dashboards show, each with the revision at which it changed: any dashboard catches up
+ * with one message made from here, and a slow one costs no memory. What does not change is written only once.
+ */
+export class LiveBoard {
+  readonly #setting: LiveSetting;
+  readonly #views = new Map<string, Kept>();
+  readonly #alarms = new Map<number, Kept & { ended: boolean }>();
+  #plantJson = '';
+  #cardsJson = '';
+  #plantRevision = 0;
+  #revision = 0;
+  #shift: PlantCard['shift'];
+  #shiftRevision = 0;
+  #at = 0;
+  #changes = new Map<number, string>();
+
+  constructor(setting: LiveSetting) {
+    this.#setting = setting;
+  }
+
+  get revision(): number {
+    return this.#revision;
+  }
+
+  get boot(): string {
+    return this.#setting.boot;
+  }
+
+  get at(): number {
+    return this.#at;
+  }
+
+  /** Begins with a plant file: everything is new. */
+  begin(monitor: Monitor): void {
+    const { plant, plantVersion } = monitor;
+    this.#revision += 1;
+    this.#plantRevision = this.#revision;
+    this.#plantJson = JSON.stringify({
+      name: plant.name,
+      timeZone: plant.timeZone,
+      version: plantVersion,
+      lines: plant.lines.map(({ id, name }) => ({ id, name })),
+    } satisfies Omit<PlantCard, 'shift'>);
+    this.#cardsJson = JSON.stringify(plant.guarantees.map((guarantee) => cardOf(guarantee, plant)));
+    this.#views.clear();
+    for (const watch of monitor.watches) watch.changed = true;
+    for (const alarm of monitor.desk.standing()) this.#keepAlarm(alarm);
+  }
+
+  /** Alarms that ended before this start, oldest first. */
+  remember(ended: readonly Alarm[]): void {
+    for (const alarm of ended) this.#keepAlarm(alarm);
+  }
+
+  /** Takes up durable happenings: an alarm change is never left out. */
+  note(happenings: readonly Happening[]): void {
+    for (const happening of happenings) if (happening.kind === 'alarm') this.#keepAlarm(happening.alarm);
+  }
+
+  /** Takes up what changed in the monitor since the last call. */
+  refresh(monitor: Monitor, at: number): void {
+    this.#at = at;
+    this.#changes.clear();
+    for (const watch of monitor.watches) if (watch.changed) this.#keepView(watch);
+    const shift = monitor.calendar.instanceAt(monitor.now);
+    if (shift?.since === this.#shift?.since) return;
+    this.#shift = shift;
+    this.#shiftRevision = ++this.#revision;
+  }
+
+  snapshot(): string {
+    const { boot, clockRate, demo } = this.#setting;
+    const head = { type: 'snapshot', boot, revision: this.#revision, at: this.#at, clockRate, demo } satisfies Partial<LiveSnapshot>;
+    const plant = `${this.#plantJson.slice(0, -1)}${this.#shift ? `,"shift":${JSON.stringify(this.#shift)}` : ''}}`;
+    return `${JSON.stringify(head).slice(0, -1)},"plant":${plant},"cards":${this.#cardsJson},"views":[${jsonOf(this.#views, 0)}],"alarms":[${jsonOf(this.#alarms, 0)}]}`;
+  }
+
+  /** What a dashboard at `revision` lacks; a whole snapshot where the plant file changed since. */
+  since(revision: number): string {
+    if (revision < this.#plantRevision) return this.snapshot();
+    const known = this.#changes.get(revision);
+    if (known !== undefined) return known;
+    const head = { type: 'change', revision: this.#revision, at: this.#at } satisfies Partial<LiveChange>;
+    const shift = this.#shiftRevision > revision ? `,"shift":${JSON.stringify(this.#shift ?? null)}` : '';
+    const made = `${JSON.stringify(head).slice(0, -1)}${shift},"views":[${jsonOf(this.#views, revision)}],"alarms":[${jsonOf(this.#alarms, revision)}]}`;
+    this.#changes.set(revision, made);
+    return made;
+  }
+
+  beat(): string {
+    return JSON.stringify({ type: 'beat', revision: this.#revision, at: this.#at });
+  }
+
+  #keepView(watch: Watch): void {
+    watch.changed = false;
+    const json = JSON.stringify(viewOf(watch));
+    const known = this.#views.get(watch.guarantee.id);
+    if (known?.json === json) return;
+    this.#views.set(watch.guarantee.id, { revision: ++this.#revision, json });
+  }
+
+  #keepAlarm(alarm: Alarm): void {
+    this.#alarms.delete(alarm.id);
+    this.#alarms.set(alarm.id, { revision: ++this.#revision, json: JSON.stringify(alarm), ended: alarm.state.kind === 'ended' });
+    this.#changes.clear();
+    let ended = 0;
+    for (const kept of this.#alarms.values()) if (kept.ended) ended += 1;
+    if (ended <= mostEnded) return;
+    for (const [id, kept] of this.#alarms) {
+      if (!kept.ended) continue;
+      this.#alarms.delete(id);
+      return;
+    }
+  }
+}
+
+function jsonOf(kept: ReadonlyMap<unknown, Kept>, since: number): string {
+  let text = '';
+  for (const { revision, json } of kept.values()) if (revision > since) text += text === '' ? json : `,${json}`;
+  return text;
+}

@@ -1,0 +1,157 @@
+import { randomUUID } from 'node:crypto';
+import type { AddressInfo } from 'node:net';
+import { join } from 'node:path';
+import type { Logger } from 'pino';
+import { sourceLimits } from '../core/protocol/limits.ts';
+import { plantClock, type ClockSetting } from './clock/plant-clock.ts';
+import { serveApi } from './http/api.ts';
+import { httpServer } from './http/http-server.ts';
+import { serveOperations } from './http/operations.ts';
+import { serveSockets } from './http/sockets.ts';
+import { SourceDesk } from './ingest/source-desk.ts';
+import { DashboardDesk } from './live/dashboard-desk.ts';
+import { LiveBoard } from './live/live-board.ts';
+import { measuresOf } from './ops/measures.ts';
+import { PlantServer } from './pipeline/plant-server.ts';
+import { plantFile, type PlantFileText } from './plant-file.ts';
+import { repeatEvery } from './repeat-every.ts';
+import type { Settings } from './settings/settings.ts';
+import { openStore } from './store/sqlite-store.ts';
+
+/** A running server. */
+export interface Served {
+  /** Where it answers, e.g. http://127.0.0.1:7317 */
+  readonly address: string;
+  /** Reads the plant file anew; an invalid one changes nothing. @returns what is wrong with it, empty if it is in force */
+  reload(): Promise<readonly string[]>;
+  /** Ends on purpose: clients are told, nothing accepted is lost. */
+  stop(reason: string): Promise<void>;
+}
+
+export interface ServeSetting {
+  readonly settings: Settings;
+  readonly clock: ClockSetting;
+  readonly demo: boolean;
+  readonly log: Logger;
+}
+
+/** A plant file that cannot be used; its faults are the message, a line each. */
+export class BadPlantFile extends Error {}
+
+/** Wall time between ticks of the plant clock and between updates of the dashboards, ms. */
+const tickMs = 250;
+const updateMs = 100;
+
+/** Starts a server: brings back its state, then listens. */
+export async function serve({ settings, clock: clockSetting, demo, log }: ServeSetting): Promise<Served> {
+  const path = settings.plant ?? join(settings.data, 'plant.yaml');
+  const read = await plantFile(path);
+  if (!read.ok) throw new BadPlantFile(read.fault.join('\n'));
+  const clock = plantClock(clockSetting);
+  const store = await openStore(settings.data, { onRefused: (error) => log.fatal({ err: error }, 'nothing can be made durable any more') });
+  const board = new LiveBoard({ boot: randomUUID(), clockRate: clock?.rate ?? 1, demo });
+  const dashboards = new DashboardDesk(board);
+
+  const plant = await PlantServer.start({
+    store,
+    plant: read.value,
+    clock,
+    log,
+    onOutcome: ({ group }) => {
+      measures.commits.inc();
+      board.note(group.happenings.map(({ happening }) => happening));
+    },
+    onFailure: (cause) => {
+      log.fatal({ err: cause }, 'stopped taking records');
+      sources.end('not-stored');
+      dashboards.stop('The server cannot store records any more.');
+    },
+  });
+  const limits = { ...sourceLimits, framesInFlight: settings.framesInFlight, frameBytes: settings.frameBytes };
+  const sources = new SourceDesk({
+    plant,
+    store,
+    limits,
+    frameRefused: () => measures.refusedFrames.inc(),
+    frameRead: (records) => {
+      measures.frames.inc();
+      measures.records.inc(records);
+    },
+  });
+  const measures = measuresOf({
+    waitingBytes: () => store.waitingBytes,
+    sources: () => sources.connected,
+    dashboards: () => dashboards.connected,
+    standingAlarms: () => plant.monitor.desk.standing().length,
+    guaranteesByState: () => countedByState(plant),
+  });
+  board.remember([...(await store.endedAlarms({ limit: 200 }))].reverse());
+  board.begin(plant.monitor);
+
+  const http = await httpServer();
+  serveOperations(http, { store, measures });
+  serveApi(http, { store, monitor: () => plant.monitor, act: (act) => plant.act(act) });
+  const stopSockets = serveSockets(http.server, {
+    frameBytes: limits.frameBytes,
+    mostDashboards: settings.dashboards,
+    senderOf: (token) => sources.senderOf(token),
+    onSource: (socket, sender) => sources.connect(socket, sender),
+    onDashboard: (socket) => dashboards.connect(socket),
+    closedBecause: () => (store.condition.kind === 'open' ? undefined : 'not-stored'),
+    onError: (cause) => log.debug({ err: cause }, 'a socket failed'),
+  });
+  await http.listen({ host: settings.host, port: settings.port });
+  const { port } = http.server.address() as AddressInfo;
+
+  const stops = [
+    repeatEvery(tickMs, () => {
+      sources.reportRefused();
+      if (clock) plant.inbox.put({ kind: 'tick' });
+    }),
+    repeatEvery(updateMs, () => {
+      board.refresh(plant.monitor, plant.now);
+      dashboards.update(Date.now());
+    }),
+    repeatEvery(settings.snapshotMinutes * 60_000, () => {
+      plant.keepSnapshot().catch((cause: unknown) => log.error({ err: cause }, 'a snapshot was not kept'));
+    }),
+  ];
+
+  async function take(file: PlantFileText): Promise<void> {
+    await plant.usePlant(file);
+    board.begin(plant.monitor);
+    log.info({ version: file.version }, 'plant file in force');
+  }
+
+  async function reload(): Promise<readonly string[]> {
+    const again = await plantFile(path);
+    if (!again.ok) {
+      log.error({ faults: again.fault }, 'the plant file is not valid; the old one stays in force');
+      return again.fault;
+    }
+    if (again.value.version !== plant.monitor.plantVersion) await take(again.value);
+    return [];
+  }
+
+  let stopping: Promise<void> | undefined;
+  async function stopOnce(reason: string): Promise<void> {
+    log.info({ reason }, 'stopping');
+    for (const stop of stops) stop();
+    stopSockets();
+    await sources.stop(reason);
+    await plant.stop();
+    dashboards.stop(reason);
+    await http.close();
+    await store.close();
+    log.info('stopped');
+  }
+
+  log.info({ address: `http://${settings.host}:${port}`, version: read.value.version }, 'listening');
+  return { address: `http://${settings.host.includes(':') ? `[${settings.host}]` : settings.host}:${port}`, reload, stop: (reason) => (stopping ??= stopOnce(reason)) };
+}
+
+function countedByState(plant: PlantServer): Readonly<Record<string, number>> {
+  const counted = { gathering: 0, demonstrated: 0, undecided: 0, violated: 0, unknown: 0 };
+  for (const watch of plant.monitor.watches) counted[watch.standing.state] += 1;
+  return counted;
+}

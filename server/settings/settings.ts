@@ -1,0 +1,89 @@
+import type { LogLevel } from '../ops/log.ts';
+
+/** Everything a server can be told: by flag, by environment variable or in the settings file, in this precedence. */
+export interface Settings {
+  readonly data: string;
+  readonly plant: string | undefined;
+  readonly host: string;
+  readonly port: number;
+  readonly clock: string;
+  readonly logLevel: LogLevel;
+  readonly snapshotMinutes: number;
+  readonly framesInFlight: number;
+  readonly frameBytes: number;
+  readonly dashboards: number;
+}
+
+type Kind =
+  | { readonly kind: 'text' }
+  | { readonly kind: 'whole'; readonly from: number; readonly to: number }
+  | { readonly kind: 'choice'; readonly of: readonly string[] };
+
+/** One setting: its flag, its variable (VOUCHLINE_…) and its name in the settings file are made from `name`. */
+export interface SettingRule {
+  readonly key: keyof Settings;
+  /** kebab-case: the flag without its dashes. */
+  readonly name: string;
+  readonly of: Kind;
+  readonly preset: string | number | undefined;
+  readonly help: string;
+}
+
+export const settingRules: readonly SettingRule[] = [
+  { key: 'data', name: 'data', of: { kind: 'text' }, preset: '.data', help: 'data directory; made where it is missing' },
+  { key: 'plant', name: 'plant', of: { kind: 'text' }, preset: undefined, help: 'plant file (YAML or JSON); plant.yaml in the data directory when absent' },
+  { key: 'host', name: 'host', of: { kind: 'text' }, preset: '127.0.0.1', help: 'address to listen on' },
+  { key: 'port', name: 'port', of: { kind: 'whole', from: 0, to: 65_535 }, preset: 7317, help: 'port to listen on; 0 takes a free one' },
+  { key: 'clock', name: 'clock', of: { kind: 'text' }, preset: 'wall', help: "plant clock: 'wall', or 'records' to rehearse with stored records: it then stands at the newest record" },
+  { key: 'logLevel', name: 'log-level', of: { kind: 'choice', of: ['debug', 'info', 'warn', 'error', 'silent'] }, preset: 'info', help: 'least severe entries to log' },
+  { key: 'snapshotMinutes', name: 'snapshot-minutes', of: { kind: 'whole', from: 1, to: 1_440 }, preset: 5, help: 'minutes between snapshots of the whole state' },
+  { key: 'framesInFlight', name: 'frames-in-flight', of: { kind: 'whole', from: 1, to: 10_000 }, preset: 64, help: 'frames a source may have sent and not yet seen acknowledged' },
+  { key: 'frameBytes', name: 'frame-bytes', of: { kind: 'whole', from: 1_024, to: 67_108_864 }, preset: 1_048_576, help: 'largest frame, bytes' },
+  { key: 'dashboards', name: 'dashboards', of: { kind: 'whole', from: 1, to: 100_000 }, preset: 5_000, help: 'dashboards connected at the same time at most' },
+];
+
+export const variableOf = (name: string): string => `VOUCHLINE_${name.toUpperCase().replaceAll('-', '_')}`;
+
+/** A setting that cannot be used: which, from where, what it held, what was expected. */
+export class BadSetting extends Error {}
+
+/** Values as found, by setting name; undefined or absent where not told. */
+export type Told = Readonly<Record<string, unknown>>;
+
+/**
+ * Settles every setting: flags before variables before the file before presets.
+ *
+ * @throws BadSetting naming the setting, where it was told, the value and what was expected
+ */
+export function settle(flags: Told, variables: Told, file: Told): Settings {
+  for (const name of Object.keys(file)) {
+    if (!settingRules.some((rule) => rule.name === name)) throw new BadSetting(`settings file: there is no setting "${name}"; expected one of ${settingRules.map((rule) => rule.name).join(', ')}`);
+  }
+  const settled: Record<string, unknown> = {};
+  for (const rule of settingRules) {
+    const places: readonly (readonly [string, unknown])[] = [
+      [`--${rule.name}`, flags[rule.name]],
+      [variableOf(rule.name), variables[variableOf(rule.name)]],
+      [`settings file: ${rule.name}`, file[rule.name]],
+    ];
+    const told = places.find(([, value]) => value !== undefined && value !== '');
+    settled[rule.key] = told === undefined ? rule.preset : checked(rule, told[0], told[1]);
+  }
+  return settled as unknown as Settings;
+}
+
+function checked({ of }: SettingRule, place: string, value: unknown): string | number {
+  switch (of.kind) {
+    case 'text':
+      if (typeof value === 'string') return value;
+      throw new BadSetting(`${place}: ${JSON.stringify(value)} is not a text`);
+    case 'choice':
+      if (typeof value === 'string' && of.of.includes(value)) return value;
+      throw new BadSetting(`${place}: ${JSON.stringify(value)}; expected one of ${of.of.join(', ')}`);
+    case 'whole': {
+      const number = typeof value === 'string' && /^\d+$/.test(value) ? Number(value) : value;
+      if (typeof number === 'number' && Number.isSafeInteger(number) && number >= of.from && number <= of.to) return number;
+      throw new BadSetting(`${place}: ${JSON.stringify(value)}; expected a whole number from ${of.from} to ${of.to}`);
+    }
+  }
+}
