@@ -1,8 +1,9 @@
 import { checkedSequence } from '../record/checked-words.ts';
+import { parsedJson } from '../record/json-text.ts';
 import type { Frame, Part } from '../record/part.ts';
 import { refuse, settled, under, type Refusal } from '../record/refusal.ts';
 import type { Result } from '../result.ts';
-import { expectFields, objectAt, type JsonObject } from './json-object.ts';
+import { expectFields, objectAt } from './json-object.ts';
 import { partOfJson } from './json-part.ts';
 import type { SourceLimits } from './limits.ts';
 import { OriginMemo } from './origin-memo.ts';
@@ -26,7 +27,7 @@ export class JsonFrameReader {
   #frame(text: string): Frame {
     // A text has at least as many bytes as UTF-16 units: what is refused here is too large for certain.
     if (text.length > this.#limits.frameBytes) refuse('frame-too-large', '', text.length, `at most ${this.#limits.frameBytes} bytes`);
-    const json = objectAt(parsed(text), '', 'an object {"type": "records", "first", "parts"}');
+    const json = objectAt(parsedJson(text, 'one JSON object'), '', 'an object {"type": "records", "first", "parts"}');
     if (json.type !== 'records') refuse('not-a-frame', 'type', json.type, '"records"');
     expectFields(json, 3, frameFields);
     const first = checkedSequence(json.first, 'first');
@@ -58,13 +59,5 @@ export class JsonFrameReader {
     } catch (cause) {
       throw under(`parts[${index}]`, cause);
     }
-  }
-}
-
-function parsed(text: string): unknown {
-  try {
-    return JSON.parse(text) as JsonObject;
-  } catch (cause) {
-    return refuse('not-json', '', cause instanceof Error ? cause.message : text, 'one JSON object');
   }
 }

@@ -42,6 +42,7 @@ const refused: readonly (readonly [string, object, RefusalCode, string])[] = [
   ['a place behind the last unit', frame({ ...units, nonconforming: [3, 10] }), 'not-rising', 'parts[0].nonconforming[1]'],
   ['a place twice', frame({ ...units, nonconforming: [3, 3] }), 'not-rising', 'parts[0].nonconforming[1]'],
   ['a place that is no whole number', frame({ ...units, nonconforming: [0.5] }), 'out-of-range', 'parts[0].nonconforming[0]'],
+  ['a place that cannot even become a number', frame({ ...units, nonconforming: [{ valueOf: 1, toString: 1 }] }), 'out-of-range', 'parts[0].nonconforming[0]'],
   ['no units', frame({ ...units, units: 0 }), 'out-of-range', 'parts[0].units'],
   ['a column as text', frame({ ...tallies, inspected: '5' }), 'wrong-type', 'parts[0].inspected'],
   ['columns of two lengths', frame({ ...tallies, nonconforming: [1, 2] }), 'wrong-length', 'parts[0].nonconforming'],

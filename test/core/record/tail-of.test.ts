@@ -1,5 +1,6 @@
 import fc from 'fast-check';
 import { describe, expect, it } from 'vitest';
+import type { Frame } from '../../../core/record/part.ts';
 import { tailOf } from '../../../core/record/tail-of.ts';
 import { arbitraryFrame } from './arbitrary-frame.ts';
 import { rowsOfFrame } from './rows-of-frame.ts';
@@ -17,6 +18,15 @@ describe('the tail of a frame', () => {
       }),
       { seed: 8, numRuns: 500 },
     ));
+
+  it('a broken step keeps every millisecond: 0.7 ms from a later start would round record 7 down', () => {
+    const origin = { station: 'a-leak', product: 'hose-12', characteristic: 'leak', lot: undefined };
+    const frame: Frame = {
+      first: 1, records: 20,
+      parts: [{ kind: 'verdicts', origin, records: 20, time: { kind: 'steady', start: 0, step: 0.7 }, nonconforming: Uint32Array.of(3, 12) }],
+    };
+    expect(rowsOfFrame(tailOf(frame, 3))).toStrictEqual(rowsOfFrame(frame).slice(3));
+  });
 
   it('cuts lost records, keeps a frame whole when nothing is skipped, and ends empty', () => {
     const frame = { first: 5, records: 10, parts: [{ kind: 'lost', records: 10, at: 1, station: 'a-leak', reason: 'overrun' }] } as const;
