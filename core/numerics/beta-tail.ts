@@ -16,7 +16,7 @@ import { NoConvergence } from './no-convergence.ts';
  */
 export function betaTailRatio(a: number, b: number, p: number, q: number): number {
   const least = a < b ? a : b;
-  if (Number.isInteger(b)) return least < 800 ? sumDownwards(a, b, p, q) : integrated(a, b, p, q);
+  if (Number.isInteger(b)) return least < 5000 ? sumDownwards(a, b, p, q) : integrated(a, b, p, q);
   return least < 200 ? continued(a, b, p, q) : integrated(a, b, p, q);
 }
 
@@ -34,8 +34,9 @@ function sumDownwards(a: number, b: number, p: number, q: number): number {
 
 function integrated(a: number, b: number, p: number, q: number): number {
   const total = a + b;
-  const slope = a - total * p;
+  const slope = p < q ? a - total * p : total * q - b;
   const reach = 80 / (slope + Math.sqrt(slope * slope + 80 * total * p * q));
+  if (reach < 0.1) return nearlyGaussian(total, slope, p, q, reach);
   let sum = 0;
   for (let i = 0; i < gaussNodes.length; i++) {
     const u = reach * (gaussNodes[i] ?? 0);
@@ -48,6 +49,32 @@ function integrated(a: number, b: number, p: number, q: number): number {
 }
 
 /** The even part of the continued fraction, in which the small difference of a and (a + b) p stands alone. */
+/**
+ * The same integral where u stays below 0.1: ln(q + p e^-u) as its series in u, whose coefficients are
+ * the cumulants of a single verdict over factorials. What is left out is below 1e-14 of the exponent.
+ */
+function nearlyGaussian(total: number, slope: number, p: number, q: number, reach: number): number {
+  const v = p * q;
+  const scale = total * v;
+  const skew = scale * (q - p);
+  const c2 = scale / 2;
+  const c3 = -skew / 6;
+  const c4 = (scale / 24) * (1 - 6 * v);
+  const c5 = (-skew / 120) * (1 - 12 * v);
+  const c6 = (scale / 720) * (1 - v * (30 - 120 * v));
+  const c7 = (-skew / 5040) * (1 - v * (60 - 360 * v));
+  const c8 = (scale / 40_320) * (1 - v * (126 - v * (1680 - 5040 * v)));
+  const c9 = (-skew / 362_880) * (1 - v * (252 - v * (5040 - 20_160 * v)));
+  const c10 = (scale / 3_628_800) * (1 - v * (510 - v * (17_640 - v * (151_200 - 362_880 * v))));
+  let sum = 0;
+  for (let i = 0; i < gaussNodes.length; i++) {
+    const u = reach * (gaussNodes[i] ?? 0);
+    const high = c6 + u * (c7 + u * (c8 + u * (c9 + u * c10)));
+    sum += (gaussWeights[i] ?? 0) * Math.exp(-u * (slope + u * (c2 + u * (c3 + u * (c4 + u * (c5 + u * high))))));
+  }
+  return sum * reach;
+}
+
 function continued(a: number, b: number, p: number, q: number): number {
   const slope = a * q - b * p;
   let c = (1 + slope) / (a + 1);
