@@ -119,7 +119,7 @@ class SqliteStore implements Store {
     return this.#reading.call('newestSnapshot', undefined);
   }
 
-  readJournal(fromId: number, batchBytes = 4 * mebibyte): AsyncIterable<readonly Entry[]> {
+  readJournal(fromId: number, batchBytes = mebibyte): AsyncIterable<readonly Entry[]> {
     return journalBatches(fromId, (from) => this.#reading.call('journal', { fromId: from, batchBytes }));
   }
 

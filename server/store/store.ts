@@ -95,7 +95,7 @@ export interface Store {
   /** Keeps a snapshot behind the groups given before it, and the one before it; older ones go. The body's buffer is handed over (detached). */
   keepSnapshot(snapshot: Snapshot): Promise<void>;
   newestSnapshot(): Promise<SnapshotFound>;
-  /** Entries with ids from `fromId` (included), in order, in batches of about `batchBytes` (4 MiB); the next batch is read while one is worked on. */
+  /** Entries with ids from `fromId` (included), in order, in batches of about `batchBytes` (1 MiB); the next batch is read while one is worked on. */
   readJournal(fromId: number, batchBytes?: number): AsyncIterable<readonly Entry[]>;
   /** Entries of one kind, newest first (plant versions, acts). */
   entriesOf(kind: Exclude<EntryKind, 'frame'>, page: Page): Promise<readonly Entry[]>;

@@ -20,6 +20,7 @@ export class WorkerChannel<C extends Calls> {
     this.#worker = new Worker(url, { workerData });
     this.#worker.on('message', (answer: Answer) => this.#settle(answer));
     this.#worker.on('error', (cause) => this.#end(new StoreError('worker-ended', `The store's thread failed: ${String(cause)}`, { cause })));
+    this.#worker.on('messageerror', (cause) => this.#end(new StoreError('worker-ended', `An answer of the store's thread cannot be read: ${String(cause)}`, { cause })));
     this.ended = new Promise((resolve) => {
       this.#worker.on('exit', (code) => {
         this.#end(new StoreError('worker-ended', `The store's thread has ended (code ${code}).`));
