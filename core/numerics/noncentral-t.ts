@@ -55,7 +55,7 @@ function stepOf(t: number, df: number, noncentrality: number, peak: number, top:
   const flank = t * w > noncentrality ? Math.abs(t * w) : 0;
   const steepest = Math.sqrt(2 * df * w * w + Math.max(layer, flank) ** 2);
   if (df >= 30) return Math.min(0.13, 0.6 / steepest);
-  return Math.min(df < fewDegrees ? 0.06 : 0.1, 0.4 / steepest);
+  return Math.min(df < fewDegrees ? 0.08 : 0.1, 0.4 / steepest);
 }
 
 /**
