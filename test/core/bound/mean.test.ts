@@ -43,6 +43,12 @@ describe('bounds on a mean', () => {
     expect(meanLower(20, 500, 2, asTail(0.005))).toBeCloseTo(500 - 2 * 0.6397244259237303, 12);
   });
 
+  it('spread of a gear diameter: printed factors of the bounds on a standard deviation', () => {
+    // Boost.Math documentation, 'Confidence intervals on the standard deviation', n = 2, 95 % two-sided; below: 1 / z(0.0125)
+    expect(sdUpper(2, 1, asTail(0.025))).toBeCloseTo(31.9102, 4);
+    expect(sdLower(2, 1, asTail(0.025))).toBeCloseTo(0.4461, 4);
+  });
+
   it.each([2, 5, 30])('covers as it says, %d normal measurements', (n) => {
     const uniform = seeded(100 + n);
     const draw = (): number => 10 + 3 * normalQuantileOfTail(uniform());
