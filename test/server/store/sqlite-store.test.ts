@@ -100,6 +100,18 @@ describe('a full disk', () => {
     expect(await again.openAlarms()).toHaveLength(durable);
   });
 
+  it('writes nothing behind a gap: what is under way when a commit fails fails too, although it would fit', async () => {
+    const store = await open({ mostPages: 60, groupEntries: 1 });
+    const settled = await Promise.allSettled([
+      store.commit(group({ entries: [entry(1)] })),
+      store.commit(group({ entries: [entry(2, { body: new Uint8Array(1_000_000) })] })),
+      store.commit(group({ entries: [entry(3)] })),
+      store.commit(group({ entries: [entry(4)] })),
+    ]);
+    expect(settled.map((one) => (one.status === 'fulfilled' ? 'durable' : (one.reason as StoreError).fault))).toEqual(['durable', 'disk-full', 'refused', 'refused']);
+    expect(await allEntries(store)).toEqual([entry(1)]);
+  });
+
   it('holds no more than it may: the commit above the bound is refused', async () => {
     const store = await open({ mostWaitingBytes: 10_000 });
     const settled = await Promise.allSettled([1, 2, 3, 4].map((id) => store.commit(group({ entries: [entry(id, { body: new Uint8Array(4_000) })] }))));
