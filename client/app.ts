@@ -68,6 +68,7 @@ export class VouchlineApp extends LitElement {
     const says = headline(formats, needing, picture.cards.length);
     document.title = `${needing > 0 ? `(${needing}) ` : ''}Vouchline, ${picture.plant.name}`;
     return html`
+      <header>
       <a class="skip" href="#content" @click=${this.#skip}>Skip to the content</a>
       <page-masthead .picture=${picture} .says=${says} .formats=${formats} .plantNow=${plantNow} .freshness=${freshness}
         .settings=${settings} .route=${this.#address.route.kind} .wall=${wall}
@@ -75,6 +76,7 @@ export class VouchlineApp extends LitElement {
           this.#wiring.settings.change(event.detail);
         }}></page-masthead>
       <link-banner .picture=${picture} .freshness=${freshness} .formats=${formats} .plantNow=${plantNow}></link-banner>
+      </header>
       <main id="content" tabindex="-1" class=${freshness.kind === 'live' ? 'live' : 'stale'}>
         ${this.#page(picture, formats, plantNow, settings, wall)}
       </main>

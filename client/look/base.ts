@@ -3,7 +3,7 @@ import { css } from 'lit';
 /** What every element shares: box model, focus, buttons, words for screen readers only. */
 export const base = css`
   *, *::before, *::after { box-sizing: border-box; }
-  :host { display: block; }
+  :host { display: block; box-sizing: border-box; }
   :host([hidden]), [hidden] { display: none !important; }
   h1, h2, h3, p, ol, ul, dl, dd, figure { margin: 0; padding: 0; }
   h1, h2, h3 { font-weight: 700; line-height: 1.2; text-wrap: balance; }

@@ -1,7 +1,7 @@
 import { css } from 'lit';
 
 export const mastheadStyle = css`
-  header { display: grid; grid-template-columns: 1fr auto; gap: 0.1rem 1.5rem; align-items: center; padding: 0.75rem 0 0.7rem; }
+  .head { display: grid; grid-template-columns: 1fr auto; gap: 0.1rem 1.5rem; align-items: center; padding: 0.75rem 0 0.7rem; }
   .says { font-size: 1.6rem; font-weight: 750; line-height: 1.15; letter-spacing: -0.01em; text-wrap: balance; }
   nav { display: flex; gap: 0.3rem; align-items: center; }
   nav a { padding: 0.35rem 0.75rem; border-radius: 5px; text-decoration: none; font-weight: 650; white-space: nowrap; }
@@ -15,12 +15,12 @@ export const mastheadStyle = css`
   .live svg, .not-live svg { width: 0.7em; height: 0.7em; margin-right: 0.4em; }
   .live > svg { color: var(--calm); }
   @media (max-width: 760px) {
-    header { grid-template-columns: 1fr; gap: 0.45rem; }
+    .head { grid-template-columns: 1fr; gap: 0.45rem; }
     nav { order: 3; justify-content: space-between; }
     nav a { padding: 0.75rem 0.75rem; }
     dl { gap: 0 1rem; }
   }
-  :host([wall]) header { grid-template-columns: 1fr auto auto; padding: 0.8rem 0 0.8rem; column-gap: 2rem; }
+  :host([wall]) .head { grid-template-columns: 1fr auto auto; padding: 0.8rem 0 0.8rem; column-gap: 2rem; }
   :host([wall]) .says { font-size: 3.5rem; }
   :host([wall]) .mark { display: none; }
   :host([wall]) nav { order: 3; opacity: 0.85; }

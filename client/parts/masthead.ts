@@ -36,7 +36,7 @@ export class PageMasthead extends LitElement {
   protected override render(): TemplateResult | typeof nothing {
     const { picture, formats, freshness } = this;
     if (picture === undefined || formats === undefined || freshness === undefined) return nothing;
-    return html`<header>
+    return html`<div class="head">
       <p class="says">${this.says}</p>
       <nav aria-label="Pages">
         ${this.#page('/', 'Board', this.route === 'board')} ${this.#page('/alarms', this.#alarmWords(picture, formats), this.route === 'alarms')}
@@ -48,7 +48,7 @@ export class PageMasthead extends LitElement {
         <div><dt class="unseen">Plant clock</dt><dd class="clock">${this.wall ? formats.minute(this.plantNow) : formats.clock(this.plantNow)}</dd></div>
         <div><dt class="unseen">Connection</dt><dd>${this.#liveness(picture, formats, freshness)}</dd></div>
       </dl>
-    </header>`;
+    </div>`;
   }
 
   #page(path: string, name: string, here: boolean): TemplateResult {

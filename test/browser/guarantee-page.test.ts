@@ -1,0 +1,86 @@
+import type { Page } from 'playwright-core';
+import { afterAll, afterEach, beforeAll, beforeEach, describe, expect, it } from 'vitest';
+import { startFake, type FakeServer } from './fake-server.ts';
+import { openBrowser, type Browser } from './open-browser.ts';
+
+let browser: Browser;
+let fake: FakeServer;
+let page: Page;
+
+beforeAll(async () => { browser = await openBrowser(); });
+afterAll(async () => { await browser.close(); });
+beforeEach(async () => { fake = await startFake(); });
+afterEach(async () => {
+  await page.evaluate(() => { localStorage.clear(); });
+  await page.close();
+  await fake.stop();
+  expect(browser.errors).toEqual([]);
+});
+
+const open = async (id: string): Promise<void> => {
+  page = await browser.open(`${fake.url}/guarantees/${id}`, 'desk');
+  await page.locator('history-chart svg').waitFor();
+};
+
+describe('the page of a guarantee', () => {
+  it('draws bound, estimate, line, nonconforming units and events on one axis', async () => {
+    await open('leak-bh4');
+    for (const what of ['path.bound.demonstrated', 'path.bound.undecided', 'path.estimate', '.line', '.strip .bar', '.strip .stroke', '.event']) {
+      expect(await page.locator(`history-chart ${what}`).count(), what).toBeGreaterThan(0);
+    }
+    await page.getByText('What happened in this span').click();
+    await page.getByText('Evidence restarted by Ines Maurer: die changed').waitFor();
+  });
+
+  it('asks for the span that was chosen', async () => {
+    await open('leak-bh4');
+    const asked = page.waitForRequest((request) => request.url().includes('/history') && span(request.url()) === 8 * 3_600_000);
+    await page.getByLabel('8 h').check();
+    await asked;
+  });
+  const span = (url: string): number => Number(new URL(url).searchParams.get('to')) - Number(new URL(url).searchParams.get('from'));
+
+  it('tells the figures, the method, the look rule, the assumptions and the source', async () => {
+    await open('leak-bh4');
+    for (const words of ['Exact binomial bound.', 'all looks.', 'Units are independent of one another.', 'C. J. Clopper, E. S. Pearson', 'Mind:']) await page.getByText(words).first().waitFor();
+    expect(await page.locator('.figures').innerText()).toMatch(/Upper bound\s+484\sppm/);
+  });
+
+  it('shows the picture that suits the quantity', async () => {
+    await open('pull-bh5');
+    await page.locator('guarantee-picture .limit').waitFor({ state: 'attached' });
+    expect(await page.locator('guarantee-picture .model').count()).toBe(1);
+    await page.close();
+    await open('chain-b');
+    await page.getByText('Leak test (limits the line)').waitFor();
+  });
+
+  it('reads out a step under the arrow keys', async () => {
+    await open('leak-bh4');
+    const chart = page.getByRole('slider');
+    await chart.focus();
+    await page.keyboard.press('Home');
+    expect(await chart.getAttribute('aria-valuetext')).toContain('bound –');
+    await page.keyboard.press('End');
+    expect(await chart.getAttribute('aria-valuetext')).toContain('violated');
+  });
+
+  it('restarts the evidence only with a name and a reason', async () => {
+    await open('pull-bh5');
+    await page.getByText('Restart the evidence').first().click();
+    await page.getByLabel('Your name').fill('Ines Maurer');
+    await page.getByLabel('Reason').fill(' ');
+    await page.getByRole('button', { name: 'Restart the evidence' }).click();
+    await page.getByText('Give your name and the reason').waitFor();
+    expect(fake.posts).toEqual([]);
+    await page.getByLabel('Reason').fill('Die changed');
+    await page.getByRole('button', { name: 'Restart the evidence' }).click();
+    await page.getByText('Evidence restarted.').waitFor();
+    expect(fake.posts).toEqual([{ path: '/api/guarantees/pull-bh5/restart', body: { by: 'Ines Maurer', reason: 'Die changed' } }]);
+  });
+
+  it('says so when no guarantee has that name', async () => {
+    page = await browser.open(`${fake.url}/guarantees/nothing`, 'desk');
+    await page.getByText('No guarantee is called nothing').waitFor();
+  });
+});
