@@ -34,8 +34,9 @@ export class Clockwork {
       const due = Math.min(this.#soonest(), this.#minuteDue);
       this.#floor = due;
       if (due > at) break;
+      const ready = this.#watches.filter((watch) => watch.due() <= due); // asked before the clock moves on
       this.#now = Math.max(this.#now, due);
-      for (const watch of this.#watches) if (watch.due() <= due) watch.moveClock(due as EpochMs);
+      for (const watch of ready) watch.moveClock(due as EpochMs);
       if (this.#minuteDue <= due) this.#closeMinutes(due);
     }
     this.#now = Math.max(this.#now, at);

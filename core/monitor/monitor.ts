@@ -103,6 +103,8 @@ export class Monitor {
     switch (admission.kind) {
       case 'gap':
         return { kind: 'gap', next: ledger.next };
+      case 'partly-late':
+        return { kind: 'partly-late', next: ledger.next, hole: admission.hole };
       case 'repeat':
         return { kind: 'repeated', next: ledger.next };
       case 'new':

@@ -1,4 +1,5 @@
 import type { RefusalCode } from '../protocol/refusals.ts';
+import type { Hole } from './source-ledger.ts';
 import type { Frame } from '../record/part.ts';
 
 /** Records that were taken but are not counted. */
@@ -12,4 +13,5 @@ export interface NotCounted {
 export type Receipt =
   | { readonly kind: 'taken'; readonly frame: Frame; readonly next: number; readonly notCounted: readonly NotCounted[] }
   | { readonly kind: 'repeated'; readonly next: number }
+  | { readonly kind: 'partly-late'; readonly next: number; readonly hole: Hole }
   | { readonly kind: 'gap'; readonly next: number };

@@ -13,6 +13,8 @@ export type Admission =
   | { readonly kind: 'repeat' }
   /** Fills sequences declared lost before. */
   | { readonly kind: 'late' }
+  /** Touches sequences declared lost, but holds others too: to be sent again as exactly those of the hole. */
+  | { readonly kind: 'partly-late'; readonly hole: Hole }
   /** Records are missing between `expected` and the frame. */
   | { readonly kind: 'gap'; readonly expected: number };
 
@@ -43,8 +45,9 @@ export class SourceLedger {
     if (first === this.#next) return { kind: 'new' };
     if (first > this.#next) return { kind: 'gap', expected: this.#next };
     const last = first + records - 1;
-    if (last >= this.#next) return { kind: 'tail', skip: this.#next - first };
-    return this.#holes.some((hole) => hole.first <= first && last <= hole.last) ? { kind: 'late' } : { kind: 'repeat' };
+    const hole = this.#holes.find((one) => one.first <= last && first <= one.last);
+    if (hole !== undefined) return hole.first <= first && last <= hole.last ? { kind: 'late' } : { kind: 'partly-late', hole };
+    return last >= this.#next ? { kind: 'tail', skip: this.#next - first } : { kind: 'repeat' };
   }
 
   /** Takes records in order, up to but not including `next`. */

@@ -35,7 +35,7 @@ export async function httpServer(): Promise<FastifyInstance> {
   const page = existsSync(`${folder}/index.html`) ? readFileSync(`${folder}/index.html`, 'utf8') : undefined;
   if (page !== undefined) {
     await http.register(fastifyStatic, { root: folder, index: 'index.html', maxAge: '1y', immutable: true, setHeaders: (response, path) => {
-      if (path.endsWith('.html')) void response.header('cache-control', 'no-cache');
+      if (path.endsWith('.html')) response.setHeader('cache-control', 'no-cache');
     } });
   }
   http.setNotFoundHandler((request, reply) => {

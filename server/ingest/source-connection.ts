@@ -4,7 +4,7 @@ import { BinaryFrameReader } from '../../core/protocol/binary-frame-reader.ts';
 import { JsonFrameReader } from '../../core/protocol/json-frame-reader.ts';
 import type { SourceLimits } from '../../core/protocol/limits.ts';
 import { endsConnection, refusalTable, type RefusalCode } from '../../core/protocol/refusals.ts';
-import { gapMessage, refusedMessage, sourceProtocol, type ServerMessage, type SetAside } from '../../core/protocol/source-messages.ts';
+import { gapMessage, partlyLateMessage, refusedMessage, sourceProtocol, type ServerMessage, type SetAside } from '../../core/protocol/source-messages.ts';
 import type { Frame } from '../../core/record/part.ts';
 import type { Refusal } from '../../core/record/refusal.ts';
 import type { Result } from '../../core/result.ts';
@@ -101,9 +101,10 @@ export class SourceConnection {
       bytes,
       judged: (receipt) => {
         if (receipt.kind === 'gap') this.#answer(gapMessage(frame.first, receipt.next));
+        if (receipt.kind === 'partly-late') this.#answer(partlyLateMessage(frame.first, receipt.next, receipt.hole));
       },
       durable: (receipt) => {
-        if (receipt.kind !== 'gap') this.#acknowledge(receipt);
+        if (receipt.kind === 'taken' || receipt.kind === 'repeated') this.#acknowledge(receipt);
       },
     });
   }
@@ -115,7 +116,7 @@ export class SourceConnection {
   }
 
   /** One acknowledgement answers all frames that became durable together. */
-  #acknowledge(receipt: Exclude<Receipt, { kind: 'gap' }>): void {
+  #acknowledge(receipt: Extract<Receipt, { kind: 'taken' | 'repeated' }>): void {
     this.#inFlight -= 1;
     this.#ackNext = Math.max(this.#ackNext, receipt.next);
     if (receipt.kind === 'taken') {
