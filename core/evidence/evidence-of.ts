@@ -18,6 +18,7 @@ export function evidenceOf(guarantee: Guarantee, standing: Standing): Evidence {
       return new UnitEvidence({ size, limit: undefined, asYield: true }, binomialRule(guarantee, promise.atMostNonconforming, target), standing);
     }
     default:
-      throw new Error(`no evidence for ${promise.quantity} yet`);
+      standing.block('quantity', `The evidence on this quantity is not computed in this version.`);
+      return new UnitEvidence({ size, limit: undefined, asYield: false }, binomialRule(guarantee, 0.5 as Fraction, 0 as Fraction), standing);
   }
 }
