@@ -1,6 +1,6 @@
 import { exactDecimal } from '../numerics/exact-decimal.ts';
 import { lotTailAtMost } from '../numerics/exact-hypergeometric.ts';
-import { lnHypergeometricLower, sumDownwards, type Draw } from '../numerics/hypergeometric-tail.ts';
+import { lnChance, lnHypergeometricLower, sumDownwards, type Draw } from '../numerics/hypergeometric-tail.ts';
 import { lastWhere } from '../numerics/integer-search.ts';
 import type { Tail } from '../units.ts';
 import { fractionUpper } from './nonconforming-fraction.ts';
@@ -74,8 +74,9 @@ function startOf(sample: LotSample, tail: Tail, most: number): number {
   for (let i = 0; i < 4; i++) {
     const draw = { size: lotSize, marked: Math.max(Math.round(marked), x + 1), drawn: sampled };
     if (x * lotSize >= draw.marked * sampled) break;
-    const gap = lnHypergeometricLower(x, draw) - Math.log(tail);
-    const step = (gap * sumDownwards(x, draw) * (lotSize - draw.marked)) / (sampled - x);
+    const sum = sumDownwards(x, draw);
+    const gap = lnChance(x, draw) + Math.log(sum) - Math.log(tail);
+    const step = (gap * sum * (lotSize - draw.marked)) / (sampled - x);
     marked = Math.min(Math.max(draw.marked + step, x), most);
     if (Math.abs(step) < 0.5) break;
   }

@@ -8,9 +8,17 @@ import { devianceTerm, stirlingError } from './stirling.ts';
 
 /** ln of the density at p = a/(a + b), for a and b above 0. */
 export function lnLogitPeak(a: number, b: number): number {
-  const total = a + b;
-  const spread = 0.5 * Math.log((a / (2 * Math.PI)) * (b / total));
-  return spread + stirlingError(total) - stirlingError(a) - stirlingError(b);
+  return Math.log(gaussianPeak(a, b)) + stirlingGap(a, b);
+}
+
+/** The density there as if it were Gaussian: sqrt(a b/(2 pi (a + b))). */
+export function gaussianPeak(a: number, b: number): number {
+  return Math.sqrt((a / (2 * Math.PI)) * (b / (a + b)));
+}
+
+/** ln of what the Gaussian peak is wrong by. */
+export function stirlingGap(a: number, b: number): number {
+  return stirlingError(a + b) - stirlingError(a) - stirlingError(b);
 }
 
 /** How far ln density lies below its peak; excess = a - (a + b) p, given because only the caller can keep its digits. */

@@ -1,5 +1,5 @@
 import { betaTailRatio } from './beta-tail.ts';
-import { deviance, lnLogitPeak } from './beta-density.ts';
+import { deviance, gaussianPeak, stirlingGap } from './beta-density.ts';
 import { gammaLowerStart, gammaUpperStart } from './gamma-start.ts';
 import { rootOfTail, writePoint, type TailPoint } from './tail-root.ts';
 
@@ -24,8 +24,9 @@ export function betaOdds(a: number, b: number, tail: number): number {
 function smallerTailOdds(a: number, b: number, tail: number): number {
   const lnTail = Math.log(tail);
   const total = a + b;
-  const peak = lnLogitPeak(a, b);
-  const leading = leadingOdds(a, b, lnTail, peak);
+  const peak = gaussianPeak(a, b);
+  const gap = stirlingGap(a, b);
+  const leading = lnTail < -30 * a ? leadingOdds(a, b, lnTail, Math.log(peak) + gap) : undefined;
   if (leading !== undefined) return leading;
   const curve = (odds: number, point: TailPoint): void => {
     const q = 1 / (1 + odds);
@@ -33,7 +34,7 @@ function smallerTailOdds(a: number, b: number, tail: number): number {
     const ratio = betaTailRatio(a, b, p, q);
     const excess = p < q ? a - total * p : total * q - b;
     const spread = total * p * q;
-    const lnTailHere = peak - deviance(total, p, q, excess) + Math.log(ratio);
+    const lnTailHere = gap - deviance(total, p, q, excess) + Math.log(peak * ratio);
     writePoint(point, lnTailHere, 1 / ratio, excess, -spread, -spread * (q - p));
   };
   return rootOfTail(curve, lnTail, oddsStart(a, b, lnTail));

@@ -31,7 +31,7 @@ export function sumDownwards(x: number, { size, marked, drawn }: Draw): number {
   let term = 1;
   let sum = 1;
   for (let k = x; k > 0 && rest + k > 0; k -= 1) {
-    term *= (k / (marked - k + 1)) * ((rest + k) / (drawn - k + 1));
+    term *= (k * (rest + k)) / ((marked - k + 1) * (drawn - k + 1));
     sum += term;
     if (term < 1e-17 * sum) break;
   }
@@ -44,14 +44,15 @@ function sumUpwards(x: number, { size, marked, drawn }: Draw): number {
   let term = 1;
   let sum = 1;
   for (let k = x; k < most; k += 1) {
-    term *= ((marked - k) / (k + 1)) * ((drawn - k) / (rest + k + 1));
+    term *= ((marked - k) * (drawn - k)) / ((k + 1) * (rest + k + 1));
     sum += term;
     if (term < 1e-17 * sum) break;
   }
   return sum;
 }
 
-function lnChance(x: number, { size, marked, drawn }: Draw): number {
+/** ln P(X = x); x from the least to the most possible. */
+export function lnChance(x: number, { size, marked, drawn }: Draw): number {
   const other = size - marked;
   const excess = (x * size - marked * drawn) / size;
   const [p, q] = [drawn / size, (size - drawn) / size];

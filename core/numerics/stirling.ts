@@ -42,6 +42,7 @@ function stirlingSeries(z: number): number {
  * @source own derivation: with v = t/(2 + t), ln(1 + t) = 2(v + v^3/3 + v^5/5 + …)
  */
 export function devianceTerm(t: number): number {
+  if (t < 1e-3 && t > -1e-3) return t * t * (1 / 2 - t * (1 / 6 - t * (1 / 12 - t * (1 / 20 - t * (1 / 30)))));
   if (t > 0.25 || t < -0.2) return t === -1 ? 1 : (1 + t) * Math.log1p(t) - t;
   const v = t / (2 + t);
   const s = v * v;

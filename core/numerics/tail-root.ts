@@ -54,11 +54,17 @@ export function rootOfTail(curve: TailCurve, lnTail: number, start: number): num
     const near = Math.abs(bent) < 0.1;
     const step = near ? reverted(newton, bent, point) : newton / (bent > -0.5 ? (bent < 3 ? 1 + bent : 4) : 0.5);
     if (!Number.isFinite(step)) break;
-    parameter *= Math.exp(step > 30 ? 30 : step < -30 ? -30 : step);
+    parameter *= growthOf(step);
     const size = Math.abs(gap);
     if (near && size * (gap * gap) * (gap * gap) <= finest * Math.abs(point.slope)) return parameter;
   }
   throw new NoConvergence(`the parameter with ln(tail) = ${lnTail}, from ${start}`);
+}
+
+/** e^step, at most e^30 either way; the few terms that a small step needs. */
+function growthOf(step: number): number {
+  if (step < 3e-3 && step > -3e-3) return 1 + step * (1 + (step / 2) * (1 + (step / 3) * (1 + (step / 4) * (1 + step / 5))));
+  return Math.exp(step > 30 ? 30 : step < -30 ? -30 : step);
 }
 
 function reverted(newton: number, bent: number, point: TailPoint): number {
