@@ -51,6 +51,15 @@ export async function serve({ settings, clock: clockSetting, demo, log }: ServeS
   const store = await openStore(settings.data, { onRefused: (error) => log.fatal({ err: error }, 'nothing can be made durable any more') });
   const board = new LiveBoard({ boot: randomUUID(), clockRate: clock?.rate ?? 1, demo });
   const dashboards = new DashboardDesk(board);
+  let up = false;
+
+  const measures = measuresOf({
+    waitingBytes: () => store.waitingBytes,
+    sources: () => sources.connected,
+    dashboards: () => dashboards.connected,
+    standingAlarms: () => plant.monitor.desk.standing().length,
+    guaranteesByState: () => countedByState(plant),
+  });
 
   const plant = await PlantServer.start({
     store,
@@ -63,7 +72,7 @@ export async function serve({ settings, clock: clockSetting, demo, log }: ServeS
     },
     onFailure: (cause) => {
       log.fatal({ err: cause }, 'stopped taking records');
-      sources.end('not-stored');
+      if (up) sources.end('not-stored');
       dashboards.stop('The server cannot store records any more.');
     },
   });
@@ -78,13 +87,7 @@ export async function serve({ settings, clock: clockSetting, demo, log }: ServeS
       measures.records.inc(records);
     },
   });
-  const measures = measuresOf({
-    waitingBytes: () => store.waitingBytes,
-    sources: () => sources.connected,
-    dashboards: () => dashboards.connected,
-    standingAlarms: () => plant.monitor.desk.standing().length,
-    guaranteesByState: () => countedByState(plant),
-  });
+  up = true;
   board.remember([...(await store.endedAlarms({ limit: 200 }))].reverse());
   board.begin(plant.monitor);
 

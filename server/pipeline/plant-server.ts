@@ -33,19 +33,29 @@ export class PlantServer {
   readonly #judge: Judge;
   readonly #running = new Subscription();
   #snapshotId = 0;
+  #fail: (cause: Error) => void = () => undefined;
+  /** Rejects when nothing can be made durable any more. */
+  readonly #failed: Promise<never>;
 
   // Started by `start` alone.
   private constructor(setting: PlantServerSetting, judge: Judge) {
     this.#setting = setting;
     this.#judge = judge;
     const { store, onOutcome, onFailure } = setting;
+    this.#failed = new Promise((_resolve, reject) => {
+      this.#fail = reject;
+    });
+    this.#failed.catch(() => undefined); // Told by onFailure as well: nobody has to wait for it.
     this.#running.add(
       throughPlant(this.inbox.arrivals$, judge, store).subscribe({
         next: (outcome) => {
           this.flow.weigh(store.waitingBytes);
           onOutcome(outcome);
         },
-        error: (cause: unknown) => onFailure(cause as Error),
+        error: (cause: unknown) => {
+          this.#fail(cause as Error);
+          onFailure(cause as Error);
+        },
       }),
     );
     this.#running.add(this.inbox.arrivals$.subscribe(() => this.flow.weigh(store.waitingBytes)));
@@ -75,22 +85,16 @@ export class PlantServer {
 
   /** Takes up another plant file; resolves when that is durable. */
   usePlant({ text, version }: PlantFileText): Promise<void> {
-    return new Promise((resolve) => {
-      this.inbox.put({ kind: 'plant', text, version, done: resolve });
-    });
+    return this.#unlessFailed((done) => this.inbox.put({ kind: 'plant', text, version, done }));
   }
 
   act(act: Act): Promise<ActFault | undefined> {
-    return new Promise((resolve) => {
-      this.inbox.put({ kind: 'act', act, done: resolve });
-    });
+    return this.#unlessFailed((done) => this.inbox.put({ kind: 'act', act, done }));
   }
 
   /** Resolves when everything that came before is durable. */
   settled(): Promise<void> {
-    return new Promise((resolve) => {
-      this.inbox.put({ kind: 'barrier', done: resolve });
-    });
+    return this.#unlessFailed((done) => this.inbox.put({ kind: 'barrier', done }));
   }
 
   /** Keeps the whole state, if anything came since the last time. */
@@ -101,11 +105,18 @@ export class PlantServer {
     await this.#setting.store.keepSnapshot({ journalId: lastId, at: this.now, body: snapshotBytes(this.monitor) });
   }
 
-  /** Takes nothing more, makes durable what came, keeps the state. */
+  /** Takes nothing more, makes durable what came, keeps the state. After a failure there is nothing left to do. */
   async stop(): Promise<void> {
-    await this.settled();
+    if (this.#setting.store.condition.kind === 'open') {
+      await this.settled();
+      await this.keepSnapshot();
+    }
     this.inbox.close();
-    await this.keepSnapshot();
     this.#running.unsubscribe();
+  }
+
+  /** @throws the failure, where one comes before the arrival is answered */
+  #unlessFailed<T>(put: (done: (answer: T) => void) => void): Promise<T> {
+    return Promise.race([new Promise<T>((resolve) => put(resolve)), this.#failed]);
   }
 }
