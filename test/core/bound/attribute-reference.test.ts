@@ -2,6 +2,7 @@ import { readFileSync } from 'node:fs';
 import { describe, expect, it } from 'vitest';
 import { fractionLower, fractionUpper } from '../../../core/bound/nonconforming-fraction.ts';
 import type { Tail } from '../../../core/units.ts';
+import { attributeVectors } from '../../check-values/attribute-vectors.ts';
 import { checkFile } from '../../check-values/check-file.ts';
 import { gridEvaluatorOf, publishedEvaluatorOf } from '../../check-values/registry.ts';
 
@@ -62,6 +63,16 @@ describe('published figures of counts and verdicts', () => {
   it('would be missed if a printed digit were another', () => {
     const row = rows.find(({ id }) => id === 'boost-binom-001');
     expect(checkFile([{ ...row, value_text: '0.12841' }])[0]).toMatchObject({ kind: 'beyond' });
+  });
+});
+
+describe('test vectors of counts and verdicts', () => {
+  it('are all met to 1e-12, in each figure', () => {
+    const known = new Set(attributeVectors.map(({ fn }) => fn));
+    const vectors = (stored('sequential-vectors-open.json') as { readonly fn: string }[]).filter(({ fn }) => known.has(fn));
+    expect(vectors.length).toBe(33);
+    expect(checkFile(vectors).filter(({ kind }) => kind !== 'met')).toEqual([]);
+    expect(checkFile([{ fn: 'dispersion', inputs: { batch_counts: [0, 1, 5], m: 10 }, output: { phi: '3.8', p_value: 'x' } }])[0]).toMatchObject({ kind: 'beyond' });
   });
 });
 
