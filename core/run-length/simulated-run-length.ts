@@ -56,8 +56,8 @@ export function* simulateRunLength({ watch, runs, uniform }: Simulation, rate: n
 }
 
 /**
- * Mean units to the alarm after a change at any moment, once the line has long run at its normal rate
- * without one. Reports as `simulateRunLength`.
+ * Mean units to the alarm after a change at any moment, once the line has long run at its normal rate,
+ * with every false call on the way answered. Reports as `simulateRunLength`.
  *
  * @param normal nonconforming fraction before the change, above 0, below 1
  * @param rate and after it, likewise
@@ -72,12 +72,9 @@ export function* simulateDelay({ watch, runs, uniform }: Simulation, normal: num
   const before = gapsAt(normal, uniform);
   const after = gapsAt(rate, uniform);
   watch.reset();
-  let sinceAlarm = 0;
-  for (let steps = 1; tally.count < runs; steps++) {
-    if (watch.strike(before())) {
-      watch.reset();
-      sinceAlarm = 0;
-    } else if (++sinceAlarm % apart === 0) {
+  for (let steps = 1, since = 1; tally.count < runs; steps++, since++) {
+    if (watch.strike(before())) watch.reset();
+    if (since % apart === 0) {
       watch.mark();
       /* The change may come at any unit, so part of a good stretch lies behind it; the geometric gap has no memory. */
       let gap = after();

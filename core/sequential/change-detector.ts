@@ -35,9 +35,11 @@ export function newDetector(tuning: DetectorTuning): DetectorState {
  */
 export function admitQuiet(state: DetectorState, trials: number, tuning: DetectorTuning, weight = 1): DetectorState {
   if (trials === 0) return state;
+  const { alarms, alarmAt } = state;
   const seen = state.seen + trials * weight;
-  if (weight === state.quietWeight) return { ...state, quietTrials: state.quietTrials + trials, seen };
-  return { ...state, levels: settled(state, tuning), quietTrials: trials, quietWeight: weight, seen };
+  const going = weight === state.quietWeight;
+  const levels = going ? state.levels : settled(state, tuning);
+  return { levels, quietTrials: going ? state.quietTrials + trials : trials, quietWeight: weight, seen, alarms, alarmAt };
 }
 
 /**
@@ -52,9 +54,10 @@ export function admitFound(state: DetectorState, found: number, tuning: Detector
   const levels = settled(state, tuning);
   const level = strike(levels, tuning, found, weight);
   const seen = state.seen + weight;
-  const next = { ...state, levels, quietTrials: 0, quietWeight: weight, seen };
-  if (level < tuning.threshold) return next;
-  return { ...next, levels: levels.map(() => 0), alarms: state.alarms + 1, alarmAt: state.alarmAt ?? seen };
+  const { alarms, alarmAt } = state;
+  if (level < tuning.threshold) return { levels, quietTrials: 0, quietWeight: weight, seen, alarms, alarmAt };
+  levels.fill(0);
+  return { levels, quietTrials: 0, quietWeight: weight, seen, alarms: alarms + 1, alarmAt: alarmAt ?? seen };
 }
 
 /** The detector after conforming units and then a nonconforming one. */
@@ -69,7 +72,7 @@ export function clearAlarm(state: DetectorState): DetectorState {
 
 /** The levels as they stand now, one per ratio, in a new array. */
 export function settled(state: DetectorState, tuning: DetectorTuning): number[] {
-  const levels = [...state.levels];
+  const levels = state.levels.slice();
   if (state.quietTrials > 0) settle(levels, tuning, state.quietTrials, state.quietWeight);
   return levels;
 }

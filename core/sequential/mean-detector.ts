@@ -58,11 +58,20 @@ export function newMeanDetector({ baseline, model, threshold }: MeanDetectorTuni
  * @param measurement finite; for a bounded one between its ends (checked where records come in)
  */
 export function admitMean(state: MeanDetectorState, measurement: number, tuning: MeanDetectorTuning): MeanDetectorState {
-  const factor = factorsOf(measurement, tuning);
-  const levels = state.levels.map((level, k) => (level + 1) * factor(sizesOf(tuning.model)[k] ?? NaN));
+  const { model } = tuning;
+  const sizes = sizesOf(model);
+  const off = offsetOf(measurement, tuning);
+  const levels: number[] = [];
+  let sum = 0;
+  for (let k = 0; k < sizes.length; k++) {
+    const size = sizes[k] ?? NaN;
+    const factor = model.kind === 'bounded' ? 1 + size * off : Math.exp(size * (off - size / 2));
+    const level = ((state.levels[k] ?? NaN) + 1) * factor;
+    levels.push(level);
+    sum += level;
+  }
   const seen = state.seen + 1;
-  const level = meanOf(levels);
-  if (level < tuning.threshold) return { ...state, levels, seen };
+  if (sum / levels.length < tuning.threshold) return { levels, seen, alarms: state.alarms, alarmAt: state.alarmAt };
   return { levels: levels.map(() => 0), seen, alarms: state.alarms + 1, alarmAt: state.alarmAt ?? seen };
 }
 
@@ -93,16 +102,12 @@ function sizesOf(model: MeanDetectorTuning['model']): readonly number[] {
   return model.kind === 'bounded' ? model.stakes : model.shifts;
 }
 
-/** The factor one measurement puts on a level, by its shift or stake; its mean under the baseline is at most 1. */
-function factorsOf(measurement: number, { baseline, watchesFor, model }: MeanDetectorTuning): (size: number) => number {
+/** How far a measurement lies on the watched side, in standard deviations, or in shares of the room on the other side. */
+function offsetOf(measurement: number, { baseline, watchesFor, model }: MeanDetectorTuning): number {
   const risen = watchesFor === 'risen';
   const off = risen ? measurement - baseline : baseline - measurement;
-  if (model.kind === 'bounded') {
-    const room = risen ? baseline - model.from : model.to - baseline;
-    return (stake) => 1 + (stake * off) / room;
-  }
-  const z = off / model.sigma;
-  return (shift) => Math.exp(shift * z - (shift * shift) / 2);
+  if (model.kind === 'known sigma') return off / model.sigma;
+  return off / (risen ? baseline - model.from : model.to - baseline);
 }
 
 function meanOf(levels: readonly number[]): number {

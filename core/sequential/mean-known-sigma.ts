@@ -30,7 +30,7 @@ export function logMeanEvidence(sum: number, spread: number, tuning: number): nu
  * @param sigma known standard deviation, above 0
  * @param tail all of alpha in one tail, above 0, below 1
  * @param tuning see `tuningFor`, above 0
- * @returns in the unit of sigma; negative only for tails far above 1/2
+ * @returns in the unit of sigma, above 0
  * @throws OutOfDomain; NoConvergence
  * @coverage never below 1 - tail at all looks together
  * @source inversion of `logMeanEvidence`

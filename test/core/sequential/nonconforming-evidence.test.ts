@@ -26,7 +26,7 @@ const exact: readonly (readonly [number, number, number, number, number, string,
 ];
 
 describe('evidence on a nonconforming fraction', () => {
-  it.each(exact)('%i of %i units at %d, prior %d, %d: as in 450 digits', (x, n, line, a, b, demonstrated, violated) => {
+  it.each(exact.map((row) => ({ row })))('is as in 450 digits: $row', ({ row: [x, n, line, a, b, demonstrated, violated] }) => {
     const prior = { a, b };
     expect(Math.abs(logEvidenceDemonstrated(x, n, line, prior) - Number(demonstrated))).toBeLessThan(3e-14 * (1 + Math.abs(Number(demonstrated))));
     expect(Math.abs(logEvidenceViolated(x, n, line, prior) - Number(violated))).toBeLessThan(3e-14 * (1 + Math.abs(Number(violated))));
