@@ -4,10 +4,9 @@ import { AcknowledgeRequest } from './alarms/acknowledge-request.ts';
 import './alarms/acknowledge-dialog.ts';
 import './alarms/alarm-page.ts';
 import './alarms/alarm-announcer.ts';
-import { needsPerson } from './attention.ts';
 import { appStyle } from './app-style.ts';
 import './board/line-board.ts';
-import { lanesOf } from './board/lane.ts';
+import { lanesOf, type Lane } from './board/lane.ts';
 import { wiringContext, type Wiring } from './contexts.ts';
 import { freshnessOf, type Freshness } from './feed/link.ts';
 import type { LivePicture } from './feed/live-picture.ts';
@@ -33,6 +32,7 @@ export class VouchlineApp extends LitElement {
   readonly #live: LiveValue<LiveState>;
   readonly #settings: LiveValue<Settings>;
   readonly #address = new PageAddress(this);
+  #lanes: { readonly of: LivePicture; readonly made: readonly Lane[] } | undefined;
   #formats: { readonly key: string; readonly made: Formats } | undefined;
 
   constructor(wiring: Wiring) {
@@ -63,8 +63,8 @@ export class VouchlineApp extends LitElement {
     if (picture === undefined) return this.#waiting(freshness);
     const formats = this.#formatsFor(picture.plant.timeZone, settings);
     const plantNow = plantTime(picture.clock, now);
-    const lanes = lanesOf(picture);
-    const needing = lanes.filter((lane) => needsPerson(lane.view, lane.alarms)).length;
+    const lanes = this.#lanesOf(picture);
+    const needing = lanes.filter((lane) => lane.needsPerson).length;
     const says = headline(formats, needing, picture.cards.length);
     document.title = `${needing > 0 ? `(${needing}) ` : ''}Vouchline, ${picture.plant.name}`;
     return html`
@@ -78,20 +78,20 @@ export class VouchlineApp extends LitElement {
       <link-banner .picture=${picture} .freshness=${freshness} .formats=${formats} .plantNow=${plantNow}></link-banner>
       </header>
       <main id="content" tabindex="-1" class=${freshness.kind === 'live' ? 'live' : 'stale'}>
-        ${this.#page(picture, formats, plantNow, settings, wall)}
+        ${this.#page(picture, lanes, formats, plantNow, settings, wall)}
       </main>
       <alarm-announcer .alarms=${picture.alarms} .cards=${picture.cards} .formats=${formats} .shown=${!wall && this.#address.route.kind !== 'alarms'}></alarm-announcer>
       <acknowledge-dialog></acknowledge-dialog>`;
   }
 
-  #page(picture: LivePicture, formats: Formats, plantNow: number, settings: Settings, wall: boolean): TemplateResult {
+  #page(picture: LivePicture, lanes: readonly Lane[], formats: Formats, plantNow: number, settings: Settings, wall: boolean): TemplateResult {
     const { route } = this.#address;
     switch (route.kind) {
       case 'board':
         return html`<h1 class="unseen">Line board</h1>
-          <line-board .picture=${picture} .formats=${formats} .plantNow=${plantNow} .wall=${wall} .grouped=${settings.grouped}></line-board>`;
+          <line-board .lanes=${lanes} .formats=${formats} .plantNow=${plantNow} .wall=${wall} .grouped=${settings.grouped}></line-board>`;
       case 'guarantee':
-        return html`<guarantee-page .guarantee=${route.id} .picture=${picture} .formats=${formats} .plantNow=${plantNow} .personName=${settings.personName}></guarantee-page>`;
+        return html`<guarantee-page .guarantee=${route.id} .lane=${lanes.find((lane) => lane.card.id === route.id)} .picture=${picture} .formats=${formats} .plantNow=${plantNow} .personName=${settings.personName}></guarantee-page>`;
       case 'alarms':
         return html`<alarm-page .picture=${picture} .formats=${formats} .plantNow=${plantNow} .personName=${settings.personName}></alarm-page>`;
       case 'nowhere':
@@ -102,6 +102,13 @@ export class VouchlineApp extends LitElement {
   #waiting(freshness: Freshness): TemplateResult {
     return html`<main class="waiting"><h1>Vouchline</h1>
       <p role="status">${freshness.kind === 'lost' ? 'The server does not answer. Trying again.' : 'Waiting for the first figures.'}</p></main>`;
+  }
+
+  #lanesOf(picture: LivePicture): readonly Lane[] {
+    const old = this.#lanes;
+    const same = old?.of.views === picture.views && old.of.alarms === picture.alarms && old.of.cards === picture.cards;
+    this.#lanes = { of: picture, made: same ? old.made : lanesOf(picture, old?.made) };
+    return this.#lanes.made;
   }
 
   #formatsFor(timeZone: string, settings: Settings): Formats {

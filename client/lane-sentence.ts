@@ -3,8 +3,12 @@ import { written, type Formats } from './format.ts';
 import { isWaiting } from './attention.ts';
 import { counted, driftWord, marginWords, priorityWord, promiseWords, ruleWord, stateWord } from './words.ts';
 
-/** Everything the lane shows, as sentences for someone who hears the board. */
-export function laneSentence(formats: Formats, lane: Lane, plantNow: number): string {
+/**
+ * Everything the lane shows, as sentences for someone who hears the board.
+ *
+ * @param age  of the newest record, in words; undefined before the first
+ */
+export function laneSentence(formats: Formats, lane: Lane, age: string | undefined): string {
   const { card, view } = lane;
   const bound =
     view.bound === undefined
@@ -16,7 +20,7 @@ export function laneSentence(formats: Formats, lane: Lane, plantNow: number): st
     view.allowance.bound === undefined ? undefined : `Allowance used ${formats.percent(view.allowance.bound)}`,
     view.state === 'unknown' ? view.remark : marginWords(formats, card, view),
     view.drift === undefined ? undefined : driftWord[view.drift],
-    view.newest === undefined ? 'No record yet' : `Newest record ${formats.span(plantNow - view.newest)} ago`,
+    age === undefined ? 'No record yet' : `Newest record ${age} ago`,
     ...lane.alarms.map((alarm) => `Alarm, ${priorityWord[alarm.priority].toLowerCase()}, ${isWaiting(alarm) ? 'not acknowledged' : 'acknowledged'}: ${ruleWord[alarm.rule]}`),
     view.warnings.length > 0 ? counted(formats, view.warnings.length, 'warning') : undefined,
     card.safetyRelevant ? 'Safety-relevant: advisory only' : undefined,

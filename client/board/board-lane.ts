@@ -1,4 +1,5 @@
 import { html, LitElement, nothing, type TemplateResult } from 'lit';
+import type { Alarm } from '../../core/alarm/alarm.ts';
 import type { GuaranteeCard, GuaranteeView } from '../../core/view/guarantee-view.ts';
 import { isWaiting } from '../attention.ts';
 import type { Formats } from '../format.ts';
@@ -28,7 +29,7 @@ export class BoardLane extends LitElement {
     form: { reflect: true },
     tone: { reflect: true },
     formats: { attribute: false },
-    plantNow: { attribute: false },
+    age: { attribute: false },
   };
 
   static override styles = [base, lanePlotStyle, boardLaneStyle];
@@ -40,7 +41,8 @@ export class BoardLane extends LitElement {
   declare form: LaneForm;
   declare tone: Lane['tone'];
   declare formats: Formats | undefined;
-  declare plantNow: number;
+  /** Age of the newest record in words; undefined before the first. */
+  declare age: string | undefined;
 
   protected override render(): TemplateResult | typeof nothing {
     const { lane, scale, formats } = this;
@@ -50,17 +52,23 @@ export class BoardLane extends LitElement {
       <div class="plot">
         <svg class="drawing" width=${scale.width} height=${this.height} aria-hidden="true">${lanePlot({ scale, height: this.height, view: lane.view, tone: lane.tone })}</svg>
       </div>
-      ${this.#state(lane, formats)} ${this.#figure(lane, formats)} ${this.form === 'wall' ? nothing : this.#act(lane, formats)}
+      ${this.#state(lane, formats)} ${this.#figure(lane, formats)} ${this.form === 'wall' ? nothing : this.#act(lane)}
     </article>`;
   }
 
-  #who({ card, view }: Lane, formats: Formats): TemplateResult {
+  #who({ card, view, alarms }: Lane, formats: Formats): TemplateResult {
     return html`<div class="who">
-      <a href=${guaranteePath(card.id)} aria-label=${this.lane === undefined ? card.name : laneSentence(formats, this.lane, this.plantNow)}>${card.name}</a>
-      <span class="sub">${this.#place(card)}</span>
+      <a href=${guaranteePath(card.id)} aria-label=${this.lane === undefined ? card.name : laneSentence(formats, this.lane, this.age)}>${card.name}</a>
+      <span class="sub">${this.#place(card)}${this.form === 'wall' ? this.#inHand(alarms) : ''}</span>
       ${card.safetyRelevant ? html`<span class="sub safety">${this.size === 'large' ? 'Safety-relevant: advisory only' : 'Safety-relevant'}</span>` : nothing}
       ${view.lot === undefined || this.size !== 'large' || card.safetyRelevant ? nothing : html`<span class="sub">Lot ${view.lot}</span>`}
     </div>`;
+  }
+
+  /** On a wall, where there is no button: who has the alarm in hand. */
+  #inHand(alarms: readonly Alarm[]): string {
+    const state = alarms[0]?.state;
+    return state?.kind === 'acknowledged' && this.size !== 'small' ? `, in hand: ${state.acknowledgement.by}` : '';
   }
 
   /** Line and stations, as far as the lane has room to say. */
@@ -84,20 +92,19 @@ export class BoardLane extends LitElement {
   }
 
   #figure({ card, view }: Lane, formats: Formats): TemplateResult {
-    const gathering = view.state === 'gathering' && card.window.kind === 'units' && view.figures['inspected'] !== undefined;
+    const filled = view.state === 'gathering' ? view.figures['filled'] : undefined;
     const figure = formats.figureBesideLine(card, view.bound);
     return html`<div class="figure">
-      ${gathering
-        ? html`<b>${formats.percent(view.figures['filled'] ?? 0)}</b><span class="sub">of the window filled</span>`
+      ${filled !== undefined
+        ? html`<b>${formats.percent(filled)}</b><span class="sub">of the window filled</span>`
         : html`<b>${figure.text}<span class="unit">${figure.unit}</span></b><span class="sub">${promisedLimit(formats, card)}</span>`}
       <span class="sub level">${formats.confidence(card.confidence)}, ${view.lookRule}</span>
     </div>`;
   }
 
-  #act({ view, alarms }: Lane, formats: Formats): TemplateResult {
+  #act({ alarms }: Lane): TemplateResult {
     const waiting = alarms.find(isWaiting);
     const known = alarms.find((alarm) => alarm.state.kind === 'acknowledged');
-    const age = view.newest === undefined ? 'no record yet' : `${formats.span(this.plantNow - view.newest)} ago`;
     return html`<div class="act">
       ${waiting === undefined
         ? nothing
@@ -105,7 +112,7 @@ export class BoardLane extends LitElement {
       ${waiting === undefined && known?.state.kind === 'acknowledged'
         ? html`<span class="sub known">Acknowledged<br />by ${known.state.acknowledgement.by}</span>`
         : nothing}
-      <span class="sub age">${age}</span>
+      <span class="sub age">${this.age === undefined ? 'no record yet' : `${this.age} ago`}</span>
     </div>`;
   }
 }

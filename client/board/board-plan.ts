@@ -39,8 +39,8 @@ export function columnsOf(form: LaneForm, width: number, typePx: number): readon
 
 const limitsFor = (form: LaneForm, room: Room): HeightLimits =>
   form === 'wall'
-    ? { loudLeast: room.height * 0.058, calmLeast: Math.max(24, room.height * 0.0125), loudMost: room.height * 0.3, calmMost: room.height * 0.2 }
-    : { loudLeast: room.typePx * 5.2, calmLeast: room.typePx * 1.9, loudMost: room.typePx * 8, calmMost: room.typePx * 5.2 };
+    ? { loudLeast: room.height * 0.058, calmLeast: Math.max(24, room.height * 0.0125), loudMost: room.height * 0.2, calmMost: room.height * 0.14, louder: 2.1 }
+    : { loudLeast: room.typePx * 5.2, calmLeast: room.typePx * 1.9, loudMost: room.typePx * 8, calmMost: room.typePx * 5.2, louder: 1.6 };
 
 /** On a wall the words grow with their lane, up to what the name and the state still fit into. */
 function wallMeasure(height: number, nameChars: number, nameWidth: number): LaneMeasure {
@@ -52,8 +52,11 @@ function wallMeasure(height: number, nameChars: number, nameWidth: number): Lane
     : { height, size: 'small', typePx: one, nameTypePx: one };
 }
 
-/** @param extra  px of the room that group headings and the foot take */
-export function boardPlan(room: Room, lanes: readonly Lane[], wall: boolean, extra: number): BoardPlan {
+/**
+ * @param extra   px of the room that group headings and the foot take
+ * @param before  the plan until now: its scale is kept while the width is the same
+ */
+export function boardPlan(room: Room, lanes: readonly Lane[], wall: boolean, extra: number, before?: BoardPlan): BoardPlan {
   const form: LaneForm = wall ? 'wall' : room.width < room.typePx * cardBelow ? 'card' : 'desk';
   const columns = columnsOf(form, room.width, room.typePx);
   const loud = lanes.filter((lane) => lane.needsPerson).length;
@@ -66,10 +69,11 @@ export function boardPlan(room: Room, lanes: readonly Lane[], wall: boolean, ext
     const typePx = room.typePx * (size === 'small' ? 0.93 : 1);
     return { height, size, typePx, nameTypePx: typePx };
   };
+  const width = Math.max(120, Math.round(columns[1] ?? 0));
   return {
     form,
     columns: columns.filter((width) => width > 0).map((width) => `${Math.round(width)}px`).join(' '),
-    scale: allowanceScale(Math.max(120, Math.round(columns[1] ?? 0))),
+    scale: before?.scale.width === width ? before.scale : allowanceScale(width),
     loud: measure(heights.loud, true),
     calm: measure(heights.calm, false),
     fits: heights.fits,

@@ -14,10 +14,9 @@ export interface HeightLimits {
   readonly calmLeast: number;
   readonly loudMost: number;
   readonly calmMost: number;
+  /** How many times as high as a calm lane one that needs a person should be. */
+  readonly louder: number;
 }
-
-/** How many times as high as a calm lane one that needs a person should be. */
-const louder = 1.6;
 
 /**
  * Shares the room out: lanes grow with the trouble and with the room there is. When it gets tight the calm lanes give
@@ -27,7 +26,7 @@ const louder = 1.6;
  */
 export function laneHeights(room: number, loud: number, calm: number, limits: HeightLimits): LaneHeights {
   const clamp = (value: number, least: number, most: number): number => Math.min(most, Math.max(least, value));
-  const even = room / Math.max(1, calm + louder * loud);
+  const even = room / Math.max(1, calm + limits.louder * loud);
   const calmWish = clamp(even, limits.calmLeast, limits.calmMost);
   const forLoud = loud === 0 ? limits.loudLeast : (room - calm * calmWish) / loud;
   const loudHeight = Math.floor(clamp(forLoud, limits.loudLeast, limits.loudMost));

@@ -13,8 +13,14 @@ export interface Lane {
   readonly needsPerson: boolean;
 }
 
-/** Lanes of every guarantee the server has sent a view of, in the order of the plant file. */
-export function lanesOf(picture: LivePicture): readonly Lane[] {
+const sameAlarms = (a: readonly Alarm[], b: readonly Alarm[]): boolean => a.length === b.length && a.every((alarm, index) => alarm === b[index]);
+
+/**
+ * Lanes of every guarantee the server has sent a view of, in the order of the plant file. A lane of which nothing
+ * changed is the same object as before, so that it need not be drawn anew.
+ */
+export function lanesOf(picture: LivePicture, before: readonly Lane[] = []): readonly Lane[] {
+  const old = new Map(before.map((lane) => [lane.card.id, lane]));
   const open = new Map<string, Alarm[]>();
   for (const alarm of picture.alarms.values()) {
     if (alarm.state.kind === 'ended') continue;
@@ -26,6 +32,8 @@ export function lanesOf(picture: LivePicture): readonly Lane[] {
     const view = picture.views.get(card.id);
     if (view === undefined) return [];
     const alarms = (open.get(card.id) ?? []).sort(byUrgency);
+    const same = old.get(card.id);
+    if (same?.card === card && same.view === view && sameAlarms(same.alarms, alarms)) return [same];
     return [{ card, view, alarms, tone: toneOf(view, alarms), needsPerson: needsPerson(view, alarms) }];
   });
 }

@@ -15,6 +15,8 @@ export const lineBoardStyle = css`
   .scale text { fill: var(--quiet); font-family: var(--face); }
   .scale text.name { fill: var(--ink); font-weight: 700; }
   .lanes { position: relative; }
+  /* Lanes out of sight cost nothing; a lane's height is set, so nothing jumps. */
+  .lanes.many li { content-visibility: auto; }
   .group {
     display: flex; gap: 0.8em; align-items: baseline; font-size: 0.95rem; padding: 0.45rem 1.05rem 0.3rem;
     border-top: 1px solid var(--rule); background: var(--paper); height: 2.2rem;

@@ -1,7 +1,6 @@
-import { html, LitElement, nothing, type PropertyValues, type TemplateResult } from 'lit';
+import { html, LitElement, nothing, type TemplateResult } from 'lit';
 import { repeat } from 'lit/directives/repeat.js';
 import { caution } from '../../core/guarantee/caution.ts';
-import type { LivePicture } from '../feed/live-picture.ts';
 import type { Formats } from '../format.ts';
 import { base } from '../look/base.ts';
 import { styled } from '../look/styled.ts';
@@ -10,17 +9,19 @@ import './board-lane.ts';
 import { boardPlan, type BoardPlan } from './board-plan.ts';
 import { BoardRoom } from './board-room.ts';
 import { boardScale } from './board-scale.ts';
-import { lanesOf, type Lane } from './lane.ts';
+import type { Lane } from './lane.ts';
 import { groupedByLine, nextOrder, orderedLanes, type LaneGroup } from './lane-order.ts';
 import { lanePlotStyle } from './lane-plot-style.ts';
 import { laneTops, slideLanes } from './lane-slide.ts';
 import { lineBoardStyle } from './line-board-style.ts';
 import { OrderHold } from './order-hold.ts';
 
+const lanesCount = (groups: readonly LaneGroup[]): number => groups.reduce((sum, group) => sum + group.lanes.length, 0);
+
 /** All guarantees of the plant, one lane each, sharing one guarantee line; trouble rises to the top. */
 export class LineBoard extends LitElement {
   static override properties = {
-    picture: { attribute: false },
+    lanes: { attribute: false },
     formats: { attribute: false },
     plantNow: { attribute: false },
     wall: { type: Boolean, reflect: true },
@@ -29,7 +30,7 @@ export class LineBoard extends LitElement {
 
   static override styles = [base, lanePlotStyle, lineBoardStyle];
 
-  declare picture: LivePicture | undefined;
+  declare lanes: readonly Lane[] | undefined;
   declare formats: Formats | undefined;
   declare plantNow: number;
   declare wall: boolean;
@@ -39,40 +40,41 @@ export class LineBoard extends LitElement {
   readonly #hold = new OrderHold(this, () => performance.now());
   #order: readonly string[] = [];
   #held = false;
-  #lanes: readonly Lane[] = [];
-  #tops: ReadonlyMap<string, number> = new Map();
+  #tops: ReadonlyMap<string, number> | undefined;
+  #plan: BoardPlan | undefined;
 
-  protected override willUpdate(changed: PropertyValues): void {
-    if (this.picture === undefined) return;
-    if (changed.has('picture')) this.#lanes = lanesOf(this.picture);
-    const wanted = nextOrder(this.#order, this.#lanes);
+  protected override willUpdate(): void {
+    const wanted = nextOrder(this.#order, this.lanes ?? []);
+    this.#tops = undefined;
     this.#held = wanted !== this.#order && wanted.length === this.#order.length && this.#hold.holds;
-    if (!this.#held) this.#order = wanted;
+    if (this.#held || wanted === this.#order) return;
+    this.#order = wanted;
     const list = this.renderRoot.querySelector('.lanes');
-    this.#tops = list === null ? new Map() : laneTops(list);
+    if (list !== null) this.#tops = laneTops(list);
   }
 
   protected override updated(): void {
     const list = this.renderRoot.querySelector('.lanes');
-    if (list !== null) slideLanes(list, this.#tops);
+    if (list !== null && this.#tops !== undefined) slideLanes(list, this.#tops);
   }
 
   protected override render(): TemplateResult | typeof nothing {
-    const { picture, formats } = this;
-    if (picture === undefined || formats === undefined) return nothing;
-    if (picture.cards.length === 0) return this.#noGuarantees();
-    const lanes = orderedLanes(this.#order, this.#lanes);
+    const { formats } = this;
+    if (this.lanes === undefined || formats === undefined) return nothing;
+    if (this.lanes.length === 0) return this.#noGuarantees();
+    const lanes = orderedLanes(this.#order, this.lanes);
     const groups = this.grouped ? groupedByLine(lanes) : [{ line: '', lanes }];
     const room = this.#room.room;
     const typePx = room?.typePx ?? 15;
     const headings = this.grouped ? groups.length * typePx * 2.2 : 0;
-    const plan = room === undefined ? undefined : boardPlan(room, this.#lanes, this.wall, headings + typePx * (this.wall ? 1 : 5.2));
+    this.#plan = room === undefined ? undefined : boardPlan(room, lanes, this.wall, headings + typePx * (this.wall ? 1 : 5.2), this.#plan);
+    const plan = this.#plan;
     return html`
-      ${this.#lanes.every((lane) => lane.view.newest === undefined) ? this.#noRecords() : nothing}
+      ${lanes.every((lane) => lane.view.newest === undefined) ? this.#noRecords() : nothing}
       <div class="board sheet" ${styled({ '--columns': plan?.columns ?? '1fr' })}>
         ${plan === undefined ? html`<div class="lanes"></div>` : this.#board(plan, groups, formats)}
       </div>
-      ${this.wall ? nothing : this.#foot(formats)}
+      ${this.wall ? nothing : this.#foot(lanes, formats)}
     `;
   }
 
@@ -86,7 +88,7 @@ export class LineBoard extends LitElement {
         <span class="quiet end">Bound</span>
         ${plan.form === 'desk' ? html`<span class="quiet end">Newest record</span>` : nothing}
       </div>
-      <div class="lanes">
+      <div class=${lanesCount(groups) > 60 && plan.form !== 'card' ? 'lanes many' : 'lanes'}>
         ${groups.map((group) => html`
           ${group.line === '' ? nothing : html`<h2 class="group">${group.line}<span class="quiet">${this.#groupWords(group.lanes, formats)}</span></h2>`}
           <ol aria-label=${group.line === '' ? 'Guarantees, most allowance used first' : `Guarantees of ${group.line}`}>
@@ -100,7 +102,7 @@ export class LineBoard extends LitElement {
     const height = plan.form === 'card' ? 'auto' : `${measure.height}px`;
     return html`<li data-id=${lane.card.id} ${styled({ height, '--lane-type': `${measure.typePx.toFixed(2)}px`, '--name-type': `${measure.nameTypePx.toFixed(2)}px` })}>
       <board-lane .lane=${lane} .scale=${plan.scale} .height=${measure.height} .size=${measure.size} .form=${plan.form}
-        .tone=${lane.tone} .formats=${formats} .plantNow=${this.plantNow}></board-lane>
+        .tone=${lane.tone} .formats=${formats} .age=${lane.view.newest === undefined ? undefined : formats.span(this.plantNow - lane.view.newest)}></board-lane>
     </li>`;
   }
 
@@ -109,11 +111,11 @@ export class LineBoard extends LitElement {
     return needing === 0 ? counted(formats, lanes.length, 'guarantee') : `${formats.count(needing)} of ${counted(formats, lanes.length, 'guarantee')} need you`;
   }
 
-  #foot(formats: Formats): TemplateResult {
-    const levels = [...new Set(this.#lanes.map((lane) => lane.card.confidence))].map((level) => formats.confidence(level));
+  #foot(lanes: readonly Lane[], formats: Formats): TemplateResult {
+    const levels = [...new Set(lanes.map((lane) => lane.card.confidence))].map((level) => formats.confidence(level));
     return html`<p class="foot quiet">
       ${this.#held ? html`<strong>The lanes wait with their new order while you are among them.</strong> ` : nothing}
-      ${this.#lanes.some((lane) => lane.card.safetyRelevant) ? html`<strong>${caution.title}.</strong> ${caution.sentences.join(' ')}<br />` : nothing}
+      ${lanes.some((lane) => lane.card.safetyRelevant) ? html`<strong>${caution.title}.</strong> ${caution.sentences.join(' ')}<br />` : nothing}
       The dot is what was seen, the tip of the whisker the ${levels.length === 1 ? `${levels[0] ?? ''} ` : ''}bound. A tip left of the guarantee line: demonstrated. Small strokes below: where the tip stood in the last hour. An upright mark: the opposite bound has passed the line too. Scale: allowance used, 0 % at the target, 100 % on the line.
     </p>`;
   }

@@ -1,10 +1,10 @@
 import { ContextConsumer } from '@lit/context';
 import { html, LitElement, nothing, type PropertyValues, type TemplateResult } from 'lit';
 import { repeat } from 'lit/directives/repeat.js';
-import { Subscription, switchMap, timer } from 'rxjs';
+import { switchMap, timer, type Subscription } from 'rxjs';
 import { byUrgency } from '../attention.ts';
 import '../alarms/alarm-card.ts';
-import { lanesOf, type Lane } from '../board/lane.ts';
+import type { Lane } from '../board/lane.ts';
 import { wiringContext, type Wiring } from '../contexts.ts';
 import type { LivePicture } from '../feed/live-picture.ts';
 import { written, type Formats } from '../format.ts';
@@ -32,6 +32,7 @@ const points = 240;
 export class GuaranteePage extends LitElement {
   static override properties = {
     guarantee: { attribute: false },
+    lane: { attribute: false },
     picture: { attribute: false },
     formats: { attribute: false },
     plantNow: { attribute: false },
@@ -43,6 +44,7 @@ export class GuaranteePage extends LitElement {
   static override styles = [base, guaranteePageStyle];
 
   declare guarantee: string;
+  declare lane: Lane | undefined;
   declare picture: LivePicture | undefined;
   declare formats: Formats | undefined;
   declare plantNow: number;
@@ -65,9 +67,8 @@ export class GuaranteePage extends LitElement {
   }
 
   protected override render(): TemplateResult | typeof nothing {
-    const { picture, formats } = this;
+    const { picture, formats, lane } = this;
     if (picture === undefined || formats === undefined) return nothing;
-    const lane = lanesOf(picture).find(({ card }) => card.id === this.guarantee);
     if (lane === undefined) return html`<section class="sheet part"><h1>No guarantee is called ${this.guarantee}</h1><p><a href="/">Go to the line board</a></p></section>`;
     return html`
       ${this.#head(lane, formats)}
@@ -87,7 +88,8 @@ export class GuaranteePage extends LitElement {
       </div>`;
   }
 
-  #head({ card, view, tone }: Lane, formats: Formats): TemplateResult {
+  #head(lane: Lane, formats: Formats): TemplateResult {
+    const { card, view, tone } = lane;
     return html`<header class="sheet head ${tone}">
       <div>
         <p class="quiet place">${card.lineName}, ${card.stationNames.join(' to ')}. ${[card.productName, card.characteristicName].filter((name) => name !== undefined && name !== '').join(', ')}</p>
@@ -101,12 +103,8 @@ export class GuaranteePage extends LitElement {
         ${view.remark === undefined || view.state === 'unknown' ? nothing : html`<p>${view.remark}</p>`}
         ${view.warnings.map((warning) => html`<p class="warning"><b>Mind:</b> ${warning}</p>`)}
       </div>
-      <own-lane .lane=${this.#laneOf(card.id)} .formats=${formats}></own-lane>
+      <own-lane .lane=${lane} .formats=${formats}></own-lane>
     </header>`;
-  }
-
-  #laneOf(id: string): Lane | undefined {
-    return this.picture === undefined ? undefined : lanesOf(this.picture).find(({ card }) => card.id === id);
   }
 
   #overTime({ card }: Lane, formats: Formats, picture: LivePicture): TemplateResult {

@@ -69,7 +69,7 @@ export class GuaranteePicture extends LitElement {
     const yOf = (count: number): number => bottom - (count / most) * (bottom - top - 6);
     const binWidth = (edges[1] ?? 1) - (edges[0] ?? 0);
     return html`<svg width=${width} height="216" role="img" aria-label=${this.#distributionWords(picture, total, formats)}>
-      ${counts.map((count, index) => this.#bin(edges[index] ?? 0, edges[index + 1] ?? 0, count, picture, xOf, yOf, bottom))}
+      ${counts.map((count, index) => this.#bin([edges[index] ?? 0, edges[index + 1] ?? 0], count, picture, xOf, yOf))}
       ${picture.model.verdict === 'fits' ? this.#model(picture, total * binWidth, [low - pad, high + pad], xOf, yOf) : nothing}
       <line class="axis" x1="0" x2=${width} y1=${bottom} y2=${bottom}></line>
       ${valueTicks(low, high, Math.max(2, Math.floor(width / 90))).map((value) => svg`<text x=${xOf(value)} y=${bottom + 18} text-anchor="middle">${formats.plain(value)}</text>`)}
@@ -78,9 +78,9 @@ export class GuaranteePicture extends LitElement {
     </svg><p class="said">${picture.model.sentence}</p>`;
   }
 
-  #bin(from: number, to: number, count: number, { limit }: Distribution, xOf: (v: number) => number, yOf: (c: number) => number, bottom: number): SVGTemplateResult {
+  #bin([from, to]: readonly [number, number], count: number, { limit }: Distribution, xOf: (v: number) => number, yOf: (c: number) => number): SVGTemplateResult {
     const out = limit !== undefined && (limit.side === 'below' ? to <= limit.value : from >= limit.value);
-    return svg`<rect class=${out ? 'bin out' : 'bin'} x=${xOf(from) + 0.5} width=${Math.max(1, xOf(to) - xOf(from) - 1)} y=${yOf(count)} height=${bottom - yOf(count)}></rect>`;
+    return svg`<rect class=${out ? 'bin out' : 'bin'} x=${xOf(from) + 0.5} width=${Math.max(1, xOf(to) - xOf(from) - 1)} y=${yOf(count)} height=${yOf(0) - yOf(count)}></rect>`;
   }
 
   #model({ mean, sd, limit }: Distribution, area: number, span: readonly [number, number], xOf: (v: number) => number, yOf: (c: number) => number): SVGTemplateResult {

@@ -2,6 +2,7 @@ import { html, LitElement, nothing, svg, type TemplateResult } from 'lit';
 import { isWaiting } from '../attention.ts';
 import type { Freshness } from '../feed/link.ts';
 import type { LivePicture } from '../feed/live-picture.ts';
+import { recordAgeOf } from '../feed/record-age.ts';
 import type { Formats } from '../format.ts';
 import { base } from '../look/base.ts';
 import type { Route } from '../route.ts';
@@ -65,12 +66,13 @@ export class PageMasthead extends LitElement {
   }
 
   #liveness(picture: LivePicture, formats: Formats, freshness: Freshness): TemplateResult {
-    const newest = Math.max(...[...picture.views.values()].map((view) => view.newest ?? Number.NEGATIVE_INFINITY));
-    const age = Number.isFinite(newest) ? `newest record ${formats.span(this.plantNow - newest)} ago` : 'no record yet';
-    const live = freshness.kind === 'live';
+    const records = recordAgeOf(picture, this.plantNow);
+    const age = records.kind === 'none yet' ? 'no record yet' : `newest record ${formats.span(records.ageMs)} ago`;
+    const live = freshness.kind === 'live' && records.kind !== 'old';
+    const word = live ? 'Live' : freshness.kind === 'live' ? 'No records' : 'Not live';
     return html`<span class=${live ? 'live' : 'not-live'}><svg viewBox="0 0 12 12" aria-hidden="true">${live
       ? svg`<circle cx="6" cy="6" r="4.5" fill="currentColor"/>`
-      : svg`<path d="M2 2l8 8M10 2l-8 8" stroke="currentColor" stroke-width="2.4"/>`}</svg><b>${live ? 'Live' : 'Not live'}</b></span>${this.wall && live ? nothing : html`, ${age}`}`;
+      : svg`<path d="M2 2l8 8M10 2l-8 8" stroke="currentColor" stroke-width="2.4"/>`}</svg><b>${word}</b></span>${this.wall && live ? nothing : html`, ${age}`}`;
   }
 }
 

@@ -59,7 +59,7 @@ describe('keyboard', () => {
       let at = document.activeElement;
       while (at?.shadowRoot?.activeElement) at = at.shadowRoot.activeElement;
       const article = at?.closest('article');
-      const seen = [at, article].some((one) => one != null && (getComputedStyle(one).outlineStyle !== 'none' || getComputedStyle(one).boxShadow !== 'none'));
+      const seen = [at, article].some((one) => one instanceof Element && (getComputedStyle(one).outlineStyle !== 'none' || getComputedStyle(one).boxShadow !== 'none'));
       return { name: at?.getAttribute('aria-label') ?? (at?.textContent?.trim() || at?.localName) ?? '', seen };
     });
     await page.keyboard.press('Tab');

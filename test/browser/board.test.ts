@@ -29,7 +29,7 @@ const places = (name: string): Promise<{ line: number; dot: number; opposite: nu
   laneOf(name).evaluate((lane) => {
     const x = (selector: string, attribute: string): number | undefined => {
       const found = lane.shadowRoot?.querySelector(selector)?.getAttribute(attribute);
-      return found == null ? undefined : Number(found);
+      return found === undefined || found === null ? undefined : Number(found);
     };
     return { line: x('.line', 'x1')!, dot: x('.dot', 'cx')!, opposite: x('.opposite', 'x1'), trail: lane.shadowRoot!.querySelectorAll('.trail line').length };
   });

@@ -72,7 +72,7 @@ describe('order of lanes', () => {
 });
 
 describe('heights of lanes', () => {
-  const limits = { loudLeast: 80, calmLeast: 28, loudMost: 120, calmMost: 70 };
+  const limits = { loudLeast: 80, calmLeast: 28, loudMost: 120, calmMost: 70, louder: 1.6 };
 
   it('fills the room and gives more to what needs a person', () => {
     const { loud, calm, fits } = laneHeights(560, 2, 6, limits);

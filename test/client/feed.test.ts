@@ -6,6 +6,7 @@ import { freshnessOf, silentAfterMs } from '../../client/feed/link.ts';
 import { nextPicture } from '../../client/feed/live-picture.ts';
 import { liveStateOf, type LiveState } from '../../client/feed/live-state.ts';
 import { plantTime } from '../../client/feed/plant-clock.ts';
+import { recordAgeOf } from '../../client/feed/record-age.ts';
 import { readMessage } from '../../client/feed/read-message.ts';
 import type { LiveMessage, LiveWatch } from '../../core/live/message.ts';
 import { alarm, snapshot, view } from './made-up.ts';
@@ -49,6 +50,16 @@ describe('freshness', () => {
     expect(freshnessOf({ kind: 'open', heardAt: 100 }, 101 + silentAfterMs).kind).toBe('silent');
     expect(freshnessOf({ kind: 'lost', since: 0, retryAt: 0 }, 5).kind).toBe('lost');
     expect(freshnessOf({ kind: 'connecting' }, 5).kind).toBe('connecting');
+  });
+});
+
+describe('age of the newest record', () => {
+  const picture = (newest: number | undefined) => nextPicture(undefined, snapshot({ views: [view({ newest: 5 }), view({ id: 'b', newest })].slice(newest === undefined ? 1 : 0) }), 0)!;
+
+  it('is old after a minute of the wall clock, however fast the plant’s runs', () => {
+    expect(recordAgeOf(picture(1000), 1000 + 3_600_000)).toEqual({ kind: 'fresh', ageMs: 3_600_000 });
+    expect(recordAgeOf(picture(1000), 1001 + 3_600_000).kind).toBe('old');
+    expect(recordAgeOf(picture(undefined), 9e9)).toEqual({ kind: 'none yet' });
   });
 });
 

@@ -37,7 +37,7 @@ describe('words', () => {
 
   it('a lane as a sentence begins with its name and leaves out nothing that is drawn', () => {
     const waiting = lane('BH-4 leak test', 1.12, { state: 'undecided', bound: 224e-6, margin: { conformingToDemonstrate: 900 }, drift: 'rising' }, [alarm({ priority: 'high' })]);
-    expect(loose(laneSentence(english, waiting, 4000))).toBe(
+    expect(loose(laneSentence(english, waiting, '3 s'))).toBe(
       'BH-4 leak test, Hose line A: Undecided. Upper bound 224 ppm; promised at most 200 ppm nonconforming; 95 % confidence, one look. Allowance used 112 %. ' +
       'Demonstrated again after 900 conforming units in a row. Bound rising. Newest record 3 s ago. Alarm, high priority, not acknowledged: Bound crossed the guarantee line.',
     );
