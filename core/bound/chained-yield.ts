@@ -1,6 +1,7 @@
-import { gammaOfUpperTail } from '../numerics/gamma-quantile.ts';
+import { gammaOfLowerTail, gammaOfUpperTail } from '../numerics/gamma-quantile.ts';
 import type { Fraction, Tail } from '../units.ts';
 import { OutOfDomain, requireInside, requireWhole } from './out-of-domain.ts';
+import { yieldUpper } from './yield.ts';
 
 /** What one station of a chain has seen: only units that reached it count as inspected there. */
 export interface StationCount {
@@ -42,6 +43,37 @@ export function chainedYieldLower(stations: readonly StationCount[], tail: Tail)
     limiting: nameAtMost(stations, without.map((lower) => -lower)),
     scarcest: nameAtMost(stations, stations.map(({ inspected }) => inspected)),
   };
+}
+
+/** The bound of `chainedYieldLower` alone, for the record path: without asking which station limits it. @coverage as there */
+export function chainLower(stations: readonly StationCount[], tail: Tail): Fraction {
+  requireStations(stations, tail);
+  return gammaLogLower(stations, tail) as Fraction;
+}
+
+/**
+ * Upper bound on the same chance: the gamma method's lower limit of the losses, without the allowance for the next
+ * nonconforming unit. A station that let nothing pass bounds the chain by its own exact bound.
+ *
+ * @returns in (0, 1]; 1 when no unit was nonconforming
+ * @throws OutOfDomain naming the argument; NoConvergence
+ * @coverage measured by enumeration in the tests, not proved; one look fixed in advance
+ * @source as `chainedYieldLower`
+ */
+export function chainUpper(stations: readonly StationCount[], tail: Tail): Fraction {
+  requireStations(stations, tail);
+  let [loss, variance, most] = [0, 0, 1];
+  for (const { nonconforming, inspected } of stations) {
+    const left = inspected - nonconforming;
+    if (left === 0) most = Math.min(most, yieldUpper(nonconforming, inspected, tail));
+    else {
+      loss -= Math.log1p(-nonconforming / inspected);
+      variance += nonconforming / inspected / left;
+    }
+  }
+  if (loss === 0) return most as Fraction;
+  const scale = variance / loss;
+  return Math.min(most, Math.exp(-scale * gammaOfLowerTail(loss / scale, tail))) as Fraction;
 }
 
 /**

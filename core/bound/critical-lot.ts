@@ -68,6 +68,28 @@ export function lotDemonstrationUnits(nonconforming: number, promise: LotPromise
   return lastWhere(small, nonconforming, lotSize - 1, guess) + 1;
 }
 
+/**
+ * The largest sample in which this many nonconforming units still show the promise of a lot broken:
+ * the largest n with P(X >= nonconforming | allowed in the lot) <= tail.
+ *
+ * @param nonconforming in the sample; whole, 0 to lotSize
+ * @returns whole; 0 when no sample does, lotSize when more are nonconforming than are allowed
+ * @throws OutOfDomain
+ * @coverage at one look fixed in advance, as `lotLower`
+ * @source `lotLower` turned round, ties exact
+ */
+export function lotViolationUnits(nonconforming: number, promise: LotPromise, tail: Tail): number {
+  requirePromise(promise, tail);
+  const { lotSize, allowed } = promise;
+  requireWhole('nonconforming', nonconforming, 0, lotSize);
+  if (nonconforming === 0) return 0;
+  if (nonconforming > allowed) return lotSize;
+  const good = lotSize - allowed;
+  const shows = (sampled: number): boolean => lotRefutes(good, { nonconforming: sampled - nonconforming, sampled, lotSize }, tail);
+  const last = lastWhere(shows, nonconforming, lotSize, ((nonconforming - 1) * lotSize) / (2 * allowed + 1));
+  return last < nonconforming ? 0 : last;
+}
+
 function requirePromise({ lotSize, allowed }: LotPromise, tail: number): void {
   requireWhole('lotSize', lotSize, 1);
   if (!(Number.isSafeInteger(allowed) && allowed >= 0 && allowed < lotSize)) {

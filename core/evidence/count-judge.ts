@@ -1,5 +1,6 @@
 import type { Assessment } from './assessment.ts';
 import type { EvidenceState } from './evidence-state.ts';
+import type { Judge } from './judge.ts';
 import type { Thresholds } from './thresholds.ts';
 
 /** The thresholds one guarantee on counts is judged by. */
@@ -29,10 +30,9 @@ const plain: Readonly<Record<EvidenceState, Assessment>> = {
 };
 
 /**
- * Judges 'count nonconforming in size inspected' against a guarantee line by comparing whole counts.
- * `ripe` says whether the window may call a violation: full, or growing with no size of its own.
+ * Judges 'count nonconforming in size inspected' against a guarantee line by comparing sizes, whole or not.
  */
-export class CountJudge {
+export class CountJudge implements Judge {
   readonly #by: JudgeThresholds;
   #sureCount = 0;
   #sureSize = 0;
@@ -48,7 +48,6 @@ export class CountJudge {
     return ripe && this.#violated(size, count) ? 'violated' : 'undecided';
   }
 
-  /** `waiting`: an alarm waits for its return, so that the distances are asked for too. */
   assess(size: number, count: number, ripe: boolean, waiting: boolean): Assessment {
     const state = this.state(size, count, ripe);
     if (!waiting) return plain[state];
@@ -59,10 +58,6 @@ export class CountJudge {
     };
   }
 
-  /**
-   * A size above `size` before which, with no further nonconforming unit, no assessment changes; it may be too
-   * early (asking again then is harmless), never too late. Infinity where nothing is left to change.
-   */
   nextSize(size: number, count: number): number {
     const { line, backFromCrossing, backFromViolation, rate } = this.#by;
     let next = Infinity;

@@ -1,36 +1,23 @@
-import { fractionLower, fractionUpper } from '../bound/nonconforming-fraction.ts';
 import { demonstrationUnits, violationUnits } from '../bound/critical-count.ts';
+import { demonstrationExposure, violationExposure } from '../bound/critical-exposure.ts';
+import { fractionLower, fractionUpper } from '../bound/nonconforming-fraction.ts';
+import { rateLower, rateUpper } from '../bound/rate.ts';
 import type { Guarantee } from '../plant/guarantee.ts';
 import type { Fraction, Tail } from '../units.ts';
-import { CountJudge } from './count-judge.ts';
+import { CountJudge, type JudgeThresholds } from './count-judge.ts';
+import type { Judge } from './judge.ts';
+import { levelsOf, movedIn } from './rule-levels.ts';
 import { RememberedThresholds, type Thresholds } from './thresholds.ts';
 
-/** Everything that turns 'x nonconforming of n' into a judgement and into bounds, for one guarantee. */
+/** Everything that turns 'count in size' into a judgement and into bounds, for one guarantee. */
 export interface CountRule {
-  readonly judge: CountJudge;
+  readonly judge: Judge;
   readonly thresholds: Thresholds;
-  /** Upper and lower bound on the nonconforming fraction: at the guarantee's level, and at the violation rule's. */
-  upper(inspected: number, nonconforming: number): number;
-  lower(inspected: number, nonconforming: number): number;
-  /** The line as a nonconforming fraction. */
-  readonly line: Fraction;
-}
-
-/** Return distances and the level of the opposite bound, as the rules of a guarantee set them. */
-export interface RuleLevels {
-  readonly crossingDistance: number;
-  readonly violationDistance: number;
-  readonly violationTail: Tail;
-}
-
-/** Without a violation rule the opposite bound is still shown, at the guarantee's own level. */
-export function levelsOf(guarantee: Guarantee): RuleLevels {
-  let levels: RuleLevels = { crossingDistance: 0, violationDistance: 0, violationTail: guarantee.tail };
-  for (const rule of guarantee.rules) {
-    if (rule.kind === 'crossing') levels = { ...levels, crossingDistance: rule.return.distance };
-    if (rule.kind === 'violation') levels = { ...levels, violationDistance: rule.return.distance, violationTail: rule.tail };
-  }
-  return levels;
+  /** Upper bound at the guarantee's level and lower bound at the violation rule's, in the quantity's unit. */
+  upper(size: number, count: number): number;
+  lower(size: number, count: number): number;
+  /** Size that the quantity is told for: 1 unit for a fraction, the promised exposure for a rate. */
+  readonly per: number;
 }
 
 /**
@@ -41,26 +28,52 @@ export function levelsOf(guarantee: Guarantee): RuleLevels {
  */
 export function binomialRule(guarantee: Guarantee, line: Fraction, target: Fraction): CountRule {
   const { tail } = guarantee;
-  const levels = levelsOf(guarantee);
-  const movedIn = (distance: number): Fraction => (line - distance * (line - target)) as Fraction;
-  const thresholds = (at: Fraction, level: Tail): Thresholds =>
-    new RememberedThresholds({
-      sizeToDemonstrate: (count) => demonstrationUnits(count, at, level),
-      sizeViolated: (count) => violationUnits(count, at, level),
-    });
-  const onLine = thresholds(line, tail);
-  const opposite = levels.violationTail === tail ? onLine : thresholds(line, levels.violationTail);
+  const { violationTail } = levelsOf(guarantee);
+  const by = judgeThresholds(guarantee, line, target, (at, level) => ({
+    sizeToDemonstrate: (count) => demonstrationUnits(count, at, level),
+    sizeViolated: (count) => violationUnits(count, at, level),
+  }));
   return {
-    line,
-    thresholds: onLine,
-    judge: new CountJudge({
-      line: onLine,
-      opposite,
-      backFromCrossing: levels.crossingDistance === 0 ? onLine : thresholds(movedIn(levels.crossingDistance), tail),
-      backFromViolation: levels.violationDistance === 0 ? opposite : thresholds(movedIn(levels.violationDistance), levels.violationTail),
-      rate: line,
-    }),
+    per: 1,
+    thresholds: by.line,
+    judge: new CountJudge({ ...by, rate: line }),
     upper: (inspected, nonconforming) => fractionUpper(nonconforming, inspected, tail),
-    lower: (inspected, nonconforming) => fractionLower(nonconforming, inspected, levels.violationTail),
+    lower: (inspected, nonconforming) => fractionLower(nonconforming, inspected, violationTail),
+  };
+}
+
+/**
+ * The rule of a guarantee on a rate, by the exact Poisson bound; sizes are exposures.
+ *
+ * @param line   most nonconformities promised in `per` of exposure; likewise the target, below the line
+ */
+export function poissonRule(guarantee: Guarantee, { line, target, per }: { line: number; target: number; per: number }): CountRule {
+  const { tail } = guarantee;
+  const { violationTail } = levelsOf(guarantee);
+  const by = judgeThresholds(guarantee, line / per, target / per, (at, level) => ({
+    sizeToDemonstrate: (count) => demonstrationExposure(count, at, level),
+    sizeViolated: (count) => violationExposure(count, at, level),
+  }));
+  return {
+    per,
+    thresholds: by.line,
+    judge: new CountJudge({ ...by, rate: line / per }),
+    upper: (exposure, count) => rateUpper(count, exposure, tail) * per,
+    lower: (exposure, count) => rateLower(count, exposure, violationTail) * per,
+  };
+}
+
+/** The thresholds that the alarm rules of a guarantee ask for, each remembered and made once. */
+export function judgeThresholds(guarantee: Guarantee, line: number, target: number, at: (line: number, level: Tail) => Thresholds): Omit<JudgeThresholds, 'rate'> {
+  const { tail } = guarantee;
+  const { crossingDistance, violationDistance, violationTail } = levelsOf(guarantee);
+  const remembered = (distance: number, level: Tail): Thresholds => new RememberedThresholds(at(movedIn(line, target, distance), level));
+  const onLine = remembered(0, tail);
+  const opposite = violationTail === tail ? onLine : remembered(0, violationTail);
+  return {
+    line: onLine,
+    opposite,
+    backFromCrossing: crossingDistance === 0 ? onLine : remembered(crossingDistance, tail),
+    backFromViolation: violationDistance === 0 ? opposite : remembered(violationDistance, violationTail),
   };
 }

@@ -1,4 +1,4 @@
-import type { InspectionPart } from '../record/part.ts';
+import type { InspectionPart, Measurements, Tallies, Verdicts } from '../record/part.ts';
 
 /** A measurement nonconforms when it lies beyond this; a value on the limit conforms. */
 export interface Limit {
@@ -7,6 +7,16 @@ export interface Limit {
 }
 
 const none = new Uint32Array(0);
+
+/** Whether a value lies beyond the limit. A value that is not a number does: it proves nothing good. */
+export function beyondLimit(value: number, limit: Limit): boolean {
+  return limit.side === 'below' ? !(value >= limit.value) : !(value <= limit.value);
+}
+
+/** Whether the records of a part say of units whether they conform: measurements do where there is a limit. */
+export function tellsUnits(part: InspectionPart, limit: Limit | undefined): part is Verdicts | Tallies | Measurements {
+  return part.kind !== 'exposures' && (part.kind !== 'measurements' || limit !== undefined);
+}
 
 /**
  * The nonconforming records of a stretch of a part of single units (verdicts, or measurements judged by a limit).
@@ -22,8 +32,7 @@ export function nonconformingPlaces(part: InspectionPart, from: number, to: numb
   if (part.kind !== 'measurements' || limit === undefined) return none;
   const beyond: number[] = [];
   for (let place = from; place < to; place += 1) {
-    const value = part.value[place] as number;
-    if (limit.side === 'below' ? value < limit.value : value > limit.value) beyond.push(place);
+    if (beyondLimit(part.value[place] as number, limit)) beyond.push(place);
   }
   return beyond.length === 0 ? none : Uint32Array.from(beyond);
 }

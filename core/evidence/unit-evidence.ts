@@ -2,11 +2,16 @@ import type { Finding } from '../record/part.ts';
 import type { Margin } from '../view/guarantee-view.ts';
 import type { RecordIdentity, RecordRange } from '../window/record-identity.ts';
 import { UnitWindow, type UnitWindowSnapshot } from '../window/unit-window.ts';
+import { clusterWarnings } from './cluster-warnings.ts';
+import { countBounds } from './count-bounds.ts';
+import { countFigures } from './count-figures.ts';
+import { countMargin } from './count-margin.ts';
 import type { CountRule } from './count-rule.ts';
+import { countedFinding } from './counted-finding.ts';
 import type { Batch, Bounds, CorrectionFate, Evidence, WindowStrip } from './evidence.ts';
 import type { Moment, RecordMoment } from './moment.ts';
-import { nonconformingPlaces, type Limit } from './nonconforming-places.ts';
-import type { Standing } from './standing.ts';
+import { nonconformingPlaces, tellsUnits, type Limit } from './nonconforming-places.ts';
+import type { Weighing } from './weighing.ts';
 
 export interface UnitEvidenceSettings {
   /** Units of the window; undefined for a growing one. */
@@ -17,8 +22,9 @@ export interface UnitEvidenceSettings {
   readonly asYield: boolean;
 }
 
-interface UnitEvidenceSnapshot {
+export interface UnitEvidenceSnapshot {
   readonly position: number;
+  readonly wakeAt: number;
   readonly window: UnitWindowSnapshot;
 }
 
@@ -29,21 +35,26 @@ interface UnitEvidenceSnapshot {
 export class UnitEvidence implements Evidence {
   readonly window: UnitWindow;
   readonly #settings: UnitEvidenceSettings;
-  readonly #standing: Standing;
+  readonly #weighing: Weighing;
   #rule: CountRule;
   #position = 0;
   /** Position before which, with conforming units only, nothing can change. */
   #wakeAt = 0;
 
-  constructor(settings: UnitEvidenceSettings, rule: CountRule, standing: Standing) {
+  constructor(settings: UnitEvidenceSettings, rule: CountRule, weighing: Weighing) {
     this.#settings = settings;
     this.#rule = rule;
-    this.#standing = standing;
+    this.#weighing = weighing;
     this.window = new UnitWindow(settings.size === undefined ? {} : { size: settings.size });
   }
 
   get position(): number {
     return this.#position;
+  }
+
+  /** Whether the window may call a violation: full, or growing with no size of its own. */
+  get ripe(): boolean {
+    return this.window.size === undefined || this.window.full;
   }
 
   /** Judges by another rule from the next weighing on: a lot of another size, say. */
@@ -54,7 +65,7 @@ export class UnitEvidence implements Evidence {
 
   take(batch: Batch, moment: RecordMoment): void {
     const { part, from, to, source, firstSequence } = batch;
-    if (part.kind === 'exposures') return;
+    if (!tellsUnits(part, this.#settings.limit)) return;
     if (part.kind === 'tallies') {
       for (let place = from; place < to; place += 1) {
         const inspected = part.inspected[place] as number;
@@ -82,7 +93,7 @@ export class UnitEvidence implements Evidence {
 
   fill(batch: Batch, moment: RecordMoment): void {
     const { part, from, to, source, firstSequence } = batch;
-    if (part.kind === 'exposures') return;
+    if (!tellsUnits(part, this.#settings.limit)) return;
     if (part.kind === 'tallies') {
       for (let place = from; place < to; place += 1) {
         const unitsPerRecord = part.inspected[place] as number;
@@ -99,7 +110,7 @@ export class UnitEvidence implements Evidence {
   }
 
   correct(identity: RecordIdentity, _station: number, finding: Finding, moment: Moment): CorrectionFate {
-    const found = this.#counted(finding);
+    const found = countedFinding(finding, this.#settings.limit);
     if (found === undefined) return 'another kind';
     const change = this.window.correct(identity.source, identity.sequence, found.nonconforming, found.inspected);
     if (change === 'not here') return 'not here';
@@ -109,7 +120,7 @@ export class UnitEvidence implements Evidence {
 
   clear(moment: Moment): void {
     this.window.clear();
-    this.#standing.beginAnew();
+    this.#weighing.beginAnew();
     this.weigh(moment);
   }
 
@@ -123,14 +134,13 @@ export class UnitEvidence implements Evidence {
 
   weigh(moment: Moment): void {
     const { inspected, nonconforming } = this.window;
-    const ripe = this.window.size === undefined || this.window.full;
-    this.#standing.weigh(this.#rule.judge.assess(inspected, nonconforming, ripe, this.#standing.waiting), this.#position, moment);
+    this.#weighing.weigh(this.#rule.judge.assess(inspected, nonconforming, this.ripe, this.#weighing.waiting), this.#position, moment);
     this.#wakeAt = this.#nextWake(inspected, nonconforming);
   }
 
   figures(): Readonly<Record<string, number>> {
     const { inspected, nonconforming, size } = this.window;
-    return { inspected, nonconforming, ...(size === undefined ? {} : { windowUnits: size }) };
+    return countFigures(this.#rule, inspected, nonconforming, size);
   }
 
   ranges(): readonly RecordRange[] {
@@ -138,30 +148,16 @@ export class UnitEvidence implements Evidence {
   }
 
   bounds(): Bounds {
-    const { inspected, nonconforming } = this.window;
-    if (inspected === 0) return { estimate: undefined, bound: undefined, opposite: undefined };
-    const estimate = nonconforming / inspected;
-    const bound = this.#rule.upper(inspected, nonconforming);
-    const opposite = this.#rule.lower(inspected, nonconforming);
-    return this.#settings.asYield ? { estimate: 1 - estimate, bound: 1 - bound, opposite: 1 - opposite } : { estimate, bound, opposite };
+    return countBounds(this.#rule, this.window.inspected, this.window.nonconforming, this.#settings.asYield);
   }
 
   margin(): Margin {
     const { inspected, nonconforming, size } = this.window;
-    const { thresholds } = this.#rule;
-    const least = thresholds.sizeToDemonstrate(0);
-    if (inspected < least) return { unitsToGather: least - inspected };
-    const needed = thresholds.sizeToDemonstrate(nonconforming);
-    if (inspected >= needed) {
-      let more = 0;
-      while (inspected >= thresholds.sizeToDemonstrate(nonconforming + more + 1)) more += 1;
-      return { canTake: more };
-    }
-    return { conformingToDemonstrate: this.#conformingNeeded(inspected, nonconforming, size ?? Infinity) };
+    return countMargin(this.#rule.thresholds, inspected, nonconforming, () => this.#conformingNeeded(inspected, nonconforming, size ?? Infinity));
   }
 
   warnings(): readonly string[] {
-    return [];
+    return clusterWarnings(this.window);
   }
 
   strip(most: number): WindowStrip {
@@ -170,13 +166,13 @@ export class UnitEvidence implements Evidence {
   }
 
   snapshot(): UnitEvidenceSnapshot {
-    return { position: this.#position, window: this.window.snapshot() };
+    return { position: this.#position, wakeAt: this.#wakeAt, window: this.window.snapshot() };
   }
 
   restore(from: UnitEvidenceSnapshot): void {
     this.#position = from.position;
+    this.#wakeAt = from.wakeAt;
     this.window.restore(from.window);
-    this.#wakeAt = 0;
   }
 
   /** Conforming units in a row until demonstrated: by growing, and by old nonconforming units leaving. */
@@ -190,24 +186,6 @@ export class UnitEvidence implements Evidence {
       if (wait < relief || leaving === nonconforming) return wait;
     }
     return Infinity;
-  }
-
-  /** What a finding says in units; undefined where it is of another kind than this evidence counts. */
-  #counted(finding: Finding): { nonconforming: number; inspected: number | undefined } | undefined {
-    switch (finding.kind) {
-      case 'verdict':
-        return { nonconforming: finding.nonconforming ? 1 : 0, inspected: undefined };
-      case 'tally':
-        return { nonconforming: finding.nonconforming, inspected: finding.inspected };
-      case 'measurement': {
-        const { limit } = this.#settings;
-        if (limit === undefined) return undefined;
-        const beyond = limit.side === 'below' ? finding.value < limit.value : finding.value > limit.value;
-        return { nonconforming: beyond ? 1 : 0, inspected: undefined };
-      }
-      case 'exposure':
-        return undefined;
-    }
   }
 
   /**
@@ -243,6 +221,6 @@ export class UnitEvidence implements Evidence {
       const grown = this.#rule.judge.nextSize(inspected, nonconforming);
       wait = Math.min(wait, Math.min(grown, size) - inspected);
     }
-    return Math.min(this.#position + Math.max(1, wait), this.#standing.dueAt());
+    return Math.min(this.#position + Math.max(1, wait), this.#weighing.dueAt());
   }
 }

@@ -94,7 +94,10 @@ export class Watch {
       if (moment.at > this.newest) this.newest = moment.at;
       const belonging = this.#period.of(minute, lot);
       if (belonging === 'past') continue;
-      if (belonging === 'begins anew') this.#beginAnew(moment);
+      if (belonging === 'begins anew') {
+        if (this.guarantee.window.kind === 'lot') this.evidence.setLotSize?.(lot === this.around.line.lot ? this.around.line.lotSize : undefined);
+        this.#beginAnew(moment);
+      }
       this.#heard(moment);
       const batch: Batch = { ...base, part, from, to };
       if (late) this.evidence.fill(batch, moment);
@@ -160,10 +163,7 @@ export class Watch {
     this.changed = true;
     const movedOn = mark.kind === 'changeover' && this.guarantee.product !== undefined && mark.product !== this.guarantee.product;
     if (mark.kind === 'line-stopped' || movedOn) this.#heard(moment);
-    if (mark.kind === 'lot-start') {
-      this.evidence.setLotSize?.(mark.size);
-      if (this.#period.of(moment.at, mark.lot) === 'begins anew' && this.guarantee.window.kind === 'lot') this.#beginAnew(moment);
-    }
+    if (mark.kind === 'lot-start' && this.guarantee.window.kind === 'lot') this.#startLot(mark.lot, mark.size, moment);
     this.#refreshDue();
   }
 
@@ -175,7 +175,7 @@ export class Watch {
     if (!this.#badData && badRecords > rule.moreThan) {
       this.#badData = true;
       this.changed = true;
-      this.around.desk.raise(this.guarantee, rule, at, () => this.#grounds('bad-data', clockMoment(at), { badRecords, withinMs: rule.withinMs }));
+      this.around.desk.raise(this.guarantee, rule, at, () => this.#grounds('bad-data', clockMoment(at), { moreThan: rule.moreThan, withinMs: rule.withinMs }));
       this.#refreshDue();
     } else if (this.#badData && badRecords <= rule.moreThan / 2) {
       this.#badData = false;
@@ -213,6 +213,14 @@ export class Watch {
     this.newest = from.newest;
     this.#badData = from.badData;
     this.changed = true;
+  }
+
+  #startLot(lot: string, size: number | undefined, moment: Moment): void {
+    const belonging = this.#period.of(moment.at, lot);
+    if (belonging === 'past') return;
+    this.evidence.setLotSize?.(size);
+    if (belonging === 'begins anew') this.#beginAnew(moment);
+    else this.evidence.weigh(moment);
   }
 
   #refreshDue(): void {
