@@ -71,6 +71,12 @@ export class AlarmDesk {
     return true;
   }
 
+  /** Gives alarms other ids, for decisions that were put into another order than they were made in. */
+  renumber(ids: ReadonlyMap<number, number>): void {
+    const standing = this.standing().map((alarm) => ({ ...alarm, id: ids.get(alarm.id) ?? alarm.id }));
+    this.restore({ nextId: this.#nextId, standing: standing.sort((a, b) => a.id - b.id) });
+  }
+
   snapshot(): AlarmDeskSnapshot {
     return { nextId: this.#nextId, standing: this.standing() };
   }

@@ -15,7 +15,7 @@ export function groundsSentence(rule: RuleKind, quantity: Quantity, side: 'at-mo
     case 'silence':
       return `No record has come for ${inMinutes(figures['silentMs'] ?? 0)} although the line is said to run.`;
     case 'bad-data':
-      return `${figures['badRecords'] ?? 0} records within ${inMinutes(figures['withinMs'] ?? 0)} were refused, contradictory, implausibly timed or lost.`;
+      return `More than ${figures['moreThan'] ?? 0} records within ${inMinutes(figures['withinMs'] ?? 0)} were refused, contradictory, implausibly timed or lost.`;
   }
 }
 

@@ -11,6 +11,7 @@ import type { Act, ActFault } from './act.ts';
 import type { ClosedMinute } from './closed-minute.ts';
 import { Clockwork } from './clockwork.ts';
 import type { Happening } from './happening.ts';
+import { inRecordOrder } from './record-order.ts';
 import type { NotCounted, Receipt } from './receipt.ts';
 import { Routes, type KnownRoute } from './routes.ts';
 import type { SourceLedger } from './source-ledger.ts';
@@ -46,14 +47,14 @@ export class Monitor {
   /** Whether the plant clock follows the records of the frame in hand. */
   #follows = false;
   #happenings: Happening[] = [];
+  /** Sequence of the record in hand when each happening was told. */
+  #sequences: number[] = [];
   #minutes: ClosedMinute[] = [];
 
   constructor(plant: Plant, plantVersion: string) {
     this.plant = plant;
     this.plantVersion = plantVersion;
-    const tell = (happening: Happening): void => {
-      this.#happenings.push(happening);
-    };
+    const tell = (happening: Happening): void => this.#tell(happening);
     this.desk = new AlarmDesk(tell);
     this.calendar = new ShiftCalendar(plant.shifts, plant.timeZone);
     this.streams = new StreamList(plant.lines.map(({ id }) => id));
@@ -84,7 +85,10 @@ export class Monitor {
   /** Takes out what was decided since the last call, in order. */
   decisions(): Decisions {
     const decided = { happenings: this.#happenings, minutes: this.#minutes };
-    if (this.#happenings.length > 0) this.#happenings = [];
+    if (this.#happenings.length > 0) {
+      this.#happenings = [];
+      this.#sequences = [];
+    }
     if (this.#minutes.length > 0) this.#minutes = [];
     return decided;
   }
@@ -145,7 +149,7 @@ export class Monitor {
       case 'restart': {
         const watch = this.watches.find(({ guarantee }) => guarantee.id === act.guarantee);
         if (!watch) return 'no-such-guarantee';
-        this.#happenings.push({ kind: 'restart', at: this.now, guarantee: act.guarantee, by: act.by, reason: act.reason });
+        this.#tell({ kind: 'restart', at: this.now, guarantee: act.guarantee, by: act.by, reason: act.reason });
         watch.restart(clockMoment(this.now));
         return undefined;
       }
@@ -156,6 +160,11 @@ export class Monitor {
   noteRefused(stations: readonly string[], frames: number, at: EpochMs): void {
     this.advance(at);
     for (const station of stations) this.#noteBad(station, frames);
+  }
+
+  #tell(happening: Happening): void {
+    this.#happenings.push(happening);
+    this.#sequences.push(this.#moment.sequence);
   }
 
   #take(name: string, source: number, ledger: SourceLedger, frame: Frame, late: boolean): Receipt {
@@ -169,7 +178,7 @@ export class Monitor {
     if (late) ledger.fill(frame.first, frame.records);
     else ledger.advance(sequence);
     for (const { sequence: first, records, code } of notCounted) {
-      this.#happenings.push({ kind: 'set-aside', at: this.now, source: name, sequence: first, records, reason: code });
+      this.#tell({ kind: 'set-aside', at: this.now, source: name, sequence: first, records, reason: code });
     }
     return { kind: 'taken', frame, next: ledger.next, notCounted };
   }
@@ -212,12 +221,22 @@ export class Monitor {
     if (this.#follows) this.advance(timeAt(part.time, (stretches[0] as Stretch).from) as EpochMs);
     route.activity.at = Math.max(this.now, heardUntil);
     route.activity.product = part.origin.product;
+    const told = this.#happenings.length;
     for (const { watch, station } of route.watches) {
       watch.take(part, stretches, { source, firstSequence: sequence, station }, this.#moment, late);
       if (late) watch.fillLost(source, sequence, part.records, this.#moment);
     }
+    if (this.#happenings.length > told + 1 && route.watches.length > 1) this.#putInRecordOrder(told);
     this.advance(heardUntil as EpochMs);
     if (route.watches.length > 0) this.#clockwork.minuteOpen();
+  }
+
+  /** Guarantees that live on the same records decide in the order of the records, not one guarantee after the other. */
+  #putInRecordOrder(from: number): void {
+    const { happenings, alarmIds } = inRecordOrder(this.#happenings.slice(from), this.#sequences.slice(from));
+    this.#happenings.splice(from, happenings.length, ...happenings);
+    this.#sequences.splice(from, happenings.length, ...this.#sequences.slice(from).sort((a, b) => a - b));
+    if (alarmIds.size > 0) this.desk.renumber(alarmIds);
   }
 
   #correct(part: Correction, source: number, sequence: number, notCounted: NotCounted[]): void {
@@ -247,7 +266,7 @@ export class Monitor {
       this.#setAside(notCounted, sequence, 1, 'unknown-line', undefined);
       return;
     }
-    this.#happenings.push(this.streams.mark(known, mark, this.now));
+    this.#tell(this.streams.mark(known, mark, this.now));
     for (const watch of this.watches) if (watch.guarantee.line === mark.line) watch.lineMarked(mark, clockMoment(this.now));
   }
 

@@ -79,7 +79,7 @@ function agreeInAll(window: UnitWindow, oracle: UnitOracle): void {
 }
 
 describe('a unit window', () => {
-  it('of the last N units equals a list of units, whatever comes', () => {
+  it('[W1] of the last N units equals a list of units, whatever comes', () => {
     fc.assert(
       fc.property(fc.integer({ min: 1, max: 40 }), steps, (size, all) => void run({ size }, all, agreeInAll)),
       { seed: 20_260_101, numRuns: 400 },
@@ -225,7 +225,7 @@ describe('a unit window', () => {
     expect(window.inspected).toBe(7);
   });
 
-  it('no longer knows a record whose last units a correction took away', () => {
+  it('[W2] no longer knows a record whose last units a correction took away', () => {
     const window = new UnitWindow({ size: 10 });
     window.admitRun(1, 1, 1, 6);
     window.admitConforming(6);
@@ -256,7 +256,7 @@ describe('a unit window', () => {
     expect(smaller.ranges()).toEqual([{ source: 0, first: 5, last: 9 }]);
   });
 
-  it('keeps 10,000,000 units at 100 per million in less than 32 KiB', () => {
+  it('[W3] keeps 10,000,000 units at 100 per million in less than 32 KiB', () => {
     const window = new UnitWindow({ size: 10_000_000 });
     let [seed, most, sequence] = [7, 0, 1];
     for (let part = 0; part < 40_000; part += 1) {

@@ -43,7 +43,7 @@ async function killedAfter(commits: number): Promise<number> {
 }
 
 describe('a killed server', () => {
-  it('loses nothing it acknowledged and keeps groups whole, again and again', async () => {
+  it('[D1][D2] loses nothing it acknowledged and keeps groups whole, again and again', async () => {
     for (const commits of [0, 7, 60, 200, 33]) {
       const acknowledged = await killedAfter(commits);
       const store = await openStore(directory);

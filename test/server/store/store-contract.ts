@@ -181,7 +181,7 @@ export function storeContract(name: string, makePlace: () => StorePlace): void {
       await expect(store.sources.used(5, 0)).rejects.toEqual(withFault('unknown-source'));
     });
 
-    it('lets one server in at a time', async () => {
+    it('[D3] lets one server in at a time', async () => {
       await expect(place.open()).rejects.toEqual(withFault('in-use'));
       await store.commit(group({ entries: [entry(1)] }));
       await reopen();
