@@ -1,4 +1,4 @@
-import { createReadStream, existsSync } from 'node:fs';
+import { readFile } from 'node:fs/promises';
 import { createServer, type IncomingMessage, type ServerResponse } from 'node:http';
 import type { AddressInfo } from 'node:net';
 import { extname, join } from 'node:path';
@@ -37,10 +37,15 @@ const root = new URL('../../.build/client/', import.meta.url).pathname;
 const types: Readonly<Record<string, string>> = { '.html': 'text/html; charset=utf-8', '.js': 'text/javascript', '.css': 'text/css', '.svg': 'image/svg+xml', '.woff2': 'font/woff2' };
 const policy = "default-src 'self'; connect-src 'self' ws:; style-src 'self'; script-src 'self'; img-src 'self'; font-src 'self'; object-src 'none'; base-uri 'none'";
 
-function sendFile(path: string, response: ServerResponse): void {
-  const file = path !== '/' && existsSync(join(root, path)) ? join(root, path) : join(root, 'index.html');
-  response.writeHead(200, { 'content-type': types[extname(file)] ?? 'application/octet-stream', 'content-security-policy': policy });
-  createReadStream(file).pipe(response);
+/** A built file, or the one page for every address of its own. */
+async function sendFile(path: string, response: ServerResponse): Promise<void> {
+  const name = extname(path) === '' ? 'index.html' : path;
+  try {
+    const bytes = await readFile(join(root, name));
+    response.writeHead(200, { 'content-type': types[extname(name)] ?? 'application/octet-stream', 'content-security-policy': policy }).end(bytes);
+  } catch (cause) {
+    response.writeHead(404, { 'content-type': 'text/plain' }).end(`not built: ${String(cause)}`);
+  }
 }
 
 async function bodyOf(request: IncomingMessage): Promise<Record<string, string>> {
@@ -71,7 +76,7 @@ export async function startFake(options: FakeOptions = {}): Promise<FakeServer> 
     const json = (value: unknown, status = 200): void => {
       response.writeHead(status, { 'content-type': 'application/json' }).end(JSON.stringify(value));
     };
-    if (!url.pathname.startsWith('/api/')) { sendFile(url.pathname, response); return; }
+    if (!url.pathname.startsWith('/api/')) { await sendFile(url.pathname, response); return; }
     const [, , kind, id = '', what] = url.pathname.split('/');
     if (request.method === 'POST') {
       const body = await bodyOf(request);

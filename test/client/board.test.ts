@@ -19,9 +19,10 @@ describe('allowance scale', () => {
     expect(at(0.75) - at(0.5)).toBeCloseTo(at(0.25) - at(0), 9);
   });
 
-  it('draws 200 % and 400 % as equal ways beyond the line', () => {
+  it('draws each doubling beyond the line as an equal way', () => {
     const at = (allowance: number): number => scale.placeOf(allowance).x - scale.lineX;
     expect(at(4)).toBeCloseTo(2 * at(2), 9);
+    expect(at(8)).toBeCloseTo(3 * at(2), 9);
   });
 
   it('rises with the allowance, stays inside, and owns up to what lies beyond its end', () => {
