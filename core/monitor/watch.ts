@@ -13,6 +13,7 @@ import type { Correction, InspectionPart, LineMark } from '../record/part.ts';
 import type { ShiftCalendar } from '../shift/shift-calendar.ts';
 import type { EpochMs } from '../units.ts';
 import type { BadDataLog } from './bad-data-log.ts';
+import { BadDataWatch, type BadDataRule } from './bad-data-watch.ts';
 import { LostRecords, type LostRecordsSnapshot } from './lost-records.ts';
 import { MinuteTally, type MinuteCount } from './minute-tally.ts';
 import { noteMinutes } from './note-minutes.ts';
@@ -47,7 +48,6 @@ export interface WatchSnapshot {
 }
 
 type SilenceRule = Extract<AlarmRule, { kind: 'silence' }>;
-type BadDataRule = Extract<AlarmRule, { kind: 'bad-data' }>;
 
 /** Watches one guarantee: its evidence, its standing, and the rules that need no bound. */
 export class Watch {
@@ -64,8 +64,7 @@ export class Watch {
   newest = 0;
   readonly #period: Period;
   readonly #silence: SilenceRule | undefined;
-  readonly #badDataRule: BadDataRule | undefined;
-  #badData = false;
+  readonly #badData: BadDataWatch | undefined;
   /** Nothing falls due before this; records only move it on, but for windows that go by time. */
   #dueKnown = Infinity;
   readonly #dueMovesWithRecords: boolean;
@@ -76,7 +75,8 @@ export class Watch {
     this.#dueMovesWithRecords = guarantee.window.kind === 'time' || guarantee.window.kind === 'shift';
     this.#period = new Period(guarantee.window.kind, around.calendar);
     this.#silence = guarantee.rules.find((rule): rule is SilenceRule => rule.kind === 'silence');
-    this.#badDataRule = guarantee.rules.find((rule): rule is BadDataRule => rule.kind === 'bad-data');
+    const badData = guarantee.rules.find((rule): rule is BadDataRule => rule.kind === 'bad-data');
+    this.#badData = badData && new BadDataWatch(badData, around.badData);
     this.standing = new Standing(guarantee, around, {
       figures: () => this.evidence.figures(),
       grounds: (rule, moment) => this.#grounds(rule, moment, this.evidence.figures()),
@@ -137,7 +137,7 @@ export class Watch {
   due(): number {
     let due = Math.min(this.#period.until, this.evidence.nextDue(), this.trail.due);
     if (this.#silence && !this.standing.isBlockedBy('silence')) due = Math.min(due, this.#silentFrom(this.#silence));
-    if (this.#badDataRule && this.#badData) due = Math.min(due, this.#badDataFall(this.#badDataRule));
+    if (this.#badData) due = Math.min(due, this.#badData.due(this.around.now()));
     if (this.guarantee.window.kind === 'time') due = Math.min(due, this.lost.oldestAt + this.guarantee.window.spanMs);
     this.#dueKnown = due;
     return due;
@@ -153,7 +153,7 @@ export class Watch {
     }
     if (this.evidence.nextDue() <= at) this.evidence.moveClock(moment);
     if (this.#silence && !this.standing.isBlockedBy('silence') && this.#silentFrom(this.#silence) <= at) this.#fallSilent(this.#silence, moment);
-    if (this.#badDataRule && this.#badData) this.weighBadData(at);
+    this.weighBadData(at);
     this.#settleLost(moment);
     if (this.trail.due <= at) this.trail.mark(at, this.tip());
   }
@@ -169,18 +169,15 @@ export class Watch {
 
   /** Weighs the bad-data rule after something was noted, or fell out, at one of its stations. */
   weighBadData(at: EpochMs): void {
-    const rule = this.#badDataRule;
-    if (!rule) return;
-    const badRecords = this.#badRecords(rule, at);
-    if (!this.#badData && badRecords > rule.moreThan) {
-      this.#badData = true;
-      this.changed = true;
-      this.around.desk.raise(this.guarantee, rule, at, () => this.#grounds('bad-data', clockMoment(at), { moreThan: rule.moreThan, withinMs: rule.withinMs }));
+    const change = this.#badData?.weigh(at);
+    if (!this.#badData || change === undefined) return;
+    this.changed = true;
+    const { rule } = this.#badData;
+    if (change === 'ends') this.around.desk.returned(this.guarantee.id, rule.kind, at);
+    else {
+      const { moreThan, withinMs } = rule;
+      this.around.desk.raise(this.guarantee, rule, at, () => this.#grounds(rule.kind, clockMoment(at), { moreThan, withinMs }));
       this.#refreshDue();
-    } else if (this.#badData && badRecords <= rule.moreThan / 2) {
-      this.#badData = false;
-      this.changed = true;
-      this.around.desk.returned(this.guarantee.id, 'bad-data', at);
     }
   }
 
@@ -199,7 +196,7 @@ export class Watch {
       trail: this.trail.snapshot(),
       minutes: this.minutes.snapshot(),
       newest: this.newest,
-      badData: this.#badData,
+      badData: this.#badData?.active ?? false,
     };
   }
 
@@ -211,7 +208,7 @@ export class Watch {
     this.trail.restore(from.trail);
     this.minutes.restore(from.minutes);
     this.newest = from.newest;
-    this.#badData = from.badData;
+    if (this.#badData) this.#badData.active = from.badData;
     this.changed = true;
   }
 
@@ -241,11 +238,15 @@ export class Watch {
     this.evidence.clear(moment);
   }
 
+  /** Lifts the silence once none of its stations is silent; that is when it was heard, whenever the record was inspected. */
   #heard(moment: Moment): void {
-    if (!this.standing.isBlockedBy('silence')) return;
+    if (!this.#silence || !this.standing.isBlockedBy('silence')) return;
+    const now = this.around.now();
+    if (this.#silentFrom(this.#silence) <= now) return;
+    const heard: Moment = { source: moment.source, sequence: moment.sequence, at: moment.at > now ? moment.at : now };
     this.standing.lift('silence');
-    this.evidence.weigh(moment);
-    this.around.desk.returned(this.guarantee.id, 'silence', moment.at);
+    this.evidence.weigh(heard);
+    this.around.desk.returned(this.guarantee.id, 'silence', heard.at);
   }
 
   #silentFrom(rule: SilenceRule): number {
@@ -256,15 +257,6 @@ export class Watch {
     this.standing.block('silence', 'No record comes although the line is said to run.');
     this.evidence.weigh(moment);
     this.around.desk.raise(this.guarantee, rule, moment.at, () => this.#grounds('silence', moment, { silentMs: rule.afterMs }));
-  }
-
-  #badRecords(rule: BadDataRule, at: number): number {
-    return this.around.badData.reduce((sum, log) => sum + log.within(at, rule.withinMs), 0);
-  }
-
-  /** When the oldest bad record that still counts falls out of the rule's span. */
-  #badDataFall(rule: BadDataRule): number {
-    return this.around.badData.reduce((due, log) => Math.min(due, log.nextFall(this.around.now(), rule.withinMs)), Infinity);
   }
 
   /** Lost data counts as trouble where people can be hurt: the state is unknown while they would be in the window. */
