@@ -23,8 +23,10 @@ export interface Simulation {
 
 /** Nonconforming units simulated between two reports: a few milliseconds. */
 const stepsPerReport = 20_000;
-/** Nonconforming units between two changes tried on the same long good run. */
+/** Nonconforming units between two changes tried on the same long good run, and after a false call on the way. */
 const apart = 100;
+/** A rule that calls falsely all the time is left for a change after this many nevertheless. */
+const mostApart = 2000;
 
 /**
  * Mean units from a fresh start to the alarm at one rate, by simulating nonconforming units only. A
@@ -56,8 +58,8 @@ export function* simulateRunLength({ watch, runs, uniform }: Simulation, rate: n
 }
 
 /**
- * Mean units to the alarm after a change at any moment, once the line has long run at its normal rate,
- * with every false call on the way answered. Reports as `simulateRunLength`.
+ * Mean units to the alarm after a change at any moment, once the line has long run at its normal rate
+ * without a false call. Reports as `simulateRunLength`.
  *
  * @param normal nonconforming fraction before the change, above 0, below 1
  * @param rate and after it, likewise
@@ -72,9 +74,15 @@ export function* simulateDelay({ watch, runs, uniform }: Simulation, normal: num
   const before = gapsAt(normal, uniform);
   const after = gapsAt(rate, uniform);
   watch.reset();
-  for (let steps = 1, since = 1; tally.count < runs; steps++, since++) {
-    if (watch.strike(before())) watch.reset();
-    if (since % apart === 0) {
+  let sinceCall = 0;
+  let sinceChange = 0;
+  for (let steps = 1; tally.count < runs; steps++) {
+    const called = watch.strike(before());
+    if (called) watch.reset();
+    sinceCall = called ? 0 : sinceCall + 1;
+    sinceChange += 1;
+    if (sinceChange >= apart && (sinceCall >= apart || sinceChange >= mostApart)) {
+      sinceChange = 0;
       watch.mark();
       /* The change may come at any unit, so part of a good stretch lies behind it; the geometric gap has no memory. */
       let gap = after();
