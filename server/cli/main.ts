@@ -1,5 +1,6 @@
 #!/usr/bin/env node
 import { Command } from 'commander';
+import { demoCommand } from './demo-command.ts';
 import { CommandFault, exitCode } from './exit-codes.ts';
 import { serveCommand } from './serve-command.ts';
 import { sourceCommand } from './source-command.ts';
@@ -7,6 +8,7 @@ import { sourceCommand } from './source-command.ts';
 const program = new Command('vouchline')
   .description('Tells a plant, while it runs, whether it can still vouch for what it promised.')
   .addCommand(serveCommand())
+  .addCommand(demoCommand())
   .addCommand(sourceCommand())
   .showHelpAfterError('(vouchline --help and vouchline COMMAND --help say what can be given)')
   .configureOutput({ outputError: (text, write) => write(text) })

@@ -1,4 +1,5 @@
-import type { Correction, InspectionPart, Part } from '../../core/record/part.ts';
+import { frameOf } from '../../core/record/frame-of.ts';
+import type { Correction, Frame, InspectionPart, Part } from '../../core/record/part.ts';
 import { Chance } from './chance.ts';
 import { dayStart } from './roster.ts';
 import { inspectionsOf, marksOf, minuteMs, type DemoPlant } from './station-minute.ts';
@@ -14,41 +15,48 @@ interface SecondLook {
   readonly sequence: number;
 }
 
-/** What one station sends, minute by minute. It knows its sequence, its buffer, and what it has looked at again. */
+/**
+ * What one station sends, minute by minute from the first on: always the same, so that a source that starts again
+ * comes to the same frames with the same sequences. It knows its buffer, and what is to be looked at again.
+ */
 export class StationFeed {
   readonly station: DemoStation;
   readonly #plant: DemoPlant;
-  #next: number;
-  #opening: boolean;
+  /** Sequence of the next record, and of the first one that waits in the buffer. */
+  #next = 1;
+  #first = 1;
   #waiting: Part[] = [];
   #secondLooks: SecondLook[] = [];
 
-  /**
-   * @param next    sequence of its first record
-   * @param opening nobody has been told the line's product and lot yet
-   */
-  constructor(plant: DemoPlant, station: DemoStation, next: number, opening: boolean) {
+  constructor(plant: DemoPlant, station: DemoStation) {
     this.#plant = plant;
     this.station = station;
-    this.#next = next;
-    this.#opening = opening;
   }
 
-  /** What the station sends at the end of a minute, in order; empty while its line stands or it cannot reach the server. Ask for each minute once, in order. */
-  minute(minute: number): readonly Part[] {
+  /**
+   * The frame the station sends at the end of a minute; none while its line stands or it cannot reach the server.
+   *
+   * @param minute of the demo plant; ask for every one once, in order, from 0 on
+   */
+  minute(minute: number): Frame | undefined {
     const { id } = this.station;
     const day = this.#plant.roster.dayOf(minute);
     const ofDay = minute - dayStart(minute);
-    if (this.station.leads) this.#put(marksOf(this.#plant, this.station, minute, this.#opening));
-    this.#opening = false;
+    if (this.station.leads) this.#put(marksOf(this.#plant, this.station, minute, minute === 0));
     const found = inspectionsOf(this.#plant, this.station, minute);
     if (day.losses.some(({ station, at }) => station === id && at === ofDay)) this.#lose(found, minute);
     else this.#inspect(found, minute);
     this.#put(this.#secondLooksDue(minute));
-    if (day.silences.some(({ station, from, until }) => station === id && from <= ofDay && ofDay < until)) return [];
-    const sent = this.#waiting;
+    if (day.silences.some(({ station, from, until }) => station === id && from <= ofDay && ofDay < until)) return undefined;
+    return this.#sent();
+  }
+
+  #sent(): Frame | undefined {
+    if (this.#waiting.length === 0) return undefined;
+    const frame = frameOf(this.#first, this.#waiting);
     this.#waiting = [];
-    return sent;
+    this.#first = this.#next;
+    return frame;
   }
 
   #inspect(parts: readonly InspectionPart[], minute: number): void {
