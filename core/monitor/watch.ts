@@ -87,6 +87,7 @@ export class Watch {
   /** Takes a part's records in order. `late`: they fill a hole declared lost before. */
   take(part: InspectionPart, stretches: readonly Stretch[], base: Omit<Batch, 'from' | 'to' | 'part'>, moment: RecordMoment, late: boolean): void {
     this.changed = true;
+    const { source, firstSequence, station } = base; // spreading it into each batch costs more than all the rest
     const lot = part.origin.lot ?? this.around.line.lot;
     for (const { from, to, minute } of stretches) {
       noteMinutes(this.minutes, this.guarantee, part, from, to, minute);
@@ -99,7 +100,7 @@ export class Watch {
         this.#beginAnew(moment);
       }
       this.#heard(moment);
-      const batch: Batch = { ...base, part, from, to };
+      const batch: Batch = { part, from, to, source, firstSequence, station };
       if (late) this.evidence.fill(batch, moment);
       else if (this.lost.none) this.evidence.take(batch, moment);
       else this.#takeSingly(batch, moment);
@@ -247,6 +248,7 @@ export class Watch {
     this.standing.lift('silence');
     this.evidence.weigh(heard);
     this.around.desk.returned(this.guarantee.id, 'silence', heard.at);
+    this.#refreshDue();
   }
 
   #silentFrom(rule: SilenceRule): number {
