@@ -14,32 +14,48 @@ export interface Table {
 /** Names one table may hold: four a part, the most a part can use. */
 const namesAPart = 4;
 
+interface Known {
+  readonly bytes: Uint8Array;
+  readonly table: Table;
+}
+
+/** Tables remembered are 2 to this: 64, more than the streams one connection mixes. */
+const slotBits = 6;
+/** Larger tables, of frames with many parts, share one slot. */
+const smallBytes = 1_024;
+
 /**
- * The table of the last frame of one connection. A frame that repeats its bytes is given the same table,
- * so that a source's unchanging words are checked and made once.
+ * The tables of one connection's latest frames. A frame that repeats the bytes of one is given the same table, so
+ * that a source's unchanging words are checked and made once, also where the frames of many streams take turns.
  */
 export class TableMemo {
-  #bytes = new Uint8Array(0);
-  #table: Table = { names: [], origins: [] };
+  readonly #known: Known[] = [];
   readonly #origins = new OriginMemo();
 
   /** @param cursor behind the frame's head; it is left behind the table */
   read(cursor: ByteCursor, mostParts: number): Table {
     const size = cursor.u32(20);
     cursor.take(size, 'table');
-    if (this.#repeats(cursor.bytes, cursor.at - tableStart)) return this.#table;
+    const slot = size > smallBytes ? 0 : slotOf(cursor);
+    const known = this.#known[slot];
+    if (known !== undefined && repeats(cursor, known.bytes)) return known.table;
     const table = tableOf(cursor, size, mostParts, this.#origins);
-    this.#bytes = cursor.bytes.slice(tableStart, cursor.at);
-    this.#table = table;
+    this.#known[slot] = { bytes: cursor.bytes.slice(tableStart, cursor.at), table };
     return table;
   }
+}
 
-  #repeats(bytes: Uint8Array, size: number): boolean {
-    const known = this.#bytes;
-    if (known.length !== size) return false;
-    for (let i = 0; i < size; i += 1) if (known[i] !== bytes[tableStart + i]) return false;
-    return true;
-  }
+/** Mixes the table's words; streams that fall into one slot only make their tables again. */
+function slotOf(cursor: ByteCursor): number {
+  let mixed = 0;
+  for (let at = tableStart; at + 4 <= cursor.at; at += 4) mixed = Math.imul(mixed ^ cursor.u32(at), 0x9e3779b1);
+  return mixed >>> (32 - slotBits);
+}
+
+function repeats({ bytes, at }: ByteCursor, known: Uint8Array): boolean {
+  if (known.length !== at - tableStart) return false;
+  for (let i = 0; i < known.length; i += 1) if (known[i] !== bytes[tableStart + i]) return false;
+  return true;
 }
 
 function tableOf(cursor: ByteCursor, size: number, mostParts: number, known: OriginMemo): Table {

@@ -1,23 +1,24 @@
 import { checkedId } from '../record/checked-words.ts';
 import type { Origin } from '../record/part.ts';
 
-/** Origins remembered of one connection; more than a source of one station ever uses. */
-const remembered = 32;
+/** Origins remembered of one connection; more than the streams it mixes. Beyond, all are forgotten and learnt anew. */
+const remembered = 256;
 
 /**
  * The origins one connection has named, so that a repeated one is neither checked nor made again:
- * equal origins of one connection are the same object.
+ * equal origins of one connection are the same object while they are remembered.
  */
 export class OriginMemo {
-  readonly #origins: Origin[] = [];
+  readonly #byStation = new Map<unknown, Origin[]>();
+  #count = 0;
   #last: Origin | undefined;
-  #oldest = 0;
 
   /** Refuses ids that are none; `lot` may be undefined. */
   of(station: unknown, product: unknown, characteristic: unknown, lot: unknown): Origin {
     const last = this.#last;
     if (last !== undefined && same(last, station, product, characteristic, lot)) return last;
-    const origin = this.#origins.find((known) => same(known, station, product, characteristic, lot)) ?? this.#add(station, product, characteristic, lot);
+    const known = this.#byStation.get(station)?.find((one) => same(one, station, product, characteristic, lot));
+    const origin = known ?? this.#add(station, product, characteristic, lot);
     this.#last = origin;
     return origin;
   }
@@ -29,8 +30,14 @@ export class OriginMemo {
       characteristic: checkedId(characteristic, 'characteristic'),
       lot: lot === undefined ? undefined : checkedId(lot, 'lot'),
     };
-    this.#origins[this.#oldest] = origin;
-    this.#oldest = (this.#oldest + 1) % remembered;
+    if (this.#count >= remembered) {
+      this.#byStation.clear();
+      this.#count = 0;
+    }
+    this.#count += 1;
+    const others = this.#byStation.get(origin.station);
+    if (others) others.push(origin);
+    else this.#byStation.set(origin.station, [origin]);
     return origin;
   }
 }
