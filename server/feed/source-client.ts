@@ -31,6 +31,8 @@ export interface SourceClientSetting {
 interface Kept {
   readonly first: number;
   readonly end: number;
+  /** Its sequences were declared lost before: only an answer of its own says that it was taken, so it travels alone. */
+  readonly late: boolean;
   readonly bytes: Uint8Array;
 }
 
@@ -51,6 +53,8 @@ export class SourceClient {
   /** Whether the server greeted on the present connection. */
   #greeted = false;
   #next = 1;
+  /** End of the newest frame given. */
+  #given = 1;
   #kept: Kept[] = [];
   /** How many of the kept frames were sent on the present connection, and how many of those were refused. */
   #sent = 0;
@@ -92,14 +96,17 @@ export class SourceClient {
   }
 
   /**
-   * Takes the next frame to send. It has to begin where the one before ended, the first one at or below the
-   * welcome's `next`; what the server has already it counts no second time.
+   * Takes the next frame to send. It has to begin at or below where the one before ended, the first one at or below
+   * the welcome's `next`; what the server has already it counts no second time. One that lies wholly below fills
+   * what was declared lost.
    *
    * @returns resolves when another frame may be given; wait for it, or frames pile up here
    * @throws SourceFailure
    */
   send(frame: Frame): Promise<void> {
-    this.#kept.push({ first: frame.first, end: frame.first + frame.records, bytes: binaryOfFrame(frame) });
+    const end = frame.first + frame.records;
+    this.#kept.push({ first: frame.first, end, late: end <= this.#given, bytes: binaryOfFrame(frame) });
+    this.#given = Math.max(this.#given, end);
     this.#pump();
     return this.#until(() => this.#kept.length < this.#window);
   }
@@ -148,7 +155,7 @@ export class SourceClient {
   }
 
   #greet(welcome: Welcome): void {
-    if (this.#welcome === undefined) this.#next = welcome.next;
+    if (this.#welcome === undefined) this.#next = this.#given = welcome.next;
     this.#welcome = welcome;
     this.#greeted = true;
     this.#sent = 0;
@@ -164,8 +171,8 @@ export class SourceClient {
   }
 
   #acknowledged(next: number, setAside: readonly SetAside[]): void {
-    let done = 0;
-    while (done < this.#kept.length && (this.#kept[done] as Kept).end <= next) done += 1;
+    let done = this.#sent > 0 && this.#kept[0]?.late === true ? 1 : 0;
+    while (done < this.#kept.length && this.#isKnown(this.#kept[done] as Kept, next)) done += 1;
     this.#kept.splice(0, done);
     this.#sent = Math.max(0, this.#sent - done);
     if (done > 0) this.#tellSuccess();
@@ -173,6 +180,10 @@ export class SourceClient {
     this.#next = next;
     if (next !== known || setAside.length > 0) this.#setting.onEvent?.({ kind: 'acknowledged', next, setAside });
     this.#failIfRefused();
+  }
+
+  #isKnown({ end, late }: Kept, next: number): boolean {
+    return end <= next && !late;
   }
 
   /** What stands behind a refused frame is refused as a gap; a gap without one is settled by a new greeting. */
@@ -196,7 +207,9 @@ export class SourceClient {
   #pump(): void {
     if (!this.#greeted || this.#refusal !== undefined) return;
     while (this.#sent < Math.min(this.#kept.length, this.#window)) {
-      this.#link?.send((this.#kept[this.#sent] as Kept).bytes);
+      const frame = this.#kept[this.#sent] as Kept;
+      if (this.#sent > 0 && (frame.late || this.#kept[0]?.late === true)) break;
+      this.#link?.send(frame.bytes);
       this.#sent += 1;
     }
     this.#watchForQuiet();

@@ -8,8 +8,8 @@ import { gapMessage, sourceProtocol, type ServerMessage } from '../../../core/pr
 import type { Frame } from '../../../core/record/part.ts';
 import { tailOf } from '../../../core/record/tail-of.ts';
 
-/** What happens to a frame: taken and answered, taken with the answer lost in a break, lost in a break, or an answer of the test's own. */
-export type Fate = 'answer' | 'take and break' | 'break' | ServerMessage;
+/** What happens to a frame: taken and answered, taken (all or but one record) with the answer lost in a break, lost in a break, or an answer of the test's own. */
+export type Fate = 'answer' | 'take and break' | 'take one and break' | 'break' | ServerMessage;
 
 /** A server of sources that does to each frame what the test says, on a real socket. */
 export interface FakeSourceServer {
@@ -56,9 +56,10 @@ export async function fakeSourceServer({ window = 4, fate = () => 'answer', hold
       const admission = fake.ledger.place(frame.first, frame.records);
       if (admission.kind === 'gap') return answered(), socket.send(JSON.stringify(gapMessage(frame.first, admission.expected)));
       const rest = admission.kind === 'tail' ? tailOf(frame, admission.skip) : frame;
+      const records = fateOf === 'take one and break' ? 1 : rest.records;
       if (admission.kind !== 'repeat') {
-        for (let i = 0; i < rest.records; i += 1) fake.taken.push(rest.first + i);
-        fake.ledger.advance(rest.first + rest.records);
+        for (let i = 0; i < records; i += 1) fake.taken.push(rest.first + i);
+        fake.ledger.advance(rest.first + records);
       }
     }
     if (fateOf !== 'answer') return socket.terminate();

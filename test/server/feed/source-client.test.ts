@@ -58,7 +58,7 @@ describe('a source client', () => {
     fc.assert(
       fc.asyncProperty(
         fc.array(fc.integer({ min: 1, max: 5 }), { minLength: 1, maxLength: 20 }),
-        fc.array(fc.constantFrom('answer' as const, 'answer' as const, 'take and break' as const, 'break' as const), { maxLength: 12 }),
+        fc.array(fc.constantFrom('answer' as const, 'answer' as const, 'take and break' as const, 'take one and break' as const, 'break' as const), { maxLength: 12 }),
         fc.integer({ min: 1, max: 4 }),
         async (sizes, fates, window) => {
           const fake = await fakeSourceServer({ window, fate: () => fates.pop() ?? 'answer' });
