@@ -33,6 +33,7 @@ export const boardLaneStyle = css`
   :host([tone='care']) .word, :host([tone='care']) .figure b { color: var(--care); }
   :host([tone='harm']) .word, :host([tone='harm']) .figure b { color: var(--harm); }
   .alarm { font-weight: 650; }
+  .place:empty { display: none; }
   .safety { font-weight: 650; color: var(--ink); }
   .plot { align-self: stretch; margin-top: -1px; min-width: 0; }
 
@@ -44,6 +45,8 @@ export const boardLaneStyle = css`
   :host([size='small']) .state { align-items: center; justify-content: space-between; }
   :host([size='small']) .state .standing { padding-right: 0.6em; }
   :host([size='small']) .safety { font-weight: 600; }
+  :host([size='small']) .who :is(a, .sub) { overflow: hidden; text-overflow: ellipsis; min-width: 0; }
+  :host([size='small']) .who .sub { flex: 0 1000 auto; }
   :host([size='small']) .figure { justify-content: flex-end; }
   :host([size='small']) .act { display: flex; align-items: center; justify-content: flex-end; gap: 0.5em; }
   :host([size='small']) .act:has(button) .age { display: none; }

@@ -19,6 +19,9 @@ import { lanePlotStyle } from './lane-plot-style.ts';
 /** How a lane is laid out: columns at a desk, the same with fewer and larger words on a wall, a card on a phone. */
 export type LaneForm = 'desk' | 'wall' | 'card';
 
+/** Letters of the name's size that stand beside each other in a lane one line high. */
+const oneLineChars = 28;
+
 /** One guarantee's lane: name, drawing, state, figures, what a person may do. */
 export class BoardLane extends LitElement {
   static override properties = {
@@ -59,7 +62,7 @@ export class BoardLane extends LitElement {
   #who({ card, view, alarms }: Lane, formats: Formats): TemplateResult {
     return html`<div class="who">
       <a href=${guaranteePath(card.id)} aria-label=${this.lane === undefined ? card.name : laneSentence(formats, this.lane, this.age)}>${card.name}</a>
-      <span class="sub">${this.#place(card)}${this.form === 'wall' ? this.#inHand(alarms) : ''}</span>
+      <span class="sub place">${this.#place(card)}${this.form === 'wall' ? this.#inHand(alarms) : ''}</span>
       ${card.safetyRelevant ? html`<span class="sub safety">${this.size === 'large' ? 'Safety-relevant: advisory only' : 'Safety-relevant'}</span>` : nothing}
       ${view.lot === undefined || this.size !== 'large' || card.safetyRelevant ? nothing : html`<span class="sub">Lot ${view.lot}</span>`}
     </div>`;
@@ -72,7 +75,9 @@ export class BoardLane extends LitElement {
   }
 
   /** Line and stations, as far as the lane has room to say. */
-  #place({ lineName, stationNames, safetyRelevant }: GuaranteeCard): string {
+  #place({ name, lineName, stationNames, safetyRelevant }: GuaranteeCard): string {
+    const beside = name.length + 0.8 * (lineName.length + (safetyRelevant ? 17 : 0));
+    if (this.form === 'desk' && this.size === 'small' && beside > oneLineChars) return '';
     const spare = this.form !== 'wall' && (this.size === 'large' || (this.size === 'medium' && !safetyRelevant && stationNames.length === 1));
     return spare && stationNames.length > 0 ? `${lineName}, ${stationNames.join(' to ')}` : lineName;
   }
@@ -96,7 +101,7 @@ export class BoardLane extends LitElement {
     const figure = formats.figureBesideLine(card, view.bound);
     return html`<div class="figure">
       ${filled !== undefined
-        ? html`<b>${formats.percent(filled)}</b><span class="sub">of the window filled</span>`
+        ? html`<b>${formats.percent(filled)}<span class="unit">filled</span></b><span class="sub">of the window</span>`
         : html`<b>${figure.text}<span class="unit">${figure.unit}</span></b><span class="sub">${promisedLimit(formats, card)}</span>`}
       <span class="sub level">${formats.confidence(card.confidence)}, ${view.lookRule}</span>
     </div>`;

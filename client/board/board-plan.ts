@@ -30,10 +30,10 @@ export function columnsOf(form: LaneForm, width: number, typePx: number): readon
   if (form === 'card') return [0, width, 0, 0, 0];
   if (form === 'wall') return [width * 0.25, width * 0.37, width * 0.215, width * 0.165, 0];
   const tight = width < typePx * 78;
-  const who = typePx * (tight ? 13 : 15.5);
+  const who = typePx * (tight ? 13 : 16.5);
   const state = typePx * (tight ? 14 : 20);
   const figure = typePx * (tight ? 8.5 : 9.5);
-  const act = typePx * (tight ? 9.6 : 10.2);
+  const act = typePx * (tight ? 9.6 : 9.8);
   return [who, width - who - state - figure - act, state, figure, act];
 }
 

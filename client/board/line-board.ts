@@ -11,6 +11,7 @@ import { BoardRoom } from './board-room.ts';
 import { boardScale } from './board-scale.ts';
 import type { Lane } from './lane.ts';
 import { groupedByLine, nextOrder, orderedLanes, type LaneGroup } from './lane-order.ts';
+import { focusedPart } from './focused-part.ts';
 import { lanePlotStyle } from './lane-plot-style.ts';
 import { laneTops, slideLanes } from './lane-slide.ts';
 import { lineBoardStyle } from './line-board-style.ts';
@@ -41,6 +42,7 @@ export class LineBoard extends LitElement {
   #order: readonly string[] = [];
   #held = false;
   #tops: ReadonlyMap<string, number> | undefined;
+  #focused: HTMLElement | undefined;
   #plan: BoardPlan | undefined;
 
   protected override willUpdate(): void {
@@ -51,11 +53,15 @@ export class LineBoard extends LitElement {
     this.#order = wanted;
     const list = this.renderRoot.querySelector('.lanes');
     if (list !== null) this.#tops = laneTops(list);
+    this.#focused = this.shadowRoot === null ? undefined : focusedPart(this.shadowRoot);
   }
 
   protected override updated(): void {
     const list = this.renderRoot.querySelector('.lanes');
     if (list !== null && this.#tops !== undefined) slideLanes(list, this.#tops);
+    // a lane that is moved in the document loses the focus
+    if (this.#focused !== undefined && !this.matches(':focus-within')) this.#focused.focus({ preventScroll: true });
+    this.#focused = undefined;
   }
 
   protected override render(): TemplateResult | typeof nothing {

@@ -85,6 +85,21 @@ describe('the line board', () => {
     await expect.poll(async () => (await lanes())[1]).toBe('Kit fill volume');
   });
 
+  it('moves them at last when nothing is done there, and leaves the focus in its lane', async () => {
+    fake = await startFake();
+    page = await browser.open('about:blank', 'desk');
+    await page.clock.install();
+    await page.goto(fake.url);
+    await page.clock.runFor(1000);
+    await laneOf('Kit fill volume').locator('a').focus();
+    fake.tell([{ ...fake.view('fill'), state: 'undecided', allowance: { ...fake.view('fill').allowance, bound: 1.45 } }]);
+    await page.clock.runFor(5000);
+    await page.getByText('The lanes wait with their new order').waitFor();
+    await page.clock.runFor(27_000);
+    await expect.poll(async () => (await lanes())[1]).toBe('Kit fill volume');
+    expect(await laneOf('Kit fill volume').evaluate((lane) => lane.shadowRoot?.activeElement?.textContent)).toBe('Kit fill volume');
+  });
+
   it('writes shares in the chosen unit and remembers it', async () => {
     await show();
     const figure = laneOf('BH-5 leak test').locator('.figure b');
