@@ -2,8 +2,7 @@ import { chainedYieldLower, type StationCount } from '../bound/chained-yield.ts'
 import type { Finding } from '../record/part.ts';
 import type { Picture } from '../view/history.ts';
 import type { Margin } from '../view/guarantee-view.ts';
-import type { RecordIdentity, RecordRange } from '../window/record-identity.ts';
-import { joinedRanges } from '../window/record-identity.ts';
+import { joinedRanges, type RecordIdentity, type RecordRange } from '../window/record-identity.ts';
 import type { ChainRule } from './chain-rule.ts';
 import type { Batch, Bounds, CorrectionFate, Evidence } from './evidence.ts';
 import type { Moment, RecordMoment } from './moment.ts';
@@ -96,15 +95,16 @@ export class ChainEvidence implements Evidence {
   figures(): Readonly<Record<string, number>> {
     const counts = this.#counts();
     const total = { inspected: sumOf(counts, 'inspected'), nonconforming: sumOf(counts, 'nonconforming') };
-    const each = counts.flatMap(({ station, inspected, nonconforming }) => [
-      [`inspected at ${station}`, inspected],
-      [`nonconforming at ${station}`, nonconforming],
-    ]);
+    const each: Record<string, number> = {};
+    for (const { station, inspected, nonconforming } of counts) {
+      each[`inspected at ${station}`] = inspected;
+      each[`nonconforming at ${station}`] = nonconforming;
+    }
     const filled = Math.min(...counts.map(({ inspected }) => inspected)) / this.#rule.least;
     const limiting = this.#limiting();
     return {
       ...total,
-      ...Object.fromEntries(each),
+      ...each,
       ...(filled < 1 ? { filled } : {}),
       ...(limiting === undefined ? {} : { limitingStation: this.#settings.stations.indexOf(limiting) + 1 }),
     };

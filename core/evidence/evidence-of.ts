@@ -1,14 +1,24 @@
 import { decimalComplement } from '../figure/decimal-complement.ts';
 import type { Guarantee } from '../plant/guarantee.ts';
 import type { Fraction } from '../units.ts';
+import { ExposureSum } from '../window/exposure-sum.ts';
 import { ChainEvidence, type StationEvidence } from './chain-evidence.ts';
 import { ChainRule } from './chain-rule.ts';
-import { binomialRule, type CountRule } from './count-rule.ts';
+import { binomialRule, poissonRule, type CountRule } from './count-rule.ts';
 import type { Evidence } from './evidence.ts';
+import type { HeldRecords, RecordSum } from './held-records.ts';
 import { LotEvidence } from './lot-evidence.ts';
+import { MeanRule } from './mean-rule.ts';
+import { MeasuredSum } from './measured-sum.ts';
 import type { Limit } from './nonconforming-places.ts';
+import { NormalRule, type BeyondLimit } from './normal-rule.ts';
+import { NumberedRecords } from './numbered-records.ts';
+import { RateRule } from './rate-rule.ts';
+import { exposedRecords, measuredRecords } from './record-columns.ts';
+import { RecordEvidence } from './record-evidence.ts';
 import type { Standing } from './standing.ts';
 import { stationRule } from './station-link.ts';
+import { TimedRecords } from './timed-records.ts';
 import { TimedUnitEvidence } from './timed-unit-evidence.ts';
 import { UnitEvidence } from './unit-evidence.ts';
 import type { Weighing } from './weighing.ts';
@@ -24,7 +34,7 @@ export function evidenceOf(guarantee: Guarantee, standing: Standing): Evidence {
       return unitsOf(guarantee, binomialRule(guarantee, promise.atMostNonconforming, target), standing, { asYield: true });
     }
     case 'fraction-beyond-limit':
-      return unitsOf(guarantee, binomialRule(guarantee, promise.atMost, promise.target), standing, { limit: promise.limit });
+      return beyondLimitOf(guarantee, promise, standing);
     case 'lot-fraction':
       return new LotEvidence(guarantee, { line: promise.atMost, target: promise.target }, standing);
     case 'chained-yield': {
@@ -32,10 +42,26 @@ export function evidenceOf(guarantee: Guarantee, standing: Standing): Evidence {
       const stationOf = (weighing: Weighing): StationEvidence => unitsOf(guarantee, stationRule, weighing, {});
       return new ChainEvidence({ stations, tail, stationOf }, new ChainRule(guarantee, promise.atLeast, promise.target), standing);
     }
-    default:
-      standing.block('quantity', `The evidence on this quantity is not computed in this version.`);
-      return unitsOf(guarantee, stationRule, standing, {});
+    case 'rate':
+      return new RecordEvidence(exposedRecords, recordsOf(guarantee, 2, () => new ExposureSum()), new RateRule(poissonRule(guarantee, { ...promise, line: promise.atMost })), standing);
+    case 'mean': {
+      const held = recordsOf(guarantee, 1, () => new MeasuredSum(promise.line, promise.range));
+      return new RecordEvidence(measuredRecords, held, new MeanRule(guarantee, promise), standing);
+    }
   }
+}
+
+function beyondLimitOf(guarantee: Guarantee, promise: BeyondLimit, standing: Standing): Evidence {
+  if (promise.model === 'normal') {
+    const held = recordsOf(guarantee, 1, () => new MeasuredSum(promise.limit.value, undefined));
+    return new RecordEvidence(measuredRecords, held, new NormalRule(guarantee, promise), standing);
+  }
+  return unitsOf(guarantee, binomialRule(guarantee, promise.atMost, promise.target), standing, { limit: promise.limit });
+}
+
+function recordsOf<T, S extends RecordSum<T, S>>({ window }: Guarantee, width: 1 | 2, emptySum: () => S): HeldRecords<S> {
+  if (window.kind === 'time') return new TimedRecords<T, S>(window, emptySum);
+  return new NumberedRecords<T, S>(window.kind === 'units' ? window.units : undefined, width, emptySum());
 }
 
 function unitsOf({ window }: Guarantee, rule: CountRule, weighing: Weighing, { limit, asYield = false }: { limit?: Limit; asYield?: boolean }): StationEvidence {

@@ -12,7 +12,7 @@ export interface MomentsSnapshot {
 }
 
 /** Farthest a measurement may lie from the reference; the cube must stay a double. */
-const farthest = 1e90;
+export const farthestMeasurement = 1e90;
 
 /**
  * Count, mean, standard deviation and skewness of the measurements in a window, kept up as values come and
@@ -27,6 +27,7 @@ export class RunningMoments {
   readonly #first = new ExactSum();
   readonly #second = new ExactSum();
   readonly #third = new ExactSum();
+  readonly #scratch = new ExactSum();
 
   /**
    * @param reference a value near the measurements, e.g. the target, in their unit
@@ -39,13 +40,47 @@ export class RunningMoments {
 
   static restore(from: MomentsSnapshot): RunningMoments {
     const moments = new RunningMoments(from.reference);
-    moments.#count = from.count;
-    moments.#largest = from.largest;
-    moments.#sums().forEach((sum, i) => {
+    moments.restore(from);
+    return moments;
+  }
+
+  /**
+   * Takes over a snapshot in place of what is held.
+   * @throws OutOfDomain when it has another reference
+   */
+  restore(from: MomentsSnapshot): void {
+    this.#requireSameReference(from.reference);
+    this.#count = from.count;
+    this.#largest = from.largest;
+    this.#sums().forEach((sum, i) => {
       sum.high = from.sums[2 * i] ?? NaN;
       sum.low = from.sums[2 * i + 1] ?? NaN;
     });
-    return moments;
+  }
+
+  /**
+   * Adds what other moments hold.
+   * @throws OutOfDomain when they have another reference
+   */
+  include(other: RunningMoments): void {
+    this.#requireSameReference(other.reference);
+    this.#count += other.#count;
+    const others = other.#sums();
+    this.#sums().forEach((sum, i) => {
+      sum.add(others[i]?.high ?? NaN);
+      sum.add(others[i]?.low ?? NaN);
+    });
+    this.#largest = Math.max(this.#largest, other.#largest, this.#second.high);
+  }
+
+  /** Forgets every value. */
+  clear(): void {
+    this.#count = 0;
+    this.#largest = 0;
+    for (const sum of this.#sums()) {
+      sum.high = 0;
+      sum.low = 0;
+    }
   }
 
   /** @throws OutOfDomain when the value is not finite or farther than 1e90 from the reference; nothing is changed then */
@@ -64,8 +99,8 @@ export class RunningMoments {
 
   #change(value: number, sign: 1 | -1): void {
     const distance = value - this.reference;
-    if (!(Math.abs(distance) <= farthest)) {
-      throw new OutOfDomain('value', value, `a finite number within ${farthest} of ${this.reference}`);
+    if (!(Math.abs(distance) <= farthestMeasurement)) {
+      throw new OutOfDomain('value', value, `a finite number within ${farthestMeasurement} of ${this.reference}`);
     }
     const signed = sign * distance;
     const square = distance * distance;
@@ -76,30 +111,40 @@ export class RunningMoments {
     this.#second.add(sign * rest);
     this.#third.addProduct(signed, square);
     this.#third.add(signed * rest);
-    if (this.#count === 0) this.#clear();
+    if (this.#count === 0) this.clear();
     else if (this.#second.high > this.#largest) this.#largest = this.#second.high;
   }
 
-  #clear(): void {
-    this.#largest = 0;
-    for (const sum of this.#sums()) {
-      sum.high = 0;
-      sum.low = 0;
-    }
+  #requireSameReference(reference: number): void {
+    if (reference !== this.reference) throw new OutOfDomain('reference', reference, String(this.reference));
   }
 
   #sums(): readonly ExactSum[] {
     return [this.#first, this.#second, this.#third];
   }
 
-  /** Sums of the first three powers of the distances from the mean (the first is what rounding left of 0). */
-  #aboutMean(): { readonly first: number; readonly squares: number; readonly cubes: number } {
+  /** Sum of the squared distances from the mean, 0 or more. Without objects: it is asked after every record. */
+  #squares(): number {
+    const [first, rest, n] = [this.#first.high, this.#first.low, this.#count];
+    const centre = (first + rest) / n;
+    const moved = this.#scratch;
+    moved.high = this.#second.high;
+    moved.low = this.#second.low;
+    moved.addProduct(-2 * centre, first);
+    moved.add(-2 * centre * rest);
+    const sum = n * centre;
+    moved.addProduct(sum, centre);
+    moved.add(productRest(n, centre, sum) * centre);
+    return Math.max(0, moved.value);
+  }
+
+  /** Sum of the cubed distances from the mean. */
+  #cubes(): number {
     const centre = this.#first.value / this.#count;
     const once = this.#first.less(centre, new ExactSum(this.#count));
     const mixed = this.#second.less(centre, this.#first);
     const twice = mixed.less(centre, once);
-    const thrice = this.#third.less(centre, this.#second).less(centre, mixed).less(centre, twice);
-    return { first: once.value, squares: twice.value, cubes: thrice.value };
+    return this.#third.less(centre, this.#second).less(centre, mixed).less(centre, twice).value;
   }
 
   /** Values in the window, 0 or more. */
@@ -114,14 +159,14 @@ export class RunningMoments {
 
   /** Sample standard deviation (n - 1), 0 or more, in the unit of measure; undefined below two values. */
   get sd(): number | undefined {
-    return this.#count < 2 ? undefined : Math.sqrt(Math.max(0, this.#aboutMean().squares) / (this.#count - 1));
+    return this.#count < 2 ? undefined : Math.sqrt(this.#squares() / (this.#count - 1));
   }
 
   /** Third central moment over the 3/2 power of the second; undefined below three values or without spread. */
   get skewness(): number | undefined {
     if (this.#count < 3) return undefined;
-    const { squares, cubes } = this.#aboutMean();
-    return squares > 0 ? (cubes / squares) * Math.sqrt(this.#count / squares) : undefined;
+    const squares = this.#squares();
+    return squares > 0 ? (this.#cubes() / squares) * Math.sqrt(this.#count / squares) : undefined;
   }
 
   /**
@@ -129,7 +174,7 @@ export class RunningMoments {
    * the moments anew from the kept values.
    */
   get needsRecount(): boolean {
-    return this.#count > 0 && this.#largest * 1e-31 > 1e-14 * this.#aboutMean().squares;
+    return this.#count > 0 && this.#largest * 1e-31 > 1e-14 * this.#squares();
   }
 
   snapshot(): MomentsSnapshot {

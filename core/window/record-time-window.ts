@@ -145,6 +145,13 @@ export class RecordTimeWindow<T, S extends StoredSink<T> = StoredSink<T>> {
     return [...this.#covered()].map(([, sum]) => sum.sink);
   }
 
+  /** Shows the newest records that are still known, at most `most`, in the order they came. */
+  visit(see: (a: number, b: number) => void, most = Infinity): void {
+    for (let row = Math.max(0, this.#ring.length - most); row < this.#ring.length; row += 1) {
+      if (this.#covers(this.#ring.get(2, row))) see(this.#ring.get(0, row), this.#ring.get(1, row));
+    }
+  }
+
   /** Records in the window, as far as they are known, source by source. */
   ranges(): RecordRange[] {
     return this.#ring.ranges();

@@ -125,9 +125,9 @@ export class RecordWindow {
     return taken;
   }
 
-  /** Shows the records that are still known, oldest first: all of the window's, or the newest of a growing one. */
-  visit(see: (a: number, b: number) => void): void {
-    for (let row = 0; row < this.#ring.length; row += 1) see(this.#ring.get(0, row), this.#two ? this.#ring.get(1, row) : 0);
+  /** Shows the newest records that are still known, at most `most`, oldest first; of a growing window not all are known. */
+  visit(see: (a: number, b: number) => void, most = Infinity): void {
+    for (let row = Math.max(0, this.#ring.length - most); row < this.#ring.length; row += 1) see(this.#ring.get(0, row), this.#two ? this.#ring.get(1, row) : 0);
   }
 
   /** The newest records, newest first, at most `most`. */
@@ -188,10 +188,12 @@ export class RecordWindow {
     this.#records -= records;
     this.#dropped += records;
     this.#ring.dropOldest(records);
-    if (this.#dropped >= Math.max(recountAfterRecords, recountAfterWindows * this.#limit)) this.#recount();
+    if (this.#dropped >= Math.max(recountAfterRecords, recountAfterWindows * this.#limit)) this.recount();
   }
 
-  #recount(): void {
+  /** Fills the sink afresh from the window's records; a growing window, which lets nothing go, keeps what it has. */
+  recount(): void {
+    if (this.size === undefined) return;
     this.#dropped = 0;
     this.#sink.clear();
     this.visit((a, b) => this.#sink.admit(a, b));
