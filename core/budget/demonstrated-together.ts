@@ -15,10 +15,9 @@ import type { Tail } from '../units.ts';
  */
 export function demonstratedTogether(logEvidence: readonly number[], tail: Tail): number[] {
   requireInside('tail', tail);
-  const known = logEvidence.map((_, place) => place).filter((place) => !Number.isNaN(logEvidence[place]));
-  const strongest = known.sort((a, b) => (logEvidence[b] ?? NaN) - (logEvidence[a] ?? NaN) || a - b);
+  const claims = logEvidence.map((evidence, place) => ({ evidence, place })).filter(({ evidence }) => !Number.isNaN(evidence));
+  claims.sort((a, b) => (a.evidence === b.evidence ? a.place - b.place : b.evidence - a.evidence));
   const asked = Math.log(logEvidence.length) - Math.log(tail);
-  let named = strongest.length;
-  while (named > 0 && !((logEvidence[strongest[named - 1] ?? -1] ?? NaN) >= asked - Math.log(named))) named -= 1;
-  return strongest.slice(0, named);
+  const weakest = claims.findLastIndex(({ evidence }, above) => evidence >= asked - Math.log(above + 1));
+  return claims.slice(0, weakest + 1).map(({ place }) => place);
 }

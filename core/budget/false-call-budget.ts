@@ -47,7 +47,7 @@ export function spreadBudget(falseCalls: number, streams: readonly BudgetStream[
 export function falseCallsAtMost(thresholds: readonly number[], streams: readonly BudgetStream[]): number {
   if (thresholds.length !== streams.length) throw new OutOfDomain('thresholds', thresholds.length, `one for each of the ${streams.length} streams`);
   return streams.reduce((sum, stream, k) => {
-    const threshold = thresholds[k] ?? NaN;
+    const threshold = thresholds[k] as number;
     requirePositive('threshold', threshold);
     return sum + stream.perShift / threshold;
   }, 0);

@@ -56,11 +56,11 @@ function afterDepartures(chance: Float64Array, c: number, batch: number, inside:
   for (let old = 0; old < c; old++) {
     const shares = sharesLeaving(old, batch, inside);
     for (let leaving = 0; leaving <= old; leaving++) {
-      const share = shares[leaving] ?? 0;
+      const share = shares[leaving] as number;
       if (share < negligible) continue;
       const row = (old - leaving) * c;
       for (let fresh = 0; fresh < c - old; fresh++) {
-        after[row + fresh] = (after[row + fresh] ?? 0) + share * (chance[old * c + fresh] ?? 0);
+        after[row + fresh] = (after[row + fresh] as number) + share * (chance[old * c + fresh] as number);
       }
     }
   }
@@ -84,10 +84,10 @@ function sharesLeaving(old: number, batch: number, inside: number): Float64Array
 /** Chance that the batch that comes brings the window to the count. */
 function calledAtArrival(chance: Float64Array, c: number, comes: Float64Array): number {
   const atLeast = new Float64Array(comes.length + 1);
-  for (let k = comes.length - 1; k >= 0; k--) atLeast[k] = (atLeast[k + 1] ?? 0) + (comes[k] ?? 0);
+  for (let k = comes.length - 1; k >= 0; k--) atLeast[k] = (atLeast[k + 1] as number) + (comes[k] as number);
   let called = 0;
   for (let old = 0; old < c; old++) {
-    for (let fresh = 0; fresh < c - old; fresh++) called += (chance[old * c + fresh] ?? 0) * (atLeast[c - old - fresh] ?? 0);
+    for (let fresh = 0; fresh < c - old; fresh++) called += (chance[old * c + fresh] as number) * (atLeast[c - old - fresh] as number);
   }
   return called;
 }
@@ -97,13 +97,13 @@ function afterArrivals(chance: Float64Array, c: number, comes: Float64Array): Fl
   const after = new Float64Array(c * c);
   for (let old = 0; old < c; old++) {
     for (let fresh = 0; fresh < c - old; fresh++) {
-      const value = chance[old * c + fresh] ?? 0;
+      const value = chance[old * c + fresh] as number;
       if (value === 0) continue;
       for (let more = 0; more < c - old - fresh; more++) {
-        const share = comes[more] ?? 0;
+        const share = comes[more] as number;
         if (share < negligible && more > 0) break;
         const at = old * c + fresh + more;
-        after[at] = (after[at] ?? 0) + share * value;
+        after[at] = (after[at] as number) + share * value;
       }
     }
   }

@@ -20,10 +20,10 @@ export function binomialChances(units: number, p: number, top: number): Binomial
   const last = Math.min(top, units);
   const anchor = Math.min(last, Math.floor(units * p));
   exactly[anchor] = binomialChance(anchor, units, p);
-  for (let k = anchor; k < last; k++) exactly[k + 1] = ((exactly[k] ?? NaN) * (units - k) * odds) / (k + 1);
-  for (let k = anchor; k > 0; k--) exactly[k - 1] = ((exactly[k] ?? NaN) * k) / ((units - k + 1) * odds);
+  for (let k = anchor; k < last; k++) exactly[k + 1] = ((exactly[k] as number) * (units - k) * odds) / (k + 1);
+  for (let k = anchor; k > 0; k--) exactly[k - 1] = ((exactly[k] as number) * k) / ((units - k + 1) * odds);
   let sum = 0;
-  for (let k = 0; k <= top; k++) atMost[k] = sum += exactly[k] ?? NaN;
+  for (let k = 0; k <= top; k++) atMost[k] = sum += exactly[k] as number;
   return { exactly, atMost };
 }
 

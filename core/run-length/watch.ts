@@ -58,7 +58,7 @@ export function windowWatch({ units, count }: WindowCall): Watch {
       now += conforming + 1;
       places[oldest] = now;
       oldest = (oldest + 1) % count;
-      return now - (places[oldest] ?? NaN) < units;
+      return now - (places[oldest] as number) < units;
     },
     reset: () => void places.fill(-Infinity),
     mark: () => {
@@ -75,5 +75,5 @@ export function windowWatch({ units, count }: WindowCall): Watch {
 }
 
 function copyInto(to: number[], from: readonly number[]): void {
-  for (let k = 0; k < from.length; k++) to[k] = from[k] ?? NaN;
+  for (let k = 0; k < from.length; k++) to[k] = from[k] as number;
 }

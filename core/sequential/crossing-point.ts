@@ -34,6 +34,7 @@ function closeIn(curve: (place: number) => number, first: number, atFirst: numbe
   for (let round = 0; round < 200; round++) {
     const x = a + share * (b - a);
     const fx = curve(x);
+    if (Number.isNaN(fx)) break;
     const same = fx >= 0 === fa >= 0;
     const [c, fc] = same ? [a, fa] : [b, fb];
     if (!same) [b, fb] = [a, fa];

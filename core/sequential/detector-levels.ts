@@ -9,10 +9,10 @@ import type { DetectorTuning } from './detector-tuning.ts';
 /** Takes the levels over trials in which nothing was found, each of the same weight (units or exposure), in one step. */
 export function settle(levels: number[], tuning: DetectorTuning, trials: number, weight: number): void {
   for (let k = 0; k < levels.length; k++) {
-    const fall = (tuning.down[k] ?? NaN) * weight;
+    const fall = (tuning.down[k] as number) * weight;
     const lost = -Math.expm1(-fall * trials);
-    const rest = weight === 1 ? (tuning.rests[k] ?? NaN) : weight / Math.expm1(fall);
-    levels[k] = (levels[k] ?? NaN) * (1 - lost) + rest * lost;
+    const rest = weight === 1 ? (tuning.rests[k] as number) : weight / Math.expm1(fall);
+    levels[k] = (levels[k] as number) * (1 - lost) + rest * lost;
   }
 }
 
@@ -25,8 +25,8 @@ export function strike(levels: number[], tuning: DetectorTuning, found: number, 
   const alone = found === 1 && weight === 1;
   let sum = 0;
   for (let k = 0; k < levels.length; k++) {
-    const factor = alone ? tuning.once[k] : Math.exp((tuning.up[k] ?? NaN) * found - (tuning.down[k] ?? NaN) * weight);
-    const level = ((levels[k] ?? NaN) + weight) * (factor ?? NaN);
+    const factor = alone ? (tuning.once[k] as number) : Math.exp((tuning.up[k] as number) * found - (tuning.down[k] as number) * weight);
+    const level = ((levels[k] as number) + weight) * factor;
     levels[k] = level;
     sum += level;
   }

@@ -35,7 +35,7 @@ export function fractionDetector(baseline: number, unitsBetweenFalseCalls: numbe
   const watched = ratios ?? usualRatios.filter((ratio) => ratio * baseline < 1);
   requireRatios(watched, 1 / baseline);
   const down = watched.map((ratio) => Math.log1p(-baseline) - Math.log1p(-ratio * baseline));
-  const up = watched.map((ratio, k) => Math.log(ratio) + (down[k] ?? NaN));
+  const up = watched.map((ratio, k) => Math.log(ratio) + (down[k] as number));
   const rests = down.map((b) => 1 / Math.expm1(b));
   const rest = averageOf(rests);
   requireAbove('unitsBetweenFalseCalls', unitsBetweenFalseCalls, rest);
@@ -59,7 +59,7 @@ export function rateDetector(baseline: number, exposureBetweenFalseCalls: number
   const up = ratios.map((ratio) => Math.log(ratio));
   const rest = averageOf(down.map((b) => 1 / b));
   requireAbove('exposureBetweenFalseCalls', exposureBetweenFalseCalls, rest);
-  const once = up.map((u, k) => Math.exp(u - (down[k] ?? NaN)));
+  const once = up.map((u, k) => Math.exp(u - (down[k] as number)));
   return { down, up, once, threshold: exposureBetweenFalseCalls, rests: down.map((b) => 1 / Math.expm1(b)), rest };
 }
 

@@ -64,9 +64,9 @@ export function admitMean(state: MeanDetectorState, measurement: number, tuning:
   const levels: number[] = [];
   let sum = 0;
   for (let k = 0; k < sizes.length; k++) {
-    const size = sizes[k] ?? NaN;
+    const size = sizes[k] as number;
     const factor = model.kind === 'bounded' ? 1 + size * off : Math.exp(size * (off - size / 2));
-    const level = ((state.levels[k] ?? NaN) + 1) * factor;
+    const level = ((state.levels[k] as number) + 1) * factor;
     levels.push(level);
     sum += level;
   }

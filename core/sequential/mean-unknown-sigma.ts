@@ -53,8 +53,7 @@ export function allLooksMeanDistanceUnknownSigma(measurements: number, squares: 
   const most = (n * n) / tuning;
   if (squares === 0 || !(logStudentMixture(1, most, n) > enough)) return Infinity;
   const t = crossingPoint((u) => logStudentMixture(Math.sign(u), u * u, n) - enough, Math.sqrt(2 * Math.max(enough, 0)));
-  if (!(t * t < most)) return Infinity;
-  return t * Math.sqrt(((n + tuning) * squares) / (n * n * n - n * tuning * t * t));
+  return t * Math.sqrt(((n + tuning) * squares) / Math.max(0, n * n * n - n * tuning * t * t));
 }
 
 function base(n: number, tuning: number): number {

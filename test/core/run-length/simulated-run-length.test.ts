@@ -127,6 +127,19 @@ describe('simulated run lengths', () => {
     expect(Math.abs(simulated.units - mean)).toBeLessThan(6 * Math.hypot(error, simulated.standardError));
   });
 
+  it('find the detector later after a small change than after a large one, and later from a better line', () => {
+    const watch = detectorWatch(fractionDetector(0.02, 2000));
+    const delay = (normal: number, rate: number): number =>
+      finished(simulateDelay({ watch, runs: 4000, uniform: seededUniform(33) }, normal, rate)).units;
+    expect(delay(0.02, 0.04)).toBeGreaterThan(2 * delay(0.02, 0.1));
+    expect(delay(0.01, 0.1)).toBeGreaterThan(delay(0.02, 0.1));
+  });
+
+  it('leave even a rule that calls falsely all the time', () => {
+    const { runs } = finished(simulateDelay({ watch: windowWatch({ units: 50, count: 2 }), runs: 50, uniform: seededUniform(34) }, 0.02, 0.1));
+    expect(runs).toBe(50);
+  });
+
   it('refuse what cannot be', () => {
     const simulation = { watch: first, runs: 1, uniform: seededUniform(1) };
     expect(() => simulateRunLength(simulation, 0).next()).toThrow('rate');
