@@ -33,7 +33,7 @@ export function columnsOf(form: LaneForm, width: number, typePx: number): readon
   const who = typePx * (tight ? 13 : 16.5);
   const state = typePx * (tight ? 14 : 20);
   const figure = typePx * (tight ? 8.5 : 9.5);
-  const act = typePx * (tight ? 9.6 : 9.8);
+  const act = typePx * (tight ? 9.6 : 10.2);
   return [who, width - who - state - figure - act, state, figure, act];
 }
 

@@ -31,7 +31,7 @@ function pictureOf(told: LiveSnapshot, heardAt: number): LivePicture {
     revision: told.revision,
     clock: { at: told.at, heardAt, rate: told.clockRate },
     demo: told.demo,
-    plant: told.plant,
+    plant: { ...told.plant, shift: told.plant.shift ?? undefined },
     cards: told.cards,
     views: keyed(told.views, (view) => view.id),
     alarms: keyed(told.alarms, (alarm) => alarm.id),

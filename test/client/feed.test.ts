@@ -68,7 +68,28 @@ describe('messages', () => {
     expect(readMessage('{')).toMatchObject({ ok: false });
     expect(readMessage('{"type":"news"}')).toEqual({ ok: false, fault: 'live message of type "news"; expected snapshot, change, beat or stopping' });
     expect(readMessage('null')).toMatchObject({ ok: false });
+    expect(readMessage('')).toMatchObject({ ok: false });
     expect(readMessage('{"type":"beat","revision":1,"at":2}').ok).toBe(true);
+  });
+});
+
+describe('null on the wire', () => {
+  const told = (text: string): LiveMessage => {
+    const read = readMessage(text);
+    if (!read.ok) throw new Error(read.fault);
+    return read.value;
+  };
+
+  it('is absence: a bound that is no number is not drawn at zero', () => {
+    const next = nextPicture(nextPicture(undefined, snapshot(), 0), told(JSON.stringify({ type: 'change', revision: 8, at: 1, alarms: [], views: [view({ bound: Number.NaN, allowance: { estimate: Number.NaN, bound: Number.NaN, opposite: undefined, trail: [] } })] })), 0);
+    expect(next?.views.get('leak-a')?.allowance.bound).toBeUndefined();
+    expect(next?.views.get('leak-a')?.bound).toBeUndefined();
+  });
+
+  it('says that a shift is over', () => {
+    const on = nextPicture(undefined, told(JSON.stringify(snapshot({ plant: { ...snapshot().plant, shift: { name: 'early', since: 1, until: 2 } } }))), 0);
+    expect(on?.plant.shift?.name).toBe('early');
+    expect(nextPicture(on, told('{"type":"change","revision":8,"at":1,"views":[],"alarms":[],"shift":null}'), 0)?.plant.shift).toBeUndefined();
   });
 });
 
