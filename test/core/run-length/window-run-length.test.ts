@@ -73,6 +73,13 @@ describe('run length of a window rule', () => {
     expect(units).toBeCloseTo(filling + (40 * (1 - called)) / called, 6);
   });
 
+  it('is watched to the very unit', () => {
+    const watch = windowWatch({ units: 3, count: 2 });
+    expect([0, 2, 1, 0].map((conforming) => watch.strike(conforming))).toEqual([false, false, true, true]);
+    watch.reset();
+    expect(watch.strike(0)).toBe(false);
+  });
+
   it('agrees with simulation', () => {
     for (const [call, rate] of [[{ units: 1000, count: 4 }, 0.001], [{ units: 1000, count: 5 }, 0.002], [{ units: 300, count: 12 }, 0.02]] as const) {
       const { units, standardError } = finished(simulateRunLength({ watch: windowWatch(call), runs: 20_000, uniform: seededUniform(21) }, rate));
