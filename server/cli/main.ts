@@ -2,6 +2,9 @@
 import { Command } from 'commander';
 import { demoCommand } from './demo-command.ts';
 import { CommandFault, exitCode } from './exit-codes.ts';
+import { feedCommand } from './feed-command.ts';
+import { plantCommand } from './plant-command.ts';
+import { replayCommand } from './replay-command.ts';
 import { serveCommand } from './serve-command.ts';
 import { sourceCommand } from './source-command.ts';
 
@@ -10,6 +13,9 @@ const program = new Command('vouchline')
   .addCommand(serveCommand())
   .addCommand(demoCommand())
   .addCommand(sourceCommand())
+  .addCommand(feedCommand())
+  .addCommand(replayCommand())
+  .addCommand(plantCommand())
   .showHelpAfterError('(vouchline --help and vouchline COMMAND --help say what can be given)')
   .configureOutput({ outputError: (text, write) => write(text) })
   .exitOverride((error) => {
