@@ -24,6 +24,7 @@ export const lineBoardStyle = css`
   .group .quiet { font-weight: 400; font-size: 0.9em; }
   :host([wall]) .group { height: 2.2rem; font-size: 1.1rem; }
   .foot { font-size: 0.86rem; padding: 0.6rem 0.3rem 0; max-width: 150ch; text-wrap: pretty; }
+  :host([wall]) .foot { font-size: 0.8rem; max-width: none; padding-top: 0.35rem; }
   .foot strong { color: var(--ink); }
   .empty { padding: 2.2rem 2rem; max-width: 60ch; }
   .empty h2 { font-size: 1.35rem; margin-bottom: 0.4rem; }

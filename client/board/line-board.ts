@@ -73,14 +73,14 @@ export class LineBoard extends LitElement {
     const room = this.#room.room;
     const typePx = room?.typePx ?? 15;
     const headings = this.grouped ? groups.length * typePx * 2.2 : 0;
-    this.#plan = room === undefined ? undefined : boardPlan(room, lanes, this.wall, headings + typePx * (this.wall ? 1 : 5.2), this.#plan);
+    this.#plan = room === undefined ? undefined : boardPlan(room, lanes, this.wall, headings + typePx * (this.wall ? 2.6 : 5.2), this.#plan);
     const plan = this.#plan;
     return html`
       ${lanes.every((lane) => lane.view.newest === undefined) ? this.#noRecords() : nothing}
       <div class="board sheet" ${styled({ '--columns': plan?.columns ?? '1fr' })}>
         ${plan === undefined ? html`<div class="lanes"></div>` : this.#board(plan, groups, formats)}
       </div>
-      ${this.wall ? nothing : this.#foot(lanes, formats)}
+      <p class="foot quiet">${this.#caution(lanes)}${this.wall ? nothing : this.#foot(lanes, formats)}</p>
     `;
   }
 
@@ -117,13 +117,15 @@ export class LineBoard extends LitElement {
     return needing === 0 ? counted(formats, lanes.length, 'guarantee') : `${formats.count(needing)} of ${counted(formats, lanes.length, 'guarantee')} need you`;
   }
 
+  #caution(lanes: readonly Lane[]): TemplateResult | typeof nothing {
+    if (!lanes.some((lane) => lane.card.safetyRelevant)) return nothing;
+    return html`<strong>${caution.title}.</strong> ${caution.sentences.join(' ')}<br />`;
+  }
+
   #foot(lanes: readonly Lane[], formats: Formats): TemplateResult {
     const levels = [...new Set(lanes.map((lane) => lane.card.confidence))].map((level) => formats.confidence(level));
-    return html`<p class="foot quiet">
-      ${this.#held ? html`<strong>The lanes wait with their new order while you are among them.</strong> ` : nothing}
-      ${lanes.some((lane) => lane.card.safetyRelevant) ? html`<strong>${caution.title}.</strong> ${caution.sentences.join(' ')}<br />` : nothing}
-      The dot is what was seen, the tip of the whisker the ${levels.length === 1 ? `${levels[0] ?? ''} ` : ''}bound. A tip left of the guarantee line: demonstrated. Small strokes below: where the tip stood in the last hour. An upright mark: the opposite bound has passed the line too. Scale: allowance used, 0 % at the target, 100 % on the line.
-    </p>`;
+    return html`${this.#held ? html`<strong>The lanes wait with their new order while you are among them.</strong> ` : nothing}
+      The dot is what was seen, the tip of the whisker the ${levels.length === 1 ? `${levels[0] ?? ''} ` : ''}bound. A tip left of the guarantee line: demonstrated. Small strokes below: where the tip stood in the last hour. An upright mark: the opposite bound has passed the line too. Scale: allowance used, 0 % at the target, 100 % on the line.`;
   }
 
   #noGuarantees(): TemplateResult {

@@ -95,8 +95,8 @@ describe('a new alarm', () => {
 });
 
 describe('what is safety-relevant', () => {
-  it.each(['/', '/alarms', '/guarantees/leak-bh4'])('carries the caution in the same words at %s', async (path) => {
-    page = await browser.open(fake.url + path, 'desk');
+  it.each([['/', 'desk'], ['/', 'wall'], ['/alarms', 'phone'], ['/guarantees/leak-bh4', 'desk']] as const)('carries the caution in the same words at %s on a %s', async (path, size) => {
+    page = await browser.open(fake.url + path, size);
     await page.locator('line-board, alarm-card, guarantee-page').first().waitFor();
     for (const sentence of [caution.title, ...caution.sentences]) await page.getByText(sentence).first().waitFor();
   });
