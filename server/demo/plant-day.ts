@@ -44,7 +44,7 @@ export const dayMinutes = clock(24);
 /** The first day is told the same way whatever the seed: people are shown this one. */
 const firstDay: PlantDay = {
   troubles: [
-    { station: 'B.leak-test', characteristic: 'tightness', from: clock(6, 20), until: clock(6, 38), course: 'sudden', level: 0.016 },
+    { station: 'B.leak-test', characteristic: 'tightness', from: clock(6, 28), until: clock(6, 44), course: 'sudden', level: 0.02 },
     { station: 'B.crimping', characteristic: 'pull-off-force', from: clock(7), until: clock(11, 30), course: 'slow', level: 490 },
     { station: 'A.final-inspection', characteristic: 'finish', from: clock(8, 38), until: clock(9), course: 'sudden', level: 0.13 },
     { station: 'K.filling', characteristic: 'fill', from: clock(16, 10), until: clock(16, 40), course: 'sudden', level: 249 },
@@ -62,7 +62,7 @@ const firstDay: PlantDay = {
 
 /** Faults that cross a guarantee line for a while, one by one; `on` is the line it befalls. */
 type Fault = (on: HoseLine, from: number, chance: Chance) => Trouble;
-const leak: Fault = (on, from, chance) => ({ station: `${on}.leak-test`, characteristic: 'tightness', from, until: from + 14 + chance.below(8), course: 'sudden', level: 0.016 });
+const leak: Fault = (on, from, chance) => ({ station: `${on}.leak-test`, characteristic: 'tightness', from, until: from + 14 + chance.below(8), course: 'sudden', level: 0.02 });
 const weakCrimp: Fault = (on, from, chance) => ({ station: `${on}.crimping`, characteristic: 'pull-off-force', from, until: from + 20 + chance.below(20), course: 'sudden', level: 478 });
 const scratches: Fault = (on, from, chance) => ({ station: `${on}.cutting`, characteristic: 'surface', from, until: from + 40 + chance.below(20), course: 'sudden', level: 4.5 });
 const badLabels: Fault = (on, from, chance) => ({ station: `${on}.final-inspection`, characteristic: 'finish', from, until: from + 18 + chance.below(8), course: 'sudden', level: 0.13 });

@@ -15,7 +15,7 @@ const lotOffset = 60;
 const handovers = [6 * 60, 14 * 60, 22 * 60];
 const breaks = [90, 9 * 60 + 30, 17 * 60 + 30];
 /** Lines stand one after the other, never all at once. */
-const delays: Readonly<Record<LineId, number>> = { A: 0, B: 6, K: 12 };
+const delays: Readonly<Record<LineId, number>> = { A: 0, B: 8, K: 16 };
 
 /** Time of the demo plant in whole minutes since midnight of its first day, which may be negative: what every line does in each. */
 export class Roster {
