@@ -1,3 +1,5 @@
+import { SourceUploads, type UploadsSnapshot } from './source-uploads.ts';
+
 /** Sequences a source declared lost and has not sent since; both ends included. */
 export interface Hole {
   readonly first: number;
@@ -21,13 +23,20 @@ export type Admission =
 export interface LedgerSnapshot {
   readonly next: number;
   readonly holes: readonly Hole[];
+  /** Absent in what was stored before there were uploads. */
+  readonly uploads?: UploadsSnapshot;
 }
 
 /** Holes remembered for a source; the oldest is given up beyond that, and can no longer be filled. */
 export const mostHoles = 4096;
 
+const inOrder: Admission = { kind: 'new' };
+const repeat: Admission = { kind: 'repeat' };
+const late: Admission = { kind: 'late' };
+
 /** What is known of one source's sequence: which records were taken, so that each counts once. */
 export class SourceLedger {
+  readonly uploads = new SourceUploads();
   #next = 1;
   #holes: Hole[] = [];
 
@@ -42,12 +51,12 @@ export class SourceLedger {
 
   /** Where a frame of `records` records from sequence `first` on belongs; changes nothing. */
   place(first: number, records: number): Admission {
-    if (first === this.#next) return { kind: 'new' };
+    if (first === this.#next) return inOrder;
     if (first > this.#next) return { kind: 'gap', expected: this.#next };
     const last = first + records - 1;
     const hole = this.#holes.find((one) => one.first <= last && first <= one.last);
-    if (hole !== undefined) return hole.first <= first && last <= hole.last ? { kind: 'late' } : { kind: 'partly-late', hole };
-    return last >= this.#next ? { kind: 'tail', skip: this.#next - first } : { kind: 'repeat' };
+    if (hole !== undefined) return hole.first <= first && last <= hole.last ? late : { kind: 'partly-late', hole };
+    return last >= this.#next ? { kind: 'tail', skip: this.#next - first } : repeat;
   }
 
   /** Takes records in order, up to but not including `next`. */
@@ -74,11 +83,12 @@ export class SourceLedger {
   }
 
   snapshot(): LedgerSnapshot {
-    return { next: this.#next, holes: [...this.#holes] };
+    return { next: this.#next, holes: [...this.#holes], uploads: this.uploads.snapshot() };
   }
 
   restore(from: LedgerSnapshot): void {
     this.#next = from.next;
     this.#holes = [...from.holes];
+    if (from.uploads !== undefined) this.uploads.restore(from.uploads);
   }
 }

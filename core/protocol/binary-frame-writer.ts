@@ -1,7 +1,7 @@
 import type { Correction, Frame, InspectionPart, LineMark, Lost, Part } from '../record/part.ts';
 import { bitsForm, findings, kinds, layoutVersion, magic0, magic1, noName, partHeadBytes, tableStart, timeForm } from './binary-layout.ts';
 import { namesOf, type FrameNames } from './frame-names.ts';
-import { earliest, planOf, type PartPlan } from './part-size.ts';
+import { planOf, type PartPlan } from './part-size.ts';
 import { utf8Of } from './utf8.ts';
 import type { TimeColumn } from '../record/time-column.ts';
 
@@ -50,23 +50,23 @@ function writePart(view: DataView, at: number, part: Part, plan: PartPlan, names
   view.setUint32(at + 8, plan.listed, true);
   const body = at + partHeadBytes;
   if (part.kind === 'correction') writeCorrection(view, body, part);
-  else if ('origin' in part) writeColumns(view, writeTimes(view, body, part.time, form & 3), part, form);
+  else if ('origin' in part) writeColumns(view, writeTimes(view, body, part.time, plan), part, form);
   else writeEvent(view, body, part, names);
   if (reason.length > 0) new Uint8Array(view.buffer, body + (part.kind === 'correction' ? 32 : 16)).set(reason);
 }
 
 /** Returns where the columns behind the times begin. */
-function writeTimes(view: DataView, at: number, time: TimeColumn, form: number): number {
+function writeTimes(view: DataView, at: number, time: TimeColumn, { form, base }: PartPlan): number {
   if (time.kind === 'steady') {
     view.setFloat64(at, time.start, true);
     view.setFloat64(at + 8, time.step, true);
     return at + 16;
   }
-  if (form === timeForm.each) return writeF64(view, at, time.times);
-  const base = earliest(time.times);
+  if ((form & 3) === timeForm.each) return writeF64(view, at, time.times);
   view.setFloat64(at, base, true);
-  for (let i = 0; i < time.times.length; i += 1) view.setUint32(at + 8 + i * 4, (time.times[i] as number) - base, true);
-  return at + 8 + Math.ceil(time.times.length / 2) * 8;
+  const { times } = time;
+  for (let i = 0; i < times.length; i += 1) view.setUint32(at + 8 + i * 4, (times[i] as number) - base, true);
+  return at + 8 + Math.ceil(times.length / 2) * 8;
 }
 
 function writeColumns(view: DataView, at: number, part: InspectionPart, form: number): void {

@@ -19,37 +19,48 @@ interface Known {
   readonly table: Table;
 }
 
-/** Tables remembered are 2 to this: 64, more than the streams one connection mixes. */
-const slotBits = 6;
-/** Larger tables, of frames with many parts, share one slot. */
-const smallBytes = 1_024;
+/** Bytes of tables remembered of one connection; beyond, all are forgotten and learnt anew. */
+const rememberedBytes = 65_536;
 
 /**
  * The tables of one connection's latest frames. A frame that repeats the bytes of one is given the same table, so
  * that a source's unchanging words are checked and made once, also where the frames of many streams take turns.
  */
 export class TableMemo {
-  readonly #known: Known[] = [];
+  readonly #known = new Map<number, Known>();
+  #bytes = 0;
   readonly #origins = new OriginMemo();
 
   /** @param cursor behind the frame's head; it is left behind the table */
   read(cursor: ByteCursor, mostParts: number): Table {
     const size = cursor.u32(20);
     cursor.take(size, 'table');
-    const slot = size > smallBytes ? 0 : slotOf(cursor);
-    const known = this.#known[slot];
+    const mark = markOf(cursor);
+    const known = this.#known.get(mark);
     if (known !== undefined && repeats(cursor, known.bytes)) return known.table;
     const table = tableOf(cursor, size, mostParts, this.#origins);
-    this.#known[slot] = { bytes: cursor.bytes.slice(tableStart, cursor.at), table };
+    this.#remember(mark, { bytes: cursor.bytes.slice(tableStart, cursor.at), table });
     return table;
+  }
+
+  #remember(mark: number, known: Known): void {
+    if (this.#bytes > rememberedBytes) {
+      this.#known.clear();
+      this.#bytes = 0;
+    }
+    this.#bytes += known.bytes.length;
+    this.#known.set(mark, known);
   }
 }
 
-/** Mixes the table's words; streams that fall into one slot only make their tables again. */
-function slotOf(cursor: ByteCursor): number {
+/** The table's words mixed into one; tables that come to the same mark are only made again. */
+function markOf(cursor: ByteCursor): number {
   let mixed = 0;
-  for (let at = tableStart; at + 4 <= cursor.at; at += 4) mixed = Math.imul(mixed ^ cursor.u32(at), 0x9e3779b1);
-  return mixed >>> (32 - slotBits);
+  for (let at = tableStart; at + 4 <= cursor.at; at += 4) {
+    mixed = Math.imul(mixed ^ cursor.u32(at), 0x9e3779b1);
+    mixed ^= mixed >>> 15;
+  }
+  return mixed;
 }
 
 function repeats({ bytes, at }: ByteCursor, known: Uint8Array): boolean {

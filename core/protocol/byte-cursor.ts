@@ -1,3 +1,4 @@
+import { newColumn } from '../record/new-column.ts';
 import { noPlaces } from '../record/no-places.ts';
 import { refuse } from '../record/refusal.ts';
 
@@ -80,7 +81,7 @@ export class ByteCursor {
   offsetColumn(base: number, count: number, field: string): Float64Array {
     const from = this.take(count * 4, field);
     const view = this.#view;
-    const column = new Float64Array(count);
+    const column = newColumn(count);
     for (let i = 0; i < count; i += 1) column[i] = base + view.getUint32(from + i * 4, true);
     return column;
   }

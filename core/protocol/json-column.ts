@@ -1,3 +1,4 @@
+import { newColumn } from '../record/new-column.ts';
 import { noPlaces } from '../record/no-places.ts';
 import { refuse } from '../record/refusal.ts';
 import type { TimeColumn } from '../record/time-column.ts';
@@ -19,7 +20,7 @@ export function wholeColumn(value: unknown, field: string, most: number): Uint32
 
 export function numberColumn(value: unknown, field: string, most: number): Float64Array {
   const items = arrayAt(value, field, most);
-  const column = new Float64Array(items.length);
+  const column = newColumn(items.length);
   for (let i = 0; i < items.length; i += 1) {
     const item = items[i];
     if (typeof item !== 'number') refuse('wrong-type', `${field}[${i}]`, item, 'a number');

@@ -7,6 +7,14 @@ export interface PartPlan {
   readonly form: number;
   readonly listed: number;
   readonly bytes: number;
+  /** Smallest time, from which offsets are counted; 0 where there are none. */
+  readonly base: number;
+}
+
+interface TimePlan {
+  readonly form: number;
+  readonly bytes: number;
+  readonly base: number;
 }
 
 /** The smallest form of a part. @param reasonBytes UTF-8 bytes of its reason, 0 where it has none */
@@ -16,41 +24,39 @@ export function planOf(part: Part, reasonBytes: number): PartPlan {
       const listed = part.nonconforming.length;
       const asBits = Math.ceil(part.records / 8);
       const inBits = asBits < listed * 4;
-      return planned(timeFormOf(part.time) | (inBits ? bitsForm : 0), listed, timeBytes(part.time) + (inBits ? asBits : listed * 4));
+      return withTimes(timePlanOf(part.time), inBits ? bitsForm : 0, listed, inBits ? asBits : listed * 4);
     }
     case 'tallies':
     case 'measurements':
-      return planned(timeFormOf(part.time), 0, timeBytes(part.time) + part.records * 8);
+      return withTimes(timePlanOf(part.time), 0, 0, part.records * 8);
     case 'exposures':
-      return planned(timeFormOf(part.time), 0, timeBytes(part.time) + part.records * 12);
+      return withTimes(timePlanOf(part.time), 0, 0, part.records * 12);
     case 'correction':
-      return planned(0, reasonBytes, 32 + reasonBytes);
+      return { form: 0, listed: reasonBytes, bytes: padded(partHeadBytes + 32 + reasonBytes), base: 0 };
     default:
-      return planned(0, reasonBytes, 16 + reasonBytes);
+      return { form: 0, listed: reasonBytes, bytes: padded(partHeadBytes + 16 + reasonBytes), base: 0 };
   }
 }
 
-const planned = (form: number, listed: number, body: number): PartPlan => ({ form, listed, bytes: padded(partHeadBytes + body) });
+const withTimes = (time: TimePlan, form: number, listed: number, columns: number): PartPlan => ({
+  form: time.form | form,
+  listed,
+  bytes: padded(partHeadBytes + time.bytes + columns),
+  base: time.base,
+});
 
-function timeFormOf(time: TimeColumn): number {
-  if (time.kind === 'steady') return timeForm.steady;
-  return spanOf(time.times) < 4_294_967_296 ? timeForm.offsets : timeForm.each;
-}
+const steady: TimePlan = { form: timeForm.steady, bytes: 16, base: 0 };
 
-function timeBytes(time: TimeColumn): number {
-  if (time.kind === 'steady') return 16;
-  return timeFormOf(time) === timeForm.each ? time.times.length * 8 : padded(8 + time.times.length * 4);
-}
-
-function spanOf(times: Float64Array): number {
-  let latest = -Infinity;
-  for (const time of times) if (time > latest) latest = time;
-  return latest - earliest(times);
-}
-
-/** Smallest of the times, from which offsets are counted. */
-export function earliest(times: Float64Array): number {
-  let least = Infinity;
-  for (const time of times) if (time < least) least = time;
-  return least;
+function timePlanOf(time: TimeColumn): TimePlan {
+  if (time.kind === 'steady') return steady;
+  const { times } = time;
+  let [earliest, latest] = [Infinity, -Infinity];
+  for (let i = 0; i < times.length; i += 1) {
+    const at = times[i] as number;
+    if (at < earliest) earliest = at;
+    if (at > latest) latest = at;
+  }
+  return latest - earliest < 4_294_967_296
+    ? { form: timeForm.offsets, bytes: padded(8 + times.length * 4), base: earliest }
+    : { form: timeForm.each, bytes: times.length * 8, base: 0 };
 }

@@ -11,6 +11,7 @@ import type { Result } from '../../core/result.ts';
 import type { Sender } from '../pipeline/arrival.ts';
 import type { Inbox } from '../pipeline/inbox.ts';
 import { AllowedStations } from './allowed-stations.ts';
+import { Reading } from './reading.ts';
 
 /** What a connection needs from the server. */
 export interface SourceHost {
@@ -23,17 +24,32 @@ export interface SourceHost {
   readonly frameRefused: () => void;
 }
 
+/** Answers a source may leave untaken, bytes: beyond that it is not read until it takes them. */
+const mostUntakenBytes = 262_144;
+
 /** WebSocket close codes: RFC 6455 section 7.4.1, and from the range for applications (4000 on). */
 const closeCodes: Partial<Record<RefusalCode, number>> = { 'frame-too-large': 1009, replaced: 4001, 'too-many-in-flight': 4002, 'token-unknown': 4003, 'not-stored': 4004 };
 
 /** One source on the line: reads its frames, grants a window, answers when they are durable. */
 export class SourceConnection {
   readonly sender: Sender;
+  readonly reading: Reading;
   readonly #socket: WebSocket;
   readonly #host: SourceHost;
   readonly #binary: BinaryFrameReader;
   readonly #json: JsonFrameReader;
   readonly #allowed: AllowedStations;
+  /** One of each for all frames. */
+  readonly #judged = (receipt: Receipt, frame: Frame): void => {
+    if (receipt.kind === 'gap') this.#answer(gapMessage(frame.first, receipt.next));
+    if (receipt.kind === 'partly-late') this.#answer(partlyLateMessage(frame.first, receipt.next, receipt.hole));
+  };
+  readonly #durable = (receipt: Receipt): void => {
+    if (receipt.kind === 'taken' || receipt.kind === 'repeated') this.#acknowledge(receipt);
+  };
+  readonly #sent = (): void => {
+    if (this.reading.isHeldFor('answers') && this.#socket.bufferedAmount < mostUntakenBytes / 2) this.reading.release('answers');
+  };
   #inFlight = 0;
   #ackNext = 0;
   #setAside: SetAside[] = [];
@@ -43,6 +59,7 @@ export class SourceConnection {
   constructor(socket: WebSocket, sender: Sender, host: SourceHost) {
     this.sender = sender;
     this.#socket = socket;
+    this.reading = new Reading(socket);
     this.#host = host;
     this.#binary = new BinaryFrameReader(host.limits);
     this.#json = new JsonFrameReader(host.limits);
@@ -94,19 +111,7 @@ export class SourceConnection {
     }
     const frame = read.value;
     this.#host.frameRead(frame.records);
-    this.#host.inbox.put({
-      kind: 'frame',
-      sender: this.sender,
-      frame,
-      bytes,
-      judged: (receipt) => {
-        if (receipt.kind === 'gap') this.#answer(gapMessage(frame.first, receipt.next));
-        if (receipt.kind === 'partly-late') this.#answer(partlyLateMessage(frame.first, receipt.next, receipt.hole));
-      },
-      durable: (receipt) => {
-        if (receipt.kind === 'taken' || receipt.kind === 'repeated') this.#acknowledge(receipt);
-      },
-    });
+    this.#host.inbox.put({ kind: 'frame', sender: this.sender, frame, bytes, judged: this.#judged, durable: this.#durable });
   }
 
   #refuse(refusal: Refusal): void {
@@ -142,7 +147,9 @@ export class SourceConnection {
   }
 
   #send(message: ServerMessage): void {
-    if (this.#open) this.#socket.send(JSON.stringify(message));
+    if (!this.#open) return;
+    this.#socket.send(JSON.stringify(message), this.#sent);
+    if (this.#socket.bufferedAmount > mostUntakenBytes) this.reading.hold('answers');
   }
 
   #close(code: RefusalCode): void {

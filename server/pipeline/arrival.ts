@@ -18,7 +18,7 @@ export type Arrival =
       /** The frame's binary form where it came in it; made when it is kept otherwise. */
       readonly bytes: Uint8Array | undefined;
       /** Told once the frame is judged, before it is durable. */
-      readonly judged: (receipt: Receipt) => void;
+      readonly judged: (receipt: Receipt, frame: Frame) => void;
       /** Told once the frame is durable (or was before). */
       readonly durable: (receipt: Receipt) => void;
     }

@@ -1,9 +1,12 @@
 import { Subject, type Observable } from 'rxjs';
 import type { Arrival } from './arrival.ts';
 
+/** Arrivals that do not wait for the end of the turn: a source's usual window of frames. */
+const mostAtOnce = 64;
+
 /**
  * Where everything comes in that is to be judged. What arrives within one turn of the event loop leaves as one
- * batch, so that judging and writing are paid for once a batch.
+ * batch, so that judging and writing are paid for once a batch; much of it leaves at once, while it is in the caches.
  */
 export class Inbox {
   readonly arrivals$: Observable<readonly Arrival[]>;
@@ -21,9 +24,13 @@ export class Inbox {
   put(arrival: Arrival): boolean {
     if (this.#closed) return false;
     this.#waiting.push(arrival);
-    if (!this.#scheduled) {
+    if (this.#waiting.length >= mostAtOnce) this.#flush();
+    else if (!this.#scheduled) {
       this.#scheduled = true;
-      setImmediate(() => this.#flush());
+      setImmediate(() => {
+        this.#scheduled = false;
+        this.#flush();
+      });
     }
     return true;
   }
@@ -36,7 +43,6 @@ export class Inbox {
   }
 
   #flush(): void {
-    this.#scheduled = false;
     if (this.#waiting.length === 0) return;
     const batch = this.#waiting;
     this.#waiting = [];

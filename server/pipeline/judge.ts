@@ -1,4 +1,4 @@
-import { Monitor, type Decisions } from '../../core/monitor/monitor.ts';
+import type { Decisions, Monitor } from '../../core/monitor/monitor.ts';
 import { monitorFrom, snapshotOf } from '../../core/monitor/monitor-snapshot.ts';
 import { binaryOfFrame } from '../../core/protocol/binary-frame-writer.ts';
 import type { Alarm } from '../../core/alarm/alarm.ts';
@@ -93,7 +93,7 @@ export class Judge {
 
   #frame({ sender, frame, bytes, judged, durable }: Extract<Arrival, { kind: 'frame' }>, sheet: Sheet): void {
     const receipt = this.#monitor.takeFrame(sender.name, frame, this.#clock?.now());
-    judged(receipt);
+    judged(receipt, frame);
     if (receipt.kind === 'taken') {
       const body = receipt.frame === frame && bytes !== undefined ? bytes : binaryOfFrame(receipt.frame);
       this.#keep(sheet, { kind: 'frame', sourceId: sender.id, firstSequence: receipt.frame.first, records: receipt.frame.records, body });

@@ -13,6 +13,8 @@ const rounds = values.short ? 3 : Number(values.rounds);
 const connections = Number(values.connections);
 const streams = 200;
 const window = 64;
+/** Rounds not counted, until the compiler has settled. */
+const warmRounds = 5;
 
 const [steady, each, measured] = Object.keys(shapes);
 const cases = [
@@ -37,7 +39,7 @@ async function race({ form, records, shape, frames }) {
   }
   const spent = { bare: [], plant: [] };
   let changes = 0;
-  for (let round = -2; round < rounds; round += 1) {
+  for (let round = -warmRounds; round < rounds; round += 1) {
     for (const who of ['bare', 'plant']) {
       const before = await servers[who].ask('begin');
       await load.ask('send', { name: who, frames, window });
