@@ -1,11 +1,12 @@
 import { chainedYieldLower, type StationCount } from '../bound/chained-yield.ts';
 import type { Finding } from '../record/part.ts';
+import type { EpochMs } from '../units.ts';
 import type { Picture } from '../view/history.ts';
 import type { Margin } from '../view/guarantee-view.ts';
 import { joinedRanges, type RecordIdentity, type RecordRange } from '../window/record-identity.ts';
 import type { ChainRule } from './chain-rule.ts';
 import type { Batch, Bounds, CorrectionFate, Evidence } from './evidence.ts';
-import type { Moment, RecordMoment } from './moment.ts';
+import { clockMoment, type Moment, type RecordMoment } from './moment.ts';
 import type { Standing } from './standing.ts';
 import { StationLink } from './station-link.ts';
 import type { TimedUnitEvidence } from './timed-unit-evidence.ts';
@@ -27,29 +28,22 @@ const none: Bounds = { estimate: undefined, bound: undefined, opposite: undefine
 
 /**
  * Evidence on the chained yield: a window for each station, one bound for all. It is weighed at each nonconforming unit
- * that comes or leaves, and after every 64th unit of a station while its window grows or an alarm waits; so that a
- * demonstration may be told up to 63 conforming units late, never early.
+ * that comes or leaves, and at every 64th unit of a station: a demonstration may be told up to 63 conforming units late,
+ * never early.
  */
 export class ChainEvidence implements Evidence {
   readonly #settings: ChainSettings;
   readonly #rule: ChainRule;
   readonly #standing: Standing;
   readonly #windows: readonly StationEvidence[];
-  /** While all windows are cleared together the chain is not weighed. */
-  #clearing = false;
+  /** While all windows change together the chain is not weighed. */
+  #changing = false;
 
   constructor(settings: ChainSettings, rule: ChainRule, standing: Standing) {
     this.#settings = settings;
     this.#rule = rule;
     this.#standing = standing;
-    this.#windows = settings.stations.map(() =>
-      settings.stationOf(
-        new StationLink(
-          (moment) => this.weigh(moment),
-          () => standing.waiting,
-        ),
-      ),
-    );
+    this.#windows = settings.stations.map(() => settings.stationOf(new StationLink((moment) => this.weigh(moment), (at) => this.#leaveUntil(at))));
   }
 
   /** Units that every station has admitted: what has gone through the whole chain. */
@@ -70,16 +64,12 @@ export class ChainEvidence implements Evidence {
   }
 
   clear(moment: Moment): void {
-    this.#clearing = true;
-    for (const window of this.#windows) window.clear(moment);
-    this.#clearing = false;
     this.#standing.beginAnew();
-    this.weigh(moment);
+    this.#together(moment, (window) => window.clear(moment));
   }
 
-  /** Stations move on one after the other, each boundary for all of them before the next. */
   moveClock(moment: Moment): void {
-    for (const window of this.#windows) if (window.nextDue() <= moment.at) window.moveClock(moment);
+    this.#leaveUntil(moment.at);
   }
 
   nextDue(): number {
@@ -87,7 +77,7 @@ export class ChainEvidence implements Evidence {
   }
 
   weigh(moment: Moment): void {
-    if (this.#clearing) return;
+    if (this.#changing) return;
     const ripe = this.#windows.every((window) => window.ripe);
     this.#standing.weigh(this.#rule.assess(this.#counts(), ripe, this.#standing.waiting), this.position, moment);
   }
@@ -154,6 +144,23 @@ export class ChainEvidence implements Evidence {
 
   restore(from: readonly never[]): void {
     this.#windows.forEach((window, index) => window.restore(from[index] as never));
+  }
+
+  /** Lets every step of time go that is over by `at`, for all stations at once, each at its own moment. */
+  #leaveUntil(at: number): void {
+    for (let due = this.nextDue(); due <= at; due = this.nextDue()) {
+      const moment = clockMoment(due as EpochMs);
+      this.#together(moment, (window) => {
+        if (window.nextDue() <= due) window.moveClock(moment);
+      });
+    }
+  }
+
+  #together(moment: Moment, change: (window: StationEvidence) => void): void {
+    this.#changing = true;
+    for (const window of this.#windows) change(window);
+    this.#changing = false;
+    this.weigh(moment);
   }
 
   /** Station without which the bound would stand highest; undefined while one has seen nothing, or none has lost a unit. */

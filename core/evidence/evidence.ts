@@ -70,5 +70,6 @@ export interface Evidence {
   /** The picture that suits the quantity; absent where the bound over time says it all. */
   picture?(): Picture;
   snapshot(): unknown;
+  /** Takes over a snapshot; the standing must have been restored before. */
   restore(from: unknown): void;
 }

@@ -56,7 +56,7 @@ class LotJudge implements Judge {
   }
 
   nextSize(size: number, count: number): number {
-    const next = this.#counts.nextSize(size, count);
-    return size <= this.#lotSize ? Math.min(next, this.#lotSize + 1) : next;
+    if (size > this.#lotSize) return Infinity;
+    return count > this.#allowed ? this.#lotSize + 1 : Math.min(this.#counts.nextSize(size, count), this.#lotSize + 1);
   }
 }

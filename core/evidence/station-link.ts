@@ -3,18 +3,18 @@ import type { CountRule } from './count-rule.ts';
 import type { Moment } from './moment.ts';
 import type { Weighing } from './weighing.ts';
 
-/** Units of one station after which its chain is weighed at the latest while its window grows or an alarm waits. */
+/** Units of one station after which its chain is weighed at the latest. */
 export const weighedEvery = 64;
 
 const nothing: Assessment = { state: 'unknown', backFromCrossing: false, backFromViolation: false };
 
-/** A station judges nothing by itself: it only says when its counts are worth weighing. */
+/** A station judges nothing by itself: it only says that its counts have changed. */
 export const stationRule: CountRule = {
   per: 1,
   thresholds: { sizeToDemonstrate: () => 1, sizeViolated: () => 0 },
   judge: {
     assess: () => nothing,
-    nextSize: (size) => size - (size % weighedEvery) + weighedEvery,
+    nextSize: () => Infinity,
   },
   upper: () => NaN,
   lower: () => NaN,
@@ -23,12 +23,11 @@ export const stationRule: CountRule = {
 /** Hands a station's weighings on to the chain it belongs to. */
 export class StationLink implements Weighing {
   readonly #weigh: (moment: Moment) => void;
-  readonly #waits: () => boolean;
-  #position = 0;
+  readonly #moveFirst: (at: number) => void;
 
-  constructor(weigh: (moment: Moment) => void, waits: () => boolean) {
+  constructor(weigh: (moment: Moment) => void, moveFirst: (at: number) => void) {
     this.#weigh = weigh;
-    this.#waits = waits;
+    this.#moveFirst = moveFirst;
   }
 
   /** The station is never asked for distances: the chain is. */
@@ -36,13 +35,16 @@ export class StationLink implements Weighing {
     return false;
   }
 
-  weigh(_assessment: Assessment, position: number, moment: Moment): void {
-    this.#position = position;
+  weigh(_assessment: Assessment, _position: number, moment: Moment): void {
     this.#weigh(moment);
   }
 
-  dueAt(): number {
-    return this.#waits() ? this.#position - (this.#position % weighedEvery) + weighedEvery : Infinity;
+  dueAt(position: number): number {
+    return position - (position % weighedEvery) + weighedEvery;
+  }
+
+  moveFirst(at: number): void {
+    this.#moveFirst(at);
   }
 
   beginAnew(): void {

@@ -26,7 +26,6 @@ export interface TimedUnitSettings {
 
 export interface TimedUnitSnapshot {
   readonly position: number;
-  readonly wakeAt: number;
   readonly began: number;
   readonly window: TimeWindowSnapshot;
 }
@@ -67,6 +66,7 @@ export class TimedUnitEvidence implements Evidence {
     if (!tellsUnits(part, this.#settings.limit)) return;
     for (let place = from; place < to; ) {
       const end = part.kind === 'tallies' ? place + 1 : Math.min(to, endOfStep(part.time, place, part.records, this.window.stepMs));
+      this.#weighing.moveFirst?.(timeAt(part.time, place));
       this.#leaveUntil(timeAt(part.time, place));
       this.#takeInStep({ ...batch, from: place, to: end }, moment);
       place = end;
@@ -106,8 +106,7 @@ export class TimedUnitEvidence implements Evidence {
     const { inspected, nonconforming } = this.window;
     const { judge } = this.#rule;
     this.#weighing.weigh(judge.assess(inspected, nonconforming, this.ripe, this.#weighing.waiting), this.#position, moment);
-    const wait = Math.max(1, judge.nextSize(inspected, nonconforming) - inspected);
-    this.#wakeAt = Math.min(this.#position + wait, this.#weighing.dueAt());
+    this.#wakeAt = this.#nextWake();
   }
 
   figures(): Readonly<Record<string, number>> {
@@ -133,14 +132,20 @@ export class TimedUnitEvidence implements Evidence {
   }
 
   snapshot(): TimedUnitSnapshot {
-    return { position: this.#position, wakeAt: this.#wakeAt, began: this.#cover.began, window: this.window.snapshot() };
+    return { position: this.#position, began: this.#cover.began, window: this.window.snapshot() };
   }
 
   restore(from: TimedUnitSnapshot): void {
     this.#position = from.position;
-    this.#wakeAt = from.wakeAt;
     this.#cover.began = from.began;
     this.window.restore(from.window);
+    this.#wakeAt = this.#nextWake();
+  }
+
+  #nextWake(): number {
+    const { inspected, nonconforming } = this.window;
+    const wait = Math.max(1, this.#rule.judge.nextSize(inspected, nonconforming) - inspected);
+    return Math.min(this.#position + wait, this.#weighing.dueAt(this.#position));
   }
 
   /** Lets every step go that is over by `at`, each at its own moment; weighs after each. */

@@ -24,7 +24,6 @@ export interface UnitEvidenceSettings {
 
 export interface UnitEvidenceSnapshot {
   readonly position: number;
-  readonly wakeAt: number;
   readonly window: UnitWindowSnapshot;
 }
 
@@ -135,7 +134,7 @@ export class UnitEvidence implements Evidence {
   weigh(moment: Moment): void {
     const { inspected, nonconforming } = this.window;
     this.#weighing.weigh(this.#rule.judge.assess(inspected, nonconforming, this.ripe, this.#weighing.waiting), this.#position, moment);
-    this.#wakeAt = this.#nextWake(inspected, nonconforming);
+    this.#wakeAt = this.#nextWake();
   }
 
   figures(): Readonly<Record<string, number>> {
@@ -166,13 +165,13 @@ export class UnitEvidence implements Evidence {
   }
 
   snapshot(): UnitEvidenceSnapshot {
-    return { position: this.#position, wakeAt: this.#wakeAt, window: this.window.snapshot() };
+    return { position: this.#position, window: this.window.snapshot() };
   }
 
   restore(from: UnitEvidenceSnapshot): void {
     this.#position = from.position;
-    this.#wakeAt = from.wakeAt;
     this.window.restore(from.window);
+    this.#wakeAt = this.#nextWake();
   }
 
   /** Conforming units in a row until demonstrated: by growing, and by old nonconforming units leaving. */
@@ -214,13 +213,14 @@ export class UnitEvidence implements Evidence {
     this.weigh(moment);
   }
 
-  #nextWake(inspected: number, nonconforming: number): number {
+  #nextWake(): number {
+    const { inspected, nonconforming } = this.window;
     let wait = this.window.nextDeparture();
     if (!this.window.full) {
       const size = this.window.size ?? Infinity;
       const grown = this.#rule.judge.nextSize(inspected, nonconforming);
       wait = Math.min(wait, Math.min(grown, size) - inspected);
     }
-    return Math.min(this.#position + Math.max(1, wait), this.#weighing.dueAt());
+    return Math.min(this.#position + Math.max(1, wait), this.#weighing.dueAt(this.#position));
   }
 }

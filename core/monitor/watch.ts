@@ -202,8 +202,8 @@ export class Watch {
   }
 
   restore(from: WatchSnapshot): void {
-    this.evidence.restore(from.evidence);
     this.standing.restore(from.standing);
+    this.evidence.restore(from.evidence);
     this.#period.restore(from.period);
     this.lost.restore(from.lost);
     this.trail.restore(from.trail);
