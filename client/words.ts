@@ -72,7 +72,7 @@ export function promiseWords(formats: Formats, card: GuaranteeCard): string {
       return `${limit} of the lot nonconforming`;
     case 'fraction-beyond-limit': {
       const beyond = card.specificationLimit;
-      return beyond === undefined ? `${limit} beyond the specification limit` : `${limit} ${beyond.side} ${formats.plain(beyond.value)}`;
+      return beyond === undefined ? `${limit} beyond the specification limit` : `${limit} ${beyond.side} ${formats.plain(beyond.value)} ${beyond.unit}`;
     }
   }
 }

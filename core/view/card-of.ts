@@ -30,7 +30,7 @@ export function cardOf(guarantee: Guarantee, plant: Plant): GuaranteeCard {
     tail: guarantee.tail,
     window: guarantee.window,
     safetyRelevant: guarantee.safetyRelevant,
-    specificationLimit: promise.quantity === 'fraction-beyond-limit' ? promise.limit : undefined,
+    specificationLimit: promise.quantity === 'fraction-beyond-limit' ? { ...promise.limit, unit: promise.unit } : undefined,
     method: { name, sentence, assumes, source },
   };
 }

@@ -28,7 +28,7 @@ export interface GuaranteeCard {
   readonly tail: number;
   readonly window: WindowRule;
   readonly safetyRelevant: boolean;
-  readonly specificationLimit: { readonly side: 'below' | 'above'; readonly value: number } | undefined;
+  readonly specificationLimit: { readonly side: 'below' | 'above'; readonly value: number; readonly unit: string } | undefined;
   readonly method: { readonly name: string; readonly sentence: string; readonly assumes: readonly string[]; readonly source: string };
 }
 

@@ -10,7 +10,7 @@ const builtClientFolder = fileURLToPath(new URL('../../.build/client', import.me
 
 const securityHeaders = {
   'content-security-policy':
-    "default-src 'self'; script-src 'self'; style-src 'self' 'unsafe-inline'; img-src 'self' data:; connect-src 'self'; font-src 'self'; object-src 'none'; base-uri 'none'; form-action 'self'; frame-ancestors 'none'",
+    "default-src 'self'; script-src 'self'; style-src 'self'; img-src 'self' data:; connect-src 'self'; font-src 'self'; object-src 'none'; base-uri 'none'; form-action 'self'; frame-ancestors 'none'",
   'x-content-type-options': 'nosniff',
   'referrer-policy': 'no-referrer',
   'cross-origin-opener-policy': 'same-origin',
@@ -22,14 +22,15 @@ const bodyLimit = 65_536;
 
 /** An HTTP server with the dashboard's files, safe headers and one form of error; routes are added by the caller. */
 export async function httpServer(): Promise<FastifyInstance> {
-  const http = fastify({ bodyLimit, forceCloseConnections: true, requestTimeout: 60_000, return503OnClosing: true });
+  // An upload may take its time, but a connection that says nothing is ended.
+  const http = fastify({ bodyLimit, forceCloseConnections: true, requestTimeout: 0, connectionTimeout: 60_000, return503OnClosing: true });
   http.addHook('onSend', async (_request, reply) => {
     reply.headers(securityHeaders);
   });
   http.setErrorHandler((error: Error & { statusCode?: number; field?: string }, _request, reply) => {
     const status = error.statusCode ?? 500;
     const message = status >= 500 ? 'The server could not do this; its log says why.' : error.message;
-    void reply.status(status).send({ error: message, ...(error.field === undefined ? {} : { field: error.field }) });
+    void reply.status(status).send({ message, ...(error.field === undefined ? {} : { field: error.field }) });
   });
   const folder = existsSync(`${clientFolder}/index.html`) ? clientFolder : builtClientFolder;
   const page = existsSync(`${folder}/index.html`) ? readFileSync(`${folder}/index.html`, 'utf8') : undefined;
@@ -39,9 +40,9 @@ export async function httpServer(): Promise<FastifyInstance> {
     } });
   }
   http.setNotFoundHandler((request, reply) => {
-    const wantsPage = request.method === 'GET' && !request.url.startsWith('/api/') && (request.headers.accept ?? '').includes('text/html');
+    const wantsPage = request.method === 'GET' && !/^\/(api|assets)\//.test(request.url) && (request.headers.accept ?? '').includes('text/html');
     if (wantsPage && page !== undefined) return reply.header('cache-control', 'no-cache').type('text/html').send(page);
-    return reply.status(404).send({ error: `there is nothing at ${request.url.slice(0, 200)}` });
+    return reply.status(404).send({ message: `there is nothing at ${request.url.slice(0, 200)}` });
   });
   return http;
 }

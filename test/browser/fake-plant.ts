@@ -54,12 +54,12 @@ export const eight: readonly FakeGuarantee[] = [
     figures: { inspected: 48_210, nonconforming: 15 }, margin: { conformingToDemonstrate: 61_400 }, drift: 'rising', lot: 'L-2603-07', alarmIds: [41],
     warnings: ['9 of the 15 nonconforming units came within 12 minutes; the window is not of one piece.'],
   }),
-  guarantee({ id: 'pull-bh5', name: 'BH-5 crimp pull-off force', ...lineB, stationNames: ['Crimping'], product: 'bh-5', productName: 'Hose BH-5', characteristicName: 'pull-off force', quantity: 'fraction-beyond-limit', guaranteeLine: 300e-6, window: { kind: 'units', units: 4000 }, specificationLimit: { side: 'below', value: 1200 } }, {
+  guarantee({ id: 'pull-bh5', name: 'BH-5 crimp pull-off force', ...lineB, stationNames: ['Crimping'], product: 'bh-5', productName: 'Hose BH-5', characteristicName: 'pull-off force', quantity: 'fraction-beyond-limit', guaranteeLine: 300e-6, window: { kind: 'units', units: 4000 }, specificationLimit: { side: 'below', value: 1200, unit: 'N' } }, {
     state: 'undecided', since: plantStart - 19 * minute, estimate: 186e-6, bound: 336e-6, oppositeBound: 90e-6,
     allowance: { estimate: 0.62, bound: 1.12, opposite: 0.3, trail: [0.8, 0.82, 0.84, 0.88, 0.9, 0.94, 0.97, 1, 1.02, 1.05, 1.08, 1.12] },
     figures: { inspected: 4000, mean: 1381.2, sd: 51.4 }, margin: { conformingToDemonstrate: 1420 }, drift: 'rising', alarmIds: [40], product: 'BH-5',
   }),
-  guarantee({ id: 'cap-torque', name: 'Kit cap torque', ...bottling, stationNames: ['Capping'], characteristicName: 'cap torque', quantity: 'fraction-beyond-limit', guaranteeLine: 500e-6, specificationLimit: { side: 'below', value: 1.4 } }, {
+  guarantee({ id: 'cap-torque', name: 'Kit cap torque', ...bottling, stationNames: ['Capping'], characteristicName: 'cap torque', quantity: 'fraction-beyond-limit', guaranteeLine: 500e-6, specificationLimit: { side: 'below', value: 1.4, unit: 'Nm' } }, {
     state: 'unknown', remark: 'No record for 4 min 10 s; the source cap-torque-1 is silent and the line is said to run', since: plantStart - 4 * minute,
     estimate: 165e-6, bound: 300e-6, oppositeBound: undefined, allowance: { estimate: 0.33, bound: 0.6, opposite: undefined, trail: [0.58, 0.59, 0.6] },
     figures: { inspected: 2950 }, margin: {}, newest: plantStart - 250_000, drift: undefined, alarmIds: [39], product: 'Kit 250 ml',
@@ -69,7 +69,7 @@ export const eight: readonly FakeGuarantee[] = [
     figures: { inspected: 16_204, nonconforming: 198 }, margin: { canTake: 3 }, drift: 'rising',
   }),
   guarantee({ id: 'leak-bh5', name: 'BH-5 leak test', ...lineB, product: 'bh-5', productName: 'Hose BH-5', safetyRelevant: true }, { allowance: { estimate: 0.2, bound: 0.74, opposite: undefined, trail: [0.8, 0.79, 0.78, 0.77, 0.75, 0.74] }, estimate: 40e-6, product: 'BH-5' }),
-  guarantee({ id: 'fill', name: 'Kit fill volume', ...bottling, stationNames: ['Filling'], characteristicName: 'fill volume', quantity: 'mean', side: 'at-least', scale: { kind: 'measure', unit: 'ml' }, guaranteeLine: 250, target: 252, window: { kind: 'units', units: 400 }, method: student, specificationLimit: { side: 'below', value: 249 } }, {
+  guarantee({ id: 'fill', name: 'Kit fill volume', ...bottling, stationNames: ['Filling'], characteristicName: 'fill volume', quantity: 'mean', side: 'at-least', scale: { kind: 'measure', unit: 'ml' }, guaranteeLine: 250, target: 252, window: { kind: 'units', units: 400 }, method: student, specificationLimit: { side: 'below', value: 249, unit: 'ml' } }, {
     estimate: 251.42, bound: 250.96, oppositeBound: 251.7, allowance: { estimate: 0.29, bound: 0.52, opposite: undefined, trail: [0.5, 0.53, 0.5, 0.51, 0.52, 0.52] },
     figures: { inspected: 400, mean: 251.42, sd: 1.31 }, margin: { clearance: 0.96 }, product: 'Kit 250 ml',
   }),

@@ -83,7 +83,7 @@ describe('a server', () => {
     source.send(records(1011, verdictPart(1200, [], monday + 1_010_000)));
     expect(await live.until((message) => message.type === 'change' && message.alarms.length > 0)).toMatchObject({ alarms: [{ state: { kind: 'ended' } }] });
     const events = (await (await fetch(`${served.address}/api/events?kind=alarm`)).json()) as unknown;
-    expect(events).toMatchObject({ error: expect.stringContaining('kind') as string });
+    expect(events).toMatchObject({ message: expect.stringContaining('kind') as string });
   });
 
   it('lets a dashboard that comes back resume with what changed, and starts anew after a restart', async () => {
