@@ -30,7 +30,7 @@ describe('words', () => {
 
   it('promises and windows', () => {
     expect(loose(promiseWords(english, card()))).toBe('at most 200 ppm nonconforming');
-    expect(loose(promiseWords(english, card({ quantity: 'fraction-beyond-limit', specificationLimit: { side: 'below', value: 1200 } })))).toBe('at most 200 ppm below 1,200');
+    expect(loose(promiseWords(english, card({ quantity: 'fraction-beyond-limit', specificationLimit: { side: 'below', value: 1200, unit: 'N' } })))).toBe('at most 200 ppm below 1,200 N');
     expect(windowWords(english, { kind: 'units', units: 50_000 })).toBe('the last 50,000 units');
     expect(windowWords(english, { kind: 'time', spanMs: 28_800_000 as never, stepMs: 60_000 as never })).toBe('the last 8 h');
   });
