@@ -25,6 +25,9 @@ Examples:
 The plant file is plant.yaml in the data directory; SIGHUP reads it anew. Ctrl-C ends everything in order.
 Exit codes: 0 stopped as told, 2 unusable settings or data directory, 3 something outside failed.`;
 
+/** Faster, a hiccup of the machine would look like a silent station. */
+const mostRate = 300;
+
 interface DemoOptions {
   readonly data?: string;
   readonly rate: number;
@@ -43,7 +46,7 @@ export function demoCommand(): Command {
   withSettings(command, ['host', 'port', 'dashboards']);
   command
     .option('--data <dir>', 'keep the data in this directory, and go on from what is there; a temporary one when absent')
-    .addOption(new Option('--rate <number>', 'plant seconds a second').default(60).argParser(wholeFrom(1, 1_200)))
+    .addOption(new Option('--rate <number>', `plant seconds a second, 1 to ${mostRate}`).default(60).argParser(wholeFrom(1, mostRate)))
     .addOption(new Option('--seed <number>', 'what the days are made from [default: 1]').argParser(wholeFrom(0, 4_294_967_295)))
     .addOption(new Option('--log-level <level>', 'least severe entries to log').choices(['debug', 'info', 'warn', 'error', 'silent']).default('warn'))
     .addHelpText('after', examples);
