@@ -7,11 +7,15 @@ import { plantClock, type ClockSetting } from './clock/plant-clock.ts';
 import { serveApi } from './http/api.ts';
 import { httpServer } from './http/http-server.ts';
 import { serveOperations } from './http/operations.ts';
+import { servePlantFiles } from './http/plant-files.ts';
 import { serveSockets } from './http/sockets.ts';
+import { UploadDesk } from './http/upload-desk.ts';
+import { serveUploads } from './http/upload.ts';
 import { SourceDesk } from './ingest/source-desk.ts';
 import { DashboardDesk } from './live/dashboard-desk.ts';
 import { LiveBoard } from './live/live-board.ts';
 import { measuresOf } from './ops/measures.ts';
+import type { Sender } from './pipeline/arrival.ts';
 import { PlantServer } from './pipeline/plant-server.ts';
 import { plantFile, type PlantFileText } from './plant-file.ts';
 import { repeatEvery } from './repeat-every.ts';
@@ -72,21 +76,26 @@ export async function serve({ settings, clock: clockSetting, demo, log }: ServeS
     },
     onFailure: (cause) => {
       log.fatal({ err: cause }, 'stopped taking records');
-      if (up) sources.end('not-stored');
+      if (up) {
+        sources.end('not-stored');
+        uploads.close('notStored');
+      }
       dashboards.stop('The server cannot store records any more.');
     },
   });
   const limits = { ...sourceLimits, framesInFlight: settings.framesInFlight, frameBytes: settings.frameBytes };
-  const sources = new SourceDesk({
-    plant,
-    store,
-    limits,
-    frameRefused: () => measures.refusedFrames.inc(),
-    frameRead: (records) => {
-      measures.frames.inc();
-      measures.records.inc(records);
-    },
+  const frameRead = (records: number): void => {
+    measures.frames.inc();
+    measures.records.inc(records);
+  };
+  const sources = new SourceDesk({ plant, store, limits, frameRead, frameRefused: () => measures.refusedFrames.inc() });
+  const uploads = new UploadDesk({
+    monitor: () => plant.monitor,
+    act: (act) => plant.act(act),
+    isConnected: (sender) => sources.isConnected(sender),
+    onError: (cause) => log.debug({ err: cause }, 'the end of an upload was not kept'),
   });
+  await uploads.endCutOff();
   up = true;
   board.remember([...(await store.endedAlarms({ limit: 200 }))].reverse());
   board.begin(plant.monitor);
@@ -94,13 +103,29 @@ export async function serve({ settings, clock: clockSetting, demo, log }: ServeS
   const http = await httpServer();
   serveOperations(http, { store, measures });
   serveApi(http, { store, monitor: () => plant.monitor, act: (act) => plant.act(act) });
+  servePlantFiles(http);
+  const closedBecause = (): string | undefined => (store.condition.kind === 'open' ? undefined : 'not-stored');
+  const senderOf = (token: string): Promise<Sender | undefined> => sources.senderOf(token);
+  serveUploads(http, {
+    desk: uploads,
+    put: (arrival) => plant.inbox.put(arrival),
+    ledgerOf: (source) => plant.monitor.sources.of(source).ledger,
+    limits,
+    frameRead,
+    senderOf,
+    closedBecause,
+    rowRefused: (sender) => sources.noteRefused(sender),
+  });
   const stopSockets = serveSockets(http.server, {
     frameBytes: limits.frameBytes,
     mostDashboards: settings.dashboards,
-    senderOf: (token) => sources.senderOf(token),
-    onSource: (socket, sender) => sources.connect(socket, sender),
+    senderOf,
+    onSource: (socket, sender) => {
+      uploads.interrupt(sender);
+      sources.connect(socket, sender);
+    },
     onDashboard: (socket) => dashboards.connect(socket),
-    closedBecause: () => (store.condition.kind === 'open' ? undefined : 'not-stored'),
+    closedBecause,
     onError: (cause) => log.debug({ err: cause }, 'a socket failed'),
   });
   await http.listen({ host: settings.host, port: settings.port });
@@ -141,6 +166,7 @@ export async function serve({ settings, clock: clockSetting, demo, log }: ServeS
     log.info({ reason }, 'stopping');
     for (const stop of stops) stop();
     stopSockets();
+    uploads.close('stopping');
     await sources.stop(reason);
     await plant.stop();
     dashboards.stop(reason);

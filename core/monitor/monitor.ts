@@ -153,6 +153,16 @@ export class Monitor {
         watch.restart(clockMoment(this.now));
         return undefined;
       }
+      case 'upload-begun': {
+        const { ledger } = this.sources.of(act.source);
+        ledger.uploads.begin(act.key, act.mark, ledger.next);
+        return undefined;
+      }
+      case 'upload-ended': {
+        const { ledger } = this.sources.of(act.source);
+        ledger.uploads.end(ledger.next);
+        return undefined;
+      }
     }
   }
 

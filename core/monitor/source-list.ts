@@ -35,6 +35,6 @@ export class SourceList {
   }
 
   restore(from: SourceListSnapshot): void {
-    for (const { name, next, holes } of from) this.of(name).ledger.restore({ next, holes });
+    for (const { name, ...ledger } of from) this.of(name).ledger.restore(ledger);
   }
 }

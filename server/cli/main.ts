@@ -3,6 +3,7 @@ import { Command } from 'commander';
 import { demoCommand } from './demo-command.ts';
 import { CommandFault, exitCode } from './exit-codes.ts';
 import { feedCommand } from './feed-command.ts';
+import { endWithOutput } from './output-ends.ts';
 import { plantCommand } from './plant-command.ts';
 import { replayCommand } from './replay-command.ts';
 import { serveCommand } from './serve-command.ts';
@@ -23,6 +24,7 @@ const program = new Command('vouchline')
     throw error;
   });
 
+endWithOutput();
 try {
   await program.parseAsync();
 } catch (cause) {

@@ -55,5 +55,5 @@ async function check(path: string, { json }: { readonly json?: boolean }): Promi
   const { lines, products, guarantees } = reading.value.plant;
   const counts = { lines: lines.length, products: products.length, guarantees: guarantees.length };
   if (json === true) process.stdout.write(`${JSON.stringify({ sound: true, version, ...counts })}\n`);
-  else process.stdout.write(`${path} is in order: ${counts.lines} lines, ${counts.products} products, ${counts.guarantees} guarantees (version ${version})\n`);
+  else process.stdout.write(`${path} is in order (version ${version}): lines ${counts.lines}, products ${counts.products}, guarantees ${counts.guarantees}\n`);
 }

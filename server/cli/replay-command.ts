@@ -6,7 +6,7 @@ import { sourceLimits } from '../../core/protocol/limits.ts';
 import { plantFile } from '../plant-file.ts';
 import { Replay } from '../replay/replay.ts';
 import { framesOfRows, type RowsOutcome } from '../rows/frames-of-rows.ts';
-import { CommandFault, exitCode } from './exit-codes.ts';
+import { CommandFault } from './exit-codes.ts';
 import { refusalText } from './refusal-text.ts';
 import { textOfFile } from './text-of-file.ts';
 import { wholeOption } from './whole-option.ts';
@@ -66,31 +66,24 @@ async function run(file: string, replay: Replay, records: number, minutes: boole
   const { rowBytes, parts } = sourceLimits;
   const frames = framesOfRows(text.pieces, { form: undefined, rowBytes, records, parts, idleMs: 1_000, begin: ({ sequence }) => begin(sequence ?? 1) });
   try {
-    for await (const one of frames) if (!(await taken(one, replay, file, minutes))) return;
+    for await (const one of frames) await take(one, replay, file, minutes);
   } finally {
     text.close();
   }
 }
 
-/** @returns false if nobody reads the output any more */
-async function taken(one: RowsOutcome, replay: Replay, file: string, minutes: boolean): Promise<boolean> {
+async function take(one: RowsOutcome, replay: Replay, file: string, minutes: boolean): Promise<void> {
   if (one.kind === 'refused') throw new CommandFault(refusalText(file, one.refusal));
   const decided = replay.take(one.frame);
   if ('expected' in decided) throw new CommandFault(`${file}:${one.line}: sequence is ${one.frame.first}; expected ${decided.expected}, or a lost row that spends those between.`);
-  return printed(decided, minutes);
+  await print(decided, minutes);
 }
 
-/** @returns false if nobody reads the output any more */
-async function printed({ happenings, minutes }: Decisions, withMinutes: boolean): Promise<boolean> {
+async function print({ happenings, minutes }: Decisions, withMinutes: boolean): Promise<void> {
   let text = '';
   for (const happening of happenings) text += `${JSON.stringify(happening)}\n`;
   if (withMinutes) for (const minute of minutes) text += `${JSON.stringify({ kind: 'minute', ...minute })}\n`;
-  if (text === '' || process.stdout.write(text)) return true;
-  const gone = once(process.stdout, 'error').then(([cause]) => cause as NodeJS.ErrnoException);
-  const cause = await Promise.race([once(process.stdout, 'drain').then(() => undefined), gone]);
-  if (cause === undefined) return true;
-  if (cause.code === 'EPIPE') return false;
-  throw new CommandFault(`The output cannot be written: ${cause.message}`, exitCode.failed);
+  if (text !== '' && !process.stdout.write(text)) await once(process.stdout, 'drain');
 }
 
 function summarise({ monitor, sums }: Replay): void {

@@ -1,5 +1,6 @@
 import { refusalTable } from '../../core/protocol/refusals.ts';
 import type { Frame, Origin, Part } from '../../core/record/part.ts';
+import type { RowRecord } from '../../core/record/row.ts';
 import type { Refusal } from '../../core/record/refusal.ts';
 
 /** In a source's list of stations: every station of the plant. */
@@ -22,6 +23,13 @@ export class AllowedStations {
       if (station !== undefined) return this.#refusal(`parts[${index}].station`, station);
     }
     return undefined;
+  }
+
+  /** The same for a row. */
+  refusalOfRow(row: RowRecord): Refusal | undefined {
+    if (this.#stations.has(everyStation)) return undefined;
+    const station = row.says === 'finding' ? (this.#stations.has(row.origin.station) ? undefined : row.origin.station) : this.#foreign(row.part);
+    return station === undefined ? undefined : this.#refusal('station', station);
   }
 
   /** Marks of a line name no station: any source of the plant may tell them. */

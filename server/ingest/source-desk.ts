@@ -31,6 +31,10 @@ export class SourceDesk {
     return this.#connections.size;
   }
 
+  isConnected(sender: Sender): boolean {
+    return this.#connections.has(sender.id);
+  }
+
   /** Whose token this is, if it is one in force; notes that it was used. */
   async senderOf(token: string): Promise<Sender | undefined> {
     const { store, plant } = this.#setting;
