@@ -7,6 +7,7 @@ import { ChainRule } from './chain-rule.ts';
 import { binomialRule, poissonRule, type CountRule } from './count-rule.ts';
 import type { Evidence } from './evidence.ts';
 import type { HeldRecords, RecordSum } from './held-records.ts';
+import { LimitEvidence } from './limit-evidence.ts';
 import { LotEvidence } from './lot-evidence.ts';
 import { MeanRule } from './mean-rule.ts';
 import { MeasuredSum } from './measured-sum.ts';
@@ -56,7 +57,11 @@ function beyondLimitOf(guarantee: Guarantee, promise: BeyondLimit, standing: Sta
     const held = recordsOf(guarantee, 1, () => new MeasuredSum(promise.limit.value, undefined));
     return new RecordEvidence(measuredRecords, held, new NormalRule(guarantee, promise), standing);
   }
-  return unitsOf(guarantee, binomialRule(guarantee, promise.atMost, promise.target), standing, { limit: promise.limit });
+  const { limit, unit } = promise;
+  const { window } = guarantee;
+  const rule = binomialRule(guarantee, promise.atMost, promise.target);
+  if (window.kind === 'time') return unitsOf(guarantee, rule, standing, { limit });
+  return new LimitEvidence(window.kind === 'units' ? window.units : undefined, limit, unit, rule, standing);
 }
 
 function recordsOf<T, S extends RecordSum<T, S>>({ window }: Guarantee, width: 1 | 2, emptySum: () => S): HeldRecords<S> {
