@@ -21,6 +21,7 @@ import { plantFile, type PlantFileText } from './plant-file.ts';
 import { repeatEvery } from './repeat-every.ts';
 import type { Settings } from './settings/settings.ts';
 import { openStore } from './store/sqlite-store.ts';
+import type { Store } from './store/store.ts';
 
 /** A running server. */
 export interface Served {
@@ -46,13 +47,33 @@ export class BadPlantFile extends Error {}
 const tickMs = 250;
 const updateMs = 100;
 
-/** Starts a server: brings back its state, then listens. */
-export async function serve({ settings, clock: clockSetting, demo, log }: ServeSetting): Promise<Served> {
+/**
+ * Starts a server on its data directory: brings back its state, then listens.
+ *
+ * @throws BadPlantFile, StoreError, or why it cannot listen; nothing is held then
+ */
+export async function serve(setting: ServeSetting): Promise<Served> {
+  const { settings, log } = setting;
   const path = settings.plant ?? join(settings.data, 'plant.yaml');
   const read = await plantFile(path);
   if (!read.ok) throw new BadPlantFile(read.fault.join('\n'));
-  const clock = plantClock(clockSetting);
   const store = await openStore(settings.data, { onRefused: (error) => log.fatal({ err: error }, 'nothing can be made durable any more') });
+  try {
+    return await serveFrom(store, setting, path, read.value);
+  } catch (cause) {
+    await store.close();
+    throw cause;
+  }
+}
+
+/**
+ * The same on an open store, which it closes when it stops.
+ *
+ * @param path of the plant file, to read it anew
+ * @param file what stands in it now
+ */
+export async function serveFrom(store: Store, { settings, clock: clockSetting, demo, log }: ServeSetting, path: string, file: PlantFileText): Promise<Served> {
+  const clock = plantClock(clockSetting);
   const board = new LiveBoard({ boot: randomUUID(), clockRate: clock?.rate ?? 1, demo });
   const dashboards = new DashboardDesk(board);
   let up = false;
@@ -67,12 +88,14 @@ export async function serve({ settings, clock: clockSetting, demo, log }: ServeS
 
   const plant = await PlantServer.start({
     store,
-    plant: read.value,
+    plant: file,
     clock,
+    snapshotEntries: settings.snapshotEntries,
     log,
     onOutcome: ({ group }) => {
       measures.commits.inc();
-      board.note(group.happenings.map(({ happening }) => happening));
+      const alarming = board.note(group.happenings.map(({ happening }) => happening), group.entries.at(-1)?.at ?? 0);
+      if (alarming) dashboards.update(Date.now()); // Views wait for the next update, alarms do not.
     },
     onFailure: (cause) => {
       log.fatal({ err: cause }, 'stopped taking records');
@@ -134,6 +157,7 @@ export async function serve({ settings, clock: clockSetting, demo, log }: ServeS
   const stops = [
     repeatEvery(tickMs, () => {
       sources.reportRefused();
+      if (store.condition.kind === 'refused') plant.giveUp(store.condition.error);
       if (clock) plant.inbox.put({ kind: 'tick' });
     }),
     repeatEvery(updateMs, () => {
@@ -175,7 +199,7 @@ export async function serve({ settings, clock: clockSetting, demo, log }: ServeS
     log.info('stopped');
   }
 
-  log.info({ address: `http://${settings.host}:${port}`, version: read.value.version }, 'listening');
+  log.info({ address: `http://${settings.host}:${port}`, version: file.version }, 'listening');
   return { address: `http://${settings.host.includes(':') ? `[${settings.host}]` : settings.host}:${port}`, reload, stop: (reason) => (stopping ??= stopOnce(reason)) };
 }
 

@@ -13,7 +13,7 @@ export interface SocketHost {
   readonly senderOf: (token: string) => Promise<Sender | undefined>;
   readonly onSource: (socket: WebSocket, sender: Sender) => void;
   readonly onDashboard: (socket: WebSocket) => void;
-  /** Why no source is taken now; undefined if they are. */
+  /** Why nobody is let in now; undefined if they are. */
   readonly closedBecause: () => string | undefined;
   readonly mostDashboards: number;
   readonly onError: (cause: Error) => void;
@@ -46,6 +46,8 @@ export function serveSockets(server: Server, host: SocketHost): () => void {
   }
 
   function upgradeDashboard(request: IncomingMessage, socket: Duplex, head: Buffer): void {
+    const closed = host.closedBecause();
+    if (closed !== undefined) return refuse(socket, 503, closed); // What is in memory is ahead of the disk: it is not shown as live.
     if (!offered(request).includes(liveProtocol)) return refuse(socket, 400, 'subprotocol-missing');
     if (dashboards.clients.size >= host.mostDashboards) return refuse(socket, 503, 'too-many-dashboards');
     dashboards.handleUpgrade(request, socket, head, (opened) => {
@@ -79,5 +81,6 @@ const reasons: Readonly<Record<number, string>> = { 400: 'Bad Request', 401: 'Un
 function refuse(socket: Duplex, status: number, code: string): void {
   if (socket.destroyed) return;
   const body = JSON.stringify({ code });
+  socket.once('finish', () => socket.destroy()); // A peer that never closes its side would hold the socket for ever.
   socket.end(`HTTP/1.1 ${status} ${reasons[status] ?? ''}\r\nContent-Type: application/json\r\nContent-Length: ${Buffer.byteLength(body)}\r\nConnection: close\r\n\r\n${body}`);
 }

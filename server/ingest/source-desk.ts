@@ -56,7 +56,7 @@ export class SourceDesk {
       frameRefused: () => this.noteRefused(sender),
     });
     this.#connections.set(sender.id, connection);
-    const leave = plant.flow.add(socket);
+    const leave = plant.flow.add(connection.reading);
     socket.on('close', () => {
       leave();
       if (this.#connections.get(sender.id) === connection) this.#connections.delete(sender.id);
@@ -87,8 +87,10 @@ export class SourceDesk {
 
   /** Makes durable and answers what was received, then tells the sources that the server stops. */
   async stop(reason: string): Promise<void> {
-    this.reportRefused();
-    await this.#setting.plant.settled();
+    if (this.#setting.store.condition.kind === 'open') {
+      this.reportRefused();
+      await this.#setting.plant.settled().catch(() => undefined); // A failure has been told already, and nothing more can be made durable.
+    }
     for (const connection of this.#connections.values()) connection.stopping(reason);
   }
 

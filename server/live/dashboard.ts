@@ -5,7 +5,7 @@ import type { LiveBoard } from './live-board.ts';
 const patientBytes = 0;
 /** Wall time between beats while nothing changes, ms. */
 const beatMs = 1_000;
-/** A dashboard that takes nothing for this long is given up, ms. */
+/** A dashboard that takes nothing, or has not begun to watch, for this long is given up, ms. */
 const frozenMs = 60_000;
 
 /** One dashboard and the revision it has. */
@@ -13,7 +13,8 @@ export class Dashboard {
   readonly #socket: WebSocket;
   readonly #board: LiveBoard;
   #revision = -1;
-  #sentAt = 0;
+  /** When it was sent to last, or first seen: wall time, ms. */
+  #sentAt: number | undefined;
   #watching = false;
 
   constructor(socket: WebSocket, board: LiveBoard) {
@@ -24,8 +25,9 @@ export class Dashboard {
 
   /** Brings the dashboard up to date if it can take it. `wallNow`: ms, only for beats. */
   update(wallNow: number): void {
-    if (!this.#watching || this.#socket.readyState !== this.#socket.OPEN) return;
-    if (this.#socket.bufferedAmount > patientBytes) {
+    if (this.#socket.readyState !== this.#socket.OPEN) return;
+    this.#sentAt ??= wallNow;
+    if (!this.#watching || this.#socket.bufferedAmount > patientBytes) {
       if (wallNow - this.#sentAt > frozenMs) this.#socket.terminate();
       return;
     }

@@ -76,9 +76,18 @@ export class LiveBoard {
     for (const alarm of ended) this.#keepAlarm(alarm);
   }
 
-  /** Takes up durable happenings: an alarm change is never left out. */
-  note(happenings: readonly Happening[]): void {
+  /**
+   * Takes up durable happenings: an alarm change is never left out.
+   *
+   * @param at plant clock, ms
+   * @returns whether there is an alarm change, to be sent at once
+   */
+  note(happenings: readonly Happening[], at: number): boolean {
+    const before = this.#revision;
     for (const happening of happenings) if (happening.kind === 'alarm') this.#keepAlarm(happening.alarm);
+    if (this.#revision === before) return false;
+    this.#at = Math.max(this.#at, at);
+    return true;
   }
 
   /** Takes up what changed in the monitor since the last call. */

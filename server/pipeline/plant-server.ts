@@ -18,6 +18,8 @@ export interface PlantServerSetting {
   readonly plant: PlantFileText;
   /** undefined: the plant clock follows the records. */
   readonly clock: PlantClock | undefined;
+  /** Journal entries after which a snapshot is kept, whatever the time: 1 or more. */
+  readonly snapshotEntries: number;
   readonly log: Logger;
   /** Told what became durable, in order. */
   readonly onOutcome: (outcome: Outcome) => void;
@@ -32,16 +34,19 @@ export class PlantServer {
   readonly #setting: PlantServerSetting;
   readonly #judge: Judge;
   readonly #running = new Subscription();
-  #snapshotId = 0;
+  #snapshotId: number;
+  #snapshotUnderWay = false;
+  #givenUp = false;
   #fail: (cause: Error) => void = () => undefined;
   /** Rejects when nothing can be made durable any more. */
   readonly #failed: Promise<never>;
 
   // Started by `start` alone.
-  private constructor(setting: PlantServerSetting, judge: Judge) {
+  private constructor(setting: PlantServerSetting, judge: Judge, snapshotId: number) {
     this.#setting = setting;
     this.#judge = judge;
-    const { store, onOutcome, onFailure } = setting;
+    this.#snapshotId = snapshotId;
+    const { store, onOutcome } = setting;
     this.#failed = new Promise((_resolve, reject) => {
       this.#fail = reject;
     });
@@ -52,13 +57,15 @@ export class PlantServer {
           this.flow.weigh(store.waitingBytes);
           onOutcome(outcome);
         },
-        error: (cause: unknown) => {
-          this.#fail(cause as Error);
-          onFailure(cause as Error);
-        },
+        error: (cause: unknown) => this.giveUp(cause as Error),
       }),
     );
-    this.#running.add(this.inbox.arrivals$.subscribe(() => this.flow.weigh(store.waitingBytes)));
+    this.#running.add(
+      this.inbox.arrivals$.subscribe(() => {
+        this.flow.weigh(store.waitingBytes);
+        this.#keepSnapshotIfMuch();
+      }),
+    );
   }
 
   /** Brings back the stored state and takes up the plant file, if it is another one than stored. */
@@ -68,7 +75,7 @@ export class PlantServer {
     const { monitor, lastId, replayed, records, damagedSnapshots } = recovered;
     if (damagedSnapshots > 0) log.warn({ damagedSnapshots }, 'newer snapshots could not be read; an older state was brought up to date from the journal');
     log.info({ entries: replayed, records, lastId }, 'state brought back');
-    const server = new PlantServer(setting, new Judge(monitor, lastId, clock, plantOfChecked));
+    const server = new PlantServer(setting, new Judge(monitor, lastId, clock, plantOfChecked), lastId - replayed);
     const follows = clock ? 'time' : 'records';
     if (recovered.plant?.version !== plant.version || recovered.plant.clock !== follows) await server.usePlant(plant);
     return server;
@@ -97,6 +104,14 @@ export class PlantServer {
     return this.#unlessFailed((done) => this.inbox.put({ kind: 'barrier', done }));
   }
 
+  /** Nothing can be made durable any more: tells whoever waits, once. */
+  giveUp(cause: Error): void {
+    if (this.#givenUp) return;
+    this.#givenUp = true;
+    this.#fail(cause);
+    this.#setting.onFailure(cause);
+  }
+
   /** Keeps the whole state, if anything came since the last time. */
   async keepSnapshot(): Promise<void> {
     const { lastId } = this.#judge;
@@ -105,14 +120,30 @@ export class PlantServer {
     await this.#setting.store.keepSnapshot({ journalId: lastId, at: this.now, body: snapshotBytes(this.monitor) });
   }
 
+  /** Between two batches the monitor's state is that of the newest entry; one snapshot at a time. */
+  #keepSnapshotIfMuch(): void {
+    const { store, snapshotEntries, log } = this.#setting;
+    if (this.#snapshotUnderWay || this.#judge.lastId - this.#snapshotId < snapshotEntries || store.condition.kind !== 'open') return;
+    this.#snapshotUnderWay = true;
+    this.keepSnapshot()
+      .catch((cause: unknown) => log.error({ err: cause }, 'a snapshot was not kept'))
+      .finally(() => {
+        this.#snapshotUnderWay = false;
+      });
+  }
+
   /** Takes nothing more, makes durable what came, keeps the state. After a failure there is nothing left to do. */
   async stop(): Promise<void> {
     if (this.#setting.store.condition.kind === 'open') {
-      await this.settled();
-      await this.keepSnapshot();
+      await this.#settledAndKept().catch((cause: unknown) => this.#setting.log.error({ err: cause }, 'the state was not kept'));
     }
     this.inbox.close();
     this.#running.unsubscribe();
+  }
+
+  async #settledAndKept(): Promise<void> {
+    await this.settled();
+    await this.keepSnapshot();
   }
 
   /** @throws the failure, where one comes before the arrival is answered */

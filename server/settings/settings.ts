@@ -9,6 +9,7 @@ export interface Settings {
   readonly clock: string;
   readonly logLevel: LogLevel;
   readonly snapshotMinutes: number;
+  readonly snapshotEntries: number;
   readonly framesInFlight: number;
   readonly frameBytes: number;
   readonly dashboards: number;
@@ -37,6 +38,7 @@ export const settingRules: readonly SettingRule[] = [
   { key: 'clock', name: 'clock', of: { kind: 'text' }, preset: 'wall', help: "plant clock: 'wall', or 'records' to rehearse with stored records: it then stands at the newest record" },
   { key: 'logLevel', name: 'log-level', of: { kind: 'choice', of: ['debug', 'info', 'warn', 'error', 'silent'] }, preset: 'info', help: 'least severe entries to log' },
   { key: 'snapshotMinutes', name: 'snapshot-minutes', of: { kind: 'whole', from: 1, to: 1_440 }, preset: 5, help: 'minutes between snapshots of the whole state' },
+  { key: 'snapshotEntries', name: 'snapshot-entries', of: { kind: 'whole', from: 1, to: 1_000_000_000 }, preset: 100_000, help: 'journal entries after which a snapshot is kept before its time: a start reads back about so many at most' },
   { key: 'framesInFlight', name: 'frames-in-flight', of: { kind: 'whole', from: 1, to: 10_000 }, preset: 64, help: 'frames a source may have sent and not yet seen acknowledged' },
   { key: 'frameBytes', name: 'frame-bytes', of: { kind: 'whole', from: 1_024, to: 67_108_864 }, preset: 1_048_576, help: 'largest frame, bytes' },
   { key: 'dashboards', name: 'dashboards', of: { kind: 'whole', from: 1, to: 100_000 }, preset: 5_000, help: 'dashboards connected at the same time at most' },
