@@ -1,3 +1,4 @@
+import { everyStation } from '../ingest/allowed-stations.ts';
 import { StoreError } from './store-error.ts';
 
 const word = /^[\p{L}\p{N}._-]{1,64}$/u;
@@ -6,7 +7,7 @@ const word = /^[\p{L}\p{N}._-]{1,64}$/u;
 export function checkSource(name: string, stations: readonly string[]): void {
   checkWord('name', name);
   if (stations.length === 0) throw new StoreError('bad-source', 'stations: none given, expected one station or more.');
-  for (const station of stations) checkWord('station', station);
+  for (const station of stations) if (station !== everyStation) checkWord('station', station);
 }
 
 function checkWord(field: string, value: string): void {

@@ -53,6 +53,13 @@ class Source {
     });
   }
 
+  /** @returns false if the window is full */
+  sendOne(window) {
+    if (this.#acknowledged && (this.#next - this.#done) / this.#records >= window) return false;
+    this.#socket.send(this.#numbered(), { compress: false });
+    return true;
+  }
+
   #numbered() {
     const pool = this.#pools[this.#turn % this.#pools.length];
     const variant = Math.floor(this.#turn / this.#pools.length) % variants;
@@ -69,19 +76,37 @@ class Source {
 
 const open = new Map();
 
-async function connect({ name, port, shape, form, records, connections, streams, acknowledged }) {
+async function connect({ name, port, shape, form, records, connections, streams, acknowledged, tokens }) {
   const sources = [];
   for (let index = 0; index < connections; index += 1) {
     const mine = Array.from({ length: streams }, (_, stream) => stream).filter((stream) => stream % connections === index);
     const pools = mine.map((stream) => framesOf({ shape, form, stream, records, variants }));
-    const socket = new WebSocket(`ws://127.0.0.1:${port}/${index}`, sourceProtocol, { perMessageDeflate: false });
+    const [path, headers] = tokens ? ['source', { authorization: `Bearer ${tokens[index]}` }] : [index, {}];
+    const socket = new WebSocket(`ws://127.0.0.1:${port}/${path}`, sourceProtocol, { perMessageDeflate: false, headers });
     await new Promise((resolve, reject) => socket.once(acknowledged ? 'message' : 'open', resolve).once('error', reject));
     sources.push(new Source(socket, pools, records, acknowledged));
   }
   open.set(name, sources);
 }
 
+/** Sends frames at an even pace; a source whose window is full skips its turn. @returns records sent in the time */
+async function pace({ name, framesASecond, seconds, window }) {
+  const sources = open.get(name);
+  const begin = performance.now();
+  let [sent, turn] = [0, 0];
+  while (performance.now() - begin < seconds * 1_000) {
+    const due = Math.floor(((performance.now() - begin) / 1_000) * framesASecond);
+    for (let ready = sources.length; sent < due && ready > 0; turn += 1) {
+      if (sources[turn % sources.length].sendOne(window)) sent += 1;
+      else ready -= 1;
+    }
+    await new Promise((resolve) => setTimeout(resolve, 5));
+  }
+  return sent;
+}
+
 answering({
   connect,
+  pace,
   send: ({ name, frames, window }) => Promise.all(open.get(name).map((source) => source.send(frames, window))).then(() => undefined),
 });
