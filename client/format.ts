@@ -55,7 +55,7 @@ function writingOf(card: FigureCard, value: number, shareUnit: ShareUnit): Writi
       if (shareUnit === 'ppm') return { value: value * 1e6, span: value * 1e6, unit: 'ppm' };
       return value > 0 ? { value: 1 / value, span: 1 / value, unit: '', before: '1 in ' } : { text: 'none', unit: '' };
     case 'rate':
-      return { value: value * card.scale.per, span: value * card.scale.per, unit: `per ${card.scale.per === 1 ? '' : `${card.scale.per} `}${card.scale.unit}` };
+      return { value, span: value, unit: `per ${card.scale.per === 1 ? '' : `${card.scale.per} `}${card.scale.unit}` };
     case 'measure':
       return { value, span: Math.abs(card.guaranteeLine - card.target) || Math.abs(value), unit: card.scale.unit };
   }

@@ -3,10 +3,8 @@ import { fileURLToPath } from 'node:url';
 import fastifyStatic from '@fastify/static';
 import { fastify, type FastifyInstance } from 'fastify';
 
-/** Where the built dashboard lies, beside the built server. */
-const clientFolder = fileURLToPath(new URL('../../client', import.meta.url));
-/** The same, when the server runs from its sources (tests). */
-const builtClientFolder = fileURLToPath(new URL('../../.build/client', import.meta.url));
+/** Where the built dashboard lies: beside the built server, also for a server that runs from its sources (tests). */
+const folder = fileURLToPath(new URL(import.meta.url.endsWith('.ts') ? '../../.build/client' : '../../client', import.meta.url));
 
 const securityHeaders = {
   'content-security-policy':
@@ -32,7 +30,6 @@ export async function httpServer(): Promise<FastifyInstance> {
     const message = status >= 500 ? 'The server could not do this; its log says why.' : error.message;
     void reply.status(status).send({ message, ...(error.field === undefined ? {} : { field: error.field }) });
   });
-  const folder = existsSync(`${clientFolder}/index.html`) ? clientFolder : builtClientFolder;
   const page = existsSync(`${folder}/index.html`) ? readFileSync(`${folder}/index.html`, 'utf8') : undefined;
   if (page !== undefined) {
     await http.register(fastifyStatic, { root: folder, index: 'index.html', maxAge: '1y', immutable: true, setHeaders: (response, path) => {

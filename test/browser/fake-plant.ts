@@ -73,8 +73,8 @@ export const eight: readonly FakeGuarantee[] = [
     estimate: 251.42, bound: 250.96, oppositeBound: 251.7, allowance: { estimate: 0.29, bound: 0.52, opposite: undefined, trail: [0.5, 0.53, 0.5, 0.51, 0.52, 0.52] },
     figures: { inspected: 400, mean: 251.42, sd: 1.31 }, margin: { clearance: 0.96 }, product: 'Kit 250 ml',
   }),
-  guarantee({ id: 'flaws-bh4', name: 'BH-4 surface flaws', stationNames: ['Cutting'], characteristicName: 'surface flaws', quantity: 'rate', scale: { kind: 'rate', per: 100, unit: 'm' }, guaranteeLine: 0.02, window: { kind: 'units', units: 900 } }, {
-    estimate: 0.0052, bound: 0.0082, oppositeBound: 0.003, allowance: { estimate: 0.26, bound: 0.41, opposite: undefined, trail: [0.44, 0.43, 0.43, 0.42, 0.41, 0.41] },
+  guarantee({ id: 'flaws-bh4', name: 'BH-4 surface flaws', stationNames: ['Cutting'], characteristicName: 'surface flaws', quantity: 'rate', scale: { kind: 'rate', per: 100, unit: 'm' }, guaranteeLine: 2, window: { kind: 'units', units: 900 } }, {
+    estimate: 0.52, bound: 0.82, oppositeBound: 0.3, allowance: { estimate: 0.26, bound: 0.41, opposite: undefined, trail: [0.44, 0.43, 0.43, 0.42, 0.41, 0.41] },
     figures: { count: 24, exposure: 4610 }, margin: { canTake: 19 }, drift: 'falling',
   }),
   guarantee({ id: 'chain-b', name: 'BH-6 crimp to final', ...lineB, stationNames: ['Crimping', 'Leak test', 'Final inspection'], product: 'bh-6', productName: 'Hose BH-6', quantity: 'chained-yield', side: 'at-least', guaranteeLine: 0.96, target: 0.98, window: { kind: 'run' } }, {

@@ -25,7 +25,7 @@ describe('figures', () => {
   });
 
   it('of a rate are told for its own exposure, of a mean with three digits of the allowance', () => {
-    expect(loose(written(english.figure(card({ scale: { kind: 'rate', per: 100, unit: 'm' } }), 0.0082)))).toBe('0.82 per 100 m');
+    expect(loose(written(english.figure(card({ scale: { kind: 'rate', per: 100, unit: 'm' } }), 0.82)))).toBe('0.82 per 100 m');
     expect(loose(written(english.figure(card({ scale: { kind: 'measure', unit: 'ml' }, side: 'at-least', guaranteeLine: 250, target: 252 }), 250.9631)))).toBe('250.96 ml');
   });
 
