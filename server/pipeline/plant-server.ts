@@ -7,7 +7,7 @@ import { Flow } from '../ingest/flow.ts';
 import { plantOfChecked, type PlantFileText } from '../plant-file.ts';
 import type { Store } from '../store/store.ts';
 import { Inbox } from './inbox.ts';
-import { Judge, type Outcome } from './judge.ts';
+import { Judge, type Outcome, type PlantReader } from './judge.ts';
 import { throughPlant } from './pipeline.ts';
 import { recover, snapshotBytes } from './recover.ts';
 
@@ -71,11 +71,13 @@ export class PlantServer {
   /** Brings back the stored state and takes up the plant file, if it is another one than stored. */
   static async start(setting: PlantServerSetting): Promise<PlantServer> {
     const { store, plant, clock, log } = setting;
-    const recovered = await recover(store, plantOfChecked);
+    // A large plant file takes longer to read than a snapshot: the one in hand is not read again.
+    const readPlant: PlantReader = (text, version) => (version === plant.version ? plant.plant : plantOfChecked(text, version));
+    const recovered = await recover(store, readPlant);
     const { monitor, lastId, replayed, records, damagedSnapshots } = recovered;
     if (damagedSnapshots > 0) log.warn({ damagedSnapshots }, 'newer snapshots could not be read; an older state was brought up to date from the journal');
     log.info({ entries: replayed, records, lastId }, 'state brought back');
-    const server = new PlantServer(setting, new Judge(monitor, lastId, clock, plantOfChecked), lastId - replayed);
+    const server = new PlantServer(setting, new Judge(monitor, lastId, clock, readPlant), lastId - replayed);
     const follows = clock ? 'time' : 'records';
     if (recovered.plant?.version !== plant.version || recovered.plant.clock !== follows) await server.usePlant(plant);
     return server;
