@@ -30,6 +30,7 @@ export async function openBrowser(): Promise<Browser> {
       const page = await context.newPage();
       page.on('pageerror', (error) => { errors.push(String(error)); });
       page.on('console', (message) => { if (/Content Security Policy|Lit is in dev mode|Multiple versions/.test(message.text())) errors.push(message.text().slice(0, 160)); });
+      page.setDefaultTimeout(15_000);
       await page.setViewportSize(sizes[size]);
       await page.emulateMedia({ colorScheme: theme, reducedMotion: 'reduce' });
       await page.goto(url);
