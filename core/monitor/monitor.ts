@@ -182,14 +182,15 @@ export class Monitor {
     let sequence = frame.first;
     for (const part of frame.parts) {
       if (this.#follows && !('time' in part)) this.advance(part.at as EpochMs);
+      const known = notCounted.length;
       this.#takePart(part, source, sequence, late, notCounted, ledger);
+      for (const { sequence: first, records, code } of notCounted.slice(known)) {
+        this.#tell({ kind: 'set-aside', at: this.now, source: name, sequence: first, records, reason: code });
+      }
       sequence += part.records;
     }
     if (late) ledger.fill(frame.first, frame.records);
     else ledger.advance(sequence);
-    for (const { sequence: first, records, code } of notCounted) {
-      this.#tell({ kind: 'set-aside', at: this.now, source: name, sequence: first, records, reason: code });
-    }
     return { kind: 'taken', frame, next: ledger.next, notCounted };
   }
 
@@ -222,8 +223,15 @@ export class Monitor {
     for (const { from, to } of implausible) this.#setAside(notCounted, sequence + from, to - from, 'time-implausible', part.origin.station);
     if (stretches.length === 0) return;
     this.#moment.begin(this.sources.nameOf(source), sequence, part.time);
-    if (this.#follows) for (const stretch of stretches) this.#takeStretches(route, part, [stretch], source, sequence, late);
+    if (this.#follows) this.#takeOneByOne(route, part, stretches, source, sequence, late);
     else this.#takeStretches(route, part, stretches, source, sequence, late);
+  }
+
+  /** Where the clock follows the records, anything may fall due between two of them. */
+  #takeOneByOne(route: KnownRoute, part: InspectionPart, stretches: readonly Stretch[], source: number, sequence: number, late: boolean): void {
+    for (const { from, to, minute } of stretches) {
+      for (let place = from; place < to; place += 1) this.#takeStretches(route, part, [{ from: place, to: place + 1, minute }], source, sequence, late);
+    }
   }
 
   #takeStretches(route: KnownRoute, part: InspectionPart, stretches: readonly Stretch[], source: number, sequence: number, late: boolean): void {

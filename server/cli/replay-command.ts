@@ -14,7 +14,7 @@ import { wholeOption } from './whole-option.ts';
 const examples = `
 FILE holds rows, as CSV or NDJSON ('-': standard input). Each line printed is one happening as JSON, in the order in
 which it was decided: evidence, alarm, line, set-aside. A server started with '--clock records' decides the same of the
-same rows. With --minutes, closed minutes come between them as {"kind":"minute", …}.
+same rows. With --minutes, closed minutes come after the happenings of their frame, as {"kind":"minute", …}.
 
 Examples:
   vouchline replay --plant plant.yaml week-23.csv
@@ -38,7 +38,7 @@ export function replayCommand(): Command {
     .requiredOption('--plant <file>', 'plant file (YAML or JSON)')
     .option('--source <name>', "name of the rows' source in what is printed; the file's name when absent")
     .option('--minutes', 'print closed minutes too')
-    .option('--frame-records <number>', 'records of a frame at most; changes nothing of what happens', '5000')
+    .option('--frame-records <number>', 'records of a frame at most; decides nothing', '5000')
     .addHelpText('after', examples)
     .action(async (file: string, options: ReplayOptions) => {
       const records = wholeOption('--frame-records', options.frameRecords, 1, sourceLimits.records);
