@@ -1,5 +1,5 @@
 import { gaussNodes, gaussWeights } from './gauss-legendre.ts';
-import type { NoncentralTail } from './noncentral-t.ts';
+import type { NoncentralTail } from './noncentral-tail.ts';
 import { normalDensity, normalTail } from './normal.ts';
 import { logSpreadDensity, spreadExponent } from './spread-density.ts';
 

@@ -1,15 +1,7 @@
 import { layeredNoncentralT } from './noncentral-t-layered.ts';
+import type { NoncentralTail } from './noncentral-tail.ts';
 import { logNormalCdf, millsRatio, normalFromMiddle } from './normal.ts';
 import { logSpreadDensity, spreadExponent } from './spread-density.ts';
-
-/** A tail probability P in logarithms, and its derivatives over P, against the noncentrality and against t. */
-export interface NoncentralTail {
-  readonly logTail: number;
-  readonly byNoncentrality: number;
-  readonly twiceByNoncentrality: number;
-  readonly byT: number;
-  readonly twiceByT: number;
-}
 
 const peakDensity = 0.3989422804014327;
 /** Below this many degrees of freedom the integrand falls slowly to the left, and its left end is drawn in. */
