@@ -1,4 +1,5 @@
 import type { Correction, Frame, InspectionPart, LineMark, Lost, Part } from '../record/part.ts';
+import { newBytes } from '../record/room.ts';
 import { bitsForm, findings, kinds, layoutVersion, magic0, magic1, noName, partHeadBytes, tableStart, timeForm } from './binary-layout.ts';
 import { namesOf, type FrameNames } from './frame-names.ts';
 import { planOf, type PartPlan } from './part-size.ts';
@@ -11,15 +12,15 @@ const twoTo32 = 4_294_967_296;
  * The binary frame that says what this frame says, each column in its smallest form.
  *
  * @param frame as a reader or frameOf made it: its rules are taken as kept, not checked again
- * @returns bytes of their own, a multiple of 8
+ * @returns bytes of their own, a multiple of 8; never transfer their buffer, it may hold other frames
  */
 export function binaryOfFrame(frame: Frame): Uint8Array<ArrayBuffer> {
   const names = namesOf(frame);
   const reasons = frame.parts.map((part) => ('reason' in part ? utf8Of(part.reason) : noReason));
   const plans = frame.parts.map((part, i) => planOf(part, (reasons[i] as Uint8Array).length));
   let at = tableStart + names.table.length;
-  const bytes = new Uint8Array(plans.reduce((size, plan) => size + plan.bytes, at));
-  const view = new DataView(bytes.buffer);
+  const bytes = newBytes(plans.reduce((size, plan) => size + plan.bytes, at));
+  const view = new DataView(bytes.buffer, bytes.byteOffset, bytes.byteLength);
   view.setUint8(0, magic0);
   view.setUint8(1, magic1);
   view.setUint8(2, layoutVersion);
@@ -52,7 +53,7 @@ function writePart(view: DataView, at: number, part: Part, plan: PartPlan, names
   if (part.kind === 'correction') writeCorrection(view, body, part);
   else if ('origin' in part) writeColumns(view, writeTimes(view, body, part.time, plan), part, form);
   else writeEvent(view, body, part, names);
-  if (reason.length > 0) new Uint8Array(view.buffer, body + (part.kind === 'correction' ? 32 : 16)).set(reason);
+  if (reason.length > 0) new Uint8Array(view.buffer, view.byteOffset + body + (part.kind === 'correction' ? 32 : 16)).set(reason);
 }
 
 /** Returns where the columns behind the times begin. */

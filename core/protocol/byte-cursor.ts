@@ -1,4 +1,4 @@
-import { newColumn } from '../record/new-column.ts';
+import { newColumn } from '../record/room.ts';
 import { noPlaces } from '../record/no-places.ts';
 import { refuse } from '../record/refusal.ts';
 
