@@ -24,7 +24,7 @@ describe('alarms on the live board', () => {
   it('are there as soon as they are noted, without a refresh, and say when', () => {
     const board = new LiveBoard({ boot: 'b', clockRate: 1, demo: false });
     const known = board.revision;
-    expect(board.note([evidence, { kind: 'alarm', alarm } as Happening], at + 5)).toBe(true);
+    expect(board.note([evidence, { kind: 'alarm', at, change: 'raised', alarm }], at + 5)).toBe(true);
     const change = JSON.parse(board.since(known)) as LiveChange;
     expect(change.alarms.map(({ id }) => id)).toEqual([7]);
     expect(change.at).toBe(at + 5);
