@@ -55,6 +55,7 @@ export class SourceConnection {
   #setAside: SetAside[] = [];
   #ackDue = false;
   #open = true;
+  #taking = true;
 
   constructor(socket: WebSocket, sender: Sender, host: SourceHost) {
     this.sender = sender;
@@ -78,6 +79,11 @@ export class SourceConnection {
     this.#close(code);
   }
 
+  /** Takes no more frames; those taken are still answered, the others are sent again another time. */
+  takeNoMore(): void {
+    this.#taking = false;
+  }
+
   /** The server goes down on purpose. */
   stopping(reason: string): void {
     this.#send({ type: 'stopping', reason });
@@ -92,7 +98,7 @@ export class SourceConnection {
   }
 
   #onMessage(data: RawData, isBinary: boolean): void {
-    if (!this.#open) return;
+    if (!this.#open || !this.#taking) return;
     this.#inFlight += 1;
     if (this.#inFlight > this.#host.limits.framesInFlight) {
       this.end('too-many-in-flight');

@@ -87,6 +87,7 @@ export class SourceDesk {
 
   /** Makes durable and answers what was received, then tells the sources that the server stops. */
   async stop(reason: string): Promise<void> {
+    for (const connection of this.#connections.values()) connection.takeNoMore();
     if (this.#setting.store.condition.kind === 'open') {
       this.reportRefused();
       await this.#setting.plant.settled().catch(() => undefined); // A failure has been told already, and nothing more can be made durable.
