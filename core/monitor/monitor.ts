@@ -16,7 +16,7 @@ import type { NotCounted, Receipt } from './receipt.ts';
 import { Routes, type KnownRoute } from './routes.ts';
 import type { SourceLedger } from './source-ledger.ts';
 import { SourceList } from './source-list.ts';
-import { cutByMinute, type Stretch } from './stretches.ts';
+import { cutByMinute, oneByOne, type Stretch } from './stretches.ts';
 import { StreamList } from './stream-list.ts';
 import { Watch } from './watch.ts';
 
@@ -153,16 +153,12 @@ export class Monitor {
         watch.restart(clockMoment(this.now));
         return undefined;
       }
-      case 'upload-begun': {
-        const { ledger } = this.sources.of(act.source);
-        ledger.uploads.begin(act.key, act.mark, ledger.next);
+      case 'upload-begun':
+        this.sources.of(act.source).ledger.beginUpload(act.key, act.mark);
         return undefined;
-      }
-      case 'upload-ended': {
-        const { ledger } = this.sources.of(act.source);
-        ledger.uploads.end(ledger.next);
+      case 'upload-ended':
+        this.sources.of(act.source).ledger.endUpload();
         return undefined;
-      }
     }
   }
 
@@ -223,15 +219,8 @@ export class Monitor {
     for (const { from, to } of implausible) this.#setAside(notCounted, sequence + from, to - from, 'time-implausible', part.origin.station);
     if (stretches.length === 0) return;
     this.#moment.begin(this.sources.nameOf(source), sequence, part.time);
-    if (this.#follows) this.#takeOneByOne(route, part, stretches, source, sequence, late);
+    if (this.#follows) for (const single of oneByOne(stretches)) this.#takeStretches(route, part, [single], source, sequence, late);
     else this.#takeStretches(route, part, stretches, source, sequence, late);
-  }
-
-  /** Where the clock follows the records, anything may fall due between two of them. */
-  #takeOneByOne(route: KnownRoute, part: InspectionPart, stretches: readonly Stretch[], source: number, sequence: number, late: boolean): void {
-    for (const { from, to, minute } of stretches) {
-      for (let place = from; place < to; place += 1) this.#takeStretches(route, part, [{ from: place, to: place + 1, minute }], source, sequence, late);
-    }
   }
 
   #takeStretches(route: KnownRoute, part: InspectionPart, stretches: readonly Stretch[], source: number, sequence: number, late: boolean): void {

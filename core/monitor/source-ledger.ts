@@ -82,6 +82,15 @@ export class SourceLedger {
     });
   }
 
+  /** Rows without sequences are uploaded under this key from here on. */
+  beginUpload(key: string, mark: string): void {
+    this.uploads.begin(key, mark, this.#next);
+  }
+
+  endUpload(): void {
+    this.uploads.end(this.#next);
+  }
+
   snapshot(): LedgerSnapshot {
     return { next: this.#next, holes: [...this.#holes], uploads: this.uploads.snapshot() };
   }

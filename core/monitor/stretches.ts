@@ -58,3 +58,8 @@ const beyond = Infinity;
 
 const minuteOf = (at: number): number => at - (at % minuteMs);
 const keyOf = (at: number, latest: number): number => (at > latest ? beyond : minuteOf(at));
+
+/** Stretches of one record each: where the clock follows the records, anything may fall due between two of them. */
+export function* oneByOne(stretches: readonly Stretch[]): Generator<Stretch, void, undefined> {
+  for (const { from, to, minute } of stretches) for (let place = from; place < to; place += 1) yield { from: place, to: place + 1, minute };
+}
