@@ -12,7 +12,7 @@ export interface Method {
 const steady = 'The units of the window come from one steady process: each nonconforms with the same chance, independently of the others.';
 const clopperPearson = 'C. J. Clopper, E. S. Pearson, Biometrika 26 (1934), 404–413';
 
-const methods = {
+export const windowMethods = {
   binomial: {
     name: 'exact binomial bound',
     version: 1,
@@ -82,19 +82,19 @@ export function methodOf(guarantee: Guarantee): Method {
   const { promise } = guarantee;
   switch (promise.quantity) {
     case 'nonconforming-fraction':
-      return methods.binomial;
+      return windowMethods.binomial;
     case 'yield':
-      return methods.yield;
+      return windowMethods.yield;
     case 'rate':
-      return methods.poisson;
+      return windowMethods.poisson;
     case 'mean':
-      if (promise.range) return methods.boundedMean;
-      return promise.sigma ? methods.knownSigmaMean : methods.studentMean;
+      if (promise.range) return windowMethods.boundedMean;
+      return promise.sigma ? windowMethods.knownSigmaMean : windowMethods.studentMean;
     case 'fraction-beyond-limit':
-      return promise.model === 'normal' ? methods.normalTail : methods.binomial;
+      return promise.model === 'normal' ? windowMethods.normalTail : windowMethods.binomial;
     case 'chained-yield':
-      return methods.chained;
+      return windowMethods.chained;
     case 'lot-fraction':
-      return methods.lot;
+      return windowMethods.lot;
   }
 }
