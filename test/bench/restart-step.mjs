@@ -69,6 +69,14 @@ const steps = {
     const { records: seen } = await recover(store, readKnown);
     return { seen, ...took() };
   },
+  /** What a start with a snapshot takes beside loading the program: the store opened, the plant file read, the state taken up. */
+  async resume() {
+    const took = taking();
+    const store = await openStore(data);
+    plantOfChecked(text, version);
+    await server(store);
+    return took();
+  },
   /** Takes up the newest state and keeps a snapshot of it. */
   async snapshot() {
     const store = await openStore(data);
