@@ -56,10 +56,12 @@ export async function fakeSourceServer({ window = 4, fate = () => 'answer', hold
       const admission = fake.ledger.place(frame.first, frame.records);
       if (admission.kind === 'gap') return answered(), socket.send(JSON.stringify(gapMessage(frame.first, admission.expected)));
       const rest = admission.kind === 'tail' ? tailOf(frame, admission.skip) : frame;
-      const records = fateOf === 'take one and break' ? 1 : rest.records;
+      const records = fateOf === 'take one and break' && admission.kind !== 'late' ? 1 : rest.records;
       if (admission.kind !== 'repeat') {
         for (let i = 0; i < records; i += 1) fake.taken.push(rest.first + i);
-        fake.ledger.advance(rest.first + records);
+        if (admission.kind === 'late') fake.ledger.fill(rest.first, records);
+        else fake.ledger.advance(rest.first + records);
+        if (rest.parts[0]?.kind === 'lost') fake.ledger.declareLost(rest.first, records);
       }
     }
     if (fateOf !== 'answer') return socket.terminate();

@@ -6,7 +6,7 @@ import type { Frame } from '../../../core/record/part.ts';
 import { backoffMs } from '../../../server/feed/backoff.ts';
 import { SourceClient, type ClientEvent } from '../../../server/feed/source-client.ts';
 import type { SourceFailure } from '../../../server/feed/source-failure.ts';
-import { fakeSourceServer, type FakeSetting, type FakeSourceServer } from './fake-source-server.ts';
+import { fakeSourceServer, type FakeSetting, type Fate, type FakeSourceServer } from './fake-source-server.ts';
 
 const ends: (() => Promise<void> | void)[] = [];
 afterEach(async () => {
@@ -81,6 +81,20 @@ describe('a source client', () => {
       ),
       { seed: 7, numRuns: 60 },
     ));
+
+  it('sends what fills a hole until that itself is answered, though everything below the next sequence is known', async () => {
+    const fates: Fate[] = [];
+    const fake = await server({ fate: () => fates.shift() ?? 'answer' });
+    const source = client(fake.address);
+    await source.open();
+    const lost = frameOf(11, [{ kind: 'lost', records: 5, at: 1, station: 'A.leak-test', reason: 'overrun' }]);
+    fates.push('answer', 'answer', 'answer', 'break', 'take and break', 'answer');
+    for (const one of [frame(1, 10), lost, frame(16, 5), frame(11, 5), frame(21, 5)]) await source.send(one);
+    await source.settled();
+    expect(fake.taken.slice(20)).toEqual([11, 12, 13, 14, 15, 21, 22, 23, 24, 25]);
+    expect(fake.ledger.holes).toEqual([]);
+    expect(fake.connections).toBe(3);
+  });
 
   it('tells of the break and of the new greeting', async () => {
     const fates = ['take and break' as const];
