@@ -29,14 +29,35 @@ export interface BoundedSample {
  *   theorem 4 (both from memory); joined by the union bound
  */
 export function boundedMeanLower(sample: BoundedSample, tail: Tail): number {
-  const { n, from, to } = sample;
   requireBounded(sample, tail);
+  const { share, wanted, bernstein } = partsOf(sample, tail);
+  return sample.from + (sample.to - sample.from) * Math.max(hoeffdingLower(share, wanted), bernstein);
+}
+
+/**
+ * Whether the lower bound of `boundedMeanLower` stands at or above a line, without searching for the bound: what a
+ * record path asks. Arguments, errors, coverage and source as there.
+ *
+ * @param line any number: up to `from` it is always reached, from `to` on never
+ */
+export function boundedMeanReaches(sample: BoundedSample, line: number, tail: Tail): boolean {
+  requireBounded(sample, tail);
+  const { from, to } = sample;
+  if (line <= from) return true;
+  if (!(line < to)) return false;
+  const { share, wanted, bernstein } = partsOf(sample, tail);
+  const wantedShare = (line - from) / (to - from);
+  return bernstein >= wantedShare || (share > wantedShare && divergence(share, wantedShare) >= wanted);
+}
+
+/** Both bounds on a range of width 1: that of Hoeffding as the divergence it asks for. */
+function partsOf({ n, mean, sd, from, to }: BoundedSample, tail: number): { share: number; wanted: number; bernstein: number } {
   const width = to - from;
-  const share = (sample.mean - from) / width;
+  const share = (mean - from) / width;
   const logPart = Math.log(2 / tail);
-  const spread = sample.sd / width;
+  const spread = sd / width;
   const bernstein = share - spread * Math.sqrt((2 * (logPart + Math.LN2)) / n) - (7 * (logPart + Math.LN2)) / (3 * (n - 1));
-  return from + width * Math.max(hoeffdingLower(share, logPart / n), bernstein);
+  return { share, wanted: logPart / n, bernstein };
 }
 
 /** Upper bound, the mirror image; arguments, errors, coverage and source as of `boundedMeanLower`. */

@@ -37,8 +37,8 @@ export class CountJudge implements Judge {
   #sureCount = 0;
   #sureSize = 0;
 
-  constructor(by: JudgeThresholds) {
-    this.#by = by;
+  constructor({ line, opposite, backFromCrossing, backFromViolation, rate }: JudgeThresholds) {
+    this.#by = { line, opposite, backFromCrossing, backFromViolation, rate };
   }
 
   state(size: number, count: number, ripe: boolean): EvidenceState {

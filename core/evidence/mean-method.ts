@@ -1,4 +1,4 @@
-import { boundedMeanLower, boundedMeanUpper } from '../bound/bounded-mean.ts';
+import { boundedMeanLower, boundedMeanReaches, boundedMeanUpper } from '../bound/bounded-mean.ts';
 import { meanLower, meanLowerKnownSigma, meanUpper, meanUpperKnownSigma } from '../bound/mean.ts';
 import { normalQuantileOfTail } from '../numerics/normal.ts';
 import { tQuantileOfTail } from '../numerics/student-t.ts';
@@ -54,9 +54,14 @@ export function knownSigmaMean(sigma: number): MeanMethod {
 
 /** @param tail of the guarantee's bound: it says how many values at the best end of the range are enough */
 export function boundedMean({ from, to }: ValueRange, tail: Tail): MeanMethod {
-  const bound = (side: Side, sample: MeanSample, level: Tail): number => (side === 'above' ? boundedMeanLower : boundedMeanUpper)({ ...sample, from, to }, level);
-  const stands = (side: Side, sample: MeanSample, line: number, level: Tail): boolean =>
-    roomOf(side, sample.mean, line) > 0 && roomOf(side, bound(side, sample, level), line) >= 0;
+  // Values at an end of the range may have a mean that rounding puts beyond it.
+  const inside = (mean: number): number => Math.min(to, Math.max(from, mean));
+  const bound = (side: Side, { n, mean, sd }: MeanSample, level: Tail): number =>
+    (side === 'above' ? boundedMeanLower : boundedMeanUpper)({ n, mean: inside(mean), sd, from, to }, level);
+  const stands = (side: Side, { n, mean, sd }: MeanSample, line: number, level: Tail): boolean =>
+    side === 'above'
+      ? boundedMeanReaches({ n, mean: inside(mean), sd, from, to }, line, level)
+      : boundedMeanReaches({ n, mean: -inside(mean), sd, from: -to, to: -from }, -line, level);
   let enough = Infinity;
   return {
     bound,

@@ -9,6 +9,9 @@ export interface Thresholds {
   sizeViolated(count: number): number;
 }
 
+/** Counts below which thresholds are remembered: 8 MiB a table at most, however many a record claims to have counted. */
+const mostRemembered = 1_048_576;
+
 /** Remembers thresholds as they are first asked for; a table of 8 bytes a count, grown by doubling. */
 export class RememberedThresholds implements Thresholds {
   readonly #of: Thresholds;
@@ -20,12 +23,14 @@ export class RememberedThresholds implements Thresholds {
   }
 
   sizeToDemonstrate(count: number): number {
+    if (count >= mostRemembered) return this.#of.sizeToDemonstrate(count);
     if (count >= this.#demonstrate.length) this.#demonstrate = grown(this.#demonstrate, count);
     const known = this.#demonstrate[count] as number;
     return known === known ? known : (this.#demonstrate[count] = this.#of.sizeToDemonstrate(count));
   }
 
   sizeViolated(count: number): number {
+    if (count >= mostRemembered) return this.#of.sizeViolated(count);
     if (count >= this.#violated.length) this.#violated = grown(this.#violated, count);
     const known = this.#violated[count] as number;
     return known === known ? known : (this.#violated[count] = this.#of.sizeViolated(count));

@@ -134,7 +134,7 @@ export class UnitEvidence implements Evidence {
   weigh(moment: Moment): void {
     const { inspected, nonconforming } = this.window;
     this.#weighing.weigh(this.#rule.judge.assess(inspected, nonconforming, this.ripe, this.#weighing.waiting), this.#position, moment);
-    this.#wakeAt = this.#nextWake();
+    this.#wakeAt = this.#nextWake(inspected, nonconforming);
   }
 
   figures(): Readonly<Record<string, number>> {
@@ -171,7 +171,7 @@ export class UnitEvidence implements Evidence {
   restore(from: UnitEvidenceSnapshot): void {
     this.#position = from.position;
     this.window.restore(from.window);
-    this.#wakeAt = this.#nextWake();
+    this.#wakeAt = this.#nextWake(this.window.inspected, this.window.nonconforming);
   }
 
   /** Conforming units in a row until demonstrated: by growing, and by old nonconforming units leaving. */
@@ -213,8 +213,7 @@ export class UnitEvidence implements Evidence {
     this.weigh(moment);
   }
 
-  #nextWake(): number {
-    const { inspected, nonconforming } = this.window;
+  #nextWake(inspected: number, nonconforming: number): number {
     let wait = this.window.nextDeparture();
     if (!this.window.full) {
       const size = this.window.size ?? Infinity;

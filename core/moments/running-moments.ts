@@ -28,6 +28,8 @@ export class RunningMoments {
   readonly #second = new ExactSum();
   readonly #third = new ExactSum();
   readonly #scratch = new ExactSum();
+  /** Sum of the squares about the mean; NaN after a change until it is asked for. */
+  #known = NaN;
 
   /**
    * @param reference a value near the measurements, e.g. the target, in their unit
@@ -50,6 +52,7 @@ export class RunningMoments {
    */
   restore(from: MomentsSnapshot): void {
     this.#requireSameReference(from.reference);
+    this.#known = NaN;
     this.#count = from.count;
     this.#largest = from.largest;
     this.#sums().forEach((sum, i) => {
@@ -64,6 +67,7 @@ export class RunningMoments {
    */
   include(other: RunningMoments): void {
     this.#requireSameReference(other.reference);
+    this.#known = NaN;
     this.#count += other.#count;
     const others = other.#sums();
     this.#sums().forEach((sum, i) => {
@@ -75,6 +79,7 @@ export class RunningMoments {
 
   /** Forgets every value. */
   clear(): void {
+    this.#known = NaN;
     this.#count = 0;
     this.#largest = 0;
     for (const sum of this.#sums()) {
@@ -105,6 +110,7 @@ export class RunningMoments {
     const signed = sign * distance;
     const square = distance * distance;
     const rest = productRest(distance, distance, square);
+    this.#known = NaN;
     this.#count += sign;
     this.#first.add(signed);
     this.#second.add(sign * square);
@@ -123,8 +129,13 @@ export class RunningMoments {
     return [this.#first, this.#second, this.#third];
   }
 
-  /** Sum of the squared distances from the mean, 0 or more. Without objects: it is asked after every record. */
+  /** Sum of the squared distances from the mean, 0 or more. Without objects, and once a change: it is asked after every record. */
   #squares(): number {
+    const known = this.#known;
+    return known === known ? known : (this.#known = this.#computedSquares());
+  }
+
+  #computedSquares(): number {
     const [first, rest, n] = [this.#first.high, this.#first.low, this.#count];
     const centre = (first + rest) / n;
     const moved = this.#scratch;

@@ -64,6 +64,19 @@ describe('evidence on a rate', () => {
   });
 });
 
+describe('claims beyond belief', () => {
+  it('cost no memory and no error', () => {
+    const rate = new WatchOne(`station: A.cutting, characteristic: surface, quantity: rate, at-most: 4 per 100 m, window: run, alarms: { ${quiet} }`);
+    rate.take(cuts([4_000_000_000], [1]), cuts([0], [1e300]), cuts([4_000_000_000], [1]));
+    expect([rate.state, rate.watch.evidence.bounds().bound]).toEqual(['demonstrated', expect.any(Number)]);
+    rate.take(cuts([0, 0], [1.7e308, 1.7e308]));
+    expect([rate.state, rate.watch.evidence.bounds().bound]).toEqual(['unknown', undefined]);
+    const edge = new WatchOne(`${fill}, range: { from: 249.1 ml, to: 252.3 ml }, window: run, alarms: { ${quiet} }`);
+    edge.take(fills(Array.from({ length: 3000 }, () => 252.3)));
+    expect([edge.state, edge.watch.evidence.bounds().estimate]).toEqual(['demonstrated', expect.closeTo(252.3, 9)]);
+  });
+});
+
 describe('evidence on a mean', () => {
   it('is unknown while all values are alike, and while a value lies outside the stated range', () => {
     const stuck = new WatchOne(`${fill}, window: { units: 20 }, alarms: { ${quiet} }`);
