@@ -12,6 +12,7 @@ const commands: Readonly<Record<string, () => Promise<Command>>> = {
   replay: async () => (await import('./replay-command.ts')).replayCommand(),
   plant: async () => (await import('./plant-command.ts')).plantCommand(),
   bound: async () => (await import('./bound-command.ts')).boundCommand(),
+  plan: async () => (await import('./plan-command.ts')).planCommand(),
 };
 
 const program = new Command('vouchline').description('Tells a plant, while it runs, whether it can still vouch for what it promised.');

@@ -35,6 +35,13 @@ export function toldShare(flag: string, text: string): number {
   return doubleOf(exact);
 }
 
+/** A share above 0 and below 1. */
+export function toldPart(flag: string, text: string): Tail {
+  const share = toldShare(flag, text);
+  if (share > 0 && share < 1) return share as Tail;
+  throw badOption(flag, text, 'a share above 0 and below 100 %');
+}
+
 /** The tail of a confidence level: its exact complement. */
 export function toldTail(flag: string, text: string): Tail {
   const exact = shareOf(text);

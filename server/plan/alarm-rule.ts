@@ -1,0 +1,25 @@
+import type { SimulatedUnits } from '../../core/run-length/simulated-run-length.ts';
+
+/** A mean number of units, computed or simulated. */
+export interface MeanUnits {
+  readonly units: number;
+  /** of a simulated figure; undefined where it was computed */
+  readonly standardError: number | undefined;
+  /** 'at least' where only a lower bound is known */
+  readonly standing: 'about' | 'at least';
+}
+
+/** A figure that takes its time, handed over as it comes nearer. */
+export type Simulating = Generator<SimulatedUnits, SimulatedUnits, undefined>;
+
+/** An alarm setting under examination. */
+export interface AlarmRule {
+  /** as a sentence begins: 'Window rule: 16 nonconforming or more among the last 10 000 units' */
+  readonly sentence: string;
+  /** mean units between false calls at a rate at which the line is well */
+  readonly betweenCalls: (rate: number) => MeanUnits | Simulating;
+  /** mean units from a change at any moment to the call, once the line has long run at its normal rate */
+  readonly delay: (normal: number, rate: number) => MeanUnits | Simulating;
+  readonly notes: readonly (readonly [string, string])[];
+  readonly json: Readonly<Record<string, unknown>>;
+}
