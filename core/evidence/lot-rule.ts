@@ -36,9 +36,8 @@ function lotThresholds(promise: LotPromise, level: Tail): Thresholds {
 }
 
 const violated: Assessment = { state: 'violated', backFromCrossing: false, backFromViolation: false };
-const unknown: Assessment = { state: 'unknown', backFromCrossing: false, backFromViolation: false };
 
-/** A lot is judged as it stands: more found than it may hold is certain at once, more inspected than it holds cannot be. */
+/** A lot is judged as it stands: more found than it may hold is certain at once. More inspected than it holds is not for it to judge. */
 class LotJudge implements Judge {
   readonly #counts: Judge;
   readonly #lotSize: number;
@@ -51,7 +50,6 @@ class LotJudge implements Judge {
   }
 
   assess(size: number, count: number, ripe: boolean, waiting: boolean): Assessment {
-    if (!(size <= this.#lotSize)) return unknown;
     return count > this.#allowed ? violated : this.#counts.assess(size, count, ripe, waiting);
   }
 

@@ -93,6 +93,14 @@ describe('evidence on a mean', () => {
     expect(ranged.state).toBe('demonstrated');
   });
 
+  it('calls no violation before its window is full', () => {
+    const one = new WatchOne(`${fill}, window: { units: 100 }, alarms: { ${quiet} }`);
+    one.take(fills(near(247, 99, 11)));
+    expect(one.state).toBe('undecided');
+    one.take(fills([247]));
+    expect(one.state).toBe('violated');
+  });
+
   it('is unknown, and no error, for a value beyond all that can be computed with', () => {
     const one = new WatchOne(`${fill}, window: { units: 20 }, alarms: { ${quiet} }`);
     one.take(fills([...near(252, 20, 4), 1e200]));
@@ -172,6 +180,20 @@ describe('evidence on a chain', () => {
     expect([one.state, one.watch.evidence.figures()['limitingStation']]).toEqual(['violated', 1]);
     expect(one.watch.evidence.picture?.()).toMatchObject({ kind: 'stations', stations: [{ id: 'A.cutting', nonconforming: 40, limiting: true }, { id: 'A.leak', limiting: false }] });
     expect(one.watch.evidence.warnings()[0]).toContain('A.cutting');
+  });
+});
+
+describe('a chain in time', () => {
+  it('lets go of all stations at once: no state in between is told', () => {
+    const one = new WatchOne(`stations: [A.cutting, A.leak], characteristics: [cut, tightness], quantity: chained-yield, at-least: 95 %, confidence: 90 %, window: { time: 10 min, step: 10 min }, alarms: { ${quiet} }`);
+    one.take(bad(30, 'cut'), good(200, 'cut'), good(200));
+    one.pause(600_000 - 430_000);
+    one.take(good(100, 'cut'));
+    one.monitor.decisions();
+    expect(one.state).toBe('undecided');
+    one.monitor.advance((Math.floor(one.monitor.now / 600_000) * 600_000 + 600_000) as never);
+    const states = one.monitor.decisions().happenings.flatMap((happening) => (happening.kind === 'evidence' ? [happening.to] : []));
+    expect([states, one.watch.evidence.figures()['inspected']]).toEqual([['gathering'], 100]);
   });
 });
 
