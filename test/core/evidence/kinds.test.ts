@@ -190,7 +190,7 @@ describe('a chain in time', () => {
     one.pause(600_000 - 430_000);
     one.take(good(100, 'cut'));
     one.monitor.decisions();
-    expect(one.state).toBe('undecided');
+    expect(one.state).toBe('violated');
     one.monitor.advance((Math.floor(one.monitor.now / 600_000) * 600_000 + 600_000) as never);
     const states = one.monitor.decisions().happenings.flatMap((happening) => (happening.kind === 'evidence' ? [happening.to] : []));
     expect([states, one.watch.evidence.figures()['inspected']]).toEqual([['gathering'], 100]);
