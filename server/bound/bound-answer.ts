@@ -4,6 +4,7 @@ import { briefShare, confidenceText, shareText } from '../../core/describe/share
 import type { AskedQuantity } from './asked-quantity.ts';
 import { columnNotes } from './column-figures.ts';
 import { looksIn, numberIn } from './given.ts';
+import { secondComputation, type SecondComputation } from './second-computation.ts';
 import type { ToldRequest } from './told-request.ts';
 
 /** A bound with everything a person has to know of it, for print or JSON. */
@@ -18,7 +19,9 @@ export interface BoundAnswer {
   /** what the bound says of the guarantee line, where one was told */
   readonly verdict: string | undefined;
   readonly method: BoundMethod;
-  readonly looks: string | undefined;
+  readonly looks: string;
+  /** what another library says of the figure; undefined where none can be asked */
+  readonly second: SecondComputation | undefined;
   readonly notes: readonly string[];
 }
 
@@ -38,6 +41,7 @@ export function boundAnswer(asked: AskedQuantity, request: ToldRequest, figure: 
     verdict: verdictOf(asked, request, figure),
     method: asked.method(given),
     looks: rule,
+    second: secondComputation(asked, request, figure),
     notes: [...(column === undefined ? [] : columnNotes(column, side)), ...unchecked(asked, request), ...toleranceOf(asked, request, figure)],
   };
 }

@@ -23,7 +23,8 @@ Examples:
   vouchline bound --batch < requests.ndjson > answers.ndjson
 
 Upper bounds are printed rounded up, lower ones rounded down; --json and --batch give every digit.
-Exit codes: 0 answered, 1 the measurements speak against the model that was asked for, 2 unusable options or column.`;
+Exact bounds are computed a second time by another library, as far as that one is good for it.
+Exit codes: 0 answered, 1 the measurements speak against the model that was asked for (or two computations disagree), 2 unusable options or column.`;
 
 const batchHelp = `
 Batch: one JSON request a line on standard input, one JSON answer a line in the same order, e.g.
@@ -60,9 +61,8 @@ function commandFor(asked: AskedQuantity): Command {
     const told = command.opts<Told>();
     const { answer, refused } = await answerFor(asked, told);
     process.stdout.write(told['json'] === true ? boundJson(answer) : boundText(answer));
-    if (refused === undefined) return;
-    process.stderr.write(`${refused}\n`);
-    process.exitCode = exitCode.foundWrong;
+    if (refused !== undefined) process.stderr.write(`${refused}\n`);
+    if (refused !== undefined || answer.second?.agrees === false) process.exitCode = exitCode.foundWrong;
   });
 }
 
