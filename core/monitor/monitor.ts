@@ -4,13 +4,13 @@ import type { Plant } from '../plant/plant.ts';
 import type { RefusalCode } from '../protocol/refusals.ts';
 import type { Correction, Frame, InspectionPart, LineMark, Lost, Part } from '../record/part.ts';
 import { timeAt } from '../record/time-column.ts';
-import { tailOf } from '../record/tail-of.ts';
 import { ShiftCalendar } from '../shift/shift-calendar.ts';
 import type { EpochMs } from '../units.ts';
 import type { Act, ActFault } from './act.ts';
 import type { ClosedMinute } from './closed-minute.ts';
 import { Clockwork } from './clockwork.ts';
 import type { Happening } from './happening.ts';
+import { piecesOf } from './pieces-of.ts';
 import { inRecordOrder } from './record-order.ts';
 import type { NotCounted, Receipt } from './receipt.ts';
 import { Routes, type KnownRoute } from './routes.ts';
@@ -103,21 +103,18 @@ export class Monitor {
     if (at !== undefined) this.advance(at);
     this.#follows = at === undefined;
     const { index, ledger } = this.sources.of(source);
-    const admission = ledger.place(frame.first, frame.records);
-    switch (admission.kind) {
-      case 'gap':
-        return { kind: 'gap', next: ledger.next };
-      case 'partly-late':
-        return { kind: 'partly-late', next: ledger.next, hole: admission.hole };
-      case 'repeat':
-        return { kind: 'repeated', next: ledger.next };
-      case 'new':
-        return this.#take(source, index, ledger, frame, false);
-      case 'tail':
-        return this.#take(source, index, ledger, tailOf(frame, admission.skip), false);
-      case 'late':
-        return this.#take(source, index, ledger, frame, true);
+    const { kind } = ledger.place(frame.first, frame.records);
+    const notCounted: NotCounted[] = [];
+    if (kind === 'gap') return { kind: 'gap', next: ledger.next };
+    if (kind === 'new') {
+      this.#take(source, index, ledger, frame, false, notCounted);
+      return { kind: 'taken', frame, next: ledger.next, notCounted };
     }
+    const pieces = piecesOf(ledger, frame).filter((piece) => piece.kind !== 'repeat');
+    for (const piece of pieces) this.#take(source, index, ledger, piece.frame, piece.kind === 'late', notCounted);
+    const [only] = pieces;
+    if (only === undefined) return { kind: 'repeated', next: ledger.next };
+    return { kind: 'taken', frame: pieces.length === 1 ? only.frame : frame, next: ledger.next, notCounted };
   }
 
   /** The plant clock has come to `at`: everything that fell due until then happens, each at its own moment. */
@@ -173,8 +170,7 @@ export class Monitor {
     this.#sequences.push(this.#moment.sequence);
   }
 
-  #take(name: string, source: number, ledger: SourceLedger, frame: Frame, late: boolean): Receipt {
-    const notCounted: NotCounted[] = [];
+  #take(name: string, source: number, ledger: SourceLedger, frame: Frame, late: boolean, notCounted: NotCounted[]): void {
     let sequence = frame.first;
     for (const part of frame.parts) {
       if (this.#follows && !('time' in part)) this.advance(part.at as EpochMs);
@@ -187,7 +183,6 @@ export class Monitor {
     }
     if (late) ledger.fill(frame.first, frame.records);
     else ledger.advance(sequence);
-    return { kind: 'taken', frame, next: ledger.next, notCounted };
   }
 
   #takePart(part: Part, source: number, sequence: number, late: boolean, notCounted: NotCounted[], ledger: SourceLedger): void {

@@ -9,14 +9,12 @@ export interface Hole {
 /** Where a frame belongs in the order of its source. */
 export type Admission =
   | { readonly kind: 'new' }
-  /** The first `skip` records are known already; the rest is new. */
-  | { readonly kind: 'tail'; readonly skip: number }
   /** Every record is known already: acknowledged again, counted never again. */
   | { readonly kind: 'repeat' }
   /** Fills sequences declared lost before. */
   | { readonly kind: 'late' }
-  /** Touches sequences declared lost, but holds others too: to be sent again as exactly those of the hole. */
-  | { readonly kind: 'partly-late'; readonly hole: Hole }
+  /** Some of its records belong elsewhere than others: `piecesOf` cuts it. */
+  | { readonly kind: 'mixed' }
   /** Records are missing between `expected` and the frame. */
   | { readonly kind: 'gap'; readonly expected: number };
 
@@ -33,6 +31,7 @@ export const mostHoles = 4096;
 const inOrder: Admission = { kind: 'new' };
 const repeat: Admission = { kind: 'repeat' };
 const late: Admission = { kind: 'late' };
+const mixed: Admission = { kind: 'mixed' };
 
 /** What is known of one source's sequence: which records were taken, so that each counts once. */
 export class SourceLedger {
@@ -55,8 +54,8 @@ export class SourceLedger {
     if (first > this.#next) return { kind: 'gap', expected: this.#next };
     const last = first + records - 1;
     const hole = this.#holes.find((one) => one.first <= last && first <= one.last);
-    if (hole !== undefined) return hole.first <= first && last <= hole.last ? late : { kind: 'partly-late', hole };
-    return last >= this.#next ? { kind: 'tail', skip: this.#next - first } : repeat;
+    if (hole !== undefined) return hole.first <= first && last <= hole.last ? late : mixed;
+    return last >= this.#next ? mixed : repeat;
   }
 
   /** Takes records in order, up to but not including `next`. */

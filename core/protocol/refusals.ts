@@ -36,7 +36,6 @@ export const refusalTable = {
   'too-many-records': { effect: 'frame', sentence: 'The frame holds more records than the limit.' },
   'too-many-parts': { effect: 'frame', sentence: 'The frame holds more parts than the limit.' },
   'sequence-gap': { effect: 'frame', sentence: 'The frame begins after the next expected sequence; send again from there.' },
-  'partly-late': { effect: 'frame', sentence: 'The frame holds sequences declared lost and others too; send exactly the lost ones.' },
   'station-not-allowed': { effect: 'frame', sentence: "The source's token does not cover this station." },
   'frame-too-large': { effect: 'connection', sentence: 'The message is larger than the limit.' },
   'too-many-in-flight': { effect: 'connection', sentence: 'More frames are in flight than the server granted.' },

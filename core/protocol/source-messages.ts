@@ -70,12 +70,3 @@ export function gapMessage(first: number, next: number): RefusedFrame {
     sentence: `The frame begins at ${first}; expected ${next}. Send again from there, or declare what is lost.`,
   };
 }
-
-/** The message for a frame that fills a hole only in part. */
-export function partlyLateMessage(first: number, next: number, hole: { readonly first: number; readonly last: number }): RefusedFrame {
-  const expected = `${hole.first} to ${hole.last}`;
-  return {
-    type: 'refused', code: 'partly-late', first, field: 'first', value: String(first), expected, next,
-    sentence: `Sequences ${expected} are declared lost; a late frame holds nothing but these.`,
-  };
-}

@@ -19,13 +19,19 @@ export function checkedVerdicts(origin: Origin, records: number, time: TimeColum
   return { kind: 'verdicts', origin, records, time, nonconforming };
 }
 
+/** Nonconforming units that the tallies of one part may name together: each takes room in the windows. */
+export const mostTallied = 65_536;
+
 export function checkedTallies(origin: Origin, time: TimeColumn, inspected: Uint32Array, nonconforming: Uint32Array): Tallies {
   sameLength(nonconforming, inspected, 'nonconforming', 'inspected');
+  let tallied = 0;
   for (let i = 0; i < inspected.length; i += 1) {
     const units = inspected[i] as number;
     const found = nonconforming[i] as number;
+    tallied += found;
     if (units === 0) refuse('out-of-range', `inspected[${i}]`, 0, 'a whole number from 1 to 4,294,967,295');
     if (found > units) refuse('out-of-range', `nonconforming[${i}]`, found, `at most the ${units} inspected`);
+    if (tallied > mostTallied) refuse('out-of-range', `nonconforming[${i}]`, found, `at most ${mostTallied} nonconforming units in the tallies of one part`);
   }
   return { kind: 'tallies', origin, records: inspected.length, time, inspected, nonconforming };
 }
@@ -80,6 +86,7 @@ export function checkedFinding(finding: Finding, place = ''): Finding {
       const { inspected, nonconforming } = finding;
       if (inspected === 0) refuse('out-of-range', `${place}inspected`, inspected, 'a whole number from 1 to 4,294,967,295');
       if (nonconforming > inspected) refuse('out-of-range', `${place}nonconforming`, nonconforming, `at most the ${inspected} inspected`);
+      if (nonconforming > mostTallied) refuse('out-of-range', `${place}nonconforming`, nonconforming, `at most ${mostTallied} nonconforming units in one tally`);
       return finding;
     }
     case 'exposure': {

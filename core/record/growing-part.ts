@@ -1,3 +1,4 @@
+import { mostTallied } from './checked-part.ts';
 import type { Finding, InspectionPart, Origin } from './part.ts';
 import type { TimeColumn } from './time-column.ts';
 
@@ -10,6 +11,7 @@ export class GrowingPart {
   readonly #main: number[] = [];
   /** Tallies: nonconforming. Exposures: exposure. */
   readonly #other: number[] = [];
+  #tallied = 0;
 
   constructor(origin: Origin, kind: Finding['kind']) {
     this.#origin = origin;
@@ -18,6 +20,7 @@ export class GrowingPart {
 
   takes(origin: Origin, finding: Finding): boolean {
     const own = this.#origin;
+    if (finding.kind === 'tally' && this.#tallied + finding.nonconforming > mostTallied) return false;
     return finding.kind === this.#kind && origin.station === own.station && origin.product === own.product
       && origin.characteristic === own.characteristic && origin.lot === own.lot;
   }
@@ -30,6 +33,7 @@ export class GrowingPart {
       case 'tally':
         this.#main.push(finding.inspected);
         this.#other.push(finding.nonconforming);
+        this.#tallied += finding.nonconforming;
         break;
       case 'exposure':
         this.#main.push(finding.count);

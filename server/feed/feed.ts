@@ -4,7 +4,7 @@ import type { Frame } from '../../core/record/part.ts';
 import type { RowRecord } from '../../core/record/row.ts';
 import { frameBudget } from '../rows/frame-budget.ts';
 import { framesOfRows } from '../rows/frames-of-rows.ts';
-import { piecesOf } from '../rows/pieces-of.ts';
+import { piecesOf } from '../../core/monitor/pieces-of.ts';
 import { untilAborted } from '../rows/until-aborted.ts';
 import { SourceClient, type ClientEvent } from './source-client.ts';
 import { SourceFailure } from './source-failure.ts';

@@ -12,7 +12,7 @@ import { AllowedStations } from '../ingest/allowed-stations.ts';
 import type { Arrival } from '../pipeline/arrival.ts';
 import { frameBudget } from '../rows/frame-budget.ts';
 import { framesOfRows } from '../rows/frames-of-rows.ts';
-import { piecesOf } from '../rows/pieces-of.ts';
+import { piecesOf } from '../../core/monitor/pieces-of.ts';
 import type { RowForm } from '../rows/row-form.ts';
 import { untilAborted } from '../rows/until-aborted.ts';
 import type { UploadTurn } from './upload-desk.ts';

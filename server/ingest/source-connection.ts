@@ -4,7 +4,7 @@ import { BinaryFrameReader } from '../../core/protocol/binary-frame-reader.ts';
 import { JsonFrameReader } from '../../core/protocol/json-frame-reader.ts';
 import type { SourceLimits } from '../../core/protocol/limits.ts';
 import { endsConnection, refusalTable, type RefusalCode } from '../../core/protocol/refusals.ts';
-import { gapMessage, partlyLateMessage, refusedMessage, sourceProtocol, type ServerMessage, type SetAside } from '../../core/protocol/source-messages.ts';
+import { gapMessage, refusedMessage, sourceProtocol, type ServerMessage, type SetAside } from '../../core/protocol/source-messages.ts';
 import type { Frame } from '../../core/record/part.ts';
 import type { Refusal } from '../../core/record/refusal.ts';
 import type { Result } from '../../core/result.ts';
@@ -42,7 +42,6 @@ export class SourceConnection {
   /** One of each for all frames. */
   readonly #judged = (receipt: Receipt, frame: Frame): void => {
     if (receipt.kind === 'gap') this.#answer(gapMessage(frame.first, receipt.next));
-    if (receipt.kind === 'partly-late') this.#answer(partlyLateMessage(frame.first, receipt.next, receipt.hole));
   };
   readonly #durable = (receipt: Receipt): void => {
     if (receipt.kind === 'taken' || receipt.kind === 'repeated') this.#acknowledge(receipt);

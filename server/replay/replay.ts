@@ -1,7 +1,7 @@
 import { Monitor, type Decisions } from '../../core/monitor/monitor.ts';
 import type { Plant } from '../../core/plant/plant.ts';
 import type { Frame } from '../../core/record/part.ts';
-import { piecesOf } from '../rows/pieces-of.ts';
+import { piecesOf } from '../../core/monitor/pieces-of.ts';
 
 /** What a replay has seen. */
 export interface ReplaySums {

@@ -21,7 +21,7 @@ function allowedBy(watch: Watch): readonly EvidenceState[] {
 }
 
 describe('the state of every evidence', () => {
-  it('is what its bounds say, at random positions', () => {
+  it('[E5] is what its bounds say, at random positions', () => {
     let compared = 0;
     fc.assert(
       fc.property(recipes, fc.integer({ min: 1, max: 25 }), (list, most) => {

@@ -28,7 +28,7 @@ const nonconforming = ({ part, place }: { part: InspectionPart; place: number })
   part.kind === 'verdicts' ? part.nonconforming.includes(place) : part.kind === 'measurements' && (part.value[place] as number) < 248;
 
 describe('an alarm', () => {
-  it('can be recomputed from its grounds: the records of its window give its figures, and these its condition', () => {
+  it('[A5] can be recomputed from its grounds: the records of its window give its figures, and these its condition', () => {
     let recomputed = 0;
     fc.assert(
       fc.property(recipes, (recipe) => {

@@ -19,7 +19,7 @@ function near(mean: number, records: number, seed: number): number[] {
 describe('a window of time', () => {
   const plan = `${leak}, window: { time: 10 min, step: 1 min }, alarms: { ${quiet} }`;
 
-  it('demonstrates with the unit that is enough, and gathers again when the units have left by the clock', () => {
+  it('[W5] demonstrates with the unit that is enough, and gathers again when the units have left by the clock', () => {
     const one = new WatchOne(plan);
     const enough = demonstrationUnits(0, 0.02, 0.1 as Tail);
     one.take(good(enough - 1));

@@ -44,14 +44,17 @@ describe('a monitor', () => {
     expect(monitor.watches[0]!.evidence.figures()).toMatchObject({ inspected: 15, nonconforming: 2 });
   });
 
-  it('[F4] takes late records of a declared loss once, and refuses a frame that fills it only in part', () => {
+  it('[F4] takes late records of a declared loss once, alone or among others, and knows the declaration when it is sent again', () => {
     const monitor = begun();
     monitor.takeFrame('tester', frame(1, verdicts(10, [], monday), { kind: 'lost', records: 10, at: monday, station: 'A.leak-test', reason: 'buffer overrun' }, verdicts(10, [], monday)), at(0));
     expect(monitor.watches[0]!.evidence.figures()).toMatchObject({ inspected: 20 });
-    expect(monitor.takeFrame('tester', frame(9, verdicts(5, [], monday)), at(0))).toMatchObject({ kind: 'partly-late', hole: { first: 11, last: 20 } });
-    expect(monitor.takeFrame('tester', frame(11, verdicts(10, [4], monday)), at(0)).kind).toBe('taken');
+    const sentAgain = frame(1, verdicts(10, [], monday), { kind: 'lost', records: 10, at: monday, station: 'A.leak-test', reason: 'buffer overrun' }, verdicts(10, [], monday));
+    expect(monitor.takeFrame('tester', sentAgain, at(0))).toEqual({ kind: 'repeated', next: 31 });
+    // Two known ones, three of the hole; then the whole hole among known and new ones.
+    expect(monitor.takeFrame('tester', frame(9, verdicts(5, [4], monday)), at(0))).toMatchObject({ kind: 'taken', next: 31, frame: { first: 11, records: 3 } });
+    expect(monitor.takeFrame('tester', frame(5, verdicts(31, [], monday)), at(0))).toMatchObject({ kind: 'taken', next: 36, frame: { first: 5, records: 31 } });
     expect(monitor.takeFrame('tester', frame(11, verdicts(10, [4], monday)), at(0)).kind).toBe('repeated');
-    expect(monitor.watches[0]!.evidence.figures()).toMatchObject({ inspected: 30, nonconforming: 1 });
+    expect(monitor.watches[0]!.evidence.figures()).toMatchObject({ inspected: 35, nonconforming: 1 });
   });
 
   it('[F5] keeps but does not count records of an unknown station, product or an implausible time', () => {

@@ -55,7 +55,7 @@ export async function fakeSourceServer({ window = 4, fate = () => 'answer', hold
     if (fateOf !== 'break') {
       const admission = fake.ledger.place(frame.first, frame.records);
       if (admission.kind === 'gap') return answered(), socket.send(JSON.stringify(gapMessage(frame.first, admission.expected)));
-      const rest = admission.kind === 'tail' ? tailOf(frame, admission.skip) : frame;
+      const rest = admission.kind === 'mixed' ? tailOf(frame, fake.ledger.next - frame.first) : frame;
       const records = fateOf === 'take one and break' && admission.kind !== 'late' ? 1 : rest.records;
       if (admission.kind !== 'repeat') {
         for (let i = 0; i < records; i += 1) fake.taken.push(rest.first + i);

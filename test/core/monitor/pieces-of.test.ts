@@ -4,7 +4,7 @@ import { SourceLedger } from '../../../core/monitor/source-ledger.ts';
 import { frameOf } from '../../../core/record/frame-of.ts';
 import { noPlaces } from '../../../core/record/no-places.ts';
 import type { Part } from '../../../core/record/part.ts';
-import { piecesOf } from '../../../server/rows/pieces-of.ts';
+import { piecesOf } from '../../../core/monitor/pieces-of.ts';
 
 const origin = { station: 'A.leak-test', product: 'BH-4', characteristic: 'tightness', lot: undefined };
 const part = fc.record({ lost: fc.boolean(), records: fc.integer({ min: 1, max: 6 }) }).map(({ lost, records }): Part =>

@@ -1,7 +1,7 @@
-import type { SourceLedger } from '../../core/monitor/source-ledger.ts';
-import { headOf } from '../../core/record/head-of.ts';
-import type { Frame } from '../../core/record/part.ts';
-import { tailOf } from '../../core/record/tail-of.ts';
+import type { SourceLedger } from './source-ledger.ts';
+import { headOf } from '../record/head-of.ts';
+import type { Frame } from '../record/part.ts';
+import { tailOf } from '../record/tail-of.ts';
 
 /** A frame that belongs in one place of its source's order: in order, known already, lost before, or beyond a gap. */
 export interface Piece {
@@ -10,8 +10,8 @@ export interface Piece {
 }
 
 /**
- * Cuts a frame of rows where its records belong in different places of the order, because rows that are sent again
- * come with whatever neighbours they have in their text. A row that declares lost what is declared lost is known.
+ * Cuts a frame where its records belong in different places of the order: what is sent again comes with whatever
+ * neighbours it has now. A part that declares lost what is declared lost already is known.
  *
  * @param ledger what is known of the source before the frame; not changed
  */
