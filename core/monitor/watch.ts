@@ -1,12 +1,12 @@
 import type { AlarmGrounds } from '../alarm/alarm.ts';
-import { groundsSentence } from '../alarm/grounds-sentence.ts';
 import { allowanceUsed } from '../evidence/allowance.ts';
 import type { Batch, Evidence } from '../evidence/evidence.ts';
 import { evidenceOf } from '../evidence/evidence-of.ts';
-import { methodOf } from '../evidence/method.ts';
 import { clockMoment, type Moment, type RecordMoment } from '../evidence/moment.ts';
 import { Standing, type StandingSnapshot, type Surroundings } from '../evidence/standing.ts';
 import { TipTrail, type TipTrailSnapshot } from '../evidence/tip-trail.ts';
+import { ChangeWatch, type ChangeWatchSnapshot } from '../run/change-watch.ts';
+import { changeSettingOf } from '../run/change-setting.ts';
 import { guaranteeLineOf } from '../plant/guarantee-line.ts';
 import type { AlarmRule, Guarantee } from '../plant/guarantee.ts';
 import type { Correction, InspectionPart, LineMark } from '../record/part.ts';
@@ -14,6 +14,7 @@ import type { ShiftCalendar } from '../shift/shift-calendar.ts';
 import type { EpochMs } from '../units.ts';
 import type { BadDataLog } from './bad-data-log.ts';
 import { BadDataWatch, type BadDataRule } from './bad-data-watch.ts';
+import { groundsOf } from './grounds-of.ts';
 import { LostRecords, type LostRecordsSnapshot } from './lost-records.ts';
 import { MinuteTally, type MinuteCount } from './minute-tally.ts';
 import { noteMinutes } from './note-minutes.ts';
@@ -45,6 +46,7 @@ export interface WatchSnapshot {
   readonly minutes: readonly MinuteCount[];
   readonly newest: number;
   readonly badData: boolean;
+  readonly change: ChangeWatchSnapshot | undefined;
 }
 
 type SilenceRule = Extract<AlarmRule, { kind: 'silence' }>;
@@ -65,6 +67,8 @@ export class Watch {
   readonly #period: Period;
   readonly #silence: SilenceRule | undefined;
   readonly #badData: BadDataWatch | undefined;
+  /** Watches for a rate that has risen, where the plant file asks for it. */
+  readonly change: ChangeWatch | undefined;
   /** Nothing falls due before this; records only move it on, but for windows that go by time. */
   #dueKnown = Infinity;
   readonly #dueMovesWithRecords: boolean;
@@ -82,6 +86,8 @@ export class Watch {
       grounds: (rule, moment) => this.#grounds(rule, moment, this.evidence.figures()),
     });
     this.evidence = evidenceOf(guarantee, this.standing);
+    const change = changeSettingOf(guarantee);
+    this.change = change && new ChangeWatch(change, around.desk, (moment, figures) => this.#grounds('deterioration', moment, { ...this.evidence.figures(), ...figures }));
   }
 
   /** Takes a part's records in order. `late`: they fill a hole declared lost before. */
@@ -104,6 +110,7 @@ export class Watch {
       if (late) this.evidence.fill(batch, moment);
       else if (this.lost.none) this.evidence.take(batch, moment);
       else this.#takeSingly(batch, moment);
+      if (!late && this.change) this.change.take(batch, moment);
       if (moment.at > this.newest) this.newest = moment.at;
     }
     this.trail.wake(this.around.now());
@@ -132,6 +139,7 @@ export class Watch {
   restart(moment: Moment): void {
     this.changed = true;
     this.#beginAnew(moment);
+    this.change?.beginAnew();
   }
 
   /** The next moment at which the clock alone changes something; Infinity where nothing waits. */
@@ -198,6 +206,7 @@ export class Watch {
       minutes: this.minutes.snapshot(),
       newest: this.newest,
       badData: this.#badData?.active ?? false,
+      change: this.change?.snapshot(),
     };
   }
 
@@ -208,6 +217,7 @@ export class Watch {
     this.lost.restore(from.lost);
     this.trail.restore(from.trail);
     this.minutes.restore(from.minutes);
+    if (from.change !== undefined) this.change?.restore(from.change);
     this.newest = from.newest;
     if (this.#badData) this.#badData.active = from.badData;
     this.changed = true;
@@ -275,20 +285,6 @@ export class Watch {
   }
 
   #grounds(rule: AlarmRule['kind'], moment: Moment, figures: Readonly<Record<string, number>>): AlarmGrounds {
-    const { promise, tail, looks } = this.guarantee;
-    const { line, side } = guaranteeLineOf(promise);
-    const method = methodOf(this.guarantee);
-    const noBound = rule === 'silence' || rule === 'bad-data';
-    return {
-      source: moment.source,
-      sequence: moment.sequence,
-      plantVersion: this.around.plantVersion(),
-      method: noBound ? rule : method.name,
-      methodVersion: method.version,
-      lookRule: noBound ? 'no bound' : looks === 'all looks' ? 'all looks' : 'one look',
-      figures: { ...figures, line, tail },
-      records: this.evidence.ranges().map(({ source, first, last }) => ({ source: this.around.sourceName(source), first, last })),
-      sentence: groundsSentence(rule, promise.quantity, side, figures),
-    };
+    return groundsOf(this.guarantee, rule, moment, { figures, ranges: this.evidence.ranges(), ...this.around });
   }
 }

@@ -9,7 +9,6 @@ import { rulesOf } from './rules-of.ts';
 import { windowOf } from './window-of.ts';
 
 const usualTail = 0.05 as Tail;
-const looks = { one: 'one look', all: 'all looks', both: 'both' } as const;
 
 /** Turns one guarantee of the file into the form the rest works with; undefined where a complaint stands in the way. */
 export function guaranteeOf(file: GuaranteeFile, directory: Directory, complain: Complain): Guarantee | undefined {
@@ -23,10 +22,9 @@ export function guaranteeOf(file: GuaranteeFile, directory: Directory, complain:
   if (reading === undefined || window === undefined) return undefined;
   const { promise, normalRate, counted } = reading;
   const safetyRelevant = file['safety-relevant'] ?? false;
-  const rules = rulesOf(file.alarms ?? {}, { tail, window, counted, normalRate, safetyRelevant }, within(complain, ['alarms']));
+  const rules = rulesOf(file.alarms ?? {}, { promise, tail, window, counted, normalRate, safetyRelevant }, within(complain, ['alarms']));
   const { id, name = id, product } = file;
-  const look = looks[file.looks ?? 'one'];
-  return { id, name, line, stations, product, characteristics, promise, tail, window, looks: look, normalRate, safetyRelevant, rules };
+  return { id, name, line, stations, product, characteristics, promise, tail, window, normalRate, safetyRelevant, rules };
 }
 
 /** The line the stations stand on; complains of unknown stations and of a chain that leaves its line or its order. */

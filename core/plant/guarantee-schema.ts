@@ -29,7 +29,6 @@ const settings = {
   product: v.optional(idSchema),
   confidence: v.optional(confidenceSchema),
   window: v.optional(windowSchema),
-  looks: v.optional(word(['one', 'all', 'both'])),
   'safety-relevant': v.optional(flagSchema),
   alarms: v.optional(alarmsSchema),
 };

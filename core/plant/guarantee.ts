@@ -89,7 +89,6 @@ export interface Guarantee {
   /** Tail of the bound that is compared with the line; its complement is the confidence level. */
   readonly tail: Tail;
   readonly window: WindowRule;
-  readonly looks: 'one look' | 'all looks' | 'both';
   /** Declared rate of the well line, same unit as the line; never guessed from the data it judges. */
   readonly normalRate: number | undefined;
   readonly safetyRelevant: boolean;

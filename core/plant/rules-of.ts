@@ -1,11 +1,13 @@
 import type { SpanMs, Tail } from '../units.ts';
 import type { AlarmsFile } from './alarm-schema.ts';
+import { canWatchChange, changeBaseline } from './change-baseline.ts';
 import type { Complain } from './complain.ts';
-import type { AlarmRule, Priority, ReturnRule, WindowRule } from './guarantee.ts';
+import type { AlarmRule, Priority, Promised, ReturnRule, WindowRule } from './guarantee.ts';
 import type { Counted } from './promise-reading.ts';
 
 /** What the defaults of the alarm rules depend on. */
 export interface RuleSetting {
+  readonly promise: Promised;
   readonly tail: Tail;
   readonly window: WindowRule;
   readonly counted: Counted | undefined;
@@ -56,12 +58,16 @@ function violationOf(file: Settings<'violation'>, setting: RuleSetting, complain
   return { kind: 'violation', ...urgencyOf(file, 'high'), tail, return: rule };
 }
 
-function deteriorationOf(file: Settings<'deterioration'>, { normalRate }: RuleSetting, complain: Complain): AlarmRule {
+function deteriorationOf(file: Settings<'deterioration'>, { promise, normalRate }: RuleSetting, complain: Complain): AlarmRule | undefined {
+  const path = ['deterioration'];
+  if (!canWatchChange(promise)) return void complain(path, `off: the change of a ${promise.quantity} of this kind is not watched, only of what is counted in units or in exposure`);
   const baseline = file.baseline ?? 'line';
-  if (baseline === 'normal-rate' && normalRate === undefined) {
-    complain(['deterioration', 'baseline'], 'line, or a normal-rate in the guarantee');
-  }
+  if (baseline === 'normal-rate' && normalRate === undefined) return void complain([...path, 'baseline'], 'line, or a normal-rate in the guarantee');
   const unitsBetweenFalseCalls = file['units-between-false-calls'];
+  const least = 1 / changeBaseline(promise, baseline === 'normal-rate' ? normalRate : undefined);
+  if (!(unitsBetweenFalseCalls > least)) {
+    return void complain([...path, 'units-between-false-calls'], `more than ${Math.ceil(least)}, the units in which a well line has one nonconforming`);
+  }
   return { kind: 'deterioration', ...urgencyOf(file, 'medium'), unitsBetweenFalseCalls, baseline };
 }
 

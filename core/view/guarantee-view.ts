@@ -1,4 +1,5 @@
 import type { EvidenceState, LookRule } from '../evidence/evidence-state.ts';
+import type { DetectorView } from '../run/change-watch.ts';
 import type { Quantity, WindowRule } from '../plant/guarantee.ts';
 
 /** How figures of a guarantee are written: shares of units, a rate per exposure, or a measured value with its unit. */
@@ -73,6 +74,8 @@ export interface GuaranteeView {
   readonly margin: Margin;
   /** Time of inspection of the newest record, ms; undefined before the first. */
   readonly newest: number | undefined;
+  /** The change detector, where the plant file asks for one. */
+  readonly detector: DetectorView | undefined;
   /** Which way the bound has gone over the last hour. */
   readonly drift: 'rising' | 'falling' | 'steady' | undefined;
   /** Product and lot at the station now, where told. */

@@ -16,6 +16,7 @@ const sheet = `    at-most: 2 %
     alarms:
       crossing: { return: { distance: 0.1, units: 30 } }
       violation: { confidence: 99 % }
+      deterioration: { units-between-false-calls: 2000 }
       silence: { after: 5 min }
       bad-data: { more-than: 5, within: 30 min }`;
 const shiftSheet = `
