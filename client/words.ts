@@ -1,6 +1,7 @@
 import type { Alarm } from '../core/alarm/alarm.ts';
 import type { EvidenceState, LookRule } from '../core/evidence/evidence-state.ts';
 import type { Priority, RuleKind, WindowRule } from '../core/plant/guarantee.ts';
+import type { DetectorView } from '../core/run/change-watch.ts';
 import type { GuaranteeCard, GuaranteeView } from '../core/view/guarantee-view.ts';
 import { written, type Formats } from './format.ts';
 
@@ -136,4 +137,11 @@ export function headline(formats: Formats, needing: number, all: number): string
   if (all === 0) return 'No guarantees yet.';
   if (needing === 0) return all === 1 ? 'The guarantee needs nothing from you.' : `None of ${formats.count(all)} guarantees needs you.`;
   return `${formats.count(needing)} of ${counted(formats, all, 'guarantee')} ${needing === 1 ? 'needs' : 'need'} you.`;
+}
+
+/** What would take a change detector to its alarm, and what brings it back. */
+export function detectorWords(formats: Formats, { inARowToAlarm, conformingToHalfWay }: DetectorView): string {
+  const alarm = inARowToAlarm === undefined ? '' : `${counted(formats, inARowToAlarm, 'nonconforming unit')} in a row would raise it. `;
+  const back = conformingToHalfWay === undefined || conformingToHalfWay === 0 ? '' : `Half way again after ${counted(formats, conformingToHalfWay, 'conforming unit')} in a row.`;
+  return `${alarm}${back}`.trim();
 }

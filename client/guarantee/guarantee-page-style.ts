@@ -35,6 +35,10 @@ export const guaranteePageStyle = css`
   .figures dt { color: var(--quiet); }
   .figures dd { text-align: right; }
   .figures b { font-size: 1.15em; }
+  .gauge { display: block; width: 100%; height: 1.1rem; border: 1.5px solid var(--edge); border-radius: 3px; margin-top: 0.6rem; }
+  .gauge rect { fill: var(--calm); }
+  .gauge line { stroke: var(--edge); vector-effect: non-scaling-stroke; }
+  .ends { display: flex; justify-content: space-between; font-size: 0.86rem; margin-bottom: 0.4rem; }
   .how p { max-width: 80ch; margin: 0.3rem 0 0.5rem; }
   .how dl div { display: grid; grid-template-columns: 6rem 1fr; gap: 0.8rem; border-top: 1px solid var(--rule); padding: 0.45rem 0; }
   .how dt { color: var(--quiet); }
@@ -47,6 +51,7 @@ export const guaranteePageStyle = css`
     .columns, .side, .main { display: contents; }
     .main > * { order: 2; }
     .figures-part { order: 3; }
+    .change-part { order: 3; }
     .restart-part { order: 4; }
     fieldset { width: 100%; }
     label { flex: 1; padding: 0.7em 0.1em; }

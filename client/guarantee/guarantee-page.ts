@@ -12,6 +12,7 @@ import { base } from '../look/base.ts';
 import '../parts/caution-block.ts';
 import { stateMark } from '../parts/state-mark.ts';
 import { driftWord, marginWords, promiseWords, stateMeaning, stateWord } from '../words.ts';
+import { changeGauge } from './change-gauge.ts';
 import { guaranteePageStyle } from './guarantee-page-style.ts';
 import './guarantee-picture.ts';
 import { guaranteeRecords, type GuaranteeRecords } from './guarantee-records.ts';
@@ -83,6 +84,7 @@ export class GuaranteePage extends LitElement {
         <div class="side">
           ${this.#alarms(lane, picture, formats)}
           <section class="sheet part figures-part"><h2>Present window</h2>${windowFigures(formats, lane.card, lane.view, this.plantNow)}</section>
+          ${changeGauge(formats, lane.card, lane.view)}
           <section class="sheet part restart-part"><restart-evidence .personName=${this.personName} .send=${this.#restart}></restart-evidence></section>
         </div>
       </div>`;
