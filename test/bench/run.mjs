@@ -17,6 +17,7 @@ const benches = [
   { name: 'windows', title: 'Windows', short: [], plain: true },
   { name: 'store', title: 'The store alone', short: ['--records', '1000000', '--rounds', '1'], plain: true },
   { name: 'bounds', title: 'Bounds', short: [], plain: true },
+  { name: 'batch', title: 'Bounds in batches', short: ['10000'] },
   { name: 'delay-table', title: 'Delays of the alarm rules', short: ['2000'] },
   { name: 'measurement-bounds', title: 'Bounds about measurements', short: [], plain: true },
 ];
