@@ -11,6 +11,7 @@ const commands: Readonly<Record<string, () => Promise<Command>>> = {
   feed: async () => (await import('./feed-command.ts')).feedCommand(),
   replay: async () => (await import('./replay-command.ts')).replayCommand(),
   plant: async () => (await import('./plant-command.ts')).plantCommand(),
+  check: async () => (await import('./check-command.ts')).checkCommand(),
   bound: async () => (await import('./bound-command.ts')).boundCommand(),
   plan: async () => (await import('./plan-command.ts')).planCommand(),
 };

@@ -1,3 +1,5 @@
+import type { Change } from '../../core/access/change.ts';
+import { changeOfAct } from '../../core/access/change-of-act.ts';
 import type { Decisions, Monitor } from '../../core/monitor/monitor.ts';
 import { monitorFrom, snapshotOf } from '../../core/monitor/monitor-snapshot.ts';
 import { binaryOfFrame } from '../../core/protocol/binary-frame-writer.ts';
@@ -75,8 +77,10 @@ export class Judge {
       }
       case 'act': {
         const fault = this.#monitor.act(arrival.act, this.now);
-        if (fault === undefined) this.#keep(sheet, { kind: 'act', body: noteBody(arrival.act) });
-        else this.#keepIfDecided(sheet);
+        if (fault === undefined) {
+          this.#keep(sheet, { kind: 'act', body: noteBody(arrival.act) });
+          sheet.record(changeOfAct(arrival.act, this.#lastId));
+        } else this.#keepIfDecided(sheet);
         sheet.afterwards.push(() => arrival.done(fault));
         return;
       }
@@ -84,8 +88,10 @@ export class Judge {
         const { text, version } = arrival;
         this.#monitor.advance(this.now);
         this.#keepIfDecided(sheet);
+        const before = this.#monitor.plantVersion;
         this.#monitor = monitorFrom(this.#readPlant(text, version), version, snapshotOf(this.#monitor));
         this.#keep(sheet, { kind: 'plant', body: noteBody({ text, version, clock: this.#clock ? 'time' : 'records' }) });
+        sheet.record({ kind: 'plant', who: 'server', what: 'plant file', before, after: version, why: '', entry: this.#lastId });
         sheet.afterwards.push(arrival.done);
       }
     }
@@ -133,6 +139,7 @@ class Sheet {
   readonly #happenings: KeptHappening[] = [];
   readonly #alarms = new Map<number, Alarm>();
   readonly #minutes: Decisions['minutes'][number][] = [];
+  readonly #changes: Change[] = [];
 
   write(entry: Entry, { happenings, minutes }: Decisions): void {
     this.#entries.push(entry);
@@ -143,7 +150,11 @@ class Sheet {
     for (const minute of minutes) this.#minutes.push(minute);
   }
 
+  record(change: Change | undefined): void {
+    if (change !== undefined) this.#changes.push(change);
+  }
+
   group(): Group {
-    return { entries: this.#entries, happenings: this.#happenings, alarms: [...this.#alarms.values()], minutes: this.#minutes };
+    return { entries: this.#entries, happenings: this.#happenings, alarms: [...this.#alarms.values()], minutes: this.#minutes, changes: this.#changes };
   }
 }

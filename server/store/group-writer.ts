@@ -1,4 +1,5 @@
 import type Database from 'better-sqlite3';
+import { appendChange } from './change-table.ts';
 import { kindCode, unpackEntries } from './packed-entries.ts';
 import type { PackedGroup } from './packed-group.ts';
 
@@ -25,6 +26,7 @@ export function groupWriter(database: Database.Database): (group: PackedGroup) =
     for (const row of group.minutes) {
       minute.run(row.guarantee, row.at, row.inspected, row.nonconforming, row.estimate, row.bound, row.opposite, row.state);
     }
+    for (const change of group.changes) appendChange(database, change, Date.now());
   });
   return (group) => {
     write.immediate(group);

@@ -1,3 +1,4 @@
+import type { Change } from '../../core/access/change.ts';
 import type { Alarm } from '../../core/alarm/alarm.ts';
 import type { EvidenceState } from '../../core/evidence/evidence-state.ts';
 import type { Happening } from '../../core/monitor/happening.ts';
@@ -33,4 +34,6 @@ export interface Group {
   /** Alarms that changed, as they are now: each replaces the one of its id. */
   readonly alarms: readonly Alarm[];
   readonly minutes: readonly Minute[];
+  /** What goes on the record of changes, in order. */
+  readonly changes: readonly Change[];
 }

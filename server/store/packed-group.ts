@@ -1,3 +1,4 @@
+import type { Change } from '../../core/access/change.ts';
 import type { Happening } from '../../core/monitor/happening.ts';
 import type { Group, KeptHappening, Minute } from './group.ts';
 import { packEntries, type PackedEntries } from './packed-entries.ts';
@@ -20,7 +21,7 @@ export interface AlarmRow {
 }
 
 /** A group whose happenings and alarms are text already, as they were when it was given. */
-export interface WaitingGroup extends Pick<Group, 'entries' | 'minutes'> {
+export interface WaitingGroup extends Pick<Group, 'entries' | 'minutes' | 'changes'> {
   readonly happenings: readonly HappeningRow[];
   readonly alarms: readonly AlarmRow[];
   /** About what it takes in memory and on disk. */
@@ -33,19 +34,20 @@ export interface PackedGroup {
   readonly happenings: readonly HappeningRow[];
   readonly alarms: readonly AlarmRow[];
   readonly minutes: readonly Minute[];
+  readonly changes: readonly Change[];
 }
 
 /** Bytes of a row beside its body: figures, keys, the object itself. */
 const rowBytes = 100;
 
-export function waitingGroup({ entries, happenings, alarms, minutes }: Group): WaitingGroup {
+export function waitingGroup({ entries, happenings, alarms, minutes, changes }: Group): WaitingGroup {
   const happeningRows = happenings.map(happeningRow);
   const alarmRows = alarms.map((alarm) => ({ id: alarm.id, guarantee: alarm.guarantee, ended: alarm.state.kind === 'ended', body: JSON.stringify(alarm) }));
-  let bytes = minutes.length * rowBytes;
+  let bytes = (minutes.length + changes.length) * rowBytes;
   for (const entry of entries) bytes += rowBytes + entry.body.length;
   for (const row of happeningRows) bytes += rowBytes + row.body.length;
   for (const row of alarmRows) bytes += rowBytes + row.body.length;
-  return { entries, minutes, happenings: happeningRows, alarms: alarmRows, bytes };
+  return { entries, minutes, changes, happenings: happeningRows, alarms: alarmRows, bytes };
 }
 
 export function packGroups(groups: readonly WaitingGroup[]): PackedGroup {
@@ -54,6 +56,7 @@ export function packGroups(groups: readonly WaitingGroup[]): PackedGroup {
     happenings: groups.flatMap((group) => group.happenings),
     alarms: groups.flatMap((group) => group.alarms),
     minutes: groups.flatMap((group) => group.minutes),
+    changes: groups.flatMap((group) => group.changes),
   };
 }
 

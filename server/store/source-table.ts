@@ -1,4 +1,6 @@
 import type Database from 'better-sqlite3';
+import type { Change } from '../../core/access/change.ts';
+import { appendChange } from './change-table.ts';
 import { checkSource } from './source-check.ts';
 import type { Source, TokenGrant } from './source-register.ts';
 import { hashOfToken, newToken } from './source-token.ts';
@@ -19,21 +21,44 @@ export function addSource(database: Database.Database, name: string, stations: r
   const add = database.prepare(
     'INSERT INTO sources (name, stations, token_hash, created) VALUES (?, ?, ?, ?) ON CONFLICT (name) DO NOTHING',
   );
-  if (add.run(name, JSON.stringify([...new Set(stations)]), hashOfToken(token), at).changes === 0) {
-    throw new StoreError('name-taken', `name: ${name} is taken by another source (revoked ones keep theirs); choose another, or rotate its token.`);
-  }
-  return { source: sourceNamed(database, name), token };
+  return atOnce(database, () => {
+    if (add.run(name, JSON.stringify([...new Set(stations)]), hashOfToken(token), at).changes === 0) {
+      throw new StoreError('name-taken', `name: ${name} is taken by another source (revoked ones keep theirs); choose another, or rotate its token.`);
+    }
+    const source = sourceNamed(database, name);
+    record(database, 'source-made', undefined, source);
+    return { source, token };
+  });
 }
 
 export function rotateSource(database: Database.Database, name: string): TokenGrant {
   const token = newToken();
-  database.prepare('UPDATE sources SET token_hash = ?, revoked = NULL WHERE name = ?').run(hashOfToken(token), name);
-  return { source: sourceNamed(database, name), token };
+  return atOnce(database, () => {
+    const before = sourceNamed(database, name);
+    database.prepare('UPDATE sources SET token_hash = ?, revoked = NULL WHERE name = ?').run(hashOfToken(token), name);
+    const source = sourceNamed(database, name);
+    record(database, 'token-renewed', before, source);
+    return { source, token };
+  });
 }
 
 export function revokeSource(database: Database.Database, name: string, at: number): Source {
-  database.prepare('UPDATE sources SET token_hash = NULL, revoked = coalesce(revoked, ?) WHERE name = ?').run(at, name);
-  return sourceNamed(database, name);
+  return atOnce(database, () => {
+    const before = sourceNamed(database, name);
+    database.prepare('UPDATE sources SET token_hash = NULL, revoked = coalesce(revoked, ?) WHERE name = ?').run(at, name);
+    const source = sourceNamed(database, name);
+    record(database, 'token-withdrawn', before, source);
+    return source;
+  });
+}
+
+/** The write lock comes first: the record's last hash is read under it. */
+const atOnce = <T>(database: Database.Database, act: () => T): T => database.transaction(act).immediate();
+
+/** Who is the command line: whoever may write the data directory. */
+function record(database: Database.Database, kind: Change['kind'], before: Source | undefined, after: Source): void {
+  const shown = (source: Source): Change['after'] => ({ stations: source.stations, revoked: source.revoked ?? null });
+  appendChange(database, { kind, who: 'command line', what: `source ${after.name}`, before: before === undefined ? null : shown(before), after: shown(after), why: '', entry: null }, Date.now());
 }
 
 export function noteUse(database: Database.Database, id: number, at: number): void {

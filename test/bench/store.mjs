@@ -33,7 +33,7 @@ const shapes = [
 
 const frameOf = (bytes, id) => new Uint8Array(bytes).map((_, place) => (place * 31 + id * 17) & 255);
 const entryOf = (frame, id) => ({ id, at: 1.77e12 + id, kind: 'frame', sourceId: 1 + (id % 40), firstSequence: id * perCommit, records: perCommit, body: frame });
-const groupOf = (entries) => ({ entries, happenings: [], alarms: [], minutes: [] });
+const groupOf = (entries) => ({ entries, happenings: [], alarms: [], minutes: [], changes: [] });
 
 /** Bare: one process appends each frame and waits until it is on the disk. */
 async function bareAppend(frames, commits) {

@@ -12,7 +12,7 @@ const body = (id) => new Uint8Array(500 + (id % 5) * 3_000).map((_, place) => (p
 const commit = (id) => {
   const entries = [2 * id - 1, 2 * id].map((of) => ({ id: of, at: of, kind: 'frame', sourceId: 1, firstSequence: of, records: 1, body: body(of) }));
   const minutes = [{ guarantee: 'leak-a', at: 0, inspected: 2, nonconforming: 0, estimate: 0, bound: 0.5, opposite: 0, state: 'gathering' }];
-  return store.commit({ entries, happenings: [], alarms: [], minutes });
+  return store.commit({ entries, happenings: [], alarms: [], minutes, changes: [] });
 };
 
 const keepOn = async (lane) => {

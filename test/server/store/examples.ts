@@ -13,7 +13,7 @@ export function entry(id: number, changes: Partial<Entry> = {}): Entry {
 }
 
 export function group(changes: Partial<Group> = {}): Group {
-  return { entries: [], happenings: [], alarms: [], minutes: [], ...changes };
+  return { entries: [], happenings: [], alarms: [], minutes: [], changes: [], ...changes };
 }
 
 export function entries(from: number, to: number): Entry[] {
