@@ -42,7 +42,7 @@ export function boundAnswer(asked: AskedQuantity, request: ToldRequest, figure: 
     method: asked.method(given),
     looks: rule,
     second: secondComputation(asked, request, figure),
-    notes: [...(column === undefined ? [] : columnNotes(column, side)), ...unchecked(asked, request), ...toleranceOf(asked, request, figure)],
+    notes: [...(column === undefined ? [] : columnNotes(column, side)), ...unchecked(asked, request), ...sigmaKnownFrom(request), ...toleranceOf(asked, request, figure)],
   };
 }
 
@@ -85,6 +85,12 @@ function verdictOf({ promise, scale }: AskedQuantity, { line, side, given }: Tol
 function unchecked({ beside, command }: AskedQuantity, { column }: ToldRequest): readonly string[] {
   if (column !== undefined || !beside.includes('column') || command === 'mean' || command === 'tolerance-rank') return [];
   return ['Figures alone do not show whether the normal model fits; give the measurements (--csv, --column) to have it checked.'];
+}
+
+/** A known standard deviation is worth what its source is worth. */
+function sigmaKnownFrom({ given, sigmaSource }: ToldRequest): readonly string[] {
+  if (given['sigma'] === undefined) return [];
+  return [sigmaSource === undefined ? 'Nobody said where the standard deviation is known from (--sigma-source).' : `The standard deviation is known from: ${sigmaSource}.`];
 }
 
 function toleranceOf({ command, quantity }: AskedQuantity, { column }: ToldRequest, figure: number): readonly string[] {

@@ -18,6 +18,8 @@ export interface ToldRequest {
   /** guarantee line, a share or in the unit of the bound */
   readonly line: number | undefined;
   readonly unit: string | undefined;
+  /** where a known standard deviation is known from */
+  readonly sigmaSource: string | undefined;
   readonly column: ColumnFigures | undefined;
 }
 
@@ -37,7 +39,7 @@ export async function toldRequest(asked: AskedQuantity, told: Told): Promise<Tol
   if (column !== undefined) takeColumn(asked, given, column);
   if (asked.beside.includes('limits')) Object.assign(given, limitDistance(asked, told, given, column));
   for (const helper of ['mean', 'sd']) if (!asked.quantity.fields.some(({ name }) => name === helper)) delete given[helper];
-  return { given, tail, side, line, unit: text(told, 'unit'), column };
+  return { given, tail, side, line, unit: text(told, 'unit'), sigmaSource: text(told, 'sigma-source'), column };
 }
 
 function fieldOf({ name, form }: Field, told: Told): unknown {

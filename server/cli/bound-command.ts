@@ -56,6 +56,7 @@ function commandFor(asked: AskedQuantity): Command {
   if (asked.beside.includes('column')) command.option('--csv <file>', 'CSV file with a header line, in place of figures').option('--column <name>', 'its column of measurements');
   if (asked.beside.includes('line')) command.option('--line <value>', `guarantee line to hold the bound against${asked.scale === 'share' ? ", e.g. '200 ppm' or '98.5 %'" : ''}`);
   if (asked.beside.includes('unit')) command.option('--unit <text>', asked.scale === 'rate' ? 'unit of exposure, for the sentence, e.g. m' : 'unit of measure, for the sentence, e.g. ml');
+  if (asked.command === 'mean') command.option('--sigma-source <text>', 'where sigma is known from; shown with the bound');
   command.option('--json', 'print JSON');
   return command.action(async () => {
     const told = command.opts<Told>();

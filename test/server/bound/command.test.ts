@@ -77,6 +77,12 @@ describe('vouchline bound, for people', () => {
     expect(err).toContain('It would say 0 ppm; the exact bound is 149.8 ppm');
   });
 
+  it('shows where a known standard deviation is known from, or that nobody said', () => {
+    const known = ['mean', '--n', '25', '--mean', '1002', '--sigma', '3', '--side', 'lower', '--confidence', '95 %'];
+    expect(bound(...known, '--sigma-source', 'capability study of the filler, 2025').out).toMatch(/The standard deviation is known from: capability study of the filler, 2025\.$/m);
+    expect(bound(...known).out).toContain('Nobody said where the standard deviation is known from');
+  });
+
   it('takes the stations of a chain', () => {
     expect(bound('chained-yield', '--station', 'crimp=3/12000', '--station', 'leak=1/11997', '--confidence', '95 %').out).toContain('crimp 3 of 12 000, leak 1 of 11 997: at 95 % confidence the chained yield is at least 99.9237 %.');
   });

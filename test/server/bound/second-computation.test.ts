@@ -11,7 +11,7 @@ const all = [...askedAttributes, ...askedMeasurements];
 function asked(command: string, given: Given, tail: number): { second: ReturnType<typeof secondComputation>; off: ReturnType<typeof secondComputation> } {
   const kind = all.find((found) => found.command === command)!;
   const side = given['side'] === 'lower' ? 'lower' : 'upper';
-  const request = { given, tail: tail as Tail, side, line: undefined, unit: undefined, column: undefined } as const;
+  const request = { given, tail: tail as Tail, side, line: undefined, unit: undefined, sigmaSource: undefined, column: undefined } as const;
   const figure = figureOf(kind.quantity, given, () => request.tail);
   if (!figure.ok) throw new Error(figure.fault.because);
   return { second: secondComputation(kind, request, figure.value), off: secondComputation(kind, request, figure.value * (1 + 1e-4)) };
