@@ -39,6 +39,7 @@ export const refusalTable = {
   'station-not-allowed': { effect: 'frame', sentence: "The source's token does not cover this station." },
   'frame-too-large': { effect: 'connection', sentence: 'The message is larger than the limit.' },
   'too-many-in-flight': { effect: 'connection', sentence: 'More frames are in flight than the server granted.' },
+  'foreign-origin': { effect: 'connection', sentence: 'A page of another place asked for the connection.' },
   'token-missing': { effect: 'connection', sentence: 'No token was sent.' },
   'token-unknown': { effect: 'connection', sentence: 'The token is not known, or was withdrawn.' },
   'subprotocol-missing': { effect: 'connection', sentence: 'The connection did not offer a subprotocol this server speaks.' },

@@ -2,6 +2,7 @@ import { existsSync, readFileSync } from 'node:fs';
 import { fileURLToPath } from 'node:url';
 import fastifyStatic from '@fastify/static';
 import { fastify, type FastifyInstance } from 'fastify';
+import { hasForeignOrigin } from '../access/foreign-origin.ts';
 
 /** Where the built dashboard lies: beside the built server, also for a server that runs from its sources (tests). */
 const folder = fileURLToPath(new URL(import.meta.url.endsWith('.ts') ? '../../.build/client' : '../../client', import.meta.url));
@@ -22,6 +23,11 @@ const bodyLimit = 65_536;
 export async function httpServer(): Promise<FastifyInstance> {
   // An upload may take its time, but a connection that says nothing is ended.
   const http = fastify({ bodyLimit, forceCloseConnections: true, requestTimeout: 0, connectionTimeout: 60_000, return503OnClosing: true });
+  http.addHook('onRequest', async (request, reply) => {
+    if (request.method !== 'GET' && request.method !== 'HEAD' && hasForeignOrigin(request.headers)) {
+      await reply.status(403).send({ message: 'this was asked by a page of another place; expected a page of this server or a program' });
+    }
+  });
   http.addHook('onSend', async (_request, reply) => {
     reply.headers(securityHeaders);
   });

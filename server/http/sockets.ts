@@ -3,6 +3,7 @@ import type { Duplex } from 'node:stream';
 import { WebSocketServer, type WebSocket } from 'ws';
 import { liveProtocol } from '../../core/live/message.ts';
 import { sourceProtocol } from '../../core/protocol/source-messages.ts';
+import { hasForeignOrigin } from '../access/foreign-origin.ts';
 import { bearerToken } from '../ingest/bearer-token.ts';
 import type { Sender } from '../pipeline/arrival.ts';
 
@@ -59,7 +60,8 @@ export function serveSockets(server: Server, host: SocketHost): () => void {
   function onUpgrade(request: IncomingMessage, socket: Duplex, head: Buffer): void {
     socket.on('error', host.onError);
     const path = (request.url ?? '').split('?')[0];
-    if (path === '/live') upgradeDashboard(request, socket, head);
+    if (hasForeignOrigin(request.headers)) refuse(socket, 403, 'foreign-origin');
+    else if (path === '/live') upgradeDashboard(request, socket, head);
     else if (path === '/source') {
       upgradeSource(request, socket, head).catch((cause: unknown) => {
         host.onError(cause as Error);
@@ -76,7 +78,7 @@ export function serveSockets(server: Server, host: SocketHost): () => void {
   };
 }
 
-const reasons: Readonly<Record<number, string>> = { 400: 'Bad Request', 401: 'Unauthorized', 404: 'Not Found', 500: 'Internal Server Error', 503: 'Service Unavailable' };
+const reasons: Readonly<Record<number, string>> = { 400: 'Bad Request', 401: 'Unauthorized', 403: 'Forbidden', 404: 'Not Found', 500: 'Internal Server Error', 503: 'Service Unavailable' };
 
 function refuse(socket: Duplex, status: number, code: string): void {
   if (socket.destroyed) return;
