@@ -1,7 +1,7 @@
 import type { Alarm } from '../core/alarm/alarm.ts';
 import type { EvidenceState, LookRule } from '../core/evidence/evidence-state.ts';
 import type { Priority, RuleKind, WindowRule } from '../core/plant/guarantee.ts';
-import type { DetectorView } from '../core/run/change-watch.ts';
+import type { DetectorView } from '../core/run/detector-view.ts';
 import type { GuaranteeCard, GuaranteeView } from '../core/view/guarantee-view.ts';
 import { written, type Formats } from './format.ts';
 

@@ -7,6 +7,7 @@ import type { AlarmRule, Guarantee } from '../plant/guarantee.ts';
 import { admitFound, admitQuiet, clearAlarm, newDetector, type DetectorState } from '../sequential/change-detector.ts';
 import { conformingToHalfWay, detectorGauge, nonconformingToAlarm } from '../sequential/detector-reading.ts';
 import type { DetectorTuning } from '../sequential/detector-tuning.ts';
+import type { DetectorView } from './detector-view.ts';
 
 export type DeteriorationRule = Extract<AlarmRule, { kind: 'deterioration' }>;
 
@@ -25,16 +26,6 @@ export interface ChangeWatchSnapshot {
   readonly state: DetectorState;
   /** Units (or exposure) seen at which the alarm may return, if the gauge is low by then; -1 while none stands. */
   readonly calmFrom: number;
-}
-
-/** What a screen shows of a change detector. */
-export interface DetectorView {
-  /** How far it has gone on the way to its alarm, 0 to 1. */
-  readonly gauge: number;
-  readonly inARowToAlarm: number | undefined;
-  readonly conformingToHalfWay: number | undefined;
-  readonly betweenFalseCalls: number;
-  readonly baseline: number;
 }
 
 /** Units without a nonconforming one that would speak for the baseline at 95 %, times the baseline. */

@@ -1,5 +1,5 @@
 import type { EvidenceState, LookRule } from '../evidence/evidence-state.ts';
-import type { DetectorView } from '../run/change-watch.ts';
+import type { DetectorView } from '../run/detector-view.ts';
 import type { Quantity, WindowRule } from '../plant/guarantee.ts';
 
 /** How figures of a guarantee are written: shares of units, a rate per exposure, or a measured value with its unit. */
