@@ -59,9 +59,10 @@ async function storm(chance: Chance, messages: number): Promise<{ refused: numbe
   return met;
 }
 
-function rawSocket(): Promise<Socket> {
+/** @param allowHalfOpen whether it stays open on this side when the server has ended */
+function rawSocket(allowHalfOpen: boolean): Promise<Socket> {
   return new Promise((resolve) => {
-    const socket = connect(port, '127.0.0.1', () => resolve(socket));
+    const socket = connect({ port, host: '127.0.0.1', allowHalfOpen }, () => resolve(socket));
     socket.on('error', () => undefined);
   });
 }
@@ -119,6 +120,16 @@ describe('a server under hostile input', () => {
     expect(after.bytes - before.bytes).toBeLessThan(4 * mebibyte);
   }, 90_000);
 
+  it('lets go of a refused connection whose peer never closes its side', async () => {
+    const before = await server.held();
+    const peers = await Promise.all(Array.from({ length: 40 }, () => rawSocket(true)));
+    const ends = peers.map((peer) => new Promise((resolve) => peer.on('end', resolve)));
+    for (const peer of peers) peer.resume().write(handshake('/source', 'Sec-WebSocket-Protocol: other\r\n'));
+    await within('all to be refused', Promise.all(ends));
+    await eventually('the connections to be let go', async () => ((await server.held()).handles <= before.handles ? true : undefined));
+    for (const peer of peers) peer.destroy();
+  });
+
   it('ends a connection whose message is too large with 1009, and one with too many frames in flight with 4002', async () => {
     const large = await connectedSource(server.address, token('hostile'));
     large.talk.socket.send(new Uint8Array(mebibyte + 1));
@@ -141,7 +152,7 @@ describe('a server under hostile input', () => {
       await new Promise((resolve) => setImmediate(resolve));
     }
     expect(await heard(talk)).toEqual({ type: 'ack', next: next + 40 });
-    const raw = await rawSocket();
+    const raw = await rawSocket(false);
     raw.write(handshake('/source', `Sec-WebSocket-Protocol: ${sourceProtocol}\r\nAuthorization: Bearer ${token('hostile')}\r\n`));
     const closed = new Promise((resolve) => raw.on('close', resolve));
     raw.resume();

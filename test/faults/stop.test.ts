@@ -5,7 +5,8 @@ import { dataDirectory, liveTalk, tokenFor, type Talk } from '../server/serving.
 import { connectedSource, ConnectionEnded, endAll, heard, ServerProcess, within } from './harness.ts';
 import { leakFrame } from './frames.ts';
 
-const records = 200;
+const records = 20;
+const inFlight = 60;
 let data: ReturnType<typeof dataDirectory>;
 let token: string;
 
@@ -18,14 +19,14 @@ afterEach(() => {
   data.remove();
 });
 
-/** Sends without pause, eight frames in flight, until the server says goodbye. */
+/** Sends without pause, nearly as many frames in flight as are granted, until the server says goodbye. */
 async function load(talk: Talk<ServerMessage>, next: number, onAcknowledged: (next: number) => void): Promise<{ acknowledged: number; said: string | undefined }> {
   let acknowledged = next;
   let sent = next;
   let said: string | undefined;
   try {
     for (;;) {
-      for (; sent < acknowledged + 8 * records; sent += records) talk.send(leakFrame(sent, records));
+      for (; sent < acknowledged + inFlight * records; sent += records) talk.send(leakFrame(sent, records));
       const answer = await heard(talk);
       if (answer.type === 'ack') acknowledged = answer.next;
       else said = answer.type === 'stopping' ? answer.reason : JSON.stringify(answer);
