@@ -4,10 +4,12 @@ import { join } from 'node:path';
 import type { Logger } from 'pino';
 import { sourceLimits } from '../core/protocol/limits.ts';
 import { plantClock, type ClockSetting } from './clock/plant-clock.ts';
-import { serveApi } from './http/api.ts';
+import { openGuard } from './access/guard.ts';
 import { httpServer } from './http/http-server.ts';
 import { serveOperations } from './http/operations.ts';
-import { servePlantFiles } from './http/plant-files.ts';
+import { plantFileRoutes } from './http/plant-files.ts';
+import { plantRoutes } from './http/plant-routes.ts';
+import { serveRoutes } from './http/serve-routes.ts';
 import { serveSockets } from './http/sockets.ts';
 import { UploadDesk } from './http/upload-desk.ts';
 import { serveUploads } from './http/upload.ts';
@@ -125,8 +127,8 @@ export async function serveFrom(store: Store, { settings, clock: clockSetting, d
 
   const http = await httpServer();
   serveOperations(http, { store, measures });
-  serveApi(http, { store, monitor: () => plant.monitor, act: (act) => plant.act(act) });
-  servePlantFiles(http);
+  const guard = openGuard;
+  serveRoutes(http, [...plantRoutes({ store, monitor: () => plant.monitor, act: (act) => plant.act(act) }), ...plantFileRoutes()], guard);
   const closedBecause = (): string | undefined => (store.condition.kind === 'open' ? undefined : 'not-stored');
   const senderOf = (token: string): Promise<Sender | undefined> => sources.senderOf(token);
   serveUploads(http, {

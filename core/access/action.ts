@@ -18,6 +18,8 @@ export const actionRules = {
   'manage-sources': { reach: 'plant', roles: ['engineer', 'administrator'] },
   'manage-displays': { reach: 'plant', roles: ['administrator'] },
   'manage-accounts': { reach: 'plant', roles: ['administrator'] },
+  /** One's own password, PIN, passkeys, sessions and tokens. */
+  'keep-own-account': { reach: 'line', roles: ['viewer', 'supervisor', 'maintenance', 'engineer', 'administrator'] },
 } as const satisfies Readonly<Record<string, ActionRule>>;
 
 export type Action = keyof typeof actionRules;

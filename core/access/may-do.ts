@@ -4,6 +4,8 @@ import type { Grant } from './role.ts';
 /** As far as a decision needs to know a person, a display or a token: without a grant it may do nothing. */
 export interface Granted {
   readonly grants: readonly Grant[];
+  /** What a token is for; absent: everything its grants allow. */
+  readonly onlyActions?: readonly Action[];
 }
 
 /**
@@ -12,7 +14,15 @@ export interface Granted {
  *
  * @param line id of the line it concerns; undefined: the whole plant
  */
-export function mayDo({ grants }: Granted, action: Action, line: string | undefined): boolean {
+export function mayDo(granted: Granted, action: Action, line: string | undefined): boolean {
   const rule: ActionRule = actionRules[action];
-  return grants.some((grant) => rule.roles.includes(grant.role) && (grant.line === undefined || (rule.reach === 'line' && grant.line === line)));
+  return isFor(granted, action) && granted.grants.some((grant) => rule.roles.includes(grant.role) && (grant.line === undefined || (rule.reach === 'line' && grant.line === line)));
 }
+
+/** Whether there is a place, a line or the plant, where someone may do something. */
+export function mayDoSomewhere(granted: Granted, action: Action): boolean {
+  const rule: ActionRule = actionRules[action];
+  return isFor(granted, action) && granted.grants.some((grant) => rule.roles.includes(grant.role) && (grant.line === undefined || rule.reach === 'line'));
+}
+
+const isFor = ({ onlyActions }: Granted, action: Action): boolean => onlyActions === undefined || onlyActions.includes(action);

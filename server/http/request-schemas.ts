@@ -4,8 +4,11 @@ const personName = v.pipe(v.string(), v.trim(), v.minLength(1, 'say who you are'
 const words = (most: number): v.GenericSchema<string> => v.pipe(v.string(), v.trim(), v.maxLength(most, `at most ${most} characters`));
 const wholeText = v.pipe(v.string(), v.regex(/^\d{1,15}$/, 'a whole number'), v.transform(Number));
 
-export const acknowledgeRequest = v.strictObject({ by: personName, note: v.optional(words(500), '') });
-export const restartRequest = v.strictObject({ by: personName, reason: v.pipe(words(500), v.minLength(1, 'say why the evidence is restarted')) });
+/** Who acts: asked for where access is open; whoever is signed in acts under their own name. */
+const by = v.optional(personName);
+
+export const acknowledgeRequest = v.strictObject({ by, note: v.optional(words(500), '') });
+export const restartRequest = v.strictObject({ by, reason: v.pipe(words(500), v.minLength(1, 'say why the evidence is restarted')) });
 export const alarmParams = v.object({ id: wholeText });
 export const guaranteeParams = v.object({ id: v.pipe(v.string(), v.maxLength(64)) });
 

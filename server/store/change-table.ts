@@ -22,14 +22,14 @@ interface Row {
 }
 
 /** What the first record is chained to. */
-const beginning = Buffer.alloc(32);
+export const beginning = Buffer.alloc(32);
 
 /** Adds a record; to be called within the transaction of what it records. `at` is wall time, ms since 1970-01-01 UTC. */
 export function appendChange(database: Database.Database, change: Change, at: number): void {
   const last = database.prepare('SELECT hash FROM changes ORDER BY id DESC LIMIT 1').get() as Pick<Row, 'hash'> | undefined;
   const id = highestGiven(database) + 1;
   const body = canonicalJson({ id, at, ...change });
-  database.prepare('INSERT INTO changes VALUES (?, ?, ?)').run(id, body, hashOf(last?.hash ?? beginning, body));
+  database.prepare('INSERT INTO changes VALUES (?, ?, ?)').run(id, body, chainedHash(last?.hash ?? beginning, body));
 }
 
 /**
@@ -43,7 +43,7 @@ export function checkChain(database: Database.Database, noted?: ChainHead): Chai
   let head: { id: number; hash: Buffer } = { id: 0, hash: beginning };
   for (const row of database.prepare('SELECT id, body, hash FROM changes ORDER BY id').iterate() as IterableIterator<Row>) {
     if (row.id !== head.id + 1) return { kind: 'broken', at: head.id + 1, why: 'missing' };
-    if (!row.hash.equals(hashOf(head.hash, row.body))) return { kind: 'broken', at: row.id, why: 'altered' };
+    if (!row.hash.equals(chainedHash(head.hash, row.body))) return { kind: 'broken', at: row.id, why: 'altered' };
     if (row.id === noted?.id && row.hash.toString('hex') !== noted.hash) return { kind: 'broken', at: row.id, why: 'not-as-noted' };
     head = row;
   }
@@ -55,6 +55,7 @@ function highestGiven(database: Database.Database): number {
   return (database.prepare("SELECT seq FROM sqlite_sequence WHERE name = 'changes'").pluck().get() as number | undefined) ?? 0;
 }
 
-function hashOf(before: Buffer, body: string): Buffer {
+/** What stands for a record and all before it. */
+export function chainedHash(before: Buffer, body: string): Buffer {
   return createHash('sha256').update(before).update(body).digest();
 }

@@ -1,5 +1,7 @@
 import { existsSync } from 'node:fs';
 import type Database from 'better-sqlite3';
+import type { AccessWrite } from '../access/access-file.ts';
+import { writeAccess } from './access-table.ts';
 import { makePrivate } from './data-directory.ts';
 import { groupWriter } from './group-writer.ts';
 import type { PackedGroup } from './packed-group.ts';
@@ -19,6 +21,7 @@ export type CommitCalls = {
   readonly rotateSource: (name: string) => TokenGrant;
   readonly revokeSource: (source: { readonly name: string; readonly at: number }) => Source;
   readonly noteUse: (use: { readonly id: number; readonly at: number }) => void;
+  readonly writeAccess: (write: AccessWrite) => void;
   readonly backup: (path: string) => Promise<void>;
   readonly close: (nothing: undefined) => void;
 };
@@ -31,6 +34,7 @@ export function commitCalls(database: Database.Database, close: () => void): Com
     rotateSource: (name) => rotateSource(database, name),
     revokeSource: ({ name, at }) => revokeSource(database, name, at),
     noteUse: ({ id, at }) => noteUse(database, id, at),
+    writeAccess: (write) => writeAccess(database, write, Date.now()),
     backup: (path) => backupTo(database, path),
     close,
   };

@@ -1,7 +1,9 @@
 import type { Alarm } from '../../core/alarm/alarm.ts';
+import type { AccessFile } from '../access/access-file.ts';
 import type { Happening } from '../../core/monitor/happening.ts';
 import type { Entry, EntryKind } from './entry.ts';
 import type { Group, Minute } from './group.ts';
+import { keepChanges, memoryAccess, type KeptAccess } from './memory-access.ts';
 import { memoryHistory } from './memory-history.ts';
 import { memoryRegister, type KeptSources } from './memory-register.ts';
 import { guaranteeOf, waitingGroup } from './packed-group.ts';
@@ -21,13 +23,14 @@ export interface MemoryDisk {
   readonly minutes: Map<string, Minute>;
   snapshots: Snapshot[];
   readonly sources: KeptSources;
+  readonly access: KeptAccess;
   inUse: boolean;
   /** When set, the next write fails with it, as a full disk would. */
   failure: StoreError | undefined;
 }
 
 export function memoryDisk(): MemoryDisk {
-  return { entries: [], happenings: [], alarms: new Map(), minutes: new Map(), snapshots: [], sources: new Map(), inUse: false, failure: undefined };
+  return { entries: [], happenings: [], alarms: new Map(), minutes: new Map(), snapshots: [], sources: new Map(), access: { items: new Map(), changes: [] }, inUse: false, failure: undefined };
 }
 
 /** A store without a disk, for tests: the same contract, kept as long as its MemoryDisk. @throws StoreError 'in-use' */
@@ -39,6 +42,7 @@ export function openMemoryStore(disk: MemoryDisk = memoryDisk(), options: StoreO
 
 class MemoryStore implements Store {
   readonly sources: SourceRegister;
+  readonly access: AccessFile;
   /** Everything is durable at once. */
   readonly waitingBytes = 0;
   readonly #disk: MemoryDisk;
@@ -48,6 +52,7 @@ class MemoryStore implements Store {
     this.#disk = disk;
     this.#gate = new StoreGate(this.lastId, options.onRefused);
     this.sources = memoryRegister(disk.sources, this.#run);
+    this.access = memoryAccess(disk.access, this.#run);
   }
 
   get condition(): StoreCondition {
@@ -74,6 +79,7 @@ class MemoryStore implements Store {
     }
     for (const { id, body } of alarms) this.#disk.alarms.set(id, JSON.parse(body) as Alarm);
     for (const minute of minutes) this.#keepMinute(minute);
+    keepChanges(this.#disk.access, group.changes, Date.now());
   }
 
   #keepMinute(minute: Minute): void {

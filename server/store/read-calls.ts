@@ -1,5 +1,9 @@
 import type Database from 'better-sqlite3';
+import type { RecordedChange } from '../../core/access/change.ts';
 import type { Alarm } from '../../core/alarm/alarm.ts';
+import type { AccessItem, ChangeQuery } from '../access/access-file.ts';
+import { readAccess } from './access-table.ts';
+import { readChanges } from './change-read.ts';
 import { readEndedAlarms, readOpenAlarms } from './alarm-read.ts';
 import type { EntryKind } from './entry.ts';
 import { readHappenings } from './happening-read.ts';
@@ -23,6 +27,8 @@ export type ReadCalls = {
   readonly endedAlarms: (page: Page) => readonly Alarm[];
   readonly listSources: (nothing: undefined) => readonly Source[];
   readonly sourceOfToken: (token: string) => Source | undefined;
+  readonly accessItems: (nothing: undefined) => readonly AccessItem[];
+  readonly changes: (query: ChangeQuery) => readonly RecordedChange[];
   readonly close: (nothing: undefined) => void;
 };
 
@@ -42,6 +48,8 @@ export function readCalls(database: Database.Database, close: () => void): ReadC
     endedAlarms: (page) => readEndedAlarms(database, page),
     listSources: () => listSources(database),
     sourceOfToken: (token) => sourceOfToken(database, token),
+    accessItems: () => readAccess(database),
+    changes: (query) => readChanges(database, query),
     close,
   };
 }

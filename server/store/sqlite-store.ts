@@ -1,4 +1,5 @@
 import type { Alarm } from '../../core/alarm/alarm.ts';
+import type { AccessFile } from '../access/access-file.ts';
 import type { CommitCalls } from './commit-calls.ts';
 import { CommitQueue } from './commit-queue.ts';
 import type { CommitOpened, CommitStart } from './commit-worker.ts';
@@ -9,6 +10,7 @@ import { journalBatches } from './journal-batches.ts';
 import { unpackEntries } from './packed-entries.ts';
 import { waitingGroup } from './packed-group.ts';
 import type { ReadCalls } from './read-calls.ts';
+import { remoteAccess } from './remote-access.ts';
 import { remoteRegister } from './remote-register.ts';
 import type { SourceRegister } from './source-register.ts';
 import { storeErrorOf } from './sqlite-fault.ts';
@@ -56,6 +58,7 @@ export async function openStore(directory: string, options: StoreOptions = {}): 
 
 class SqliteStore implements Store {
   readonly sources: SourceRegister;
+  readonly access: AccessFile;
   readonly #writing: CommitChannel;
   readonly #reading: ReadChannel;
   readonly #queue: CommitQueue;
@@ -72,6 +75,7 @@ class SqliteStore implements Store {
     this.#gate = new StoreGate(lastId, options.onRefused);
     this.#queue = new CommitQueue(writing, { groupBytes: options.groupBytes ?? 4 * mebibyte, groupEntries: options.groupEntries ?? 4_096 });
     this.sources = remoteRegister(writing, reading);
+    this.access = remoteAccess(writing, reading);
     void writing.ended.then(() => this.#gate.refuse(new StoreError('worker-ended', 'The committing thread has ended by itself.')));
   }
 

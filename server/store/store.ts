@@ -1,6 +1,7 @@
 import type { Alarm } from '../../core/alarm/alarm.ts';
 import type { Happening } from '../../core/monitor/happening.ts';
 import type { History } from '../../core/view/history.ts';
+import type { AccessFile } from '../access/access-file.ts';
 import type { Entry, EntryKind } from './entry.ts';
 import type { Group } from './group.ts';
 import type { SourceRegister } from './source-register.ts';
@@ -81,6 +82,7 @@ export interface StoreOptions {
 /** Where everything accepted is kept. One server per data directory; opened by `openStore` or `openMemoryStore`. */
 export interface Store {
   readonly sources: SourceRegister;
+  readonly access: AccessFile;
   readonly condition: StoreCondition;
   /** Newest journal id that was durable when the store was opened or became so since; 0 when empty. */
   readonly lastId: number;

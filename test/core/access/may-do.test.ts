@@ -14,6 +14,7 @@ const expected: Readonly<Record<Action, { readonly letters: string; readonly per
   'manage-sources': { letters: 'EA', perLine: false },
   'manage-displays': { letters: 'A', perLine: false },
   'manage-accounts': { letters: 'A', perLine: false },
+  'keep-own-account': { letters: 'VSMEA', perLine: true },
 };
 const letter: Readonly<Record<Role, string>> = { viewer: 'V', supervisor: 'S', maintenance: 'M', engineer: 'E', administrator: 'A' };
 

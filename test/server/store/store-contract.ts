@@ -45,6 +45,23 @@ export function storeContract(name: string, makePlace: () => StorePlace): void {
       expect(await store.sources.list()).toEqual([]);
     });
 
+    it('keeps access data and the record of changes together, over a restart', async () => {
+      const made = { kind: 'account', who: 'Ines', what: 'account mette', before: null, after: { roles: ['viewer'] }, why: 'new in maintenance', entry: null } as const;
+      await store.access.write({ put: [{ kind: 'account', id: 'mette', body: '{"n":1}' }, { kind: 'session', id: 's', body: '{}' }], changes: [made, { ...made, kind: 'invitation', who: 'Olaf', why: '' }] });
+      await store.access.write({ put: [{ kind: 'account', id: 'mette', body: '{"n":2}' }], drop: [{ kind: 'session', id: 's' }], changes: [{ ...made, what: 'account olaf' }] });
+      await reopen();
+      expect(await store.access.items()).toEqual([{ kind: 'account', id: 'mette', body: '{"n":2}' }]);
+      const all = { from: 0, to: Number.MAX_SAFE_INTEGER, limit: 10 };
+      const found = await store.access.changes(all);
+      expect(found.map(({ id, kind }) => [id, kind])).toEqual([[3, 'account'], [2, 'invitation'], [1, 'account']]);
+      expect(found[2]).toMatchObject({ ...made, hash: expect.stringMatching(/^[0-9a-f]{64}$/) as string });
+      expect((await store.access.changes({ ...all, kind: 'invitation' })).map(({ id }) => id)).toEqual([2]);
+      expect((await store.access.changes({ ...all, holds: 'MAINTENANCE' })).map(({ id }) => id)).toEqual([3, 1]);
+      expect((await store.access.changes({ ...all, before: 3, limit: 1 })).map(({ id }) => id)).toEqual([2]);
+      expect(await store.access.changes({ ...all, to: 1 })).toEqual([]);
+      await expect(store.access.changes({ ...all, limit: 0 })).rejects.toEqual(withFault('bad-request'));
+    });
+
     it('gives entries back in order, whole, after a restart', async () => {
       const kept = [
         entry(1, { kind: 'plant', sourceId: undefined, firstSequence: undefined, records: 0, body: new TextEncoder().encode('lines: []') }),
