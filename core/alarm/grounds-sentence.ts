@@ -20,8 +20,10 @@ export function groundsSentence(rule: RuleKind, quantity: Quantity, side: 'at-mo
 }
 
 function evidenceInWords(figures: Readonly<Record<string, number>>): string {
-  const { inspected, nonconforming, count, exposure, mean, values } = figures;
-  if (inspected !== undefined && nonconforming !== undefined) return `${nonconforming} nonconforming of ${inspected} units in the window`;
+  const { inspected, nonconforming, events, count, exposure, mean, values } = figures;
+  if (inspected !== undefined && nonconforming !== undefined) {
+    return `${nonconforming} nonconforming of ${inspected} units in the window${events === undefined ? '' : `, in ${events} events`}`;
+  }
   if (count !== undefined && exposure !== undefined) return `${count} nonconformities in an exposure of ${Number(exposure.toPrecision(6))} in the window`;
   if (mean !== undefined && values !== undefined) return `mean ${Number(mean.toPrecision(6))} of ${values} values in the window`;
   return 'see the figures';

@@ -18,6 +18,10 @@ export interface CountRule {
   lower(size: number, count: number): number;
   /** Size that the quantity is told for: 1 unit for a fraction, the promised exposure for a rate. */
   readonly per: number;
+  /** Estimate from the same; count / size times `per` where it is absent. */
+  estimate?(size: number, count: number): number;
+  /** Why the figures contradict each other, if they do. */
+  doubt?(size: number, count: number): string | undefined;
 }
 
 /**
@@ -36,7 +40,7 @@ export function binomialRule(guarantee: Guarantee, line: Fraction, target: Fract
   return {
     per: 1,
     thresholds: by.line,
-    judge: new CountJudge({ ...by, rate: line }),
+    judge: new CountJudge({ ...by, neverDemonstrated: line, neverViolated: line }),
     upper: (inspected, nonconforming) => fractionUpper(nonconforming, inspected, tail),
     lower: (inspected, nonconforming) => fractionLower(nonconforming, inspected, violationTail),
   };
@@ -57,14 +61,14 @@ export function poissonRule(guarantee: Guarantee, { line, target, per }: { line:
   return {
     per,
     thresholds: by.line,
-    judge: new CountJudge({ ...by, rate: line / per }),
+    judge: new CountJudge({ ...by, neverDemonstrated: line / per, neverViolated: line / per }),
     upper: (exposure, count) => rateUpper(count, exposure, tail) * per,
     lower: (exposure, count) => rateLower(count, exposure, violationTail) * per,
   };
 }
 
 /** The thresholds that the alarm rules of a guarantee ask for, each remembered and made once. */
-export function judgeThresholds(guarantee: Guarantee, line: number, target: number, at: (line: number, level: Tail) => Thresholds): Omit<JudgeThresholds, 'rate'> {
+export function judgeThresholds(guarantee: Guarantee, line: number, target: number, at: (line: number, level: Tail) => Thresholds): Pick<JudgeThresholds, 'line' | 'opposite' | 'backFromCrossing' | 'backFromViolation'> {
   const { tail } = guarantee;
   const { crossingDistance, violationDistance, violationTail } = levelsOf(guarantee);
   const remembered = (distance: number, level: Tail): Thresholds => new RememberedThresholds(at(movedIn(line, target, distance), level));

@@ -6,6 +6,7 @@ import { ChainEvidence, type StationEvidence } from './chain-evidence.ts';
 import { ChainRule } from './chain-rule.ts';
 import { binomialRule, poissonRule, type CountRule } from './count-rule.ts';
 import type { Evidence } from './evidence.ts';
+import { fractionRule } from './fraction-rule.ts';
 import type { HeldRecords, RecordSum } from './held-records.ts';
 import { LimitEvidence } from './limit-evidence.ts';
 import { LotEvidence } from './lot-evidence.ts';
@@ -29,10 +30,10 @@ export function evidenceOf(guarantee: Guarantee, standing: Standing): Evidence {
   const { promise } = guarantee;
   switch (promise.quantity) {
     case 'nonconforming-fraction':
-      return unitsOf(guarantee, binomialRule(guarantee, promise.atMost, promise.target), standing, {});
+      return unitsOf(guarantee, fractionRule(guarantee, promise.atMost, promise.target), standing, {});
     case 'yield': {
       const target = decimalComplement(promise.target) as Fraction;
-      return unitsOf(guarantee, binomialRule(guarantee, promise.atMostNonconforming, target), standing, { asYield: true });
+      return unitsOf(guarantee, fractionRule(guarantee, promise.atMostNonconforming, target), standing, { asYield: true });
     }
     case 'fraction-beyond-limit':
       return beyondLimitOf(guarantee, promise, standing);
@@ -69,7 +70,8 @@ function recordsOf<T, S extends RecordSum<T, S>>({ window }: Guarantee, width: 1
   return new NumberedRecords<T, S>(window.kind === 'units' ? window.units : undefined, width, emptySum());
 }
 
-function unitsOf({ window }: Guarantee, rule: CountRule, weighing: Weighing, { limit, asYield = false }: { limit?: Limit; asYield?: boolean }): StationEvidence {
+function unitsOf({ window, clusters }: Guarantee, rule: CountRule, weighing: Weighing, { limit, asYield = false }: { limit?: Limit; asYield?: boolean }): StationEvidence {
   if (window.kind === 'time') return new TimedUnitEvidence({ span: window, limit, asYield }, rule, weighing);
-  return new UnitEvidence({ size: window.kind === 'units' ? window.units : undefined, limit, asYield }, rule, weighing);
+  const gap = clusters?.kind === 'events' ? clusters.gap : undefined;
+  return new UnitEvidence({ size: window.kind === 'units' ? window.units : undefined, gap, clustersDeclared: clusters !== undefined, limit, asYield }, rule, weighing);
 }

@@ -26,7 +26,7 @@ export class LimitEvidence extends UnitEvidence {
   readonly #values = new SlidingColumns(1);
 
   constructor(size: number | undefined, limit: Limit, unit: string, rule: CountRule, weighing: Weighing) {
-    super({ size, limit, asYield: false }, rule, weighing);
+    super({ size, gap: undefined, limit, asYield: false }, rule, weighing);
     this.#limit = limit;
     this.#unit = unit;
     this.#most = Math.min(size ?? mostValues, mostValues);

@@ -25,7 +25,7 @@ export class LotEvidence extends UnitEvidence {
   /** @param line largest nonconforming fraction that was promised; likewise the target, below it */
   constructor(guarantee: Guarantee, { line, target }: { line: number; target: number }, standing: Standing) {
     const ruleOf = (lotSize: number): CountRule => lotRule(guarantee, line, target, lotSize);
-    super({ size: undefined, limit: undefined, asYield: false }, ruleOf(1), standing);
+    super({ size: undefined, gap: undefined, limit: undefined, asYield: false }, ruleOf(1), standing);
     this.#ruleOf = ruleOf;
     this.#standing = standing;
     this.setLotSize(undefined);

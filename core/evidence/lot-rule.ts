@@ -22,7 +22,7 @@ export function lotRule(guarantee: Guarantee, line: number, target: number, lotS
   return {
     per: 1,
     thresholds: by.line,
-    judge: new LotJudge(new CountJudge({ ...by, rate: 0 }), lotSize, lotAllowance(line, lotSize)),
+    judge: new LotJudge(new CountJudge({ ...by, neverDemonstrated: 0, neverViolated: 0 }), lotSize, lotAllowance(line, lotSize)),
     upper: (sampled, nonconforming) => lotUpper({ nonconforming, sampled, lotSize }, tail) / lotSize,
     lower: (sampled, nonconforming) => lotLower({ nonconforming, sampled, lotSize }, violationTail) / lotSize,
   };

@@ -1,4 +1,5 @@
 import type { Guarantee } from '../plant/guarantee.ts';
+import { clusterWords, errorWords } from './remedy-words.ts';
 
 /** How a guarantee's bound is computed, for people and for the record. The version rises when figures could change. */
 export interface Method {
@@ -33,6 +34,34 @@ export const windowMethods = {
     sentence: 'The largest rate at which so few nonconformities in this exposure would still be seen with the probability that the confidence level leaves over.',
     assumes: ['Nonconformities occur singly, independently and at one rate per exposure within the window.'],
     source: 'F. Garwood, Biometrika 28 (1936), 437–442 (from memory)',
+  },
+  knownError: {
+    name: 'exact binomial bound corrected for known inspection errors',
+    version: 1,
+    sentence: 'The exact bound on the share of rejected units, turned into the share of nonconforming ones by the chances with which the station rejects bad and good units.',
+    assumes: [steady, 'The station rejects bad and good units with the declared chances, independently from unit to unit.'],
+    source: 'W. J. Rogan, B. Gladen, American Journal of Epidemiology 107 (1978), 71–76 (seen cited); J. Reiczigel, J. Földi, L. Ózsvári, Epidemiology and Infection 138 (2010), 1674–1678 (opening read)',
+  },
+  triedError: {
+    name: 'exact binomial bound corrected for tried inspection errors',
+    version: 1,
+    sentence: 'Three exact bounds that hold together, on the share of rejected units and on the chances with which the station rejected bad and good units in its trial; 6/10 of the error for the first, 2/10 for each of the others.',
+    assumes: [steady, 'The station rejects units as it did those of its trial.'],
+    source: 'C. E. Bonferroni’s inequality on the formula of W. J. Rogan and B. Gladen 1978; shares: own choice',
+  },
+  designed: {
+    name: 'exact binomial bound with a planned design effect',
+    version: 1,
+    sentence: 'The exact bound of a sample smaller by the declared design effect.',
+    assumes: ['Nonconforming units may come in clusters; the design effect was declared from history and not taken from these units.'],
+    source: 'effective sample size after L. Kish 1965 (from memory); coverage measured, not proved',
+  },
+  events: {
+    name: 'exact binomial bound on events',
+    version: 1,
+    sentence: 'Nonconforming units within the declared gap of the one before count as one event; the exact bound on the share of events, times the declared units of an event.',
+    assumes: ['Events come independently of each other at one rate.', 'An event has the declared number of units in the mean.'],
+    source: `${clopperPearson}, on events: own derivation`,
   },
   studentMean: {
     name: 't bound on the mean',
@@ -79,7 +108,9 @@ export const windowMethods = {
 } as const satisfies Record<string, Method>;
 
 export function methodOf(guarantee: Guarantee): Method {
-  const { promise } = guarantee;
+  const { promise, stationError, clusters } = guarantee;
+  if (stationError !== undefined) return told(stationError.kind === 'known' ? windowMethods.knownError : windowMethods.triedError, errorWords(stationError));
+  if (clusters !== undefined) return told(clusters.kind === 'events' ? windowMethods.events : windowMethods.designed, clusterWords(clusters));
   switch (promise.quantity) {
     case 'nonconforming-fraction':
       return windowMethods.binomial;
@@ -98,3 +129,6 @@ export function methodOf(guarantee: Guarantee): Method {
       return windowMethods.lot;
   }
 }
+
+/** A method with what the limit sheet declares for it. */
+const told = (method: Method, declared: string): Method => ({ ...method, assumes: [...method.assumes, declared] });

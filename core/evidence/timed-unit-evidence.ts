@@ -128,7 +128,8 @@ export class TimedUnitEvidence implements Evidence {
   }
 
   warnings(): readonly string[] {
-    return [];
+    const doubt = this.#rule.doubt?.(this.window.inspected, this.window.nonconforming);
+    return doubt === undefined ? [] : [doubt];
   }
 
   snapshot(): TimedUnitSnapshot {

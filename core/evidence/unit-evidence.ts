@@ -16,8 +16,12 @@ import type { Weighing } from './weighing.ts';
 export interface UnitEvidenceSettings {
   /** Units of the window; undefined for a growing one. */
   readonly size: number | undefined;
+  /** Nonconforming units at most so far from the one before count as one event with it; undefined: each counts. */
+  readonly gap: number | undefined;
   /** Judges measurements, where the quantity counts values beyond a limit. */
   readonly limit: Limit | undefined;
+  /** Clusters are declared and allowed for: they need no warning. */
+  readonly clustersDeclared?: boolean;
   /** Shows the share of conforming units instead of that of nonconforming ones. */
   readonly asYield: boolean;
 }
@@ -44,7 +48,7 @@ export class UnitEvidence implements Evidence {
     this.#settings = settings;
     this.#rule = rule;
     this.#weighing = weighing;
-    this.window = new UnitWindow(settings.size === undefined ? {} : { size: settings.size });
+    this.window = new UnitWindow({ ...(settings.size !== undefined && { size: settings.size }), ...(settings.gap !== undefined && { gap: settings.gap }) });
   }
 
   get position(): number {
@@ -132,14 +136,15 @@ export class UnitEvidence implements Evidence {
   }
 
   weigh(moment: Moment): void {
-    const { inspected, nonconforming } = this.window;
-    this.#weighing.weigh(this.#rule.judge.assess(inspected, nonconforming, this.ripe, this.#weighing.waiting), this.#position, moment);
-    this.#wakeAt = this.#nextWake(inspected, nonconforming);
+    const { inspected, events } = this.window;
+    this.#weighing.weigh(this.#rule.judge.assess(inspected, events, this.ripe, this.#weighing.waiting), this.#position, moment);
+    this.#wakeAt = this.#nextWake(inspected, events);
   }
 
   figures(): Readonly<Record<string, number>> {
-    const { inspected, nonconforming, size } = this.window;
-    return countFigures(this.#rule, inspected, nonconforming, size);
+    const { inspected, nonconforming, events, size } = this.window;
+    const figures = countFigures(this.#rule, inspected, nonconforming, size);
+    return this.#settings.gap === undefined ? figures : { ...figures, events };
   }
 
   ranges(): readonly RecordRange[] {
@@ -147,16 +152,17 @@ export class UnitEvidence implements Evidence {
   }
 
   bounds(): Bounds {
-    return countBounds(this.#rule, this.window.inspected, this.window.nonconforming, this.#settings.asYield);
+    return countBounds(this.#rule, this.window.inspected, this.window.events, this.#settings.asYield);
   }
 
   margin(): Margin {
-    const { inspected, nonconforming, size } = this.window;
-    return countMargin(this.#rule.thresholds, inspected, nonconforming, () => this.#conformingNeeded(inspected, nonconforming, size ?? Infinity));
+    const { inspected, events, size } = this.window;
+    return countMargin(this.#rule.thresholds, inspected, events, () => this.#conformingNeeded(inspected, size ?? Infinity));
   }
 
   warnings(): readonly string[] {
-    return clusterWarnings(this.window);
+    const doubt = this.#rule.doubt?.(this.window.inspected, this.window.events);
+    return [...(doubt === undefined ? [] : [doubt]), ...(this.#settings.clustersDeclared ? [] : clusterWarnings(this.window))];
   }
 
   strip(most: number): WindowStrip {
@@ -171,13 +177,16 @@ export class UnitEvidence implements Evidence {
   restore(from: UnitEvidenceSnapshot): void {
     this.#position = from.position;
     this.window.restore(from.window);
-    this.#wakeAt = this.#nextWake(this.window.inspected, this.window.nonconforming);
+    this.#wakeAt = this.#nextWake(this.window.inspected, this.window.events);
   }
 
   /** Conforming units in a row until demonstrated: by growing, and by old nonconforming units leaving. */
-  #conformingNeeded(inspected: number, nonconforming: number, size: number): number {
+  #conformingNeeded(inspected: number, size: number): number {
+    const { nonconforming } = this.window;
+    let { events } = this.window;
     for (let leaving = 0; leaving <= nonconforming; leaving += 1) {
-      const needed = this.#rule.thresholds.sizeToDemonstrate(nonconforming - leaving);
+      if (leaving > 0 && !this.window.nextIsNear(leaving)) events -= 1;
+      const needed = this.#rule.thresholds.sizeToDemonstrate(events);
       const departed = leaving === 0 ? 0 : this.window.departureOf(leaving);
       if (needed > size) continue;
       const wait = Math.max(departed, needed - Math.min(size, inspected));
@@ -213,11 +222,11 @@ export class UnitEvidence implements Evidence {
     this.weigh(moment);
   }
 
-  #nextWake(inspected: number, nonconforming: number): number {
+  #nextWake(inspected: number, events: number): number {
     let wait = this.window.nextDeparture();
     if (!this.window.full) {
       const size = this.window.size ?? Infinity;
-      const grown = this.#rule.judge.nextSize(inspected, nonconforming);
+      const grown = this.#rule.judge.nextSize(inspected, events);
       wait = Math.min(wait, Math.min(grown, size) - inspected);
     }
     return Math.min(this.#position + Math.max(1, wait), this.#weighing.dueAt(this.#position));

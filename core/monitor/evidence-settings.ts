@@ -2,7 +2,8 @@ import type { Guarantee } from '../plant/guarantee.ts';
 
 /** The settings of a guarantee that its evidence depends on, as one text: where they are the same, evidence is carried over. */
 export function evidenceSettingsOf(guarantee: Guarantee): string {
-  const { stations, product, characteristics, promise, tail, window, normalRate, safetyRelevant, rules } = guarantee;
+  const { stations, product, characteristics, promise, tail, window, normalRate, safetyRelevant, stationError, clusters, rules } = guarantee;
   const settings = rules.map((rule) => ({ ...rule, priority: undefined, response: undefined }));
-  return JSON.stringify([stations, product ?? null, characteristics, promise, tail, window, normalRate ?? null, safetyRelevant, settings]);
+  const remedies = stationError === undefined && clusters === undefined ? [] : [{ stationError, clusters }];
+  return JSON.stringify([stations, product ?? null, characteristics, promise, tail, window, normalRate ?? null, safetyRelevant, settings, ...remedies]);
 }

@@ -1,5 +1,7 @@
 import { decimalComplement } from '../figure/decimal-complement.ts';
+import type { Tail } from '../units.ts';
 import type { Promised } from './guarantee.ts';
+import { detectorLine, type Remedies } from './remedies-of.ts';
 
 /** Quantities whose change can be watched: those that are counted. */
 export function canWatchChange(promise: Promised): boolean {
@@ -18,18 +20,21 @@ export function canWatchChange(promise: Promised): boolean {
 }
 
 /**
- * The rate a change detector takes as well: the declared one, else the guarantee line.
+ * The rate a change detector takes as well: the declared one, else the guarantee line; as it shows in what is counted.
  *
  * @param declared normal rate in the promise's unit
- * @returns nonconforming units per unit, or nonconformities per unit of exposure; NaN for what is not counted
+ * @returns what is counted (nonconforming units, rejects, events) per unit, or nonconformities per unit of exposure; NaN
+ * for what is not counted
  */
-export function changeBaseline(promise: Promised, declared: number | undefined): number {
+export function changeBaseline(guarantee: Remedies & { readonly promise: Promised; readonly tail: Tail }, declared: number | undefined): number {
+  const { promise, tail } = guarantee;
   switch (promise.quantity) {
     case 'yield':
-      return declared === undefined ? promise.atMostNonconforming : decimalComplement(declared);
+      return detectorLine(guarantee, declared === undefined ? promise.atMostNonconforming : decimalComplement(declared), tail);
     case 'rate':
       return (declared ?? promise.atMost) / promise.per;
     case 'nonconforming-fraction':
+      return detectorLine(guarantee, declared ?? promise.atMost, tail);
     case 'fraction-beyond-limit':
     case 'lot-fraction':
       return declared ?? promise.atMost;

@@ -77,6 +77,11 @@ export const windowUnitsSchema = plain(wholeFrom(1, mostWindowUnits), 'whole uni
 export const returnUnitsSchema = plain(wholeFrom(0, mostWindowUnits), 'whole units, 0 to 1000000000');
 export const betweenFalseCallsSchema = plain(wholeFrom(2, 1e15), 'whole units between two false calls, 2 to 1e15');
 export const countSchema = plain(wholeFrom(0, 1e9), 'a whole number, 0 to 1000000000');
+export const positiveCountSchema = plain(wholeFrom(1, 1e9), 'a whole number, 1 to 1000000000');
+export const sizeSchema = plain(
+  (forms) => v.pipe(v.number(forms), v.minValue(1, forms), v.maxValue(1e6, forms)),
+  'a number, 1 to 1000000',
+);
 export const returnDistanceSchema = plain(
   (forms) => v.pipe(v.number(forms), v.minValue(0, forms), v.maxValue(0.9, forms)),
   'a part of the way from target to guarantee line, 0 to 0.9',

@@ -5,6 +5,7 @@ import type { Guarantee } from './guarantee.ts';
 import type { GuaranteeFile } from './guarantee-schema.ts';
 import type { MeasureReader } from './measure-reader.ts';
 import { promiseOf } from './promise-of.ts';
+import { countedWith, remediesOf } from './remedies-of.ts';
 import { rulesOf } from './rules-of.ts';
 import { windowOf } from './window-of.ts';
 
@@ -18,13 +19,16 @@ export function guaranteeOf(file: GuaranteeFile, directory: Directory, complain:
   checkCharacteristics(file, stations, characteristics, directory, complain);
   const reading = promiseOf(file, measureReaderFor(file, directory, complain), complain);
   const tail = file.confidence ?? usualTail;
-  const window = reading && windowOf(file.window, reading, tail, complain);
+  const remedies = remediesOf(file, tail, complain);
+  const asCounted = reading?.counted && countedWith(remedies, reading.counted, tail);
+  const window = reading && windowOf(file.window, { ...reading, counted: asCounted?.counted }, asCounted?.tail ?? tail, complain);
   if (reading === undefined || window === undefined) return undefined;
-  const { promise, normalRate, counted } = reading;
+  const { promise, normalRate } = reading;
   const safetyRelevant = file['safety-relevant'] ?? false;
-  const rules = rulesOf(file.alarms ?? {}, { promise, tail, window, counted, normalRate, safetyRelevant }, within(complain, ['alarms']));
+  const setting = { promise, tail, window, counted: asCounted, normalRate, safetyRelevant, remedies };
+  const rules = rulesOf(file.alarms ?? {}, setting, within(complain, ['alarms']));
   const { id, name = id, product } = file;
-  return { id, name, line, stations, product, characteristics, promise, tail, window, normalRate, safetyRelevant, rules };
+  return { id, name, line, stations, product, characteristics, promise, tail, window, normalRate, safetyRelevant, ...remedies, rules };
 }
 
 /** The line the stations stand on; complains of unknown stations and of a chain that leaves its line or its order. */

@@ -12,6 +12,7 @@ import {
   spanSchema,
   windowUnitsSchema,
 } from './figure-schemas.ts';
+import { clustersSchema, stationErrorSchema } from './remedy-schemas.ts';
 import { choice, isMapping, record, word } from './schema-parts.ts';
 
 const windowWord = word(['lot', 'shift', 'run']);
@@ -36,10 +37,12 @@ const place = { station: idSchema, characteristic: idSchema };
 const share = { target: v.optional(shareSchema), 'normal-rate': v.optional(shareSchema) };
 const quantity = <const Name extends string>(name: Name): v.LiteralSchema<Name, undefined> => v.literal(name);
 
+const remedies = { 'inspection-error': v.optional(stationErrorSchema), clusters: v.optional(clustersSchema) };
+
 const nonconformingFraction = record({
-  quantity: quantity('nonconforming-fraction'), ...settings, ...place, ...share, 'at-most': shareSchema,
+  quantity: quantity('nonconforming-fraction'), ...settings, ...place, ...share, ...remedies, 'at-most': shareSchema,
 });
-const yieldOf = record({ quantity: quantity('yield'), ...settings, ...place, ...share, 'at-least': shareSchema });
+const yieldOf = record({ quantity: quantity('yield'), ...settings, ...place, ...share, ...remedies, 'at-least': shareSchema });
 const rate = record({
   quantity: quantity('rate'), ...settings, ...place,
   'at-most': amountSchema, target: v.optional(amountSchema), 'normal-rate': v.optional(amountSchema),

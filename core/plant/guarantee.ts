@@ -74,6 +74,33 @@ export type AlarmRule =
 
 export type RuleKind = AlarmRule['kind'];
 
+/** How the station errs, for which the bound is corrected: known from outside, or tried on units known beforehand. */
+export type StationError =
+  | {
+      readonly kind: 'known';
+      /** Chance that it rejects a nonconforming unit, above falseReject, at most 1. */
+      readonly sensitivity: Fraction;
+      /** Chance that it rejects a conforming unit, 0 or more. */
+      readonly falseReject: Fraction;
+      readonly source: string;
+    }
+  | {
+      readonly kind: 'tried';
+      /** Units known not to conform, and of these rejected; whole. */
+      readonly seeded: number;
+      readonly caught: number;
+      /** Units known to conform, and of these rejected; whole. */
+      readonly good: number;
+      readonly rejectedGood: number;
+    };
+
+/** What is declared in advance of nonconforming units that do not come singly. */
+export type Clusters =
+  /** The sample counts as one 1 / designEffect its size; 1 or more. */
+  | { readonly kind: 'design-effect'; readonly designEffect: number; readonly source: string }
+  /** Nonconforming units at most `gap` units after the one before are one event; an event has `clusterSize` units in the mean. */
+  | { readonly kind: 'events'; readonly gap: number; readonly clusterSize: number; readonly source: string };
+
 /** One promise with its settings: what a limit sheet says. */
 export interface Guarantee {
   readonly id: string;
@@ -92,5 +119,8 @@ export interface Guarantee {
   /** Declared rate of the well line, same unit as the line; never guessed from the data it judges. */
   readonly normalRate: number | undefined;
   readonly safetyRelevant: boolean;
+  /** Of fractions of units and yields. */
+  readonly stationError?: StationError | undefined;
+  readonly clusters?: Clusters | undefined;
   readonly rules: readonly AlarmRule[];
 }

@@ -4,15 +4,18 @@ import { canWatchChange, changeBaseline } from './change-baseline.ts';
 import type { Complain } from './complain.ts';
 import type { AlarmRule, Priority, Promised, ReturnRule, WindowRule } from './guarantee.ts';
 import type { Counted } from './promise-reading.ts';
+import type { Remedies } from './remedies-of.ts';
 
 /** What the defaults of the alarm rules depend on. */
 export interface RuleSetting {
   readonly promise: Promised;
   readonly tail: Tail;
   readonly window: WindowRule;
-  readonly counted: Counted | undefined;
+  /** Lines as they show in what is counted, with the tail left for the count. */
+  readonly counted: { readonly counted: Counted; readonly tail: Tail } | undefined;
   readonly normalRate: number | undefined;
   readonly safetyRelevant: boolean;
+  readonly remedies: Remedies;
 }
 
 /** Tail of the violation rule where none is given: a line at its guarantee is called ill by a window once in millions of units. */
@@ -58,13 +61,16 @@ function violationOf(file: Settings<'violation'>, setting: RuleSetting, complain
   return { kind: 'violation', ...urgencyOf(file, 'high'), tail, return: rule };
 }
 
-function deteriorationOf(file: Settings<'deterioration'>, { promise, normalRate }: RuleSetting, complain: Complain): AlarmRule | undefined {
+function deteriorationOf(file: Settings<'deterioration'>, { promise, normalRate, tail, remedies }: RuleSetting, complain: Complain): AlarmRule | undefined {
   const path = ['deterioration'];
   if (!canWatchChange(promise)) return void complain(path, `off: the change of a ${promise.quantity} of this kind is not watched, only of what is counted in units or in exposure`);
+  if (remedies.clusters?.kind === 'design-effect') {
+    return void complain(path, 'off: with a design-effect no distance between false calls is known; merge-within has one');
+  }
   const baseline = file.baseline ?? 'line';
   if (baseline === 'normal-rate' && normalRate === undefined) return void complain([...path, 'baseline'], 'line, or a normal-rate in the guarantee');
   const unitsBetweenFalseCalls = file['units-between-false-calls'];
-  const least = 1 / changeBaseline(promise, baseline === 'normal-rate' ? normalRate : undefined);
+  const least = 1 / changeBaseline({ promise, tail, ...remedies }, baseline === 'normal-rate' ? normalRate : undefined);
   if (!(unitsBetweenFalseCalls > least)) {
     return void complain([...path, 'units-between-false-calls'], `more than ${Math.ceil(least)}, the units in which a well line has one nonconforming`);
   }
@@ -84,8 +90,9 @@ function badDataOf(file: Settings<'bad-data'>, safetyRelevant: boolean): AlarmRu
  * How far back from the line a window in which all units conform brings the bound, as a part of the way to the target.
  * @source own derivation: the exact upper bound at 0 of n is 1 - tail^(1/n)
  */
-function reachOf({ counted, window, tail }: RuleSetting): number {
-  if (counted === undefined || window.kind !== 'units') return 1;
+function reachOf({ counted: asCounted, window }: RuleSetting): number {
+  if (asCounted === undefined || window.kind !== 'units') return 1;
+  const { counted, tail } = asCounted;
   const faultless = -Math.expm1(Math.log(tail) / window.units);
   return (counted.line - faultless) / (counted.line - counted.target);
 }

@@ -13,7 +13,7 @@ export function changeSettingOf(guarantee: Guarantee): ChangeSetting | undefined
   const { promise, normalRate, rules } = guarantee;
   const rule = rules.find((one): one is DeteriorationRule => one.kind === 'deterioration');
   if (rule === undefined || !canWatchChange(promise)) return undefined;
-  const baseline = changeBaseline(promise, rule.baseline === 'normal-rate' ? normalRate : undefined);
+  const baseline = changeBaseline(guarantee, rule.baseline === 'normal-rate' ? normalRate : undefined);
   const tuning = promise.quantity === 'rate' ? rateDetector(baseline, rule.unitsBetweenFalseCalls) : fractionDetector(baseline, rule.unitsBetweenFalseCalls);
   const limit: Limit | undefined = promise.quantity === 'fraction-beyond-limit' ? promise.limit : undefined;
   return { guarantee, rule, tuning, baseline, limit };

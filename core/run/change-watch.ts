@@ -8,6 +8,7 @@ import { admitFound, admitQuiet, clearAlarm, newDetector, type DetectorState } f
 import { conformingToHalfWay, detectorGauge, nonconformingToAlarm } from '../sequential/detector-reading.ts';
 import type { DetectorTuning } from '../sequential/detector-tuning.ts';
 import type { DetectorView } from './detector-view.ts';
+import { EventSieve } from './event-sieve.ts';
 
 export type DeteriorationRule = Extract<AlarmRule, { kind: 'deterioration' }>;
 
@@ -26,6 +27,8 @@ export interface ChangeWatchSnapshot {
   readonly state: DetectorState;
   /** Units (or exposure) seen at which the alarm may return, if the gauge is low by then; -1 while none stands. */
   readonly calmFrom: number;
+  /** Units since the newest nonconforming one, where events are counted. */
+  readonly sinceFound?: number | undefined;
 }
 
 /** Units without a nonconforming one that would speak for the baseline at 95 %, times the baseline. */
@@ -40,6 +43,7 @@ export class ChangeWatch {
   readonly #setting: ChangeSetting;
   readonly #desk: AlarmDesk;
   readonly #grounds: (moment: Moment, figures: Readonly<Record<string, number>>) => AlarmGrounds;
+  readonly #sieve: EventSieve;
   #state: DetectorState;
   #calmFrom = -1;
 
@@ -48,6 +52,8 @@ export class ChangeWatch {
     this.#desk = desk;
     this.#grounds = grounds;
     this.#state = newDetector(setting.tuning);
+    const { clusters } = setting.guarantee;
+    this.#sieve = new EventSieve(clusters?.kind === 'events' ? clusters.gap : 0);
   }
 
   /** Takes records in order. A record that comes late counts nowhere: a detector looks at what happens now. */
@@ -55,7 +61,9 @@ export class ChangeWatch {
     if (part.kind === 'verdicts' || part.kind === 'measurements') {
       const places = nonconformingPlaces(part, from, to, this.#setting.limit);
       let done = from;
-      for (const place of places) {
+      const events = this.#sieve.over(places, from, to);
+      for (let k = 0; k < events.length; k += 1) {
+        const place = events[k] as number;
         this.#quiet(place - done, moment, done);
         moment.place = place;
         this.#found(1, 1, moment);
@@ -77,6 +85,7 @@ export class ChangeWatch {
     const { seen, alarms, alarmAt } = this.#state;
     this.#state = { ...newDetector(this.#setting.tuning), seen, alarms, alarmAt };
     if (this.#calmFrom >= 0) this.#calmFrom = seen + this.#calm;
+    this.#sieve.beginAnew();
   }
 
   view(): DetectorView {
@@ -92,12 +101,13 @@ export class ChangeWatch {
   }
 
   snapshot(): ChangeWatchSnapshot {
-    return { state: this.#state, calmFrom: this.#calmFrom };
+    return { state: this.#state, calmFrom: this.#calmFrom, sinceFound: this.#sieve.since };
   }
 
   restore(from: ChangeWatchSnapshot): void {
     this.#state = from.state;
     this.#calmFrom = from.calmFrom;
+    this.#sieve.restore(from.sinceFound ?? Infinity);
   }
 
   get #calm(): number {
@@ -105,9 +115,10 @@ export class ChangeWatch {
   }
 
   #tally(inspected: number, nonconforming: number, moment: Moment): void {
-    this.#state = admitQuiet(this.#state, inspected - nonconforming, this.#setting.tuning);
-    for (let unit = 0; unit < nonconforming; unit += 1) this.#found(1, 1, moment);
-    if (nonconforming === 0) this.#settle(moment);
+    const events = this.#sieve.overTally(inspected, nonconforming);
+    this.#state = admitQuiet(this.#state, inspected - events, this.#setting.tuning);
+    for (let unit = 0; unit < events; unit += 1) this.#found(1, 1, moment);
+    if (events === 0) this.#settle(moment);
   }
 
   #record(count: number, exposure: number, moment: Moment): void {

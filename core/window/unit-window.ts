@@ -12,6 +12,8 @@ export interface UnitWindowSettings {
    * ones are still counted, but no longer found.
    */
   readonly reach?: number;
+  /** Nonconforming units at most so many units after the one before are one event with it; whole, 1 or more. Absent: each is one. */
+  readonly gap?: number;
 }
 
 /** How many nonconforming units of one record a window counted before and after its correction. */
@@ -49,6 +51,8 @@ export interface UnitWindowSnapshot {
   readonly next: number;
   readonly known: number;
   readonly forgotten: number;
+  /** Of the forgotten ones, those that were one event with the next; absent in a window without a gap. */
+  readonly forgottenNear?: number;
   readonly rolled: boolean;
   readonly places: Float64Array;
   readonly runs: RecordRunsSnapshot;
@@ -70,6 +74,7 @@ export class UnitWindow {
   readonly size: number | undefined;
   readonly #limit: number;
   readonly #reach: number;
+  readonly #gap: number;
   readonly #places = new SlidingColumns(1);
   readonly #runs: RecordRuns;
   readonly #floors = new SourceFloors();
@@ -79,14 +84,18 @@ export class UnitWindow {
   #known = 0;
   /** Nonconforming units counted in the window whose positions were forgotten. */
   #forgotten = 0;
+  /** Pairs of neighbouring nonconforming units that are one event: of those held, and of those forgotten with their next. */
+  #near = 0;
+  #forgottenNear = 0;
   /** Whether a unit has left since the last clear. */
   #rolled = false;
 
-  /** @throws RangeError for a size or reach that is not whole and 1 or more */
+  /** @throws RangeError for a size, reach or gap that is not whole and 1 or more */
   constructor(settings: UnitWindowSettings = {}) {
     this.size = settings.size;
     this.#limit = wholeOrMore('size', settings.size ?? Infinity);
     this.#reach = wholeOrMore('reach', settings.reach ?? defaultReach);
+    this.#gap = settings.gap === undefined ? 0 : wholeOrMore('gap', settings.gap);
     this.#runs = new RecordRuns(this.#reach);
   }
 
@@ -98,6 +107,11 @@ export class UnitWindow {
   /** Nonconforming units in the window. */
   get nonconforming(): number {
     return this.#forgotten + this.#places.length;
+  }
+
+  /** Events in the window: nonconforming units, those within the gap of the one before not counted again. */
+  get events(): number {
+    return this.nonconforming - this.#near - this.#forgottenNear;
   }
 
   /** Whether the window holds its `size` units; a growing window is never full. */
@@ -129,6 +143,7 @@ export class UnitWindow {
   /** Admits one announced unit that does not conform. */
   admitNonconforming(): void {
     this.#places.push(this.#next);
+    if (this.nextIsNear(this.#places.length - 1)) this.#near += 1;
     this.#advance(1);
     this.#forget();
   }
@@ -141,6 +156,11 @@ export class UnitWindow {
   /** Further units after which the `d`-th oldest nonconforming unit (d 1 or more) has left; Infinity if none will. */
   departureOf(d: number): number {
     return d > this.#places.length ? Infinity : this.#places.get(0, d - 1) + this.#limit + 1 - this.#next;
+  }
+
+  /** Whether the `d`-th oldest nonconforming unit held (d 1 or more) and the one after it are one event. */
+  nextIsNear(d: number): boolean {
+    return this.#gap > 0 && d >= 1 && d < this.#places.length && this.#places.get(0, d) - this.#places.get(0, d - 1) <= this.#gap;
   }
 
   /**
@@ -167,6 +187,7 @@ export class UnitWindow {
     const after = Math.min(nonconforming, end - from);
     this.#places.open(row, after);
     for (let k = 0; k < after; k += 1) this.#places.set(0, row + k, end - after + k);
+    this.#recountNear();
     this.#depart();
     this.#forget();
     return { before, after: Math.min(after, end - Math.max(from, this.#start)) };
@@ -191,6 +212,7 @@ export class UnitWindow {
     for (let k = 0; k < places.length; k += 1) this.#places.set(0, placeRow + k, at + (places[k] as number));
     if (at < this.#known) this.#known += units;
     this.#next += units;
+    this.#recountNear();
     this.#depart();
     const gone = Math.min(units, Math.max(0, this.#start - at));
     const nonconforming = Array.from(places).filter((place) => place >= gone).length;
@@ -225,6 +247,8 @@ export class UnitWindow {
     this.#start = this.#next;
     this.#known = this.#next;
     this.#forgotten = 0;
+    this.#near = 0;
+    this.#forgottenNear = 0;
     this.#rolled = false;
   }
 
@@ -234,6 +258,7 @@ export class UnitWindow {
       next: this.#next,
       known: this.#known,
       forgotten: this.#forgotten,
+      ...(this.#gap > 0 && { forgottenNear: this.#forgottenNear }),
       rolled: this.#rolled,
       places: this.#places.snapshot()[0] as Float64Array,
       runs: this.#runs.snapshot(this.#start),
@@ -247,8 +272,10 @@ export class UnitWindow {
     this.#next = snapshot.next;
     this.#known = snapshot.known;
     this.#forgotten = snapshot.forgotten;
+    this.#forgottenNear = snapshot.forgottenNear ?? 0;
     this.#rolled = snapshot.rolled;
     this.#places.restore([snapshot.places]);
+    this.#recountNear();
     this.#runs.restore(snapshot.runs);
     this.#floors.restore(snapshot.floors);
     this.#depart();
@@ -269,7 +296,10 @@ export class UnitWindow {
     this.#rolled = true;
     let gone = 0;
     while (gone < this.#places.length && this.#places.get(0, gone) < start) gone += 1;
-    if (gone > 0) this.#places.dropOldest(gone);
+    if (gone > 0) {
+      this.#near -= this.#nearAmong(gone);
+      this.#places.dropOldest(gone);
+    }
     this.#runs.dropBefore(start);
   }
 
@@ -278,8 +308,23 @@ export class UnitWindow {
     const over = this.#places.length - this.#reach;
     if (this.#limit !== Infinity || over <= 0) return;
     this.#known = Math.max(this.#known, this.#places.get(0, over - 1) + 1);
+    const near = this.#nearAmong(over);
+    this.#near -= near;
+    this.#forgottenNear += near;
     this.#forgotten += over;
     this.#places.dropOldest(over);
+  }
+
+  /** Of the oldest `count` held, those that are one event with their next. */
+  #nearAmong(count: number): number {
+    if (this.#gap === 0) return 0;
+    let near = 0;
+    for (let d = 1; d <= count; d += 1) if (this.nextIsNear(d)) near += 1;
+    return near;
+  }
+
+  #recountNear(): void {
+    this.#near = this.#nearAmong(this.#places.length);
   }
 
   #resize(place: RecordPlace, row: number, sequence: number, units: number, shift: number): void {

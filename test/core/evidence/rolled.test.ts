@@ -53,7 +53,7 @@ describe('what a window of records adds up to', () => {
 describe('a number that is none', () => {
   it('[E4] never reads as healthy', () => {
     const never = { sizeToDemonstrate: () => 1, sizeViolated: () => 0 };
-    const judge = new CountJudge({ line: never, opposite: never, backFromCrossing: never, backFromViolation: never, rate: 0.5 });
+    const judge = new CountJudge({ line: never, opposite: never, backFromCrossing: never, backFromViolation: never, neverDemonstrated: 0.5, neverViolated: 0.5 });
     expect([judge.state(NaN, 0, true), judge.state(100, NaN, true), judge.state(Infinity, 0, true)]).toEqual(['unknown', 'unknown', 'unknown']);
     expect([beyondLimit(NaN, { side: 'below', value: 1 }), beyondLimit(NaN, { side: 'above', value: 1 })]).toEqual([true, true]);
     const sum = new MeasuredSum(250, undefined);

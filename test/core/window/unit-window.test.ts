@@ -71,6 +71,12 @@ function run(settings: UnitWindowSettings, all: readonly Step[], agree: (window:
   return window;
 }
 
+/** Events of a list of units, counted apart. */
+function eventsIn(oracle: UnitOracle, gap: number): number {
+  const places = oracle.units.flatMap(({ nonconforming }, place) => (nonconforming ? [place] : []));
+  return places.filter((place, k) => k === 0 || place - places[k - 1]! > gap).length;
+}
+
 function agreeInAll(window: UnitWindow, oracle: UnitOracle): void {
   expect(window.inspected).toBe(oracle.units.length);
   expect(window.nonconforming).toBe(oracle.nonconforming);
@@ -84,6 +90,32 @@ describe('a unit window', () => {
       fc.property(fc.integer({ min: 1, max: 40 }), steps, (size, all) => void run({ size }, all, agreeInAll)),
       { seed: 20_260_101, numRuns: 400 },
     );
+  });
+
+  it('[W1] counts nonconforming units within the gap of the one before as one event, whatever comes', () => {
+    const settings = fc.record({ size: fc.option(fc.integer({ min: 1, max: 40 }), { nil: undefined }), gap: fc.integer({ min: 1, max: 12 }) });
+    fc.assert(
+      fc.property(settings, steps, ({ size, gap }, all) =>
+        void run(size === undefined ? { gap } : { size, gap }, all, (window, oracle) => {
+          agreeInAll(window, oracle);
+          expect(window.events).toBe(eventsIn(oracle, gap));
+        }),
+      ),
+      { seed: 20_260_107, numRuns: 400 },
+    );
+  });
+
+  it('keeps events that were counted before their positions were forgotten', () => {
+    const window = new UnitWindow({ reach: 2, gap: 3 });
+    window.admitRun(0, 1, 40);
+    for (const conforming of [5, 1, 0, 8, 2, 2, 4]) {
+      window.admitConforming(conforming);
+      window.admitNonconforming();
+    }
+    expect([window.nonconforming, window.events]).toEqual([7, 3]);
+    const again = new UnitWindow({ reach: 2, gap: 3 });
+    again.restore(structuredClone(window.snapshot()));
+    expect(again.events).toBe(3);
   });
 
   it('that grows until it is cleared equals a list of units, whatever comes', () => {
