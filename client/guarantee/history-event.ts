@@ -27,6 +27,8 @@ export function historyEvent(happening: Happening, formats: Formats): HistoryEve
     }
     case 'restart':
       return { at, letter: 'R', words: `Evidence restarted by ${happening.by}: ${happening.reason}`, loud: false };
+    case 'run':
+      return { at, letter: 'B', words: `Run ${happening.run} begins with ${happening.cause === 'lot' ? 'lot' : 'the changeover to'} ${happening.detail}`, loud: false };
     case 'line':
       return { at, letter: markLetter[happening.mark], words: `${markWord[happening.mark]}${happening.detail === '' ? '' : `: ${happening.detail}`}`, loud: false };
     case 'set-aside':

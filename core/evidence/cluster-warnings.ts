@@ -4,6 +4,11 @@ import type { UnitWindow } from '../window/unit-window.ts';
 /** Fewer nonconforming units tell nothing about how they follow each other; of more, the newest are looked at. */
 const fewest = 5;
 const most = 1000;
+const beginning = 'Nonconforming units come in clusters';
+
+/** Whether a warning is one of these. */
+export const saysClusters = (warning: string): boolean => warning.startsWith(beginning);
+
 /** Chance below which the closeness is said. */
 const speaks = 0.01;
 
@@ -24,7 +29,7 @@ export function clusterWarnings(window: UnitWindow): readonly string[] {
   const [nearest] = reaches;
   if (nearest === undefined) return [];
   return [
-    `Nonconforming units come in clusters: the next one follows within ${nearest === 1 ? 'one unit' : `${nearest} units`} more often than chance would have it. ` +
+    `${beginning}: the next one follows within ${nearest === 1 ? 'one unit' : `${nearest} units`} more often than chance would have it. ` +
       'The bound takes them for independent and may stand too near. Remedy: find the common cause, or promise and count events (units within a stated gap are one) or whole lots.',
   ];
 }

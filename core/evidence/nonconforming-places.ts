@@ -37,8 +37,8 @@ export function nonconformingPlaces(part: InspectionPart, from: number, to: numb
   return beyond.length === 0 ? none : Uint32Array.from(beyond);
 }
 
-/** Row of the first place at or after `place` in rising places. */
-function firstAtOrAfter(places: Uint32Array, place: number): number {
+/** Row of the first place at or after `place` in rising places; their number where there is none. */
+export function firstAtOrAfter(places: Uint32Array, place: number): number {
   let low = 0;
   let high = places.length;
   while (low < high) {

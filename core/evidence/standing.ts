@@ -3,6 +3,7 @@ import type { AlarmDesk } from '../alarm/alarm-desk.ts';
 import { BoundCondition, type BoundConditionSnapshot } from '../alarm/bound-condition.ts';
 import type { Happening } from '../monitor/happening.ts';
 import type { AlarmRule, Guarantee } from '../plant/guarantee.ts';
+import { decided } from '../run/decided.ts';
 import type { Assessment } from './assessment.ts';
 import type { EvidenceState } from './evidence-state.ts';
 import type { Moment } from './moment.ts';
@@ -42,6 +43,7 @@ export class Standing {
   readonly #watched: readonly WatchedRule[];
   /** Why the state is unknown although the figures could be judged, by cause. */
   readonly #blocked = new Map<string, string>();
+  #run: Assessment | undefined;
   #state: EvidenceState = 'gathering';
   #since = 0;
 
@@ -68,9 +70,14 @@ export class Standing {
     return this.#blocked.values().next().value;
   }
 
+  /** What the evidence of the run says from now on, where it takes part in the decision. Weigh again afterwards. */
+  runSays(assessment: Assessment | undefined): void {
+    this.#run = assessment;
+  }
+
   /** Weighs what the figures say after the unit at `position`; tells every change. */
   weigh(figures: Assessment, position: number, moment: Moment): void {
-    const now = this.#blocked.size > 0 ? nothing : figures;
+    const now = this.#blocked.size > 0 ? nothing : decided(this.#guarantee.looks, figures, this.#run);
     if (now.state !== this.#state) this.#change(now.state, moment);
     for (const { rule, condition } of this.#watched) {
       const change = condition.weigh(now, position);

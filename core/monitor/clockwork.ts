@@ -1,5 +1,6 @@
 import type { EpochMs } from '../units.ts';
 import type { ClosedMinute } from './closed-minute.ts';
+import { decidingBounds } from './decision.ts';
 import { minuteMs } from './stretches.ts';
 import type { Watch } from './watch.ts';
 
@@ -71,7 +72,7 @@ export class Clockwork {
       const closed = watch.minutes.closeBefore(before);
       open ||= watch.minutes.size > 0;
       if (closed.length === 0) continue;
-      const bounds = watch.evidence.bounds();
+      const bounds = decidingBounds(watch);
       const { state } = watch.standing;
       for (const { minute, inspected, nonconforming } of closed) {
         this.#close({ guarantee: watch.guarantee.id, at: minute, inspected, nonconforming, ...bounds, state });

@@ -1,9 +1,9 @@
 import type { AlarmGrounds } from '../alarm/alarm.ts';
 import { groundsSentence } from '../alarm/grounds-sentence.ts';
-import { methodOfRule } from '../evidence/method-of-rule.ts';
 import type { Moment } from '../evidence/moment.ts';
 import { guaranteeLineOf } from '../plant/guarantee-line.ts';
 import type { AlarmRule, Guarantee } from '../plant/guarantee.ts';
+import { methodOfRule } from '../run/method-of-rule.ts';
 import type { RecordRange } from '../window/record-identity.ts';
 
 /** What was known when an alarm was raised, as its watch has it. */

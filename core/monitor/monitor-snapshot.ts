@@ -4,10 +4,10 @@ import { evidenceSettingsOf } from './evidence-settings.ts';
 import { Monitor } from './monitor.ts';
 import type { SourceListSnapshot } from './source-list.ts';
 import type { StreamListSnapshot } from './stream-list.ts';
-import type { WatchSnapshot } from './watch.ts';
+import type { WatchSnapshot } from './watch-snapshot.ts';
 
 /** The form below; another one is refused, and the journal is replayed instead. */
-export const snapshotForm = 1;
+export const snapshotForm = 2;
 
 /** The whole state of a monitor as plain data (objects, arrays, typed arrays), without decisions not yet taken out. */
 export interface MonitorSnapshot {
@@ -52,7 +52,14 @@ export function monitorFrom(plant: Plant, plantVersion: string, from: MonitorSna
   }
   monitor.resumeClock(from.now);
   for (const alarm of from.desk.standing) {
-    if (!carried.has(alarm.guarantee)) monitor.desk.returned(alarm.guarantee, alarm.rule, monitor.now);
+    if (!carried.has(alarm.guarantee) || (alarm.rule === 'deterioration' && !isDetected(monitor, alarm.guarantee))) {
+      monitor.desk.returned(alarm.guarantee, alarm.rule, monitor.now);
+    }
   }
   return monitor;
+}
+
+/** Whether the detector of a guarantee still stands behind its alarm. */
+function isDetected({ watches }: Monitor, guarantee: string): boolean {
+  return watches.some((watch) => watch.guarantee.id === guarantee && watch.change?.watch.alarmed === true);
 }

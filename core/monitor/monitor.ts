@@ -146,8 +146,8 @@ export class Monitor {
       case 'restart': {
         const watch = this.watches.find(({ guarantee }) => guarantee.id === act.guarantee);
         if (!watch) return 'no-such-guarantee';
-        this.#tell({ kind: 'restart', at: this.now, guarantee: act.guarantee, by: act.by, reason: act.reason });
-        watch.restart(clockMoment(this.now));
+        this.#tell({ kind: 'restart', at: this.now, guarantee: act.guarantee, by: act.by, reason: act.reason, run: watch.run.number + 1 });
+        watch.restart(act.by, act.reason, clockMoment(this.now));
         return undefined;
       }
       case 'upload-begun':
@@ -228,12 +228,12 @@ export class Monitor {
       watch.take(part, stretches, { source, firstSequence: sequence, station }, this.#moment, late);
       if (late) watch.fillLost(source, sequence, part.records, this.#moment);
     }
-    if (this.#happenings.length > told + 1 && route.watches.length > 1) this.#putInRecordOrder(told);
+    if (this.#happenings.length > told + 1) this.#putInRecordOrder(told);
     this.advance(heardUntil as EpochMs);
     if (route.watches.length > 0) this.#clockwork.minuteOpen();
   }
 
-  /** Guarantees that live on the same records decide in the order of the records, not one guarantee after the other. */
+  /** What lives on the same records (guarantees, windows, detectors) decides in the order of the records, not one after the other. */
   #putInRecordOrder(from: number): void {
     const { happenings, alarmIds } = inRecordOrder(this.#happenings.slice(from), this.#sequences.slice(from));
     this.#happenings.splice(from, happenings.length, ...happenings);

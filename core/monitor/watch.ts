@@ -1,55 +1,28 @@
 import type { AlarmGrounds } from '../alarm/alarm.ts';
-import { allowanceUsed } from '../evidence/allowance.ts';
 import type { Batch, Evidence } from '../evidence/evidence.ts';
 import { evidenceOf } from '../evidence/evidence-of.ts';
 import { clockMoment, type Moment, type RecordMoment } from '../evidence/moment.ts';
-import { Standing, type StandingSnapshot, type Surroundings } from '../evidence/standing.ts';
-import { TipTrail, type TipTrailSnapshot } from '../evidence/tip-trail.ts';
-import { ChangeWatch, type ChangeWatchSnapshot } from '../run/change-watch.ts';
-import { changeSettingOf } from '../run/change-setting.ts';
-import { guaranteeLineOf } from '../plant/guarantee-line.ts';
+import { Standing } from '../evidence/standing.ts';
+import { TipTrail } from '../evidence/tip-trail.ts';
 import type { AlarmRule, Guarantee } from '../plant/guarantee.ts';
 import type { Correction, InspectionPart, LineMark } from '../record/part.ts';
-import type { ShiftCalendar } from '../shift/shift-calendar.ts';
+import { guaranteeChangeOf, type GuaranteeChange } from '../run/guarantee-change.ts';
+import { GuaranteeRun } from '../run/guarantee-run.ts';
+import { isDecidedByRun } from '../run/method-of-rule.ts';
+import { RecordSteps } from '../run/record-steps.ts';
+import { RunStarts } from '../run/run-starts.ts';
 import type { EpochMs } from '../units.ts';
-import type { BadDataLog } from './bad-data-log.ts';
 import { BadDataWatch, type BadDataRule } from './bad-data-watch.ts';
+import { decidingFigures, decidingTip } from './decision.ts';
 import { groundsOf } from './grounds-of.ts';
-import { LostRecords, type LostRecordsSnapshot } from './lost-records.ts';
-import { MinuteTally, type MinuteCount } from './minute-tally.ts';
+import { LostRecords } from './lost-records.ts';
+import { MinuteTally } from './minute-tally.ts';
 import { noteMinutes } from './note-minutes.ts';
-import { Period, type PeriodSnapshot } from './period.ts';
-import { silentFrom, type LineCondition, type WatchedStream } from './silence-watch.ts';
+import { Period } from './period.ts';
+import { silenceOf, type Silence } from './silence.ts';
 import type { Stretch } from './stretches.ts';
-
-/** What a watch needs from its monitor. */
-export interface WatchSurroundings extends Surroundings {
-  readonly calendar: ShiftCalendar;
-  readonly line: LineCondition;
-  /** One per station of the guarantee, in line order. */
-  readonly streams: readonly WatchedStream[];
-  readonly badData: readonly BadDataLog[];
-  /** The plant clock, ms. */
-  readonly now: () => EpochMs;
-  /** Something falls due at this moment that may not have been foreseen. */
-  readonly mayBeDue: (at: number) => void;
-  readonly plantVersion: () => string;
-  readonly sourceName: (index: number) => string;
-}
-
-export interface WatchSnapshot {
-  readonly evidence: unknown;
-  readonly standing: StandingSnapshot;
-  readonly period: PeriodSnapshot;
-  readonly lost: LostRecordsSnapshot;
-  readonly trail: TipTrailSnapshot;
-  readonly minutes: readonly MinuteCount[];
-  readonly newest: number;
-  readonly badData: boolean;
-  readonly change: ChangeWatchSnapshot | undefined;
-}
-
-type SilenceRule = Extract<AlarmRule, { kind: 'silence' }>;
+import type { WatchSnapshot } from './watch-snapshot.ts';
+import type { WatchSurroundings } from './watch-surroundings.ts';
 
 /** Watches one guarantee: its evidence, its standing, and the rules that need no bound. */
 export class Watch {
@@ -58,6 +31,9 @@ export class Watch {
   readonly standing: Standing;
   readonly evidence: Evidence;
   readonly lost = new LostRecords();
+  /** The run since its declared beginning, and the detector of a change, beside the window. */
+  readonly run: GuaranteeRun;
+  readonly change: GuaranteeChange | undefined;
   readonly trail = new TipTrail();
   readonly minutes = new MinuteTally();
   /** Set by everything that changes what a screen shows; whoever shows it resets it. */
@@ -65,10 +41,10 @@ export class Watch {
   /** Newest time of inspection, ms; 0 before the first record. */
   newest = 0;
   readonly #period: Period;
-  readonly #silence: SilenceRule | undefined;
+  readonly #steps: RecordSteps;
+  readonly #starts: RunStarts;
+  readonly #silence: Silence | undefined;
   readonly #badData: BadDataWatch | undefined;
-  /** Watches for a rate that has risen, where the plant file asks for it. */
-  readonly change: ChangeWatch | undefined;
   /** Nothing falls due before this; records only move it on, but for windows that go by time. */
   #dueKnown = Infinity;
   readonly #dueMovesWithRecords: boolean;
@@ -78,16 +54,21 @@ export class Watch {
     this.around = around;
     this.#dueMovesWithRecords = guarantee.window.kind === 'time' || guarantee.window.kind === 'shift';
     this.#period = new Period(guarantee.window.kind, around.calendar);
-    this.#silence = guarantee.rules.find((rule): rule is SilenceRule => rule.kind === 'silence');
     const badData = guarantee.rules.find((rule): rule is BadDataRule => rule.kind === 'bad-data');
     this.#badData = badData && new BadDataWatch(badData, around.badData);
     this.standing = new Standing(guarantee, around, {
-      figures: () => this.evidence.figures(),
-      grounds: (rule, moment) => this.#grounds(rule, moment, this.evidence.figures()),
+      figures: () => decidingFigures(this),
+      grounds: (rule, moment) => this.#grounds(rule, moment, decidingFigures(this)),
     });
     this.evidence = evidenceOf(guarantee, this.standing);
-    const change = changeSettingOf(guarantee);
-    this.change = change && new ChangeWatch(change, around.desk, (moment, figures) => this.#grounds('deterioration', moment, { ...this.evidence.figures(), ...figures }));
+    this.run = new GuaranteeRun(guarantee);
+    this.change = guaranteeChangeOf(guarantee, {
+      raised: (rule, moment, figures) => around.desk.raise(guarantee, rule, moment.at, () => this.#grounds(rule.kind, moment, figures)),
+      returned: (rule, moment) => around.desk.returned(guarantee.id, rule.kind, moment.at),
+    });
+    this.#silence = silenceOf(this, (moment, figures) => this.#grounds('silence', moment, figures));
+    this.#steps = new RecordSteps(this);
+    this.#starts = new RunStarts(this, around.tell);
   }
 
   /** Takes a part's records in order. `late`: they fill a hole declared lost before. */
@@ -102,15 +83,14 @@ export class Watch {
       const belonging = this.#period.of(minute, lot);
       if (belonging === 'past') continue;
       if (belonging === 'begins anew') {
-        if (this.guarantee.window.kind === 'lot') this.evidence.setLotSize?.(lot === this.around.line.lot ? this.around.line.lotSize : undefined);
+        if (this.guarantee.window.kind === 'lot') this.#setLotSize(lot === this.around.line.lot ? this.around.line.lotSize : undefined);
+        if (this.guarantee.window.kind === 'lot') this.#starts.begin('lot', lot ?? '', moment);
         this.#beginAnew(moment);
       }
       this.#heard(moment);
       const batch: Batch = { part, from, to, source, firstSequence, station };
-      if (late) this.evidence.fill(batch, moment);
-      else if (this.lost.none) this.evidence.take(batch, moment);
-      else this.#takeSingly(batch, moment);
-      if (!late && this.change) this.change.take(batch, moment);
+      if (late) this.#steps.fill(batch, moment);
+      else this.#steps.take(batch, moment, (first, end) => this.#giveWindow(batch, first, end, moment));
       if (moment.at > this.newest) this.newest = moment.at;
     }
     this.trail.wake(this.around.now());
@@ -119,12 +99,13 @@ export class Watch {
 
   correct(correction: Correction, source: number, station: number, moment: Moment): ReturnType<Evidence['correct']> {
     this.changed = true;
-    return this.evidence.correct({ source, sequence: correction.corrects }, station, correction.finding, moment);
+    return this.#steps.correct(correction, source, station, moment);
   }
 
   /** Records of one of its stations are gone. */
   lose(source: number, first: number, records: number, moment: Moment): void {
     this.changed = true;
+    this.run.spans.noteLost(source, first + records - 1);
     this.lost.declare(source, first, records, this.evidence.position, moment.at);
     this.#settleLost(moment);
     this.#refreshDue();
@@ -136,16 +117,17 @@ export class Watch {
   }
 
   /** A named person restarts the evidence after a declared event. */
-  restart(moment: Moment): void {
+  restart(by: string, reason: string, moment: Moment): void {
     this.changed = true;
+    this.run.begin('restart', `${reason} (${by})`, moment.at);
+    this.change?.beginAnew(moment);
     this.#beginAnew(moment);
-    this.change?.beginAnew();
   }
 
   /** The next moment at which the clock alone changes something; Infinity where nothing waits. */
   due(): number {
     let due = Math.min(this.#period.until, this.evidence.nextDue(), this.trail.due);
-    if (this.#silence && !this.standing.isBlockedBy('silence')) due = Math.min(due, this.#silentFrom(this.#silence));
+    if (this.#silence) due = Math.min(due, this.#silence.due);
     if (this.#badData) due = Math.min(due, this.#badData.due(this.around.now()));
     if (this.guarantee.window.kind === 'time') due = Math.min(due, this.lost.oldestAt + this.guarantee.window.spanMs);
     this.#dueKnown = due;
@@ -161,10 +143,14 @@ export class Watch {
       this.#beginAnew(moment);
     }
     if (this.evidence.nextDue() <= at) this.evidence.moveClock(moment);
-    if (this.#silence && !this.standing.isBlockedBy('silence') && this.#silentFrom(this.#silence) <= at) this.#fallSilent(this.#silence, moment);
+    this.#silence?.fall(moment);
     this.weighBadData(at);
     this.#settleLost(moment);
-    if (this.trail.due <= at) this.trail.mark(at, this.tip());
+    if (this.trail.due <= at) {
+      this.trail.mark(at, decidingTip(this));
+      this.run.mark(at);
+      this.change?.mark(at);
+    }
   }
 
   /** Its line said something of itself. A line that stands is not silent; a lot that starts begins a lot's window. */
@@ -172,6 +158,7 @@ export class Watch {
     this.changed = true;
     const movedOn = mark.kind === 'changeover' && this.guarantee.product !== undefined && mark.product !== this.guarantee.product;
     if (mark.kind === 'line-stopped' || movedOn) this.#heard(moment);
+    if (mark.kind === 'changeover' || mark.kind === 'lot-start') this.#productRuns(mark.product, moment);
     if (mark.kind === 'lot-start' && this.guarantee.window.kind === 'lot') this.#startLot(mark.lot, mark.size, moment);
     this.#refreshDue();
   }
@@ -190,12 +177,6 @@ export class Watch {
     }
   }
 
-  /** Allowance used by the bound now. */
-  tip(): number | undefined {
-    const { line, target } = guaranteeLineOf(this.guarantee.promise);
-    return allowanceUsed(this.evidence.bounds().bound, line, target);
-  }
-
   snapshot(): WatchSnapshot {
     return {
       evidence: this.evidence.snapshot(),
@@ -206,18 +187,23 @@ export class Watch {
       minutes: this.minutes.snapshot(),
       newest: this.newest,
       badData: this.#badData?.active ?? false,
+      run: this.run.snapshot(),
       change: this.change?.snapshot(),
+      away: this.#starts.away,
     };
   }
 
   restore(from: WatchSnapshot): void {
     this.standing.restore(from.standing);
+    this.run.restore(from.run);
+    this.#steps.tellRun();
+    this.change?.restore(from.change);
+    this.#starts.away = from.away;
     this.evidence.restore(from.evidence);
     this.#period.restore(from.period);
     this.lost.restore(from.lost);
     this.trail.restore(from.trail);
     this.minutes.restore(from.minutes);
-    if (from.change !== undefined) this.change?.restore(from.change);
     this.newest = from.newest;
     if (this.#badData) this.#badData.active = from.badData;
     this.changed = true;
@@ -226,9 +212,31 @@ export class Watch {
   #startLot(lot: string, size: number | undefined, moment: Moment): void {
     const belonging = this.#period.of(moment.at, lot);
     if (belonging === 'past') return;
-    this.evidence.setLotSize?.(size);
-    if (belonging === 'begins anew') this.#beginAnew(moment);
+    this.#setLotSize(size);
+    if (belonging === 'begins anew') {
+      this.#starts.begin('lot', lot, moment);
+      this.#beginAnew(moment);
+    }
     else this.evidence.weigh(moment);
+  }
+
+  #setLotSize(size: number | undefined): void {
+    this.evidence.setLotSize?.(size);
+    this.run.evidence?.setLotSize?.(size);
+    this.#steps.tellRun();
+  }
+
+  #giveWindow(batch: Batch, from: number, to: number, moment: RecordMoment): void {
+    const given = from === batch.from && to === batch.to ? batch : { ...batch, from, to };
+    if (this.lost.none) this.evidence.take(given, moment);
+    else this.#takeSingly(given, moment);
+  }
+
+  #productRuns(product: string, moment: Moment): void {
+    if (!this.#starts.productRuns(product, moment)) return;
+    this.#steps.tellRun();
+    if (this.guarantee.looks === 'all looks') this.standing.beginAnew();
+    this.evidence.weigh(moment);
   }
 
   #refreshDue(): void {
@@ -246,29 +254,12 @@ export class Watch {
   #beginAnew(moment: Moment): void {
     this.lost.clear();
     this.standing.lift('lost');
+    this.#steps.tellRun();
     this.evidence.clear(moment);
   }
 
-  /** Lifts the silence once none of its stations is silent; that is when it was heard, whenever the record was inspected. */
   #heard(moment: Moment): void {
-    if (!this.#silence || !this.standing.isBlockedBy('silence')) return;
-    const now = this.around.now();
-    if (this.#silentFrom(this.#silence) <= now) return;
-    const heard: Moment = { source: moment.source, sequence: moment.sequence, at: moment.at > now ? moment.at : now };
-    this.standing.lift('silence');
-    this.evidence.weigh(heard);
-    this.around.desk.returned(this.guarantee.id, 'silence', heard.at);
-    this.#refreshDue();
-  }
-
-  #silentFrom(rule: SilenceRule): number {
-    return silentFrom(this.around.streams, this.around.line, this.guarantee.product, rule.afterMs);
-  }
-
-  #fallSilent(rule: SilenceRule, moment: Moment): void {
-    this.standing.block('silence', 'No record comes although the line is said to run.');
-    this.evidence.weigh(moment);
-    this.around.desk.raise(this.guarantee, rule, moment.at, () => this.#grounds('silence', moment, { silentMs: rule.afterMs }));
+    if (this.#silence?.hear(moment) === true) this.#refreshDue();
   }
 
   /** Lost data counts as trouble where people can be hurt: the state is unknown while they would be in the window. */
@@ -285,6 +276,7 @@ export class Watch {
   }
 
   #grounds(rule: AlarmRule['kind'], moment: Moment, figures: Readonly<Record<string, number>>): AlarmGrounds {
-    return groundsOf(this.guarantee, rule, moment, { figures, ranges: this.evidence.ranges(), ...this.around });
+    const spans = rule === 'deterioration' ? this.change?.spans : isDecidedByRun(this.guarantee, rule) ? this.run.spans : undefined;
+    return groundsOf(this.guarantee, rule, moment, { figures, ranges: spans?.ranges() ?? this.evidence.ranges(), ...this.around });
   }
 }

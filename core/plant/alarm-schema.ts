@@ -18,8 +18,9 @@ const crossing = record({ ...urgency, return: returning });
 const violation = record({ ...urgency, confidence: v.optional(confidenceSchema), return: returning });
 const deterioration = record({
   ...urgency,
-  'units-between-false-calls': betweenFalseCallsSchema,
+  'units-between-false-calls': v.optional(betweenFalseCallsSchema),
   baseline: v.optional(word(['line', 'normal-rate'])),
+  detector: v.optional(word(['mixture', 'cusum'])),
 });
 const silence = record({ ...urgency, after: v.optional(spanSchema) });
 const badData = record({ ...urgency, 'more-than': v.optional(countSchema), within: v.optional(spanSchema) });

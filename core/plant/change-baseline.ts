@@ -3,28 +3,12 @@ import type { Tail } from '../units.ts';
 import type { Promised } from './guarantee.ts';
 import { detectorLine, type Remedies } from './remedies-of.ts';
 
-/** Quantities whose change can be watched: those that are counted. */
-export function canWatchChange(promise: Promised): boolean {
-  switch (promise.quantity) {
-    case 'nonconforming-fraction':
-    case 'yield':
-    case 'rate':
-      return true;
-    case 'fraction-beyond-limit':
-      return promise.model === 'counted';
-    case 'mean':
-    case 'chained-yield':
-    case 'lot-fraction':
-      return false;
-  }
-}
-
 /**
- * The rate a change detector takes as well: the declared one, else the guarantee line; as it shows in what is counted.
+ * What a change detector takes as well: the declared rate or mean, else the guarantee line; as it shows in what is counted.
  *
  * @param declared normal rate in the promise's unit
- * @returns what is counted (nonconforming units, rejects, events) per unit, or nonconformities per unit of exposure; NaN
- * for what is not counted
+ * @returns what is counted (nonconforming units, rejects, events) per unit, nonconformities per unit of exposure, or a
+ * mean; NaN for a chain
  */
 export function changeBaseline(guarantee: Remedies & { readonly promise: Promised; readonly tail: Tail }, declared: number | undefined): number {
   const { promise, tail } = guarantee;
@@ -39,6 +23,7 @@ export function changeBaseline(guarantee: Remedies & { readonly promise: Promise
     case 'lot-fraction':
       return declared ?? promise.atMost;
     case 'mean':
+      return declared ?? promise.line;
     case 'chained-yield':
       return NaN;
   }

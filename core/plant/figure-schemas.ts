@@ -76,6 +76,11 @@ export const mostWindowUnits = 1e9;
 export const windowUnitsSchema = plain(wholeFrom(1, mostWindowUnits), 'whole units, 1 to 1000000000');
 export const returnUnitsSchema = plain(wholeFrom(0, mostWindowUnits), 'whole units, 0 to 1000000000');
 export const betweenFalseCallsSchema = plain(wholeFrom(2, 1e15), 'whole units between two false calls, 2 to 1e15');
+/** A number above 0 and at most 1e15. */
+const above0 = (forms: string) => v.pipe(v.number(forms), v.gtValue(0, forms), v.maxValue(1e15, forms));
+export const falseCallsSchema = plain(above0, 'false calls a shift that the whole plant accepts, a number above 0, e.g. 0.5');
+export const perShiftSchema = plain(above0, 'units (exposure, values) inspected in a shift, a number above 0');
+export const weightSchema = plain(above0, "a weight above 0: 2 gives twice the usual part of the plant's false calls");
 export const countSchema = plain(wholeFrom(0, 1e9), 'a whole number, 0 to 1000000000');
 export const positiveCountSchema = plain(wholeFrom(1, 1e9), 'a whole number, 1 to 1000000000');
 export const sizeSchema = plain(

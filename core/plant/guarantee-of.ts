@@ -10,9 +10,10 @@ import { rulesOf } from './rules-of.ts';
 import { windowOf } from './window-of.ts';
 
 const usualTail = 0.05 as Tail;
+const looks = { one: 'one look', all: 'all looks', both: 'both' } as const;
 
 /** Turns one guarantee of the file into the form the rest works with; undefined where a complaint stands in the way. */
-export function guaranteeOf(file: GuaranteeFile, directory: Directory, complain: Complain): Guarantee | undefined {
+export function guaranteeOf(file: GuaranteeFile, directory: Directory, shared: number | undefined, complain: Complain): Guarantee | undefined {
   const stations = file.quantity === 'chained-yield' ? file.stations : [file.station];
   const characteristics = file.quantity === 'chained-yield' ? file.characteristics : [file.characteristic];
   const line = lineOf(file, stations, directory, complain);
@@ -25,10 +26,22 @@ export function guaranteeOf(file: GuaranteeFile, directory: Directory, complain:
   if (reading === undefined || window === undefined) return undefined;
   const { promise, normalRate } = reading;
   const safetyRelevant = file['safety-relevant'] ?? false;
-  const setting = { promise, tail, window, counted: asCounted, normalRate, safetyRelevant, remedies };
+  const setting = { promise, tail, window, counted: asCounted, normalRate, safetyRelevant, shared, remedies };
   const rules = rulesOf(file.alarms ?? {}, setting, within(complain, ['alarms']));
+  checkLooks(file, complain);
   const { id, name = id, product } = file;
-  return { id, name, line, stations, product, characteristics, promise, tail, window, normalRate, safetyRelevant, ...remedies, rules };
+  const look = looks[file.looks ?? 'one'];
+  return { id, name, line, stations, product, characteristics, promise, tail, window, looks: look, normalRate, safetyRelevant, ...remedies, rules };
+}
+
+/** Where no bound at all looks is known: a chain of stations, the normal model, and declared inspection errors and clusters. */
+function checkLooks(file: GuaranteeFile, complain: Complain): void {
+  if (file.looks === undefined || file.looks === 'one') return;
+  const why = 'no bound at all looks is known for';
+  if (file.quantity === 'chained-yield') complain(['looks'], `one: ${why} a chained yield`);
+  if (file.quantity === 'fraction-beyond-limit' && file.model === 'normal') complain(['looks'], `one, or model: counted; ${why} the normal model`);
+  if ('clusters' in file && file.clusters !== undefined) complain(['looks'], `one: ${why} declared clusters`);
+  if ('inspection-error' in file && file['inspection-error'] !== undefined) complain(['looks'], `one: ${why} a declared inspection error`);
 }
 
 /** The line the stations stand on; complains of unknown stations and of a chain that leaves its line or its order. */

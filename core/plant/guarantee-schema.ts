@@ -7,9 +7,11 @@ import {
   idSchema,
   measureSchema,
   nameSchema,
+  perShiftSchema,
   shareSchema,
   sourceSchema,
   spanSchema,
+  weightSchema,
   windowUnitsSchema,
 } from './figure-schemas.ts';
 import { clustersSchema, stationErrorSchema } from './remedy-schemas.ts';
@@ -30,7 +32,10 @@ const settings = {
   product: v.optional(idSchema),
   confidence: v.optional(confidenceSchema),
   window: v.optional(windowSchema),
+  looks: v.optional(word(['one', 'all', 'both'])),
   'safety-relevant': v.optional(flagSchema),
+  'units-per-shift': v.optional(perShiftSchema),
+  weight: v.optional(weightSchema),
   alarms: v.optional(alarmsSchema),
 };
 const place = { station: idSchema, characteristic: idSchema };

@@ -67,8 +67,14 @@ export interface ReturnRule {
 
 export type AlarmRule =
   | (RuleBase & { readonly kind: 'crossing'; readonly return: ReturnRule })
-  | (RuleBase & { readonly kind: 'violation'; /** Tail of the opposite bound. */ readonly tail: Tail; readonly return: ReturnRule })
-  | (RuleBase & { readonly kind: 'deterioration'; readonly unitsBetweenFalseCalls: number; readonly baseline: 'line' | 'normal-rate' })
+  | (RuleBase & { readonly kind: 'violation'; /** Tail of the opposite bound, or of the run's evidence against the line where it decides. */ readonly tail: Tail; readonly return: ReturnRule })
+  | (RuleBase & {
+      readonly kind: 'deterioration';
+      /** Units (exposure for a rate, values for a mean) that pass on average between two false calls, at least. */
+      readonly unitsBetweenFalseCalls: number;
+      readonly baseline: 'line' | 'normal-rate';
+      readonly detector: 'mixture' | 'cusum';
+    })
   | (RuleBase & { readonly kind: 'silence'; readonly afterMs: SpanMs })
   | (RuleBase & { readonly kind: 'bad-data'; readonly moreThan: number; readonly withinMs: SpanMs });
 
@@ -116,6 +122,11 @@ export interface Guarantee {
   /** Tail of the bound that is compared with the line; its complement is the confidence level. */
   readonly tail: Tail;
   readonly window: WindowRule;
+  /**
+   * What decides the state: the window's bound at one look, the run's evidence at all looks, or the window for the
+   * demonstration and the run for the violation.
+   */
+  readonly looks: 'one look' | 'all looks' | 'both';
   /** Declared rate of the well line, same unit as the line; never guessed from the data it judges. */
   readonly normalRate: number | undefined;
   readonly safetyRelevant: boolean;

@@ -1,3 +1,4 @@
+import { sharesOfBudget } from './budget-shares.ts';
 import { within, type Complain } from './complain.ts';
 import { productsById, stationsById, uniqueIds, type Directory } from './directory.ts';
 import type { FieldPath } from './field-path.ts';
@@ -46,8 +47,10 @@ function soundGuarantees(
     const at = known[place]?.at;
     if (at !== undefined) complain(['guarantees', at, 'id'], 'an id that no other guarantee has');
   });
+  const budget = sound(['plant']) ? file.plant['false-calls-per-shift'] : undefined;
+  const shares = budget === undefined ? undefined : sharesOfBudget(budget, known, complain);
   return known
-    .map(({ at, entry }) => guaranteeOf(entry, directory, within(complain, ['guarantees', at])))
+    .map(({ at, entry }) => guaranteeOf(entry, directory, shares?.get(at), within(complain, ['guarantees', at])))
     .filter((guarantee) => guarantee !== undefined);
 }
 

@@ -1,5 +1,5 @@
 import * as v from 'valibot';
-import { idSchema, nameSchema, unitSchema } from './figure-schemas.ts';
+import { falseCallsSchema, idSchema, nameSchema, unitSchema } from './figure-schemas.ts';
 import { guaranteeSchema } from './guarantee-schema.ts';
 import { choice, record, word, written } from './schema-parts.ts';
 import { minuteForms, minuteOf, weekdays, weekdaysForms, weekdaysOf } from './roster-text.ts';
@@ -30,8 +30,9 @@ export const plantSchema = record({
     record({
       name: nameSchema,
       'time-zone': written((forms) => v.string(forms), timeZoneForms, timeZoneOf),
+      'false-calls-per-shift': v.optional(falseCallsSchema),
     }),
-    v.description('a mapping with the fields name, time-zone'),
+    v.description('a mapping with the fields name, time-zone and, if you like, false-calls-per-shift'),
   ),
   shifts: v.optional(some(shift, 'a list of shifts')),
   lines: some(line, 'a list of lines'),

@@ -1,7 +1,7 @@
 import type { SpanMs, Tail } from '../units.ts';
 import type { AlarmsFile } from './alarm-schema.ts';
-import { canWatchChange, changeBaseline } from './change-baseline.ts';
 import type { Complain } from './complain.ts';
+import { deteriorationOf } from './deterioration-of.ts';
 import type { AlarmRule, Priority, Promised, ReturnRule, WindowRule } from './guarantee.ts';
 import type { Counted } from './promise-reading.ts';
 import type { Remedies } from './remedies-of.ts';
@@ -16,6 +16,8 @@ export interface RuleSetting {
   readonly normalRate: number | undefined;
   readonly safetyRelevant: boolean;
   readonly remedies: Remedies;
+  /** Units between false calls that the plant's budget leaves for this guarantee; undefined without a budget. */
+  readonly shared: number | undefined;
 }
 
 /** Tail of the violation rule where none is given: a line at its guarantee is called ill by a window once in millions of units. */
@@ -37,7 +39,7 @@ export function rulesOf(file: AlarmsFile, setting: RuleSetting, complain: Compla
   const rules: (AlarmRule | undefined)[] = [
     file.crossing === 'off' ? undefined : crossingOf(file.crossing ?? {}, setting, complain),
     file.violation === 'off' ? undefined : violationOf(file.violation ?? {}, setting, complain),
-    file.deterioration === 'off' || file.deterioration === undefined ? undefined : deteriorationOf(file.deterioration, setting, complain),
+    file.deterioration === 'off' ? undefined : worsening(file.deterioration, setting, complain),
     file.silence === 'off' ? undefined : silenceOf(file.silence ?? {}, safe),
     file['bad-data'] === 'off' ? undefined : badDataOf(file['bad-data'] ?? {}, safe),
   ];
@@ -61,20 +63,9 @@ function violationOf(file: Settings<'violation'>, setting: RuleSetting, complain
   return { kind: 'violation', ...urgencyOf(file, 'high'), tail, return: rule };
 }
 
-function deteriorationOf(file: Settings<'deterioration'>, { promise, normalRate, tail, remedies }: RuleSetting, complain: Complain): AlarmRule | undefined {
-  const path = ['deterioration'];
-  if (!canWatchChange(promise)) return void complain(path, `off: the change of a ${promise.quantity} of this kind is not watched, only of what is counted in units or in exposure`);
-  if (remedies.clusters?.kind === 'design-effect') {
-    return void complain(path, 'off: with a design-effect no distance between false calls is known; merge-within has one');
-  }
-  const baseline = file.baseline ?? 'line';
-  if (baseline === 'normal-rate' && normalRate === undefined) return void complain([...path, 'baseline'], 'line, or a normal-rate in the guarantee');
-  const unitsBetweenFalseCalls = file['units-between-false-calls'];
-  const least = 1 / changeBaseline({ promise, tail, ...remedies }, baseline === 'normal-rate' ? normalRate : undefined);
-  if (!(unitsBetweenFalseCalls > least)) {
-    return void complain([...path, 'units-between-false-calls'], `more than ${Math.ceil(least)}, the units in which a well line has one nonconforming`);
-  }
-  return { kind: 'deterioration', ...urgencyOf(file, 'medium'), unitsBetweenFalseCalls, baseline };
+function worsening(file: Settings<'deterioration'> | undefined, setting: RuleSetting, complain: Complain): AlarmRule | undefined {
+  const detector = deteriorationOf(file, setting, (path, expected) => complain(['deterioration', ...path], expected));
+  return detector && { kind: 'deterioration', ...urgencyOf(file ?? {}, 'medium'), ...detector };
 }
 
 function silenceOf(file: Settings<'silence'>, safetyRelevant: boolean): AlarmRule {

@@ -1,3 +1,5 @@
+import type { RunBatch } from './run-evidence.ts';
+
 /**
  * Keeps, of nonconforming units in a stream, those that begin an event: each that stands more than `gap` units behind
  * the nonconforming one before it, whether that began an event or not.
@@ -7,7 +9,7 @@ export class EventSieve {
   /** Units since the newest nonconforming one; Infinity before the first. */
   #since = Infinity;
 
-  /** @param gap units, whole, 1 or more; 0 lets every unit through */
+  /** @param gap units, whole, 1 or more */
   constructor(gap: number) {
     this.#gap = gap;
   }
@@ -25,33 +27,32 @@ export class EventSieve {
     this.#since = Infinity;
   }
 
-  /**
-   * Moves over units `from` to `to` of a record batch.
-   *
-   * @param places of the nonconforming ones, rising
-   * @returns those of them that begin an event
-   */
-  over(places: ArrayLike<number>, from: number, to: number): ArrayLike<number> {
-    if (this.#gap === 0) return places;
-    const begun: number[] = [];
-    let done = from;
-    for (let k = 0; k < places.length; k += 1) {
-      const place = places[k] as number;
-      if (this.#found(place - done)) begun.push(place);
-      done = place + 1;
+  /** Records with those nonconforming units alone that begin an event; of a tally, whose nonconforming units stand last, one at most. */
+  batch(records: RunBatch): RunBatch {
+    const { part, from, to, places } = records;
+    if (part.kind === 'tallies') {
+      const nonconforming = new Uint32Array(part.nonconforming);
+      for (let place = from; place < to; place += 1) nonconforming[place] = this.#inTally(part.inspected[place] as number, part.nonconforming[place] as number);
+      return { ...records, part: { ...part, nonconforming } };
     }
+    return { ...records, places: this.#among(places, from, to) };
+  }
+
+  #among(places: Uint32Array, from: number, to: number): Uint32Array {
+    let done = from;
+    const begun = places.filter((place) => {
+      const begins = this.#found(place - done);
+      done = place + 1;
+      return begins;
+    });
     this.#since += to - done;
     return begun;
   }
 
-  /** The same for a tally, whose nonconforming units stand last. @returns how many events begin in it */
-  overTally(inspected: number, nonconforming: number): number {
-    if (this.#gap === 0) return nonconforming;
-    if (nonconforming === 0) {
-      this.#since += inspected;
-      return 0;
-    }
-    return this.#found(inspected - nonconforming) ? 1 : 0;
+  #inTally(inspected: number, nonconforming: number): number {
+    if (nonconforming > 0) return this.#found(inspected - nonconforming) ? 1 : 0;
+    this.#since += inspected;
+    return 0;
   }
 
   /** A nonconforming unit after so many conforming ones. */

@@ -1,5 +1,6 @@
 import type { EvidenceState, LookRule } from '../evidence/evidence-state.ts';
 import type { DetectorView } from '../run/detector-view.ts';
+import type { RunView } from './run-view.ts';
 import type { Quantity, WindowRule } from '../plant/guarantee.ts';
 
 /** How figures of a guarantee are written: shares of units, a rate per exposure, or a measured value with its unit. */
@@ -56,7 +57,9 @@ export interface GuaranteeView {
   readonly remark: string | undefined;
   /** Since when it is in this state, ms. */
   readonly since: number;
+  /** Of the bound, and of the opposite bound. */
   readonly lookRule: LookRule;
+  readonly oppositeLookRule: LookRule;
   /** Estimate and bound in the scale's unit; undefined where there is none (no units yet). */
   readonly estimate: number | undefined;
   readonly bound: number | undefined;
@@ -76,6 +79,8 @@ export interface GuaranteeView {
   readonly newest: number | undefined;
   /** The change detector, where the plant file asks for one. */
   readonly detector: DetectorView | undefined;
+  /** The evidence since the run began, at all looks. */
+  readonly run: RunView | undefined;
   /** Which way the bound has gone over the last hour. */
   readonly drift: 'rising' | 'falling' | 'steady' | undefined;
   /** Product and lot at the station now, where told. */

@@ -1,20 +1,26 @@
 import { allowanceUsed } from '../evidence/allowance.ts';
+import { decidingBounds, decidingFigures, decidingMargin } from '../monitor/decision.ts';
 import type { Watch } from '../monitor/watch.ts';
 import { guaranteeLineOf } from '../plant/guarantee-line.ts';
+import { saysClusters } from '../evidence/cluster-warnings.ts';
 import type { GuaranteeView } from './guarantee-view.ts';
+import { lookRulesOf, runViewOf } from './run-view-of.ts';
 
 /** What screens show of a guarantee now; computes its bounds. */
 export function viewOf(watch: Watch): GuaranteeView {
   const { guarantee, standing, evidence, around } = watch;
   const { line, target } = guaranteeLineOf(guarantee.promise);
-  const { estimate, bound, opposite } = evidence.bounds();
+  const { estimate, bound, opposite } = decidingBounds(watch);
+  const warnings = evidence.warnings();
+  const looks = lookRulesOf(watch);
   const used = allowanceUsed(bound, line, target);
   return {
     id: guarantee.id,
     state: standing.state,
     remark: standing.remark ?? elsewhere(watch),
     since: standing.since,
-    lookRule: 'one look',
+    lookRule: looks.bound,
+    oppositeLookRule: looks.opposite,
     estimate,
     bound,
     oppositeBound: opposite,
@@ -24,16 +30,17 @@ export function viewOf(watch: Watch): GuaranteeView {
       opposite: allowanceUsed(opposite, line, target),
       trail: watch.trail.tips,
     },
-    figures: evidence.figures(),
-    margin: evidence.margin(),
+    figures: decidingFigures(watch),
+    margin: decidingMargin(watch),
     newest: watch.newest === 0 ? undefined : watch.newest,
-    detector: watch.change?.view(),
+    detector: watch.change?.view(warnings.some(saysClusters)),
+    run: runViewOf(watch),
     drift: watch.trail.drift(used),
     product: around.line.product,
     lot: around.line.lot,
     alarmIds: around.desk.standingOf(guarantee.id).map(({ id }) => id),
     lineRunning: around.line.running,
-    warnings: watch.lost.none ? evidence.warnings() : [...evidence.warnings(), `${watch.lost.records} records of this window were lost.`],
+    warnings: watch.lost.none ? warnings : [...warnings, `${watch.lost.records} records of this window were lost.`],
   };
 }
 

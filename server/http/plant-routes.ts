@@ -3,6 +3,8 @@ import type { Alarm } from '../../core/alarm/alarm.ts';
 import type { Act, ActFault } from '../../core/monitor/act.ts';
 import type { Watch } from '../../core/monitor/watch.ts';
 import { stripOf } from '../../core/view/strip-of.ts';
+import type { RunPaths } from '../../core/view/run-view.ts';
+import { runPathsOf } from '../../core/view/run-view-of.ts';
 import { viewOf } from '../../core/view/view-of.ts';
 import { cardOf } from '../../core/view/card-of.ts';
 import type { History, Picture, Strip } from '../../core/view/history.ts';
@@ -65,6 +67,10 @@ export function plantRoutes(host: ApiHost): readonly AnyRoute[] {
       handle: ({ params }): Picture => watchOf(params).evidence.picture?.() ?? { kind: 'none' },
     }),
     route({
+      method: 'GET', path: '/api/guarantees/:id/run', summary: "Where the run's evidence and the change detector's gauge stood", needs: { action: 'see', at: lineOf }, params: guaranteeParams,
+      handle: ({ params }): RunPaths => runPathsOf(watchOf(params)),
+    }),
+    route({
       method: 'POST', path: '/api/guarantees/:id/restart', summary: "Begins a guarantee's evidence anew", needs: { action: 'restart-evidence', at: lineOf },
       params: guaranteeParams, body: restartRequest,
       handle: async ({ params, body: { by, reason }, caller }) => {
@@ -124,6 +130,7 @@ function lineOfHappening(one: HappeningFound['happening'], lineOfGuarantee: (id:
     case 'alarm':
       return lineOfGuarantee(one.alarm.guarantee);
     case 'restart':
+    case 'run':
     case 'evidence':
       return lineOfGuarantee(one.guarantee);
     case 'line':
@@ -139,6 +146,7 @@ function concerns(one: HappeningFound['happening'], guarantee: string, line: str
     case 'alarm':
       return one.alarm.guarantee === guarantee;
     case 'restart':
+    case 'run':
     case 'evidence':
       return one.guarantee === guarantee;
     case 'line':

@@ -71,6 +71,7 @@ export function guaranteeOf(happening: Happening): string | undefined {
       return happening.alarm.guarantee;
     case 'evidence':
     case 'restart':
+    case 'run':
       return happening.guarantee;
     case 'line':
     case 'set-aside':

@@ -18,7 +18,7 @@ export function historyOf({ card, view }: FakeGuarantee, from: number, to: numbe
     { kind: 'line', at: (from + (to - from) * 0.18) as never, line: card.line, mark: 'changeover', detail: 'BH-5 to BH-4' },
     { kind: 'line', at: (from + (to - from) * 0.3) as never, line: card.line, mark: 'line-stopped', detail: 'break' },
     { kind: 'line', at: (from + (to - from) * 0.34) as never, line: card.line, mark: 'line-running', detail: '' },
-    { kind: 'restart', at: (from + (to - from) * 0.42) as never, guarantee: card.id, by: 'Ines Maurer', reason: 'die changed' },
+    { kind: 'restart', at: (from + (to - from) * 0.42) as never, guarantee: card.id, by: 'Ines Maurer', reason: 'die changed', run: 2 },
     ...(alarm === undefined || alarm.raisedAt < from ? [] : [{ kind: 'alarm', at: alarm.raisedAt, change: 'raised', alarm } as const]),
   ];
   return {

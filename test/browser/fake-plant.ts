@@ -30,7 +30,8 @@ const viewBase: GuaranteeView = {
   id: '', state: 'demonstrated', remark: undefined, since: plantStart - 95 * minute, lookRule: 'one look', estimate: 60e-6, bound: 148e-6,
   oppositeBound: 20e-6, allowance: { estimate: 0.3, bound: 0.74, opposite: 0.1, trail: [0.8, 0.79, 0.78, 0.77, 0.75, 0.74] },
   figures: { inspected: 50_000, nonconforming: 3 }, margin: { canTake: 2 }, newest: plantStart - 400, drift: 'steady',
-  product: 'BH-4', lot: undefined, alarmIds: [], lineRunning: true, warnings: [], detector: { gauge: 0.34, inARowToAlarm: 4, conformingToHalfWay: 0, betweenFalseCalls: 1_000_000, baseline: 200e-6 },
+  product: 'BH-4', lot: undefined, alarmIds: [], lineRunning: true, warnings: [], detector: { kind: 'mixture', gauge: 0.34, alarmed: false, inARowToAlarm: 4, conformingToHalfWay: 0, betweenFalseCalls: 1_000_000, baseline: 200e-6, against: 'line', doubt: undefined },
+  oppositeLookRule: 'one look', run: undefined,
 };
 
 export interface FakeGuarantee {

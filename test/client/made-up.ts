@@ -16,7 +16,7 @@ export const card = (part: Partial<GuaranteeCard> = {}): GuaranteeCard => ({
 export const view = (part: Partial<GuaranteeView> = {}): GuaranteeView => ({
   id: 'leak-a', state: 'demonstrated', remark: undefined, since: 0, lookRule: 'one look', estimate: 60e-6, bound: 148e-6, oppositeBound: undefined,
   allowance: { estimate: 0.3, bound: 0.74, opposite: undefined, trail: [] }, figures: {}, margin: {}, newest: 1000, drift: undefined, product: undefined,
-  lot: undefined, alarmIds: [], lineRunning: true, warnings: [], detector: undefined, ...part,
+  lot: undefined, alarmIds: [], lineRunning: true, warnings: [], detector: undefined, oppositeLookRule: 'one look', run: undefined, ...part,
 });
 
 export const alarm = (part: Partial<Alarm> = {}): Alarm => ({

@@ -19,6 +19,7 @@ guarantees:
     safety-relevant: true
     alarms:
       crossing: { priority: medium, return: { units: 50 }, response: Hold the lot and call maintenance. }
+      deterioration: off
 `;
 
 /** A JSON part of verdicts, one second apart. */

@@ -23,7 +23,7 @@ function decided(happenings: readonly Happening[]): Map<string, unknown[]> {
 const snapshots = (monitor: Monitor): unknown => monitor.watches.map(({ guarantee, evidence, standing }) => [guarantee.id, evidence.snapshot(), standing.snapshot()]);
 
 describe('evidence on every quantity in every window', () => {
-  it('decides the same, to the last bit, however the records were cut into parts and frames', () => {
+  it('[L3] decides the same, to the last bit, however the records were cut into parts and frames', () => {
     fc.assert(
       fc.property(recipes, fc.integer({ min: 1, max: 60 }), fc.integer({ min: 1, max: 5 }), (list, most, partsAFrame) => {
         const parts = partsOf(list);

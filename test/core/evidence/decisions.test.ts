@@ -2,6 +2,7 @@ import fc from 'fast-check';
 import { describe, expect, it } from 'vitest';
 import type { EvidenceState } from '../../../core/evidence/evidence-state.ts';
 import { clockMoment } from '../../../core/evidence/moment.ts';
+import { decidingBounds } from '../../../core/monitor/decision.ts';
 import { Monitor } from '../../../core/monitor/monitor.ts';
 import type { Watch } from '../../../core/monitor/watch.ts';
 import { guaranteeLineOf } from '../../../core/plant/guarantee-line.ts';
@@ -12,10 +13,15 @@ const plant = plantOfText(everyGuarantee());
 /** Which states the bounds allow, computed apart from the record path. */
 function allowedBy(watch: Watch): readonly EvidenceState[] {
   const { line, side } = guaranteeLineOf(watch.guarantee.promise);
-  const { bound, opposite } = watch.evidence.bounds();
-  if (bound === undefined || opposite === undefined) return ['gathering', 'unknown'];
-  const good = side === 'at-most' ? bound <= line : bound >= line;
-  const bad = side === 'at-most' ? opposite > line : opposite < line;
+  const { bound, opposite } = decidingBounds(watch);
+  const { looks } = watch.guarantee;
+  // A run has a bound of one side where it has none of the other: before that it says nothing about its line.
+  if (looks === 'one look' && (bound === undefined || opposite === undefined)) return ['gathering', 'unknown'];
+  const good = bound !== undefined && (side === 'at-most' ? bound <= line : bound >= line);
+  const bad = opposite !== undefined && (side === 'at-most' ? opposite > line : opposite < line);
+  // Bets against the line decide for values between two ends; their bound needs no line, and is wider.
+  if (looks !== 'one look' && watch.guarantee.id.startsWith('range')) return ['demonstrated', 'undecided', 'violated', 'gathering', 'unknown'];
+  if (looks !== 'one look' && good && bad) return ['violated', 'unknown'];
   if (good) return ['demonstrated', 'gathering', 'unknown'];
   return bad ? ['violated', 'undecided', 'gathering', 'unknown'] : ['undecided', 'gathering', 'unknown'];
 }

@@ -21,6 +21,13 @@ const quantities: Readonly<Record<string, string>> = {
   tried: 'station: A.leak, characteristic: tightness, quantity: yield, at-least: 90 %, inspection-error: { seeded: 200, caught: 190, good: 400, rejected-good: 1 }',
   designed: 'station: A.leak, characteristic: tightness, quantity: nonconforming-fraction, at-most: 4 %, clusters: { design-effect: 1.7, source: three months of crimping }',
   events: 'station: A.leak, characteristic: tightness, quantity: nonconforming-fraction, at-most: 4 %, clusters: { merge-within: 6, cluster-size: 1.5, source: three months of crimping }',
+  leakAll: 'station: A.leak, characteristic: tightness, quantity: nonconforming-fraction, at-most: 4 %, looks: all',
+  yieldBoth: 'station: A.leak, characteristic: tightness, quantity: yield, at-least: 96 %, looks: both',
+  flawsAll: 'station: A.cutting, characteristic: surface, quantity: rate, at-most: 4 per 100 m, looks: all',
+  fillAll: 'station: A.filling, characteristic: fill, quantity: mean, at-least: 250 ml, target: 251 ml, looks: all',
+  capAll: 'station: A.filling, characteristic: fill, quantity: mean, at-most: 251 ml, target: 250 ml, sigma: { value: 1 ml, source: scale study of May }, looks: all',
+  rangeBoth: 'station: A.filling, characteristic: fill, quantity: mean, at-least: 250 ml, target: 252 ml, range: { from: 246 ml, to: 256 ml }, looks: both',
+  beyondAll: 'station: A.filling, characteristic: fill, quantity: fraction-beyond-limit, specification-limit: { below: 248 ml }, at-most: 3 %, looks: all',
   flaws: 'station: A.cutting, characteristic: surface, quantity: rate, at-most: 4 per 100 m',
   fill: 'station: A.filling, characteristic: fill, quantity: mean, at-least: 250 ml, target: 251 ml',
   cap: 'station: A.filling, characteristic: fill, quantity: mean, at-most: 251 ml, target: 250 ml, sigma: { value: 1 ml, source: scale study of May }',
@@ -33,7 +40,7 @@ const quantities: Readonly<Record<string, string>> = {
 /** Every quantity in every window, each with crossing and violation rules that return by a distance and by units. */
 export function everyGuarantee(): string {
   const lines = Object.entries(quantities).flatMap(([name, what]) =>
-    (Object.keys(windows) as WindowName[]).filter((window) => name !== 'events' || !windows[window].includes('time')).map(
+    (Object.keys(windows) as WindowName[]).filter((window) => (name !== 'events' || !windows[window].includes('time')) && (!/All|Both/.test(name) || window === 'last')).map(
       (window) =>
         `  - { id: ${name}-${window}, ${what}, confidence: 90 %, window: ${windows[window]}, alarms: { crossing: { return: { distance: 0.05, units: 20 } }, violation: { confidence: 95 %, return: { distance: 0, units: 10 } }, silence: off, bad-data: off } }`,
     ),

@@ -11,7 +11,8 @@ const sheet = `    at-most: 1 %
     alarms:
       crossing: { priority: medium, return: { distance: 0, units: 50 }, response: Call maintenance. }
       silence: { after: 5 min, priority: low }
-      bad-data: { more-than: 3, within: 10 min, priority: low }`;
+      bad-data: { more-than: 3, within: 10 min, priority: low }
+      deterioration: off`;
 
 const at = (ms: number): EpochMs => (monday + ms) as EpochMs;
 const kinds = (happenings: readonly Happening[]): string[] =>

@@ -34,11 +34,13 @@ describe('a sound plant file', () => {
       promise: { quantity: 'nonconforming-fraction', atMost: 0.0002, target: 0 },
       tail: 0.05,
       window: { kind: 'units', units: 20000 },
+      looks: 'one look',
       normalRate: 0.00005,
       safetyRelevant: false,
       rules: [
         { kind: 'crossing', priority: 'medium', response: '', return: { distance: 0.1, units: 0 } },
         { kind: 'violation', priority: 'high', response: '', tail: 0.001, return: { distance: 0.1, units: 0 } },
+        { kind: 'deterioration', priority: 'medium', response: '', unitsBetweenFalseCalls: 5_000_000, baseline: 'line', detector: 'mixture' },
         { kind: 'silence', priority: 'medium', response: '', afterMs: 300_000 },
         { kind: 'bad-data', priority: 'low', response: '', moreThan: 10, withinMs: 600_000 },
       ],

@@ -54,7 +54,7 @@ describe('a deterioration alarm', () => {
   });
 
   it('[J3] is not moved by late records or corrections, and a restart begins its detector anew', () => {
-    const gauge = (monitor: Monitor): number => monitor.watches[0]!.change!.view().gauge;
+    const gauge = (monitor: Monitor): number => monitor.watches[0]!.change!.watch.gauge();
     const monitor = monitorOf([verdicts(100, [50, 60], monday), { kind: 'lost', records: 20, at: monday, station: 'A.leak-test', reason: 'overrun' }, verdicts(10, [], monday)]);
     const before = gauge(monitor);
     expect(before).toBeGreaterThan(0);

@@ -119,5 +119,5 @@ function csv(rows: readonly Row[]): string {
 export const rowFiles: readonly { readonly name: string; readonly text: string; readonly kinds: readonly string[] }[] = [
   { name: 'leak-test.csv', text: csv(leakTest().rows), kinds: ['evidence', 'alarm', 'line', 'set-aside'] },
   { name: 'lost-and-late.ndjson', text: ndjson(lostAndLate().rows), kinds: ['evidence', 'alarm', 'set-aside'] },
-  { name: 'everything.csv', text: csv(everything().rows), kinds: ['evidence', 'alarm', 'line'] },
+  { name: 'everything.csv', text: csv(everything().rows), kinds: ['evidence', 'alarm', 'line', 'run'] },
 ];

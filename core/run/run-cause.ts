@@ -1,0 +1,2 @@
+/** Why a run began. */
+export type RunCause = 'first' | 'restart' | 'lot' | 'changeover';
