@@ -1,4 +1,5 @@
 import type { Alarm } from '../core/alarm/alarm.ts';
+import type { RunPaths } from '../core/view/run-view.ts';
 import type { History, Picture, Strip } from '../core/view/history.ts';
 
 /** What a page may ask the server or have it do. Every failure is an error whose message a person can read. */
@@ -6,6 +7,7 @@ export interface Desk {
   readonly history: (guarantee: string, from: number, to: number, points: number) => Promise<History>;
   readonly strip: (guarantee: string) => Promise<Strip>;
   readonly picture: (guarantee: string) => Promise<Picture>;
+  readonly run: (guarantee: string) => Promise<RunPaths>;
   readonly endedAlarms: (before: number | undefined, limit: number) => Promise<readonly Alarm[]>;
   readonly acknowledge: (alarm: number, by: string, note: string) => Promise<void>;
   readonly restart: (guarantee: string, by: string, reason: string) => Promise<void>;
@@ -42,6 +44,7 @@ export const serverDesk: Desk = {
     answerOf(`${ofGuarantee(id)}/history?from=${Math.round(from)}&to=${Math.round(to)}&points=${points}`) as Promise<History>,
   strip: (id) => answerOf(`${ofGuarantee(id)}/strip`) as Promise<Strip>,
   picture: (id) => answerOf(`${ofGuarantee(id)}/picture`) as Promise<Picture>,
+  run: (id) => answerOf(`${ofGuarantee(id)}/run`) as Promise<RunPaths>,
   endedAlarms: (before, limit) =>
     answerOf(`/api/alarms?${before === undefined ? '' : `before=${before}&`}limit=${limit}`) as Promise<readonly Alarm[]>,
   acknowledge: (id, by, note) => post(`/api/alarms/${id}/acknowledge`, { by, note }),

@@ -3,6 +3,7 @@ import type { EvidenceState, LookRule } from '../core/evidence/evidence-state.ts
 import type { Priority, RuleKind, WindowRule } from '../core/plant/guarantee.ts';
 import type { DetectorView } from '../core/run/detector-view.ts';
 import type { GuaranteeCard, GuaranteeView } from '../core/view/guarantee-view.ts';
+import type { RunView } from '../core/view/run-view.ts';
 import { written, type Formats } from './format.ts';
 
 export const stateWord: Readonly<Record<EvidenceState, string>> = {
@@ -144,4 +145,19 @@ export function detectorWords(formats: Formats, { inARowToAlarm, conformingToHal
   const alarm = inARowToAlarm === undefined ? '' : `${counted(formats, inARowToAlarm, 'nonconforming unit')} in a row would raise it. `;
   const back = conformingToHalfWay === undefined || conformingToHalfWay === 0 ? '' : `Half way again after ${counted(formats, conformingToHalfWay, 'conforming unit')} in a row.`;
   return `${alarm}${back}`.trim();
+}
+
+/** How and when a run began. */
+export function runBeginning(formats: Formats, { number, cause, detail, begunAt }: RunView): string {
+  const since = begunAt === undefined ? '' : `, since ${formats.moment(begunAt)}`;
+  switch (cause) {
+    case 'first':
+      return `Run ${formats.count(number)}${since}.`;
+    case 'restart':
+      return `Run ${formats.count(number)}${since}, begun by a restart: ${detail}.`;
+    case 'lot':
+      return `Run ${formats.count(number)}${since}, of lot ${detail}.`;
+    case 'changeover':
+      return `Run ${formats.count(number)}${since}, begun by the changeover to ${detail}.`;
+  }
 }

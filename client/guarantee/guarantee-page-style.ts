@@ -38,6 +38,10 @@ export const guaranteePageStyle = css`
   .gauge { display: block; width: 100%; height: 1.1rem; border: 1.5px solid var(--edge); border-radius: 3px; margin-top: 0.6rem; }
   .gauge rect { fill: var(--calm); }
   .gauge line { stroke: var(--edge); vector-effect: non-scaling-stroke; }
+  .alarmed .gauge rect { fill: var(--care); }
+  .lately { display: block; width: 100%; height: 3.2rem; border-bottom: 1.5px solid var(--edge); border-top: 1px dashed var(--edge); margin-top: 0.3rem; }
+  .lately line { stroke: var(--rule); vector-effect: non-scaling-stroke; }
+  .lately path { fill: none; stroke: var(--calm); stroke-width: 2; vector-effect: non-scaling-stroke; stroke-linejoin: round; }
   .ends { display: flex; justify-content: space-between; font-size: 0.86rem; margin-bottom: 0.4rem; }
   .how p { max-width: 80ch; margin: 0.3rem 0 0.5rem; }
   .how dl div { display: grid; grid-template-columns: 6rem 1fr; gap: 0.8rem; border-top: 1px solid var(--rule); padding: 0.45rem 0; }

@@ -22,6 +22,7 @@ import { howComputed } from './how-computed.ts';
 import './own-lane.ts';
 import { ranges, rangeStart, type Range } from './range-choice.ts';
 import './restart-evidence.ts';
+import './run-evidence.ts';
 import './unit-strip.ts';
 import { windowFigures } from './window-figures.ts';
 
@@ -79,12 +80,13 @@ export class GuaranteePage extends LitElement {
           <section class="sheet part" aria-label="Over time">${this.#overTime(lane, formats, picture)}</section>
           <section class="sheet part"><h2>Units of the window</h2><unit-strip .strip=${this.records?.strip} .formats=${formats}></unit-strip></section>
           ${this.records?.picture === undefined || this.records.picture.kind === 'none' ? nothing : html`<section class="sheet part"><guarantee-picture .picture=${this.records.picture} .card=${lane.card} .formats=${formats}></guarantee-picture></section>`}
+          ${lane.view.run === undefined ? nothing : html`<section class="sheet part" aria-label="Evidence of the run"><run-evidence .card=${lane.card} .run=${lane.view.run} .paths=${this.records?.paths} .formats=${formats} .timeZone=${picture.plant.timeZone} .plantNow=${this.plantNow}></run-evidence></section>`}
           <div class="sheet part">${howComputed(formats, lane.card, lane.view)}</div>
         </div>
         <div class="side">
           ${this.#alarms(lane, picture, formats)}
           <section class="sheet part figures-part"><h2>Present window</h2>${windowFigures(formats, lane.card, lane.view, this.plantNow)}</section>
-          ${changeGauge(formats, lane.card, lane.view)}
+          ${changeGauge(formats, lane.card, lane.view, this.records?.paths)}
           <section class="sheet part restart-part"><restart-evidence .personName=${this.personName} .send=${this.#restart}></restart-evidence></section>
         </div>
       </div>`;

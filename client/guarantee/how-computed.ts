@@ -7,7 +7,7 @@ import { lookMeaning, promiseWords, windowWords } from '../words.ts';
 export function howComputed(formats: Formats, card: GuaranteeCard, view: GuaranteeView): TemplateResult {
   return html`<section class="how">
     <h2>How this is computed</h2>
-    <p>Promised: ${promiseWords(formats, card)}. A one-sided ${formats.confidence(card.confidence)} bound is computed from ${windowWords(formats, card.window, card)} and compared with the guarantee line.</p>
+    <p>Promised: ${promiseWords(formats, card)}. A one-sided ${formats.confidence(card.confidence)} bound is computed from ${card.looks === 'all looks' ? 'every record since the run began' : windowWords(formats, card.window, card)} and compared with the guarantee line.${card.looks === 'both' ? ' Whether the guarantee is violated, the evidence of the whole run says.' : ''}</p>
     <dl>
       <div><dt>Method</dt><dd><b>${card.method.name}.</b> ${card.method.sentence}</dd></div>
       <div><dt>Look rule</dt><dd><b>${view.lookRule}.</b> ${lookMeaning[view.lookRule]}</dd></div>

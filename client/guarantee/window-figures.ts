@@ -5,7 +5,8 @@ import { windowWords } from '../words.ts';
 
 const names: Readonly<Record<string, string>> = {
   inspected: 'Inspected', nonconforming: 'Nonconforming', exposure: 'Exposure', count: 'Nonconformities', mean: 'Mean',
-  sd: 'Standard deviation', filled: 'Window filled', lotSize: 'Units in the lot', critical: 'Most it can take',
+  sd: 'Standard deviation', filled: 'Window filled', lotSize: 'Units in the lot', events: 'Events', runUnits: 'Units of the run', runNonconforming: 'Nonconforming in the run', runExposure: 'Exposure of the run',
+  runCount: 'Nonconformities in the run', runRecords: 'Records of the run', runValues: 'Values of the run', runMean: 'Mean of the run', critical: 'Most it can take',
 };
 
 const readable = (name: string): string => {
@@ -28,7 +29,7 @@ export function windowFigures(formats: Formats, card: GuaranteeCard, view: Guara
     ${row(card.side === 'at-most' ? 'Upper bound' : 'Lower bound', html`<b>${figure(view.bound)}</b>`)}
     ${row('Guarantee line', written(formats.figure(card, card.guaranteeLine)))}
     ${row('Estimate', figure(view.estimate))}
-    ${view.oppositeBound === undefined ? nothing : row('Opposite bound', figure(view.oppositeBound))}
+    ${view.oppositeBound === undefined ? nothing : row(view.oppositeLookRule === view.lookRule ? 'Opposite bound' : `Opposite bound, ${view.oppositeLookRule}`, figure(view.oppositeBound))}
     ${row('Target', written(formats.figure(card, card.target)))}
     ${view.allowance.bound === undefined ? nothing : row('Allowance used', formats.percent(view.allowance.bound))}
     ${row('Confidence level', formats.confidence(card.confidence))}

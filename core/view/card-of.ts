@@ -1,5 +1,6 @@
 import { methodOf } from '../evidence/method.ts';
 import { decimalComplement } from '../figure/decimal-complement.ts';
+import { runMethodOf } from '../run/run-method.ts';
 import { guaranteeLineOf } from '../plant/guarantee-line.ts';
 import type { Guarantee, Promised } from '../plant/guarantee.ts';
 import type { Plant } from '../plant/plant.ts';
@@ -11,7 +12,7 @@ export function cardOf(guarantee: Guarantee, plant: Plant): GuaranteeCard {
   const line = plant.lines.find(({ id }) => id === guarantee.line);
   const product = plant.products.find(({ id }) => id === guarantee.product);
   const { side, line: guaranteeLine, target } = guaranteeLineOf(promise);
-  const { name, sentence, assumes, source } = methodOf(guarantee);
+  const { name, sentence, assumes, source } = (guarantee.looks === 'all looks' ? runMethodOf(guarantee) : undefined) ?? methodOf(guarantee);
   return {
     id: guarantee.id,
     name: guarantee.name,
@@ -29,6 +30,7 @@ export function cardOf(guarantee: Guarantee, plant: Plant): GuaranteeCard {
     confidence: String(decimalComplement(guarantee.tail)),
     tail: guarantee.tail,
     window: guarantee.window,
+    looks: guarantee.looks,
     safetyRelevant: guarantee.safetyRelevant,
     specificationLimit: promise.quantity === 'fraction-beyond-limit' ? { ...promise.limit, unit: promise.unit } : undefined,
     method: { name, sentence, assumes, source },

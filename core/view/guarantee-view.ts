@@ -1,7 +1,7 @@
 import type { EvidenceState, LookRule } from '../evidence/evidence-state.ts';
 import type { DetectorView } from '../run/detector-view.ts';
 import type { RunView } from './run-view.ts';
-import type { Quantity, WindowRule } from '../plant/guarantee.ts';
+import type { Guarantee, Quantity, WindowRule } from '../plant/guarantee.ts';
 
 /** How figures of a guarantee are written: shares of units, a rate per exposure, or a measured value with its unit. */
 export type Scale =
@@ -29,6 +29,8 @@ export interface GuaranteeCard {
   readonly confidence: string;
   readonly tail: number;
   readonly window: WindowRule;
+  /** What decides: the window at one look, the run at all looks, or the window with the run calling the violation. */
+  readonly looks: Guarantee['looks'];
   readonly safetyRelevant: boolean;
   readonly specificationLimit: { readonly side: 'below' | 'above'; readonly value: number; readonly unit: string } | undefined;
   readonly method: { readonly name: string; readonly sentence: string; readonly assumes: readonly string[]; readonly source: string };

@@ -1,4 +1,5 @@
 import type { Happening } from '../../core/monitor/happening.ts';
+import type { RunPaths } from '../../core/view/run-view.ts';
 import type { History, Picture, Strip } from '../../core/view/history.ts';
 import { alarms, plantStart, type FakeGuarantee } from './fake-plant.ts';
 
@@ -58,4 +59,18 @@ export function pictureOf({ card }: FakeGuarantee): Picture {
   const edges = Array.from({ length: 31 }, (_, index) => mean + sd * (index - 15) * 0.25);
   const counts = edges.slice(1).map((edge) => Math.round(400 * Math.exp(-0.5 * ((edge - sd * 0.125 - mean) / sd) ** 2)));
   return { kind: 'distribution', unit, edges, counts, mean, sd, limit, model: { verdict: 'fits', sentence: 'The normal model fits: the test of normality gives p = 0.41 from 4,000 values.' } };
+}
+
+/** Evidence and gauge over the six hours of the run so far, for a guarantee that has a run. */
+export function runPathsOf({ card, view }: FakeGuarantee): RunPaths {
+  const begun = view.run?.begunAt ?? plantStart - 6 * 3_600_000;
+  const marks = view.run === undefined ? 0 : 70;
+  const at = Array.from({ length: marks }, (_, mark) => begun + (mark + 1) * 300_000);
+  const toward = (end: number, late: number): number[] => at.map((_, mark) => end * (mark / marks) ** late + 0.12 * Math.sin(mark / 2));
+  const gauge = view.detector?.gauge ?? 0;
+  return {
+    guarantee: card.id,
+    run: { at, kept: toward(view.run?.kept ?? 0, 1), broken: toward(view.run?.broken ?? 0, 4) },
+    gauge: { at, gauge: at.map((_, mark) => Math.max(0, Math.min(1, gauge * (mark / marks) ** 2 + 0.05 * Math.sin(mark)))) },
+  };
 }

@@ -1,6 +1,7 @@
 import type { Alarm } from '../../core/alarm/alarm.ts';
 import type { LiveSnapshot } from '../../core/live/message.ts';
 import type { GuaranteeCard, GuaranteeView } from '../../core/view/guarantee-view.ts';
+import type { RunView } from '../../core/view/run-view.ts';
 
 /** Tuesday 3 March 2026, 09:12 in Vienna, during the early shift. */
 export const plantStart = Date.UTC(2026, 2, 3, 8, 12);
@@ -22,8 +23,14 @@ const student: GuaranteeCard['method'] = {
 const cardBase: GuaranteeCard = {
   id: '', name: '', line: 'a', lineName: 'Hose line A', stationNames: ['Leak test'], product: 'bh-4', productName: 'Hose BH-4',
   characteristicName: 'seal integrity', quantity: 'nonconforming-fraction', side: 'at-most', scale: { kind: 'share' },
-  guaranteeLine: 200e-6, target: 0, confidence: '0.95', tail: 0.05, window: { kind: 'units', units: 50_000 },
+  guaranteeLine: 200e-6, target: 0, confidence: '0.95', tail: 0.05, window: { kind: 'units', units: 50_000 }, looks: 'one look',
   safetyRelevant: false, specificationLimit: undefined, method: binomial,
+};
+
+const fakeRun: RunView = {
+  number: 3, cause: 'restart', detail: 'die changed (Ines Maurer)', begunAt: plantStart - 355 * minute, decides: 'nothing', kept: 2.6, broken: -1.1, enoughKept: 1.301, enoughBroken: 3, bound: 171e-6, opposite: 12e-6,
+  figures: { runUnits: 84_210, runNonconforming: 6 }, keptAt: plantStart - 140 * minute, brokenAt: undefined,
+  method: { name: 'beta-mixture bound of a run', sentence: 'All rates on one side of the line are weighed against the line itself by how likely they make what was seen; the evidence is the average of these ratios.', assumes: ['The chance of nonconforming stays the same through the run.'], source: 'mixture method, H. Robbins 1970 (from memory), one-sided; own derivation' },
 };
 
 const viewBase: GuaranteeView = {
@@ -31,7 +38,8 @@ const viewBase: GuaranteeView = {
   oppositeBound: 20e-6, allowance: { estimate: 0.3, bound: 0.74, opposite: 0.1, trail: [0.8, 0.79, 0.78, 0.77, 0.75, 0.74] },
   figures: { inspected: 50_000, nonconforming: 3 }, margin: { canTake: 2 }, newest: plantStart - 400, drift: 'steady',
   product: 'BH-4', lot: undefined, alarmIds: [], lineRunning: true, warnings: [], detector: { kind: 'mixture', gauge: 0.34, alarmed: false, inARowToAlarm: 4, conformingToHalfWay: 0, betweenFalseCalls: 1_000_000, baseline: 200e-6, against: 'line', doubt: undefined },
-  oppositeLookRule: 'one look', run: undefined,
+  oppositeLookRule: 'one look',
+  run: fakeRun,
 };
 
 export interface FakeGuarantee {
@@ -52,7 +60,9 @@ export const eight: readonly FakeGuarantee[] = [
   guarantee({ id: 'leak-bh4', name: 'BH-4 leak test', safetyRelevant: true }, {
     state: 'violated', since: plantStart - 6 * minute, lookRule: 'all looks', estimate: 310e-6, bound: 484e-6, oppositeBound: 216e-6,
     allowance: { estimate: 1.55, bound: 2.42, opposite: 1.08, trail: [0.7, 0.71, 0.73, 0.76, 0.8, 0.9, 1.05, 1.2, 1.4, 1.6, 2, 2.42] },
-    figures: { inspected: 48_210, nonconforming: 15 }, margin: { conformingToDemonstrate: 61_400 }, drift: 'rising', lot: 'L-2603-07', alarmIds: [41],
+    figures: { inspected: 48_210, nonconforming: 15 }, margin: { conformingToDemonstrate: 61_400 }, drift: 'rising', lot: 'L-2603-07', alarmIds: [41], oppositeLookRule: 'all looks',
+    run: { ...fakeRun, decides: 'state', kept: -1.6, broken: 3.4, keptAt: undefined, brokenAt: plantStart - 6 * minute },
+    detector: { kind: 'mixture', gauge: 0.82, alarmed: true, inARowToAlarm: undefined, conformingToHalfWay: 5210, betweenFalseCalls: 1_000_000, baseline: 200e-6, against: 'line', doubt: 'Nonconforming units come in clusters now, so the distance between false calls no longer holds: it calls falsely more often. Find the common cause, or count events (clusters: merge-within) in the plant file.' },
     warnings: ['9 of the 15 nonconforming units came within 12 minutes; the window is not of one piece.'],
   }),
   guarantee({ id: 'pull-bh5', name: 'BH-5 crimp pull-off force', ...lineB, stationNames: ['Crimping'], product: 'bh-5', productName: 'Hose BH-5', characteristicName: 'pull-off force', quantity: 'fraction-beyond-limit', guaranteeLine: 300e-6, window: { kind: 'units', units: 4000 }, specificationLimit: { side: 'below', value: 1200, unit: 'N' } }, {

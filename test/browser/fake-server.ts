@@ -6,7 +6,7 @@ import { WebSocketServer, type WebSocket } from 'ws';
 import type { Alarm } from '../../core/alarm/alarm.ts';
 import { liveProtocol, type LiveChange, type LiveMessage, type LiveWatch } from '../../core/live/message.ts';
 import type { GuaranteeView } from '../../core/view/guarantee-view.ts';
-import { historyOf, pictureOf, stripOf } from './fake-answers.ts';
+import { historyOf, pictureOf, runPathsOf, stripOf } from './fake-answers.ts';
 import { guaranteesOf, plantStart, snapshotOf, type FakeGuarantee } from './fake-plant.ts';
 
 export interface FakeOptions {
@@ -90,7 +90,7 @@ export async function startFake(options: FakeOptions = {}): Promise<FakeServer> 
     const of = guarantees.find(({ card }) => card.id === decodeURIComponent(id));
     if (of === undefined) { json({ message: 'no such guarantee' }, 404); return; }
     const ask = (name: string): number => Number(url.searchParams.get(name));
-    json(what === 'history' ? historyOf(of, ask('from'), ask('to'), ask('points')) : what === 'strip' ? stripOf(of) : pictureOf(of));
+    json(what === 'history' ? historyOf(of, ask('from'), ask('to'), ask('points')) : what === 'strip' ? stripOf(of) : what === 'run' ? runPathsOf(of) : pictureOf(of));
   }
 
   function acknowledge(id: number, body: Record<string, string>): void {

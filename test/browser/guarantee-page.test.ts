@@ -46,6 +46,18 @@ describe('the page of a guarantee', () => {
     expect(await page.locator('.figures').innerText()).toMatch(/Upper bound\s+484\sppm/);
   });
 
+  it("draws the run's evidence with what is enough, and the gauge's recent path", async () => {
+    await open('leak-bh4');
+    await page.locator('run-evidence path.broken').waitFor({ state: 'attached' });
+    expect(await page.locator('run-evidence .enough').count()).toBe(2);
+    await page.getByText(/Run 3, since .*begun by a restart: die changed \(Ines Maurer\)\. It decides the state\./).waitFor();
+    await page.locator('run-evidence summary').click();
+    await page.getByText('however often anybody looks. It has counted every record since the run began').waitFor();
+    expect(await page.locator('.lately path').getAttribute('d')).toMatch(/^M0\.00 /);
+    await page.getByText('Its alarm stands.').waitFor();
+    await page.getByText('the distance between false calls no longer holds').waitFor();
+  });
+
   it('shows the picture that suits the quantity', async () => {
     await open('pull-bh5');
     await page.locator('guarantee-picture .limit').waitFor({ state: 'attached' });

@@ -9,7 +9,7 @@ import type { Lane } from '../../client/board/lane.ts';
 export const card = (part: Partial<GuaranteeCard> = {}): GuaranteeCard => ({
   id: 'leak-a', name: 'BH-4 leak test', line: 'a', lineName: 'Hose line A', stationNames: ['Leak test'], product: undefined, productName: undefined,
   characteristicName: 'seal integrity', quantity: 'nonconforming-fraction', side: 'at-most', scale: { kind: 'share' }, guaranteeLine: 200e-6, target: 0,
-  confidence: '0.95', tail: 0.05, window: { kind: 'units', units: 50_000 }, safetyRelevant: false, specificationLimit: undefined,
+  confidence: '0.95', tail: 0.05, window: { kind: 'units', units: 50_000 }, looks: 'one look', safetyRelevant: false, specificationLimit: undefined,
   method: { name: 'Exact binomial bound', sentence: '', assumes: [], source: '' }, ...part,
 });
 
