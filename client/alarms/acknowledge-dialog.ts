@@ -1,48 +1,44 @@
 import { css, html, LitElement, nothing, type TemplateResult } from 'lit';
 import type { Alarm } from '../../core/alarm/alarm.ts';
+import { reasonOf } from '../ask.ts';
 import { base } from '../look/base.ts';
+import { dialog } from '../look/dialog.ts';
 import { ruleWord } from '../words.ts';
 
 type Send = (by: string, note: string) => Promise<void>;
 
-interface Asked {
+export interface AcknowledgeAsked {
   readonly alarm: Alarm;
   readonly guaranteeName: string;
   readonly name: string;
+  /** Whether the name is the person's to type; otherwise it is known and only shown. */
+  readonly typed: boolean;
   readonly send: Send;
 }
 
-/** Asks who acknowledges, and for a note if there is one. Says so when the server refuses; nothing is closed then. */
+/** Asks who acknowledges where nobody is known, and for a note if there is one. Says so when the server refuses; nothing is closed then. */
 export class AcknowledgeDialog extends LitElement {
-  static override styles = [base, css`
-    dialog {
-      width: min(30rem, calc(100vw - 1.5rem)); border: 1px solid var(--edge); border-radius: 10px; padding: 1.2rem 1.3rem 1.3rem;
-      background: var(--sheet); color: var(--ink); font-size: 1.05rem;
-    }
-    dialog::backdrop { background: rgb(10 14 17 / 0.5); }
+  static override styles = [base, dialog, css`
     form { display: grid; gap: 0.85rem; }
-    h2 { font-size: 1.25rem; }
     label { display: grid; gap: 0.2rem; font-weight: 600; }
     label span { font-weight: 400; }
-    .does { display: flex; gap: 0.6rem; justify-content: flex-end; flex-wrap: wrap; }
-    .does .first { flex: 1 1 12rem; min-height: 3rem; }
     .fault { color: var(--harm); font-weight: 600; }
   `];
 
-  #asked: Asked | undefined;
+  #asked: AcknowledgeAsked | undefined;
   #fault = '';
   #busy = false;
 
   /** @param atOnce  the name is known and no note is wished: sends it, and asks only when that fails */
-  async begin(alarm: Alarm, guaranteeName: string, name: string, atOnce: boolean, send: Send): Promise<void> {
-    this.#asked = { alarm, guaranteeName, name, send };
+  async begin(asked: AcknowledgeAsked, atOnce: boolean): Promise<void> {
+    this.#asked = asked;
     this.#fault = '';
-    if (atOnce && (await this.#send(name, ''))) return;
+    if (atOnce && (await this.#send(asked.name, ''))) return;
     this.requestUpdate();
     await this.updateComplete;
-    const dialog = this.renderRoot.querySelector('dialog');
-    if (dialog?.open === false) dialog.showModal();
-    this.renderRoot.querySelector<HTMLElement>(name === '' ? '[name=by]' : '[name=note]')?.focus();
+    const box = this.renderRoot.querySelector('dialog');
+    if (box?.open === false) box.showModal();
+    this.renderRoot.querySelector<HTMLElement>(asked.name === '' ? '[name=by]' : '[name=note]')?.focus();
   }
 
   protected override render(): TemplateResult {
@@ -51,7 +47,9 @@ export class AcknowledgeDialog extends LitElement {
       ${asked === undefined ? nothing : html`<form @submit=${this.#onSubmit}>
         <h2 id="title">Acknowledge the alarm</h2>
         <p>${asked.guaranteeName}: ${ruleWord[asked.alarm.rule].toLowerCase()}. Acknowledging says that you have seen it and take care of it; it does not end it.</p>
-        <label>Your name<input name="by" required maxlength="80" autocomplete="name" .value=${asked.name} /></label>
+        ${asked.typed
+          ? html`<label>Your name<input name="by" required maxlength="80" autocomplete="name" .value=${asked.name} /></label>`
+          : html`<p>It goes on record as <b>${asked.name}</b>.</p>`}
         <label><span>Note, if you want to leave one</span><textarea name="note" rows="3" maxlength="500"></textarea></label>
         <p class="fault" role="alert">${this.#fault}</p>
         <div class="does">
@@ -69,7 +67,7 @@ export class AcknowledgeDialog extends LitElement {
       await this.#asked?.send(by, note);
       return true;
     } catch (cause) {
-      this.#fault = `Not acknowledged: ${cause instanceof Error ? cause.message : String(cause)}.`;
+      this.#fault = `Not acknowledged: ${reasonOf(cause)}.`;
       return false;
     } finally {
       this.#busy = false;
@@ -85,12 +83,13 @@ export class AcknowledgeDialog extends LitElement {
       const value = form.get(name);
       return typeof value === 'string' ? value.trim() : '';
     };
-    if (text('by') === '') {
+    const by = this.#asked?.typed === true ? text('by') : (this.#asked?.name ?? '');
+    if (by === '') {
       this.#fault = 'Give your name: the record keeps who acknowledged.';
       this.requestUpdate();
       return;
     }
-    void this.#send(text('by'), text('note')).then((sent) => {
+    void this.#send(by, text('note')).then((sent) => {
       if (sent) this.#close();
     });
   };

@@ -1,5 +1,6 @@
 import { css, html, LitElement, nothing, type PropertyValues, type TemplateResult } from 'lit';
 import type { Alarm } from '../../core/alarm/alarm.ts';
+import type { Actor } from '../access/actor.ts';
 import type { GuaranteeCard } from '../../core/view/guarantee-view.ts';
 import { byUrgency } from '../attention.ts';
 import type { Formats } from '../format.ts';
@@ -19,6 +20,7 @@ export class AlarmAnnouncer extends LitElement {
     cards: { attribute: false },
     formats: { attribute: false },
     shown: { attribute: false },
+    actor: { attribute: false },
   };
 
   static override styles = [base, css`
@@ -39,6 +41,7 @@ export class AlarmAnnouncer extends LitElement {
   declare cards: readonly GuaranteeCard[] | undefined;
   declare formats: Formats | undefined;
   declare shown: boolean;
+  declare actor: Actor | undefined;
 
   /** The highest id there was when the page came: what was raised before is on the board, not news. */
   #seen: number | undefined;
@@ -66,7 +69,11 @@ export class AlarmAnnouncer extends LitElement {
   }
 
   #name(alarm: Alarm): string {
-    return this.cards?.find((card) => card.id === alarm.guarantee)?.name ?? alarm.guarantee;
+    return this.#card(alarm)?.name ?? alarm.guarantee;
+  }
+
+  #card(alarm: Alarm): GuaranteeCard | undefined {
+    return this.cards?.find((card) => card.id === alarm.guarantee);
   }
 
   #slip(alarm: Alarm, others: number): TemplateResult {
@@ -75,7 +82,9 @@ export class AlarmAnnouncer extends LitElement {
       <p><a href=${guaranteePath(alarm.guarantee)}>${this.#name(alarm)}</a>: ${ruleWord[alarm.rule].toLowerCase()}${others > 0 ? `. ${this.formats?.count(others) ?? ''} more.` : ''}</p>
       ${alarm.safetyRelevant ? html`<p class="quiet">Safety-relevant: advisory only</p>` : nothing}
       <div class="does">
-        <button class="first" @click=${() => this.dispatchEvent(new AcknowledgeRequest(alarm))}>Acknowledge</button>
+        ${this.actor?.may('acknowledge', this.#card(alarm)?.line) === true
+          ? html`<button class="first" @click=${() => this.dispatchEvent(new AcknowledgeRequest(alarm))}>Acknowledge</button>`
+          : nothing}
         <button @click=${() => { this.#aside.add(alarm.id); this.requestUpdate(); }}>Put aside</button>
       </div>
     </section>`;

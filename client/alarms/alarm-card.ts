@@ -1,6 +1,8 @@
 import { html, LitElement, nothing, type TemplateResult } from 'lit';
 import type { Alarm } from '../../core/alarm/alarm.ts';
 import type { GuaranteeCard } from '../../core/view/guarantee-view.ts';
+import type { Actor } from '../access/actor.ts';
+import { roleMissing } from '../access/role-words.ts';
 import { caution } from '../../core/guarantee/caution.ts';
 import { isWaiting } from '../attention.ts';
 import type { Formats } from '../format.ts';
@@ -18,7 +20,7 @@ export class AlarmCard extends LitElement {
     card: { attribute: false },
     formats: { attribute: false },
     plantNow: { attribute: false },
-    personName: { attribute: false },
+    actor: { attribute: false },
     kind: { reflect: true },
     priority: { reflect: true },
     brief: { type: Boolean, reflect: true },
@@ -30,7 +32,7 @@ export class AlarmCard extends LitElement {
   declare card: GuaranteeCard | undefined;
   declare formats: Formats | undefined;
   declare plantNow: number;
-  declare personName: string;
+  declare actor: Actor | undefined;
   declare kind: string;
   declare priority: string;
   /** On the guarantee's own page: without its name. */
@@ -53,7 +55,7 @@ export class AlarmCard extends LitElement {
       ${alarm.response === '' || alarm.state.kind === 'ended' ? nothing : html`<p class="response"><b>What to do</b>${alarm.response}</p>`}
       <p class="times quiet">${this.#times(alarm, formats)}</p>
       ${alarm.safetyRelevant && alarm.state.kind !== 'ended' ? html`<p class="caution"><b>${caution.title}.</b> ${caution.sentences.join(' ')}</p>` : nothing}
-      ${isWaiting(alarm) ? this.#actions(alarm, name) : nothing}
+      ${isWaiting(alarm) ? this.#actions(alarm, name, this.actor) : nothing}
     </article>`;
   }
 
@@ -69,12 +71,14 @@ export class AlarmCard extends LitElement {
     return `${raised}${since}${again}${back}${by}`;
   }
 
-  #actions(alarm: Alarm, name: string): TemplateResult {
-    const known = this.personName !== '';
-    const label = known ? `Acknowledge as ${this.personName}` : 'Acknowledge';
+  #actions(alarm: Alarm, name: string, actor: Actor | undefined): TemplateResult {
+    if (actor?.may('acknowledge', this.card?.line) !== true) return html`<p class="quiet may-not">${roleMissing('Acknowledging', 'acknowledge', this.card?.lineName ?? 'its line')}</p>`;
+    const known = actor.name !== '';
+    const label = known ? `Acknowledge as ${actor.name}` : 'Acknowledge';
+    const more = actor.named === 'typed' ? 'With a note or another name' : 'With a note';
     return html`<div class="does">
       <button class="first" aria-label="${label}: ${name}, ${ruleWord[alarm.rule]}" @click=${() => this.dispatchEvent(new AcknowledgeRequest(alarm))}>${label}</button>
-      ${known ? html`<button @click=${() => this.dispatchEvent(new AcknowledgeRequest(alarm, true))} aria-label="With a note or another name: ${name}">With a note or another name</button>` : nothing}
+      ${known ? html`<button @click=${() => this.dispatchEvent(new AcknowledgeRequest(alarm, true))} aria-label="${more}: ${name}">${more}</button>` : nothing}
     </div>`;
   }
 }

@@ -2,6 +2,8 @@ import { ContextConsumer } from '@lit/context';
 import { css, html, LitElement, nothing, type TemplateResult } from 'lit';
 import { repeat } from 'lit/directives/repeat.js';
 import type { Alarm } from '../../core/alarm/alarm.ts';
+import type { Actor } from '../access/actor.ts';
+import { reasonOf } from '../ask.ts';
 import { byUrgency, isActive, isWaiting } from '../attention.ts';
 import { wiringContext } from '../contexts.ts';
 import type { LivePicture } from '../feed/live-picture.ts';
@@ -18,7 +20,7 @@ export class AlarmPage extends LitElement {
     picture: { attribute: false },
     formats: { attribute: false },
     plantNow: { attribute: false },
-    personName: { attribute: false },
+    actor: { attribute: false },
   };
 
   static override styles = [base, css`
@@ -34,7 +36,7 @@ export class AlarmPage extends LitElement {
   declare picture: LivePicture | undefined;
   declare formats: Formats | undefined;
   declare plantNow: number;
-  declare personName: string;
+  declare actor: Actor;
 
   readonly #wiring = new ContextConsumer(this, { context: wiringContext });
   #older: readonly Alarm[] = [];
@@ -62,7 +64,7 @@ export class AlarmPage extends LitElement {
     return html`<section aria-label=${name}>
       <h2 class=${headed ? '' : 'unseen'}>${name}</h2>
       <ol>${repeat(alarms, (alarm) => alarm.id, (alarm) => html`<li><alarm-card .alarm=${alarm} .card=${cards.get(alarm.guarantee)} .formats=${formats}
-        .plantNow=${this.plantNow} .personName=${this.personName}></alarm-card></li>`)}</ol>
+        .plantNow=${this.plantNow} .actor=${this.actor}></alarm-card></li>`)}</ol>
     </section>`;
   }
 
@@ -83,7 +85,7 @@ export class AlarmPage extends LitElement {
       this.#allRead = older.length < pageSize;
       this.#fault = '';
     } catch (cause) {
-      this.#fault = `Older alarms could not be read: ${cause instanceof Error ? cause.message : String(cause)}.`;
+      this.#fault = `Older alarms could not be read: ${reasonOf(cause)}.`;
     }
     this.requestUpdate();
   }

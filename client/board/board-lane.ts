@@ -33,6 +33,7 @@ export class BoardLane extends LitElement {
     tone: { reflect: true },
     formats: { attribute: false },
     age: { attribute: false },
+    mayAcknowledge: { attribute: false },
   };
 
   static override styles = [base, lanePlotStyle, boardLaneStyle];
@@ -46,6 +47,7 @@ export class BoardLane extends LitElement {
   declare formats: Formats | undefined;
   /** Age of the newest record in words; undefined before the first. */
   declare age: string | undefined;
+  declare mayAcknowledge: boolean;
 
   protected override render(): TemplateResult | typeof nothing {
     const { lane, scale, formats } = this;
@@ -77,7 +79,7 @@ export class BoardLane extends LitElement {
   /** Line and stations, as far as the lane has room to say. */
   #place({ name, lineName, stationNames, safetyRelevant }: GuaranteeCard): string {
     const beside = name.length + 0.8 * (lineName.length + (safetyRelevant ? 17 : 0));
-    if (this.form === 'desk' && this.size === 'small' && beside > oneLineChars) return '';
+    if (this.form !== 'card' && this.size === 'small' && beside > oneLineChars) return '';
     const spare = this.form !== 'wall' && (this.size === 'large' || (this.size === 'medium' && !safetyRelevant && stationNames.length === 1));
     return spare && stationNames.length > 0 ? `${lineName}, ${stationNames.join(' to ')}` : lineName;
   }
@@ -111,14 +113,17 @@ export class BoardLane extends LitElement {
     const waiting = alarms.find(isWaiting);
     const known = alarms.find((alarm) => alarm.state.kind === 'acknowledged');
     return html`<div class="act">
-      ${waiting === undefined
-        ? nothing
-        : html`<button @click=${() => this.dispatchEvent(new AcknowledgeRequest(waiting))} aria-label="Acknowledge: ${this.lane?.card.name ?? ''}, ${ruleWord[waiting.rule]}">Acknowledge</button>`}
+      ${waiting === undefined ? nothing : this.#acknowledge(waiting)}
       ${waiting === undefined && known?.state.kind === 'acknowledged'
         ? html`<span class="sub known">Acknowledged<br />by ${known.state.acknowledgement.by}</span>`
         : nothing}
       <span class="sub age">${this.age === undefined ? 'no record yet' : `${this.age} ago`}</span>
     </div>`;
+  }
+
+  #acknowledge(alarm: Alarm): TemplateResult {
+    if (!this.mayAcknowledge) return html`<span class="sub known">Not yet acknowledged</span>`;
+    return html`<button @click=${() => this.dispatchEvent(new AcknowledgeRequest(alarm))} aria-label="Acknowledge: ${this.lane?.card.name ?? ''}, ${ruleWord[alarm.rule]}">Acknowledge</button>`;
   }
 }
 

@@ -1,6 +1,7 @@
 import { html, LitElement, nothing, type TemplateResult } from 'lit';
 import { repeat } from 'lit/directives/repeat.js';
 import { caution } from '../../core/guarantee/caution.ts';
+import type { Actor } from '../access/actor.ts';
 import type { Formats } from '../format.ts';
 import { base } from '../look/base.ts';
 import { styled } from '../look/styled.ts';
@@ -27,6 +28,7 @@ export class LineBoard extends LitElement {
     plantNow: { attribute: false },
     wall: { type: Boolean, reflect: true },
     grouped: { type: Boolean },
+    actor: { attribute: false },
   };
 
   static override styles = [base, lanePlotStyle, lineBoardStyle];
@@ -36,6 +38,7 @@ export class LineBoard extends LitElement {
   declare plantNow: number;
   declare wall: boolean;
   declare grouped: boolean;
+  declare actor: Actor | undefined;
 
   readonly #room = new BoardRoom(this);
   readonly #hold = new OrderHold(this, () => performance.now());
@@ -108,7 +111,7 @@ export class LineBoard extends LitElement {
     const height = plan.form === 'card' ? 'auto' : `${measure.height}px`;
     return html`<li data-id=${lane.card.id} ${styled({ height, '--lane-type': `${measure.typePx.toFixed(2)}px`, '--name-type': `${measure.nameTypePx.toFixed(2)}px` })}>
       <board-lane .lane=${lane} .scale=${plan.scale} .height=${measure.height} .size=${measure.size} .form=${plan.form}
-        .tone=${lane.tone} .formats=${formats} .age=${lane.view.newest === undefined ? undefined : formats.span(this.plantNow - lane.view.newest)}></board-lane>
+        .tone=${lane.tone} .mayAcknowledge=${this.actor?.may('acknowledge', lane.card.line) === true} .formats=${formats} .age=${lane.view.newest === undefined ? undefined : formats.span(this.plantNow - lane.view.newest)}></board-lane>
     </li>`;
   }
 

@@ -41,7 +41,7 @@ export function nextState(old: LiveState, step: Step, now: number): LiveState {
   return { link: linkAfter(old.link, step, now), picture };
 }
 
-const startState: LiveState = { link: { kind: 'connecting' }, picture: undefined };
+export const startState: LiveState = { link: { kind: 'connecting' }, picture: undefined };
 
 /** Live state from now on: connects, resumes where it stood, waits longer after each failure. Shared by the whole page. */
 export function liveStateOf(ends: FeedEnds): Observable<LiveState> {

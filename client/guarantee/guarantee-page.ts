@@ -2,6 +2,8 @@ import { ContextConsumer } from '@lit/context';
 import { html, LitElement, nothing, type PropertyValues, type TemplateResult } from 'lit';
 import { repeat } from 'lit/directives/repeat.js';
 import { switchMap, timer, type Subscription } from 'rxjs';
+import type { Actor } from '../access/actor.ts';
+import { roleMissing } from '../access/role-words.ts';
 import { byUrgency } from '../attention.ts';
 import '../alarms/alarm-card.ts';
 import type { Lane } from '../board/lane.ts';
@@ -38,7 +40,7 @@ export class GuaranteePage extends LitElement {
     picture: { attribute: false },
     formats: { attribute: false },
     plantNow: { attribute: false },
-    personName: { attribute: false },
+    actor: { attribute: false },
     range: { state: true },
     records: { state: true },
   };
@@ -50,7 +52,7 @@ export class GuaranteePage extends LitElement {
   declare picture: LivePicture | undefined;
   declare formats: Formats | undefined;
   declare plantNow: number;
-  declare personName: string;
+  declare actor: Actor;
   declare range: Range | undefined;
   declare records: GuaranteeRecords | undefined;
 
@@ -87,7 +89,8 @@ export class GuaranteePage extends LitElement {
           ${this.#alarms(lane, picture, formats)}
           <section class="sheet part figures-part"><h2>Present window</h2>${windowFigures(formats, lane.card, lane.view, this.plantNow)}</section>
           ${changeGauge(formats, lane.card, lane.view, this.records?.paths)}
-          <section class="sheet part restart-part"><restart-evidence .personName=${this.personName} .send=${this.#restart}></restart-evidence></section>
+          <section class="sheet part restart-part"><restart-evidence .name=${this.actor.ownName} .typed=${this.actor.named === 'typed'} .send=${this.#restart}
+            .mayNot=${this.actor.may('restart-evidence', lane.card.line) ? '' : roleMissing('Restarting the evidence', 'restart-evidence', lane.card.lineName)}></restart-evidence></section>
         </div>
       </div>`;
   }
@@ -128,7 +131,7 @@ export class GuaranteePage extends LitElement {
   #alarms({ card }: Lane, picture: LivePicture, formats: Formats): TemplateResult | typeof nothing {
     const alarms = [...picture.alarms.values()].filter((alarm) => alarm.guarantee === card.id).sort(byUrgency).slice(0, 8);
     return alarms.length === 0 ? nothing : html`<section aria-label="Alarms of this guarantee"><h2 class="unseen">Alarms</h2><ol class="alarms">
-      ${repeat(alarms, (alarm) => alarm.id, (alarm) => html`<li><alarm-card brief .alarm=${alarm} .card=${card} .formats=${formats} .plantNow=${this.plantNow} .personName=${this.personName}></alarm-card></li>`)}</ol></section>`;
+      ${repeat(alarms, (alarm) => alarm.id, (alarm) => html`<li><alarm-card brief .alarm=${alarm} .card=${card} .formats=${formats} .plantNow=${this.plantNow} .actor=${this.actor}></alarm-card></li>`)}</ol></section>`;
   }
 
   #ask({ desk }: Wiring): void {
@@ -144,7 +147,7 @@ export class GuaranteePage extends LitElement {
   }
 
   readonly #restart = async (by: string, reason: string): Promise<void> => {
-    this.#wiring.value?.settings.change({ personName: by });
+    if (this.actor.named === 'typed') this.#wiring.value?.settings.change({ personName: by });
     await this.#wiring.value?.desk.restart(this.guarantee, by, reason);
   };
 }

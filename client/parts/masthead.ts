@@ -1,4 +1,5 @@
 import { html, LitElement, nothing, svg, type TemplateResult } from 'lit';
+import type { Who } from '../access/who.ts';
 import { isWaiting } from '../attention.ts';
 import type { Freshness } from '../feed/link.ts';
 import type { LivePicture } from '../feed/live-picture.ts';
@@ -8,9 +9,10 @@ import { base } from '../look/base.ts';
 import type { Route } from '../route.ts';
 import type { Settings } from '../settings.ts';
 import { mastheadStyle } from './masthead-style.ts';
+import './person-menu.ts';
 import './view-panel.ts';
 
-/** The sentence a supervisor reads first, where and when this is, and whether it is live. */
+/** The sentence a supervisor reads first, where and when this is, whether it is live, and who sits here. */
 export class PageMasthead extends LitElement {
   static override properties = {
     picture: { attribute: false },
@@ -19,6 +21,7 @@ export class PageMasthead extends LitElement {
     plantNow: { attribute: false },
     freshness: { attribute: false },
     settings: { attribute: false },
+    who: { attribute: false },
     route: { attribute: false },
     wall: { type: Boolean, reflect: true },
   };
@@ -31,32 +34,40 @@ export class PageMasthead extends LitElement {
   declare plantNow: number;
   declare freshness: Freshness | undefined;
   declare settings: Settings | undefined;
+  declare who: Who | undefined;
   declare route: Route['kind'];
   declare wall: boolean;
 
   protected override render(): TemplateResult | typeof nothing {
     const { picture, formats, freshness } = this;
-    if (picture === undefined || formats === undefined || freshness === undefined) return nothing;
+    if (formats === undefined || freshness === undefined) return nothing;
     return html`<div class="head">
       <p class="says">${this.says}</p>
       <nav aria-label="Pages">
         ${this.#page('/', 'Board', this.route === 'board')} ${this.#page('/alarms', this.#alarmWords(picture, formats), this.route === 'alarms')}
         <view-panel .settings=${this.settings} .wall=${this.wall}></view-panel>
       </nav>
+      <person-menu .who=${this.who} .lines=${picture?.plant.lines} .page=${this.route} .wall=${this.wall}></person-menu>
       <dl>
         <div class="mark"><dt class="unseen">Program</dt><dd>Vouchline</dd></div>
-        <div><dt class="unseen">Plant and shift</dt><dd>${picture.plant.name}${this.#shift(picture, formats)}</dd></div>
-        <div><dt class="unseen">Plant clock</dt><dd class="clock">${this.wall ? formats.minute(this.plantNow) : formats.clock(this.plantNow)}</dd></div>
-        <div><dt class="unseen">Connection</dt><dd>${this.#liveness(picture, formats, freshness)}</dd></div>
+        ${picture === undefined ? html`<div><dt class="unseen">Connection</dt><dd>No figures yet</dd></div>` : this.#plant(picture, formats, freshness)}
+        ${this.who?.kind === 'known' && this.who.caller.kind === 'open' ? html`<div><dt class="unseen">Access</dt><dd>Open to everybody who reaches it</dd></div>` : nothing}
       </dl>
     </div>`;
+  }
+
+  #plant(picture: LivePicture, formats: Formats, freshness: Freshness): TemplateResult {
+    return html`<div><dt class="unseen">Plant and shift</dt><dd>${picture.plant.name}${this.#shift(picture, formats)}</dd></div>
+        <div class="time"><dt class="unseen">Plant clock</dt><dd class="clock">${this.wall ? formats.minute(this.plantNow) : formats.clock(this.plantNow)}</dd></div>
+        <div><dt class="unseen">Connection</dt><dd>${this.#liveness(picture, formats, freshness)}</dd></div>`;
   }
 
   #page(path: string, name: string, here: boolean): TemplateResult {
     return html`<a href=${path} aria-current=${here ? 'page' : 'false'}>${name}</a>`;
   }
 
-  #alarmWords(picture: LivePicture, formats: Formats): string {
+  #alarmWords(picture: LivePicture | undefined, formats: Formats): string {
+    if (picture === undefined) return 'Alarms';
     const waiting = [...picture.alarms.values()].filter(isWaiting).length;
     return waiting === 0 ? 'Alarms' : `Alarms: ${formats.count(waiting)} waiting`;
   }

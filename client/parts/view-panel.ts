@@ -1,6 +1,7 @@
 import { css, html, LitElement, nothing, type TemplateResult } from 'lit';
 import { base } from '../look/base.ts';
 import type { Settings } from '../settings.ts';
+import { DropDown, dropDownStyle } from './drop-down.ts';
 
 type Choice<K extends keyof Settings> = readonly [Settings[K], string];
 
@@ -8,16 +9,7 @@ type Choice<K extends keyof Settings> = readonly [Settings[K], string];
 export class ViewPanel extends LitElement {
   static override properties = { settings: { attribute: false }, wall: { type: Boolean, reflect: true } };
 
-  static override styles = [base, css`
-    :host { position: relative; }
-    summary { list-style: none; cursor: pointer; padding: 0.35rem 0.75rem; border-radius: 5px; font-weight: 650; user-select: none; }
-    summary::-webkit-details-marker { display: none; }
-    summary::after { content: ''; display: inline-block; margin-left: 0.45em; border: 0.3em solid transparent; border-top-color: currentColor; border-bottom: 0; vertical-align: 0.12em; }
-    summary:hover { background: var(--raised); }
-    .panel {
-      position: absolute; right: 0; top: calc(100% + 0.3rem); z-index: 8; width: 19rem; background: var(--raised); border: 1px solid var(--edge);
-      border-radius: 8px; padding: 0.9rem 1rem 1rem; display: grid; gap: 0.85rem; box-shadow: 0 8px 24px rgb(0 0 0 / 0.18);
-    }
+  static override styles = [base, dropDownStyle, css`
     fieldset { border: 0; margin: 0; padding: 0; }
     legend { padding: 0; font-size: 0.86rem; color: var(--quiet); margin-bottom: 0.25rem; }
     .choices { display: grid; grid-auto-flow: column; grid-auto-columns: 1fr; border: 1.5px solid var(--edge); border-radius: 5px; overflow: clip; }
@@ -26,18 +18,21 @@ export class ViewPanel extends LitElement {
     input { position: absolute; opacity: 0; inset: 0; width: 100%; cursor: pointer; }
     label:has(:checked) { background: var(--button); color: var(--button-ink); }
     label:has(:focus-visible) { outline: 3px solid var(--focus); outline-offset: -3px; }
-    @media (max-width: 760px) { summary { padding: 0.75rem; } label { padding-block: 0.75em; } }
-    :host([wall]) summary { font-size: 0.85rem; }
-    :host([wall]) .panel { font-size: 0.85rem; }
+    @media (max-width: 760px) { label { padding-block: 0.75em; } }
   `];
 
   declare settings: Settings | undefined;
   declare wall: boolean;
 
+  constructor() {
+    super();
+    new DropDown(this);
+  }
+
   protected override render(): TemplateResult | typeof nothing {
     const { settings } = this;
     if (settings === undefined) return nothing;
-    return html`<details @keydown=${this.#onKey} @focusout=${this.#onLeave}>
+    return html`<details>
       <summary>View</summary>
       <div class="panel">
         ${this.#choose('Shares of units', 'shareUnit', [['ppm', 'ppm'], ['%', '%'], ['1 in N', '1 in N']], settings)}
@@ -53,20 +48,6 @@ export class ViewPanel extends LitElement {
       <input type="radio" name=${key} .checked=${settings[key] === value} @change=${() => {
         this.dispatchEvent(new CustomEvent<Partial<Settings>>('vouchline-settings', { bubbles: true, composed: true, detail: { [key]: value } }));
       }} />${words}</label>`)}</div></fieldset>`;
-  }
-
-  readonly #onKey = (event: KeyboardEvent): void => {
-    if (event.key !== 'Escape') return;
-    this.#close();
-    this.renderRoot.querySelector('summary')?.focus();
-  };
-
-  readonly #onLeave = (event: FocusEvent): void => {
-    if (event.relatedTarget instanceof Node && !this.renderRoot.contains(event.relatedTarget)) this.#close();
-  };
-
-  #close(): void {
-    this.renderRoot.querySelector('details')?.removeAttribute('open');
   }
 }
 

@@ -6,6 +6,8 @@ import { WebSocketServer, type WebSocket } from 'ws';
 import type { Alarm } from '../../core/alarm/alarm.ts';
 import { liveProtocol, type LiveChange, type LiveMessage, type LiveWatch } from '../../core/live/message.ts';
 import type { GuaranteeView } from '../../core/view/guarantee-view.ts';
+import { FakeAccess, FakeRefusal, type FakeAccessOptions, type FakeAnswer } from './fake-access.ts';
+import { answerOfAccess } from './fake-access-routes.ts';
 import { historyOf, pictureOf, runPathsOf, stripOf } from './fake-answers.ts';
 import { guaranteesOf, plantStart, snapshotOf, type FakeGuarantee } from './fake-plant.ts';
 
@@ -14,13 +16,16 @@ export interface FakeOptions {
   readonly clockRate?: number;
   /** No source has sent anything yet. */
   readonly noRecords?: boolean;
+  /** Who may come; open to everybody where absent. */
+  readonly access?: FakeAccessOptions;
 }
 
 export interface FakeServer {
   readonly url: string;
+  readonly access: FakeAccess;
   /** First messages of the dashboards that came, in order. */
   readonly watches: LiveWatch[];
-  readonly posts: { readonly path: string; readonly body: Readonly<Record<string, string>> }[];
+  readonly posts: { readonly path: string; readonly body: Readonly<Record<string, unknown>> }[];
   readonly tell: (views: readonly GuaranteeView[], alarms?: readonly Alarm[]) => void;
   readonly view: (id: string) => GuaranteeView;
   /** Says nothing any more, the sockets stay open. */
@@ -28,6 +33,8 @@ export interface FakeServer {
   /** Cuts every live socket and refuses new ones until `returnLive`. */
   readonly cutLive: () => void;
   readonly returnLive: () => void;
+  /** Cuts every live socket; who comes back is let in as they may. */
+  readonly endSockets: () => void;
   /** Answers the next posts with this refusal. */
   readonly refusePosts: (message: string | undefined) => void;
   readonly stop: () => Promise<void>;
@@ -48,10 +55,10 @@ async function sendFile(path: string, response: ServerResponse): Promise<void> {
   }
 }
 
-async function bodyOf(request: IncomingMessage): Promise<Record<string, string>> {
+async function bodyOf(request: IncomingMessage): Promise<Record<string, unknown>> {
   let text = '';
   for await (const chunk of request) text += String(chunk);
-  return JSON.parse(text) as Record<string, string>;
+  return text === '' ? {} : JSON.parse(text) as Record<string, unknown>;
 }
 
 /** The client's other side for tests and pictures: the built files, a scripted plant, the live socket. */
@@ -63,7 +70,8 @@ export async function startFake(options: FakeOptions = {}): Promise<FakeServer> 
   const views = new Map(first.views.map((view) => [view.id, view]));
   const alarms = new Map((options.noRecords === true ? [] : first.alarms).map((alarm) => [alarm.id, alarm]));
   const watches: LiveWatch[] = [];
-  const posts: { path: string; body: Record<string, string> }[] = [];
+  const posts: { path: string; body: Record<string, unknown> }[] = [];
+  const access = new FakeAccess(options.access);
   const startedAt = performance.now();
   const plantNow = (): number => Math.round(plantStart + (performance.now() - startedAt) * (options.clockRate ?? 1));
   let revision = 1;
@@ -76,14 +84,25 @@ export async function startFake(options: FakeOptions = {}): Promise<FakeServer> 
     const json = (value: unknown, status = 200): void => {
       response.writeHead(status, { 'content-type': 'application/json' }).end(JSON.stringify(value));
     };
+    const answered = ({ status, body, headers }: FakeAnswer): void => {
+      response.writeHead(status, { 'content-type': 'application/json', ...headers }).end(typeof body === 'string' ? body : body === undefined ? undefined : JSON.stringify(body));
+    };
     if (!url.pathname.startsWith('/api/')) { await sendFile(url.pathname, response); return; }
     const [, , kind, id = '', what] = url.pathname.split('/');
+    const body = request.method === 'GET' ? {} : await bodyOf(request);
+    if (request.method !== 'GET' && refused !== undefined) { json({ message: refused }, 409); return; }
+    const ofAccess = answerOfAccess(access, request, url, body);
+    if (ofAccess !== undefined) { answered(ofAccess); return; }
+    if (access.callerOf(request) === undefined) { json({ message: 'Sign in first, or send a token that holds.' }, 401); return; }
     if (request.method === 'POST') {
-      const body = await bodyOf(request);
       posts.push({ path: url.pathname, body });
-      if (refused !== undefined) { json({ message: refused }, 409); return; }
-      if (what === 'acknowledge') acknowledge(Number(id), body);
-      response.writeHead(204).end();
+      try {
+        if (what === 'acknowledge') acknowledge(Number(id), body, request);
+        response.writeHead(204).end();
+      } catch (cause) {
+        if (!(cause instanceof FakeRefusal)) throw cause;
+        answered(cause.answer);
+      }
       return;
     }
     if (kind === 'alarms') { json([]); return; }
@@ -93,17 +112,19 @@ export async function startFake(options: FakeOptions = {}): Promise<FakeServer> 
     json(what === 'history' ? historyOf(of, ask('from'), ask('to'), ask('points')) : what === 'strip' ? stripOf(of) : what === 'run' ? runPathsOf(of) : pictureOf(of));
   }
 
-  function acknowledge(id: number, body: Record<string, string>): void {
+  function acknowledge(id: number, body: Readonly<Record<string, unknown>>, request: IncomingMessage): void {
     const alarm = alarms.get(id);
     if (alarm === undefined) return;
-    tell([], [{ ...alarm, state: { kind: 'acknowledged', acknowledgement: { by: body['by'] ?? '', at: plantNow() as never, note: body['note'] ?? '' } } }]);
+    const said = (name: string): string => (typeof body[name] === 'string' ? body[name] : '');
+    const by = access.acknowledges(request, guarantees.find(({ card }) => card.id === alarm.guarantee)?.card.line, said('by'));
+    tell([], [{ ...alarm, state: { kind: 'acknowledged', acknowledgement: { by, at: plantNow() as never, note: said('note') } } }]);
   }
 
   const http = createServer((request, response) => { void answer(request, response); });
   const live = new WebSocketServer({ noServer: true, handleProtocols: (asked) => (asked.has(liveProtocol) ? liveProtocol : false) });
   const send = (socket: WebSocket, message: LiveMessage): void => { if (!silent) socket.send(JSON.stringify(message)); };
   http.on('upgrade', (request, socket, head) => {
-    if (cut || request.url !== '/live') { socket.destroy(); return; }
+    if (cut || request.url !== '/live' || access.callerOf(request) === undefined) { socket.destroy(); return; }
     live.handleUpgrade(request, socket, head, (dashboard) => {
       dashboard.once('message', (data) => {
         watches.push(JSON.parse((data as Buffer).toString('utf8')) as LiveWatch);
@@ -127,10 +148,11 @@ export async function startFake(options: FakeOptions = {}): Promise<FakeServer> 
 
   return {
     url: `http://127.0.0.1:${(http.address() as AddressInfo).port}`,
-    watches, posts, tell,
+    watches, posts, tell, access,
     view: (id) => views.get(id)!,
     fallSilent: () => { silent = true; },
     cutLive: () => { cut = true; for (const dashboard of live.clients) dashboard.terminate(); },
+    endSockets: () => { for (const dashboard of live.clients) dashboard.terminate(); },
     returnLive: () => { cut = false; silent = false; },
     refusePosts: (message) => { refused = message; },
     stop: async () => {

@@ -3,11 +3,14 @@ import { tmpdir } from 'node:os';
 import { join } from 'node:path';
 import { chromium, type BrowserContext, type Page } from 'playwright-core';
 
-export type Size = 'wall' | 'desk' | 'phone';
+export type Size = 'wall' | 'hd' | 'wide' | 'desk' | 'phone' | 'narrow';
 export const sizes: Readonly<Record<Size, { readonly width: number; readonly height: number }>> = {
   wall: { width: 3840, height: 2160 },
+  hd: { width: 1920, height: 1080 },
+  wide: { width: 1440, height: 900 },
   desk: { width: 1366, height: 768 },
   phone: { width: 390, height: 844 },
+  narrow: { width: 320, height: 640 },
 };
 
 const flags = ['--headless', '--no-sandbox', '--disable-gpu', '--disable-quic', '--no-first-run', '--disable-background-networking', '--disable-component-update', '--disable-sync'];

@@ -5,6 +5,7 @@ import { runnerImport } from 'vite';
 const load = async (name) => (await runnerImport(new URL(name, import.meta.url).pathname)).module;
 const { startFake } = await load('./fake-server.ts');
 const { openBrowser } = await load('./open-browser.ts');
+const { people, signedInAs } = await load('./fake-people.ts');
 
 const only = process.argv[2] ?? '';
 const out = new URL('../../.screens/', import.meta.url).pathname;
@@ -25,6 +26,34 @@ const scenes = [
   { name: 'chain', path: '/guarantees/chain-b', fake: {}, sizes: ['desk', 'phone'], themes: ['light'], full: true },
   { name: 'alarms', path: '/alarms', fake: {}, sizes: ['desk', 'phone'], themes: ['light', 'dark'], full: true, settings: { personName: 'Ines Maurer' } },
   { name: 'alarms-none', path: '/alarms', fake: { noRecords: true }, sizes: ['phone'], themes: ['light'] },
+  { name: 'board-open', path: '/', fake: {}, sizes: ['desk', 'phone'], themes: ['light'], act: (page) => page.locator('person-menu summary').click() },
+  { name: 'person', path: '/', fake: { access: signedInAs('ada') }, sizes: ['desk', 'phone'], themes: ['light', 'dark'], act: (page) => page.locator('person-menu summary').click() },
+  { name: 'display', path: '/', fake: { access: signedInAs('hall') }, sizes: ['hd', 'wall'], themes: ['light', 'dark'], settings: { wall: 'on' } },
+  { name: 'withdrawn', path: '/', fake: { access: signedInAs('hall') }, sizes: ['hd', 'phone'], themes: ['light'], act: async (page, fake) => { fake.access.displays.clear(); fake.endSockets(); await page.waitForTimeout(600); } },
+  { name: 'pin', path: '/', fake: { access: signedInAs('bench') }, sizes: ['desk', 'phone'], themes: ['light', 'dark'], act: async (page) => {
+    await page.getByRole('button', { name: /^Acknowledge/ }).first().click();
+    await page.getByRole('button', { name: 'Ines Maurer' }).click();
+    await page.keyboard.type('471');
+  } },
+  { name: 'pin-who', path: '/', fake: { access: signedInAs('bench') }, sizes: ['phone'], themes: ['light'], act: (page) => page.getByRole('button', { name: /^Acknowledge/ }).first().click() },
+  { name: 'acting', path: '/alarms', fake: { access: signedInAs('bench') }, sizes: ['desk', 'phone'], themes: ['light'], act: async (page) => {
+    await page.getByRole('button', { name: /^Acknowledge/ }).first().click();
+    await page.getByRole('button', { name: 'Ines Maurer' }).click();
+    await page.keyboard.type('4711\n');
+  } },
+  { name: 'alarms-viewer', path: '/alarms', fake: { access: signedInAs('mette') }, sizes: ['desk'], themes: ['light'] },
+  { name: 'sign-in', path: '/', fake: { access: { access: 'accounts', accounts: people, passkeys: true, directory: 'Hose plant directory' } }, sizes: ['desk', 'phone'], themes: ['light', 'dark'] },
+  { name: 'sign-in-wrong', path: '/', fake: { access: { access: 'accounts', accounts: people } }, sizes: ['phone'], themes: ['light', 'dark'], act: async (page) => {
+    await page.getByLabel('Name', { exact: true }).fill('ines');
+    await page.keyboard.press('Tab');
+    await page.keyboard.type('wrong\n');
+  } },
+  { name: 'join', path: '/join#c', fake: { access: { access: 'accounts', invitations: [{ id: 'i', code: 'c', kind: 'first', grants: [{ role: 'administrator' }, { role: 'engineer' }], account: null, shownAs: null, expires: 0 }] } }, sizes: ['desk', 'phone'], themes: ['light', 'dark'], act: async (page) => {
+    await page.getByLabel('New password', { exact: true }).fill('short one');
+    await page.getByLabel('Your name').fill('Ada');
+    await page.getByLabel('Name to sign in with').fill('ada');
+    await page.keyboard.press('Enter');
+  } },
 ];
 
 const browser = await openBrowser();

@@ -1,0 +1,8 @@
+import type { Route } from './route.ts';
+
+const pageName: Readonly<Record<Exclude<Route['kind'], 'board' | 'guarantee'>, string>> = {
+  alarms: 'Alarms', 'sign-in': 'Sign in', join: 'Join', display: 'Display', nowhere: 'No such page',
+};
+
+/** What the window is called. */
+export const pageTitle = ({ kind }: Route): string => (kind === 'board' || kind === 'guarantee' ? 'Vouchline' : `${pageName[kind]}, Vouchline`);
