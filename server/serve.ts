@@ -4,7 +4,8 @@ import { join } from 'node:path';
 import type { Logger } from 'pino';
 import { sourceLimits } from '../core/protocol/limits.ts';
 import { plantClock, type ClockSetting } from './clock/plant-clock.ts';
-import { openGuard } from './access/guard.ts';
+import { accessOf } from './access/access-of.ts';
+import { checkOpenAccess } from './access/open-access.ts';
 import { httpServer } from './http/http-server.ts';
 import { serveOperations } from './http/operations.ts';
 import { plantFileRoutes } from './http/plant-files.ts';
@@ -29,6 +30,8 @@ import type { Store } from './store/store.ts';
 export interface Served {
   /** Where it answers, e.g. http://127.0.0.1:7317 */
   readonly address: string;
+  /** Where the first account is made; undefined where there is one, or where access is open. */
+  readonly firstLink: string | undefined;
   /** Reads the plant file anew; an invalid one changes nothing. @returns what is wrong with it, empty if it is in force */
   reload(): Promise<readonly string[]>;
   /** Ends on purpose: clients are told, nothing accepted is lost. */
@@ -52,10 +55,11 @@ const updateMs = 100;
 /**
  * Starts a server on its data directory: brings back its state, then listens.
  *
- * @throws BadPlantFile, StoreError, or why it cannot listen; nothing is held then
+ * @throws BadPlantFile, BadSetting, StoreError, DamagedAccessItem, or why it cannot listen; nothing is held then
  */
 export async function serve(setting: ServeSetting): Promise<Served> {
   const { settings, log } = setting;
+  if (!setting.demo) checkOpenAccess(settings);
   const path = settings.plant ?? join(settings.data, 'plant.yaml');
   const read = await plantFile(path);
   if (!read.ok) throw new BadPlantFile(read.fault.join('\n'));
@@ -122,13 +126,21 @@ export async function serveFrom(store: Store, { settings, clock: clockSetting, d
   });
   await uploads.endCutOff();
   up = true;
-  board.remember([...(await store.endedAlarms({ limit: 200 }))].reverse());
   board.begin(plant.monitor);
+  board.remember([...(await store.endedAlarms({ limit: 200 }))].reverse());
 
   const http = await httpServer();
   serveOperations(http, { store, measures });
-  const guard = openGuard;
-  serveRoutes(http, [...plantRoutes({ store, monitor: () => plant.monitor, act: (act) => plant.act(act) }), ...plantFileRoutes()], guard);
+  const access = await accessOf({
+    file: store.access,
+    settings,
+    plantName: () => plant.monitor.plant.name,
+    lines: () => plant.monitor.plant.lines.map(({ id }) => id),
+    log,
+  });
+  const { guard } = access;
+  access.onEnded((by) => dashboards.end(by));
+  serveRoutes(http, [...plantRoutes({ store, monitor: () => plant.monitor, act: (act) => plant.act(act) }), ...plantFileRoutes(), ...access.routes], guard);
   const closedBecause = (): string | undefined => (store.condition.kind === 'open' ? undefined : 'not-stored');
   const senderOf = (token: string): Promise<Sender | undefined> => sources.senderOf(token);
   serveUploads(http, {
@@ -149,7 +161,8 @@ export async function serveFrom(store: Store, { settings, clock: clockSetting, d
       uploads.interrupt(sender);
       sources.connect(socket, sender);
     },
-    onDashboard: (socket) => dashboards.connect(socket),
+    guard,
+    onDashboard: (socket, caller) => dashboards.connect(socket, caller),
     closedBecause,
     onError: (cause) => log.debug({ err: cause }, 'a socket failed'),
   });
@@ -166,6 +179,7 @@ export async function serveFrom(store: Store, { settings, clock: clockSetting, d
       board.refresh(plant.monitor, plant.now);
       dashboards.update(Date.now());
     }),
+    repeatEvery(60_000, () => dashboards.endWhere((by) => access.isOver(by))),
     repeatEvery(settings.snapshotMinutes * 60_000, () => {
       plant.keepSnapshot().catch((cause: unknown) => log.error({ err: cause }, 'a snapshot was not kept'));
     }),
@@ -202,7 +216,8 @@ export async function serveFrom(store: Store, { settings, clock: clockSetting, d
   }
 
   log.info({ address: `http://${settings.host}:${port}`, version: file.version }, 'listening');
-  return { address: `http://${settings.host.includes(':') ? `[${settings.host}]` : settings.host}:${port}`, reload, stop: (reason) => (stopping ??= stopOnce(reason)) };
+  const address = `http://${settings.host.includes(':') ? `[${settings.host}]` : settings.host}:${port}`;
+  return { address, firstLink: access.firstCode === undefined ? undefined : `${address}/join#${access.firstCode}`, reload, stop: (reason) => (stopping ??= stopOnce(reason)) };
 }
 
 function countedByState(plant: PlantServer): Readonly<Record<string, number>> {

@@ -15,7 +15,9 @@ export interface Guard {
   callerOf(shown: Shown): Caller | undefined;
   /** Puts a refusal on record. @param what the route or message */
   noteRefused(caller: Caller, action: Action, what: string): void;
+  /** Somebody who acts by PIN at a session or display did something. */
+  noteActed(by: string): void;
 }
 
 /** Lets everybody do everything. */
-export const openGuard: Guard = { callerOf: () => anybody, noteRefused: () => undefined };
+export const openGuard: Guard = { callerOf: () => anybody, noteRefused: () => undefined, noteActed: () => undefined };

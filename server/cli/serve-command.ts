@@ -4,7 +4,8 @@ import { Command } from 'commander';
 import type { ClockSetting } from '../clock/plant-clock.ts';
 import { logOf } from '../ops/log.ts';
 import { BadPlantFile, serve } from '../serve.ts';
-import type { Settings } from '../settings/settings.ts';
+import { DamagedAccessItem } from '../access/kept.ts';
+import { BadSetting, type Settings } from '../settings/settings.ts';
 import { StoreError } from '../store/store-error.ts';
 import { CommandFault, exitCode } from './exit-codes.ts';
 import { toldSettings, withSettings } from './told-settings.ts';
@@ -32,6 +33,7 @@ export function serveCommand(): Command {
     writeFileSync(processFile(settings), String(process.pid));
     process.on('SIGHUP', () => void served.reload());
     process.stdout.write(`Vouchline is at ${served.address}\n`);
+    if (served.firstLink !== undefined) process.stdout.write(`Make the first account, an administrator, within a day: ${served.firstLink}\n`);
     await served.stop(await untilToldToStop());
   });
 }
@@ -41,7 +43,8 @@ export async function started<T>(start: () => Promise<T>): Promise<T> {
   try {
     return await start();
   } catch (cause) {
-    if (cause instanceof BadPlantFile) throw new CommandFault(cause.message);
+    if (cause instanceof BadPlantFile || cause instanceof BadSetting) throw new CommandFault(cause.message);
+    if (cause instanceof DamagedAccessItem) throw new CommandFault(cause.message, exitCode.failed);
     if (cause instanceof StoreError) throw new CommandFault(cause.message, exitCode.failed);
     if ((cause as NodeJS.ErrnoException).code === 'EADDRINUSE') throw new CommandFault(`The port is taken already; choose another with --port. (${(cause as Error).message})`, exitCode.failed);
     throw cause;

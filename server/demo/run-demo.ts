@@ -30,7 +30,7 @@ export async function runDemo({ settings, data, rate, log }: DemoSetting): Promi
   const { tokens, at } = await livedNight(data, log);
   const port = (await isFree(settings.host, settings.port)) ? settings.port : 0;
   const served = await serve({
-    settings: { ...settings, data: data.directory, plant: data.plantFile, port },
+    settings: { ...settings, access: 'open', data: data.directory, plant: data.plantFile, port },
     clock: { kind: 'fast', rate, start: at }, demo: true, log,
   });
   const start: StationsStart = { address: served.address, tokens, seed: data.seed, rate };

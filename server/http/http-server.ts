@@ -31,9 +31,10 @@ export async function httpServer(): Promise<FastifyInstance> {
   http.addHook('onSend', async (_request, reply) => {
     reply.headers(securityHeaders);
   });
-  http.setErrorHandler((error: Error & { statusCode?: number; field?: string }, _request, reply) => {
+  http.setErrorHandler((error: Error & { statusCode?: number; field?: string; retryAfter?: number }, _request, reply) => {
     const status = error.statusCode ?? 500;
     const message = status >= 500 ? 'The server could not do this; its log says why.' : error.message;
+    if (error.retryAfter !== undefined) reply.header('retry-after', String(error.retryAfter));
     void reply.status(status).send({ message, ...(error.field === undefined ? {} : { field: error.field }) });
   });
   const page = existsSync(`${folder}/index.html`) ? readFileSync(`${folder}/index.html`, 'utf8') : undefined;

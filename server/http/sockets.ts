@@ -3,7 +3,10 @@ import type { Duplex } from 'node:stream';
 import { WebSocketServer, type WebSocket } from 'ws';
 import { liveProtocol } from '../../core/live/message.ts';
 import { sourceProtocol } from '../../core/protocol/source-messages.ts';
+import { mayDoSomewhere } from '../../core/access/may-do.ts';
+import type { Caller } from '../access/caller.ts';
 import { hasForeignOrigin } from '../access/foreign-origin.ts';
+import type { Guard } from '../access/guard.ts';
 import { bearerToken } from '../ingest/bearer-token.ts';
 import type { Sender } from '../pipeline/arrival.ts';
 
@@ -13,7 +16,8 @@ export interface SocketHost {
   readonly frameBytes: number;
   readonly senderOf: (token: string) => Promise<Sender | undefined>;
   readonly onSource: (socket: WebSocket, sender: Sender) => void;
-  readonly onDashboard: (socket: WebSocket) => void;
+  readonly onDashboard: (socket: WebSocket, caller: Caller) => void;
+  readonly guard: Guard;
   /** Why nobody is let in now; undefined if they are. */
   readonly closedBecause: () => string | undefined;
   readonly mostDashboards: number;
@@ -50,10 +54,16 @@ export function serveSockets(server: Server, host: SocketHost): () => void {
     const closed = host.closedBecause();
     if (closed !== undefined) return refuse(socket, 503, closed); // What is in memory is ahead of the disk: it is not shown as live.
     if (!offered(request).includes(liveProtocol)) return refuse(socket, 400, 'subprotocol-missing');
+    const caller = host.guard.callerOf({ headers: request.headers, address: request.socket.remoteAddress ?? '' });
+    if (caller === undefined) return refuse(socket, 401, 'not-signed-in');
+    if (!mayDoSomewhere(caller, 'see')) {
+      host.guard.noteRefused(caller, 'see', '/live');
+      return refuse(socket, 403, 'not-allowed');
+    }
     if (dashboards.clients.size >= host.mostDashboards) return refuse(socket, 503, 'too-many-dashboards');
     dashboards.handleUpgrade(request, socket, head, (opened) => {
       opened.on('error', host.onError);
-      host.onDashboard(opened);
+      host.onDashboard(opened, caller);
     });
   }
 

@@ -1,5 +1,5 @@
 import type { WebSocket } from 'ws';
-import type { LiveBoard } from './live-board.ts';
+import type { LiveBoard, Sight } from './live-board.ts';
 
 /** A dashboard is sent to only when it has taken what was sent before: updates are skipped, never queued. */
 const patientBytes = 0;
@@ -17,9 +17,15 @@ export class Dashboard {
   #sentAt: number | undefined;
   #watching = false;
 
-  constructor(socket: WebSocket, board: LiveBoard) {
+  /** Id of the session, display or token it was let in by; undefined where access is open. */
+  readonly by: string | undefined;
+  readonly #sight: Sight;
+
+  constructor(socket: WebSocket, board: LiveBoard, by: string | undefined, sight: Sight) {
     this.#socket = socket;
     this.#board = board;
+    this.by = by;
+    this.#sight = sight;
     socket.on('message', (data) => this.#onWatch(data as Buffer));
   }
 
@@ -32,7 +38,7 @@ export class Dashboard {
       return;
     }
     const { revision } = this.#board;
-    if (this.#revision < revision) this.#send(this.#revision < 0 ? this.#board.snapshot() : this.#board.since(this.#revision), wallNow);
+    if (this.#revision < revision) this.#send(this.#revision < 0 ? this.#board.snapshot(this.#sight) : this.#board.since(this.#revision, this.#sight), wallNow);
     else if (wallNow - this.#sentAt >= beatMs) this.#send(this.#board.beat(), wallNow);
     this.#revision = revision;
   }
@@ -40,6 +46,11 @@ export class Dashboard {
   stopping(reason: string): void {
     if (this.#socket.readyState === this.#socket.OPEN) this.#socket.send(JSON.stringify({ type: 'stopping', reason }));
     this.#socket.close(1001, 'stopping');
+  }
+
+  /** What it was let in by holds no more. */
+  notSignedIn(): void {
+    this.#socket.close(4401, 'not-signed-in');
   }
 
   #send(message: string, wallNow: number): void {

@@ -9,10 +9,21 @@ import { viewOf } from '../../core/view/view-of.ts';
 interface Kept {
   revision: number;
   json: string;
+  /** Id of its line; undefined where it belongs to none that is known. */
+  line: string | undefined;
 }
 
 /** Ended alarms kept for dashboards beside the standing ones. */
 const mostEnded = 200;
+
+/** Which lines a dashboard shows; those with the same key see the same. */
+export interface Sight {
+  readonly key: string;
+  /** undefined: what belongs to no line. */
+  sees(line: string | undefined): boolean;
+}
+
+export const seesAll: Sight = { key: '', sees: () => true };
 
 /** What holds for a whole run of the server. */
 export interface LiveSetting {
@@ -30,13 +41,14 @@ export class LiveBoard {
   readonly #views = new Map<string, Kept>();
   readonly #alarms = new Map<number, Kept & { ended: boolean }>();
   #plantJson = '';
-  #cardsJson = '';
+  #cards: { readonly json: string; readonly line: string }[] = [];
+  #lineOf = new Map<string, string>();
   #plantRevision = 0;
   #revision = 0;
   #shift: PlantCard['shift'];
   #shiftRevision = 0;
   #at = 0;
-  #changes = new Map<number, string>();
+  readonly #changes = new Map<string, string>();
 
   constructor(setting: LiveSetting) {
     this.#setting = setting;
@@ -65,7 +77,9 @@ export class LiveBoard {
       version: plantVersion,
       lines: plant.lines.map(({ id, name }) => ({ id, name })),
     } satisfies Omit<PlantCard, 'shift'>);
-    this.#cardsJson = JSON.stringify(plant.guarantees.map((guarantee) => cardOf(guarantee, plant)));
+    this.#lineOf = new Map(plant.guarantees.map(({ id, line }) => [id, line]));
+    this.#cards = plant.guarantees.map((guarantee) => ({ json: JSON.stringify(cardOf(guarantee, plant)), line: guarantee.line }));
+    this.#changes.clear();
     this.#views.clear();
     for (const watch of monitor.watches) watch.changed = true;
     for (const alarm of monitor.desk.standing()) this.#keepAlarm(alarm);
@@ -101,22 +115,23 @@ export class LiveBoard {
     this.#shiftRevision = ++this.#revision;
   }
 
-  snapshot(): string {
+  snapshot(sight: Sight = seesAll): string {
     const { boot, clockRate, demo } = this.#setting;
     const head = { type: 'snapshot', boot, revision: this.#revision, at: this.#at, clockRate, demo } satisfies Partial<LiveSnapshot>;
     const plant = `${this.#plantJson.slice(0, -1)}${this.#shift ? `,"shift":${JSON.stringify(this.#shift)}` : ''}}`;
-    return `${JSON.stringify(head).slice(0, -1)},"plant":${plant},"cards":${this.#cardsJson},"views":[${jsonOf(this.#views, 0)}],"alarms":[${jsonOf(this.#alarms, 0)}]}`;
+    return `${JSON.stringify(head).slice(0, -1)},"plant":${plant},"cards":[${this.#cards.filter(({ line }) => sight.sees(line)).map(({ json }) => json).join(',')}],"views":[${jsonOf(this.#views, 0, sight)}],"alarms":[${jsonOf(this.#alarms, 0, sight)}]}`;
   }
 
   /** What a dashboard at `revision` lacks; a whole snapshot where the plant file changed since. */
-  since(revision: number): string {
-    if (revision < this.#plantRevision) return this.snapshot();
-    const known = this.#changes.get(revision);
+  since(revision: number, sight: Sight = seesAll): string {
+    if (revision < this.#plantRevision) return this.snapshot(sight);
+    const key = `${revision} ${sight.key}`;
+    const known = this.#changes.get(key);
     if (known !== undefined) return known;
     const head = { type: 'change', revision: this.#revision, at: this.#at } satisfies Partial<LiveChange>;
     const shift = this.#shiftRevision > revision ? `,"shift":${JSON.stringify(this.#shift ?? null)}` : '';
-    const made = `${JSON.stringify(head).slice(0, -1)}${shift},"views":[${jsonOf(this.#views, revision)}],"alarms":[${jsonOf(this.#alarms, revision)}]}`;
-    this.#changes.set(revision, made);
+    const made = `${JSON.stringify(head).slice(0, -1)}${shift},"views":[${jsonOf(this.#views, revision, sight)}],"alarms":[${jsonOf(this.#alarms, revision, sight)}]}`;
+    this.#changes.set(key, made);
     return made;
   }
 
@@ -129,12 +144,12 @@ export class LiveBoard {
     const json = JSON.stringify(viewOf(watch));
     const known = this.#views.get(watch.guarantee.id);
     if (known?.json === json) return;
-    this.#views.set(watch.guarantee.id, { revision: ++this.#revision, json });
+    this.#views.set(watch.guarantee.id, { revision: ++this.#revision, json, line: watch.guarantee.line });
   }
 
   #keepAlarm(alarm: Alarm): void {
     this.#alarms.delete(alarm.id);
-    this.#alarms.set(alarm.id, { revision: ++this.#revision, json: JSON.stringify(alarm), ended: alarm.state.kind === 'ended' });
+    this.#alarms.set(alarm.id, { revision: ++this.#revision, json: JSON.stringify(alarm), ended: alarm.state.kind === 'ended', line: this.#lineOf.get(alarm.guarantee) });
     this.#changes.clear();
     let ended = 0;
     for (const kept of this.#alarms.values()) if (kept.ended) ended += 1;
@@ -147,8 +162,8 @@ export class LiveBoard {
   }
 }
 
-function jsonOf(kept: ReadonlyMap<unknown, Kept>, since: number): string {
+function jsonOf(kept: ReadonlyMap<unknown, Kept>, since: number, sight: Sight): string {
   let text = '';
-  for (const { revision, json } of kept.values()) if (revision > since) text += text === '' ? json : `,${json}`;
+  for (const { revision, json, line } of kept.values()) if (revision > since && sight.sees(line)) text += text === '' ? json : `,${json}`;
   return text;
 }

@@ -13,6 +13,9 @@ export interface Settings {
   readonly framesInFlight: number;
   readonly frameBytes: number;
   readonly dashboards: number;
+  readonly access: 'accounts' | 'open';
+  readonly sessionIdleHours: number;
+  readonly sessionDays: number;
 }
 
 type Kind =
@@ -42,6 +45,9 @@ export const settingRules: readonly SettingRule[] = [
   { key: 'framesInFlight', name: 'frames-in-flight', of: { kind: 'whole', from: 1, to: 10_000 }, preset: 64, help: 'frames a source may have sent and not yet seen acknowledged' },
   { key: 'frameBytes', name: 'frame-bytes', of: { kind: 'whole', from: 1_024, to: 67_108_864 }, preset: 1_048_576, help: 'largest frame, bytes' },
   { key: 'dashboards', name: 'dashboards', of: { kind: 'whole', from: 1, to: 100_000 }, preset: 5_000, help: 'dashboards connected at the same time at most' },
+  { key: 'access', name: 'access', of: { kind: 'choice', of: ['accounts', 'open'] }, preset: 'accounts', help: 'accounts: people sign in, and each role does its work; open: whoever reaches the server does everything (on this machine only)' },
+  { key: 'sessionIdleHours', name: 'session-idle-hours', of: { kind: 'whole', from: 1, to: 720 }, preset: 12, help: 'hours after which a session that is not used ends' },
+  { key: 'sessionDays', name: 'session-days', of: { kind: 'whole', from: 1, to: 365 }, preset: 30, help: 'days after which every session ends' },
 ];
 
 export const variableOf = (name: string): string => `VOUCHLINE_${name.toUpperCase().replaceAll('-', '_')}`;

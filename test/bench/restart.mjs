@@ -27,7 +27,7 @@ function step(name) {
 /** Milliseconds from starting the program until /readyz says yes. */
 async function ready(port) {
   const begin = performance.now();
-  const program = spawn(process.execPath, ['.build/server/cli/main.js', 'serve', '--data', data, '--port', String(port), '--log-level', 'silent'], { stdio: ['ignore', 'ignore', 'inherit'] });
+  const program = spawn(process.execPath, ['.build/server/cli/main.js', 'serve', '--data', data, '--port', String(port), '--access', 'open', '--log-level', 'silent'], { stdio: ['ignore', 'ignore', 'inherit'] });
   const ended = new Promise((resolve) => program.once('exit', resolve));
   try {
     for (;;) {

@@ -66,7 +66,7 @@ export class ServerProcess {
   }
 }
 
-export const serveFlags = (data: string): readonly string[] => ['serve', '--data', data, '--port', '0', '--clock', 'records', '--log-level', 'error'];
+export const serveFlags = (data: string): readonly string[] => ['serve', '--data', data, '--port', '0', '--clock', 'records', '--access', 'open', '--log-level', 'error'];
 
 const running = new Set<ChildProcess>();
 

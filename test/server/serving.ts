@@ -27,7 +27,7 @@ export async function tokenFor(data: string, name: string, stations: readonly st
 
 /** A real server in this process, on a free port of 127.0.0.1. */
 export function servedOn(data: string, clock: ClockSetting = { kind: 'records' }, told: Readonly<Record<string, string>> = {}): Promise<Served> {
-  const settings = settle({ data, port: '0', 'log-level': 'silent', ...told }, {}, {});
+  const settings = settle({ data, port: '0', 'log-level': 'silent', access: 'open', ...told }, {}, {});
   return serve({ settings, clock, demo: false, log: logOf('silent') });
 }
 

@@ -139,7 +139,7 @@ describe('vouchline feed', () => {
   });
 });
 
-const serveWords = (path: string): string[] => [new URL('../../../.build/server/cli/main.js', import.meta.url).pathname, 'serve', '--data', path, '--clock', 'records', '--log-level', 'error'];
+const serveWords = (path: string): string[] => [new URL('../../../.build/server/cli/main.js', import.meta.url).pathname, 'serve', '--data', path, '--clock', 'records', '--access', 'open', '--log-level', 'error'];
 
 function freePort(): Promise<number> {
   return new Promise((resolve) => {

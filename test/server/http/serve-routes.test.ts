@@ -32,7 +32,7 @@ beforeEach(() => {
   http = fastify();
   refused = [];
   caller = supervisorOfA;
-  const guard: Guard = { callerOf: () => caller, noteRefused: (who, action, what) => refused.push(`${who.name ?? ''} ${action} ${what}`) };
+  const guard: Guard = { callerOf: () => caller, noteRefused: (who, action, what) => refused.push(`${who.name ?? ''} ${action} ${what}`), noteActed: () => undefined };
   serveRoutes(http, routes, guard);
 });
 afterEach(() => http.close());

@@ -1,0 +1,84 @@
+import { NotFound } from '../http/refusals.ts';
+import { BadRequest } from '../http/request-schemas.ts';
+import { changeOf, type AccessBook } from './access-book.ts';
+import type { Account, ApiToken, StoredGrant } from './access-items.ts';
+import type { Action } from '../../core/access/action.ts';
+import { passwordFault, type Passwords } from './passwords.ts';
+import { hashOfSecret, newId, newSecret } from './secret.ts';
+
+const day = 86_400_000;
+const pinForm = /^\d{4,8}$/;
+
+/** What people do with their own account. */
+export class OwnAccount {
+  readonly #book: AccessBook;
+  readonly #passwords: Passwords;
+  readonly #plantName: () => string;
+
+  constructor(book: AccessBook, passwords: Passwords, plantName: () => string) {
+    this.#book = book;
+    this.#passwords = passwords;
+    this.#plantName = plantName;
+  }
+
+  /** Sets a new password and ends every session but this one. @throws BadRequest */
+  async changePassword(id: string, session: string, old: string, next: string): Promise<void> {
+    const { name, shownAs } = await this.#checked(id, old, 'old');
+    const fault = passwordFault(next, [name, shownAs, this.#plantName(), 'vouchline']);
+    if (fault !== undefined) throw new BadRequest('new', `new: expected ${fault}`);
+    const password = await this.#passwords.hash(next);
+    const ended = await this.#book.exclusively(async () => {
+      const others = this.#book.sessionsOf(id).map(([other]) => other).filter((other) => other !== session);
+      const account = this.#account(id);
+      await this.#book.write([this.#book.accounts.written(id, { ...account, password }), ...others.map((other) => this.#book.sessions.dropped(other))], [changeOf('account', shownAs, `account ${name}`, null, 'a new password')]);
+      return others;
+    });
+    this.#book.ended(ended);
+  }
+
+  /** @param pin 4 to 8 digits, not all the same nor a run up or down; undefined takes it away @throws BadRequest */
+  async setPin(id: string, password: string, pin: string | undefined): Promise<void> {
+    const { name, shownAs } = await this.#checked(id, password, 'password');
+    if (pin !== undefined && (!pinForm.test(pin) || isPlain(pin))) throw new BadRequest('pin', 'pin: expected 4 to 8 digits, not all the same and no run like 1234');
+    const hash = pin === undefined ? null : await this.#passwords.hash(pin);
+    await this.#book.exclusively(() => this.#book.write([this.#book.accounts.written(id, { ...this.#account(id), pin: hash })], [changeOf('pin', shownAs, `account ${name}`, null, pin === undefined ? 'no PIN' : 'a new PIN')]));
+  }
+
+  /** @param grants within the person's own; null: whatever the person may @param days 1 to 366 */
+  makeToken(id: string, of: { readonly name: string; readonly actions: readonly Action[]; readonly grants: readonly StoredGrant[] | null; readonly days: number }): Promise<{ readonly id: string; readonly token: string }> {
+    return this.#book.exclusively(async () => {
+      const { shownAs } = this.#account(id);
+      const [token, tokenId, made] = [newSecret('vouchline-api_'), newId(), this.#book.now()];
+      const kept: ApiToken = { hash: hashOfSecret(token), name: of.name, account: id, actions: [...of.actions], grants: of.grants === null ? null : [...of.grants], made, expires: made + of.days * day, lastUsed: null };
+      await this.#book.write([this.#book.tokens.written(tokenId, kept)], [changeOf('token', shownAs, `token ${tokenId}: ${of.name}`, null, { actions: kept.actions, grants: kept.grants, expires: kept.expires })]);
+      return { id: tokenId, token };
+    });
+  }
+
+  /** @throws NotFound */
+  async revokeToken(id: string, token: string): Promise<void> {
+    await this.#book.exclusively(async () => {
+      const kept = this.#book.tokens.get(token);
+      if (kept?.account !== id) throw new NotFound('there is no such token');
+      await this.#book.write([this.#book.tokens.dropped(token)], [changeOf('token', this.#account(id).shownAs, `token ${token}: ${kept.name}`, { actions: kept.actions }, null)]);
+    });
+    this.#book.ended([token]);
+  }
+
+  #account(id: string): Account {
+    const account = this.#book.accounts.get(id);
+    if (account === undefined) throw new NotFound('there is no such account');
+    return account;
+  }
+
+  async #checked(id: string, password: string, field: string): Promise<Account> {
+    const account = this.#account(id);
+    if (await this.#passwords.matches(account.password, password)) return account;
+    throw new BadRequest(field, `${field}: the password is not right`);
+  }
+}
+
+function isPlain(pin: string): boolean {
+  const steps = new Set([...pin].slice(1).map((digit, place) => Number(digit) - Number(pin[place])));
+  return steps.size === 1 && [-1, 0, 1].includes([...steps][0] ?? 9);
+}

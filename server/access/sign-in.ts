@@ -1,0 +1,101 @@
+import { NotSignedIn } from '../http/refusals.ts';
+import { changeOf, type AccessBook } from './access-book.ts';
+import type { Account } from './access-items.ts';
+import type { Passwords } from './passwords.ts';
+import { hashOfSecret, newId, newSecret } from './secret.ts';
+import { Throttle } from './throttle.ts';
+import { TooManyTries } from './too-many-tries.ts';
+
+/** Where somebody comes from, as far as it is known. */
+export interface Origin {
+  readonly address: string;
+  /** What the browser says it is; shown beside the session. */
+  readonly agent: string;
+}
+
+/** A session that has begun: its secret goes into the cookie, and nowhere else. */
+export interface Begun {
+  readonly secret: string;
+  readonly account: string;
+  readonly name: string;
+}
+
+const minute = 60_000;
+/** Failed sign-ins on record a minute at most, so that guessing cannot fill the disk. */
+const mostRecorded = 10;
+
+/** Lets people in by name and password, and slows down guessing. */
+export class SignIn {
+  readonly #book: AccessBook;
+  readonly #passwords: Passwords;
+  /** By account and address together: guessing from elsewhere keeps nobody out. */
+  readonly #byPair: Throttle;
+  readonly #byAddress: Throttle;
+  #recorded = { since: 0, count: 0 };
+
+  constructor(book: AccessBook, passwords: Passwords) {
+    this.#book = book;
+    this.#passwords = passwords;
+    this.#byPair = new Throttle({ free: 5, first: 5_000, most: 15 * minute }, book.now);
+    this.#byAddress = new Throttle({ free: 50, first: 5_000, most: 15 * minute }, book.now);
+  }
+
+  /** @throws TooManyTries, NotSignedIn (the same for an unknown name, a wrong password and a disabled account), TooBusy */
+  async signIn(name: string, password: string, from: Origin): Promise<Begun> {
+    const pair = JSON.stringify([name.toLowerCase(), from.address]);
+    const wait = Math.max(this.#byPair.wait(pair), this.#byAddress.wait(from.address));
+    if (wait > 0) throw new TooManyTries(wait);
+    const found = accountNamed(this.#book, name);
+    const matches = await this.#passwords.matches(found?.[1].password, password);
+    if (!matches || found === undefined || found[1].disabled) {
+      this.#byPair.failed(pair);
+      this.#byAddress.failed(from.address);
+      await this.#recordFailure(name, from);
+      throw new NotSignedIn('The name or the password is not right.');
+    }
+    this.#byPair.succeeded(pair);
+    return this.begin(found[0], from, 'password');
+  }
+
+  /** Begins a session with a new secret, whatever cookie came with the request. @param by how the person was known */
+  async begin(account: string, from: Origin, by: string): Promise<Begun> {
+    const secret = newSecret('vs_');
+    const known = await this.#book.exclusively(async () => {
+      const person = this.#book.accounts.get(account);
+      if (person === undefined || person.disabled) throw new NotSignedIn();
+      const at = this.#book.now();
+      const session = { hash: hashOfSecret(secret), account, made: at, lastSeen: at, address: from.address.slice(0, 64), agent: from.agent.slice(0, 200) };
+      await this.#book.write(
+        [this.#book.sessions.written(newId(), session), this.#book.accounts.written(account, { ...person, lastSeen: at })],
+        [changeOf('sign-in', person.shownAs, `account ${person.name}`, null, { by, address: session.address })],
+      );
+      return person;
+    });
+    return { secret, account, name: known.shownAs };
+  }
+
+  /** Ends sessions of one account. @param who does it, and which of its sessions */
+  async end(account: string, who: string, why: string, which: (id: string) => boolean): Promise<void> {
+    const ended = await this.#book.exclusively(async () => {
+      const ids = this.#book.sessionsOf(account).map(([id]) => id).filter(which);
+      if (ids.length === 0) return ids;
+      const name = this.#book.accounts.get(account)?.name ?? account;
+      await this.#book.write(ids.map((id) => this.#book.sessions.dropped(id)), [changeOf('sign-out', who, `account ${name}`, null, { sessions: ids.length }, why)]);
+      return ids;
+    });
+    this.#book.ended(ended);
+  }
+
+  async #recordFailure(name: string, from: Origin): Promise<void> {
+    const at = this.#book.now();
+    if (at - this.#recorded.since >= minute) this.#recorded = { since: at, count: 0 };
+    this.#recorded.count += 1;
+    if (this.#recorded.count > mostRecorded) return;
+    await this.#book.write([], [changeOf('sign-in-failed', 'unknown', `account ${name.slice(0, 64)}`, null, { address: from.address.slice(0, 64) })]);
+  }
+}
+
+/** Names are compared without regard to case. */
+export function accountNamed(book: AccessBook, name: string): [string, Account] | undefined {
+  return book.accounts.find((account) => account.name.toLowerCase() === name.trim().toLowerCase());
+}

@@ -1,0 +1,43 @@
+import { mayDoSomewhere } from '../../../core/access/may-do.ts';
+import type { Caller } from '../../access/caller.ts';
+import { grantsOf } from '../../access/access-items.ts';
+import { NotAllowed } from '../refusals.ts';
+import { route, type AnyRoute } from '../route.ts';
+import type { AccessHost } from './access-host.ts';
+import { actAsRequest } from './access-schemas.ts';
+
+const sees = { action: 'see', at: 'somewhere' } as const;
+
+/** Acting by PIN at a screen that several people share. */
+export function terminalRoutes({ book, acting }: AccessHost): readonly AnyRoute[] {
+  const terminal = ({ kind, by }: Caller): string => {
+    const shared = kind === 'account' || (kind === 'display' && by !== undefined && book.displays.get(by)?.acting === true);
+    if (!shared || by === undefined) throw new NotAllowed('Nobody acts here by PIN: this display only shows.');
+    return by;
+  };
+  return [
+    route({
+      method: 'GET', path: '/api/terminal/people', summary: 'Who can act here by PIN', needs: sees,
+      handle: ({ caller }) => {
+        terminal(caller);
+        return book.accounts.entries()
+          .filter(([, { pin, disabled, grants }]) => pin !== null && !disabled && mayDoSomewhere({ grants: grantsOf(grants) }, 'acknowledge'))
+          .map(([account, { shownAs }]) => ({ account, shownAs }));
+      },
+    }),
+    route({
+      method: 'POST', path: '/api/terminal/act-as', summary: 'Acts as somebody by their PIN for two minutes', needs: sees, body: actAsRequest,
+      handle: async ({ body: { account, pin }, caller }) => {
+        const { name, until } = await acting.actAs(terminal(caller), account, pin);
+        return { name, until };
+      },
+    }),
+    route({
+      method: 'DELETE', path: '/api/terminal/act-as', summary: 'Ends acting by PIN', needs: sees,
+      handle: ({ caller, reply }) => {
+        acting.end(terminal(caller));
+        return reply.status(204).send();
+      },
+    }),
+  ];
+}
