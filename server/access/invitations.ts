@@ -2,7 +2,7 @@ import { BadRequest } from '../http/request-schemas.ts';
 import { Conflict, NotFound } from '../http/refusals.ts';
 import { changeOf, type AccessBook } from './access-book.ts';
 import type { Account, Invitation, StoredGrant } from './access-items.ts';
-import { passwordFault, type Passwords } from './passwords.ts';
+import { newPasswordFault, type Passwords } from './passwords.ts';
 import { hashOfSecret, newId, newSecret } from './secret.ts';
 import { accountNamed } from './sign-in.ts';
 
@@ -84,8 +84,8 @@ export class Invitations {
     const [, looked] = this.look(code);
     const known = looked.account === null ? undefined : this.#book.accounts.get(looked.account);
     const [name, shownAs] = known ? [known.name, known.shownAs] : [required('name', person.name), required('shownAs', person.shownAs)];
-    const fault = passwordFault(person.password, [name, shownAs, this.#plantName(), 'vouchline']);
-    if (fault !== undefined) throw new BadRequest('password', `password: expected ${fault}`);
+    const fault = newPasswordFault(person.password, [name, shownAs, this.#plantName(), 'vouchline']);
+    if (fault !== undefined) throw new BadRequest('password', `password: ${fault}`);
     const password = await this.#passwords.hash(person.password);
     const ended: string[] = [];
     const account = await this.#book.exclusively(async () => {

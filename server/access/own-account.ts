@@ -3,11 +3,11 @@ import { BadRequest } from '../http/request-schemas.ts';
 import { changeOf, type AccessBook } from './access-book.ts';
 import type { Account, ApiToken, StoredGrant } from './access-items.ts';
 import type { Action } from '../../core/access/action.ts';
-import { passwordFault, type Passwords } from './passwords.ts';
+import { pinFault } from '../../core/access/pin-fault.ts';
+import { newPasswordFault, type Passwords } from './passwords.ts';
 import { hashOfSecret, newId, newSecret } from './secret.ts';
 
 const day = 86_400_000;
-const pinForm = /^\d{4,8}$/;
 
 /** What people do with their own account. */
 export class OwnAccount {
@@ -24,8 +24,8 @@ export class OwnAccount {
   /** Sets a new password and ends every session but this one. @throws BadRequest */
   async changePassword(id: string, session: string, old: string, next: string): Promise<void> {
     const { name, shownAs } = await this.#checked(id, old, 'old');
-    const fault = passwordFault(next, [name, shownAs, this.#plantName(), 'vouchline']);
-    if (fault !== undefined) throw new BadRequest('new', `new: expected ${fault}`);
+    const fault = newPasswordFault(next, [name, shownAs, this.#plantName(), 'vouchline']);
+    if (fault !== undefined) throw new BadRequest('new', `new: ${fault}`);
     const password = await this.#passwords.hash(next);
     const ended = await this.#book.exclusively(async () => {
       const others = this.#book.sessionsOf(id).map(([other]) => other).filter((other) => other !== session);
@@ -39,7 +39,8 @@ export class OwnAccount {
   /** @param pin 4 to 8 digits, not all the same nor a run up or down; undefined takes it away @throws BadRequest */
   async setPin(id: string, password: string, pin: string | undefined): Promise<void> {
     const { name, shownAs } = await this.#checked(id, password, 'password');
-    if (pin !== undefined && (!pinForm.test(pin) || isPlain(pin))) throw new BadRequest('pin', 'pin: expected 4 to 8 digits, not all the same and no run like 1234');
+    const fault = pin === undefined ? undefined : pinFault(pin);
+    if (fault !== undefined) throw new BadRequest('pin', `pin: ${fault}`);
     const hash = pin === undefined ? null : await this.#passwords.hash(pin);
     await this.#book.exclusively(() => this.#book.write([this.#book.accounts.written(id, { ...this.#account(id), pin: hash })], [changeOf('pin', shownAs, `account ${name}`, null, pin === undefined ? 'no PIN' : 'a new PIN')]));
   }
@@ -76,9 +77,4 @@ export class OwnAccount {
     if (await this.#passwords.matches(account.password, password)) return account;
     throw new BadRequest(field, `${field}: the password is not right`);
   }
-}
-
-function isPlain(pin: string): boolean {
-  const steps = new Set([...pin].slice(1).map((digit, place) => Number(digit) - Number(pin[place])));
-  return steps.size === 1 && [-1, 0, 1].includes([...steps][0] ?? 9);
 }

@@ -1,4 +1,5 @@
 import { hash, verify, type Options } from '@node-rs/argon2';
+import { passwordFault, passwordLength } from '../../core/access/password-length.ts';
 
 /**
  * Argon2id with 19 MiB, 2 passes, 1 lane.
@@ -10,9 +11,6 @@ const cost: Options = { memoryCost: 19_456, timeCost: 2, parallelism: 1 };
 const mostAtOnce = 2;
 const mostWaiting = 64;
 
-/** @source length over rules of composition: NIST SP 800-63B section 5.1.1.2 (from memory); the numbers are ours */
-export const passwordLength = { least: 12, most: 128 } as const;
-
 /** Too many passwords are being checked just now. */
 export class TooBusy extends Error {
   readonly statusCode = 503;
@@ -22,19 +20,21 @@ export class TooBusy extends Error {
 const normal = (password: string): string => password.normalize('NFKC');
 
 /**
- * What is wrong with a new password, in words; undefined if it will do.
+ * What is wrong with a new password, as a sentence without its full stop; undefined if nothing is. Length is asked of it,
+ * and that it is more than what anybody would try first; nobody's list of breached passwords is shipped.
  *
  * @param about words that must not make it up: names of the person, the plant, the program
  */
-export function passwordFault(password: string, about: readonly string[]): string | undefined {
-  const characters = [...normal(password)];
-  if (characters.length < passwordLength.least) return `at least ${passwordLength.least} characters; several words are easy to keep`;
-  if (characters.length > passwordLength.most) return `at most ${passwordLength.most} characters`;
-  if (new Set(characters).size < 5) return 'at least 5 different characters';
-  const bare = (text: string): string => text.toLowerCase().replace(/[^\p{L}\p{N}]/gu, '');
-  let left = bare(normal(password));
-  for (const word of about) if (bare(word).length > 2) left = left.replaceAll(bare(word), '');
-  return left.length < passwordLength.least / 2 ? 'more than the names of person, plant and program' : undefined;
+export function newPasswordFault(password: string, about: readonly string[]): string | undefined {
+  const text = normal(password);
+  const fault = passwordFault(text);
+  if (fault !== undefined) return fault;
+  if (new Set(text).size < 5) return 'a password has at least 5 different characters';
+  const bare = (word: string): string => word.toLowerCase().replace(/[^\p{L}\p{N}]/gu, '');
+  let left = bare(text);
+  const words = about.map(bare).filter((word) => word.length > 2).sort((a, b) => b.length - a.length);
+  for (const word of words) left = left.replaceAll(word, '');
+  return left.length < passwordLength.least / 2 ? 'a password is more than the names of person, plant and program' : undefined;
 }
 
 /** Makes and checks what is kept of passwords and PINs. */

@@ -99,8 +99,8 @@ export function plantRoutes(host: ApiHost): readonly AnyRoute[] {
     }),
     route({
       method: 'GET', path: '/api/events', summary: 'What was decided, newest first', needs: { action: 'see', at: 'somewhere' }, query: eventsQuery,
-      handle: async ({ query: { guarantee, before, ...rest }, caller }): Promise<readonly HappeningFound[]> => {
-        const found = await host.store.happenings({ ...rest, ...(guarantee === undefined ? {} : { guarantee }), ...(before === undefined ? {} : { before }) });
+      handle: async ({ query: { guarantee, kind, before, ...rest }, caller }): Promise<readonly HappeningFound[]> => {
+        const found = await host.store.happenings({ ...rest, ...(guarantee === undefined ? {} : { guarantee }), ...(kind === undefined ? {} : { kind }), ...(before === undefined ? {} : { before }) });
         return found.filter(({ happening }) => seesHappening(caller, happening, lineOfGuarantee));
       },
     }),

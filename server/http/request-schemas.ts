@@ -18,6 +18,7 @@ export const eventsQuery = v.strictObject({
   from: v.optional(wholeText, '0'),
   to: v.optional(wholeText, '253402300799999'),
   guarantee: v.optional(v.pipe(v.string(), v.maxLength(64))),
+  kind: v.optional(v.picklist(['evidence', 'alarm', 'restart', 'run', 'line', 'set-aside'])),
   before: v.optional(wholeText),
   limit: v.optional(v.pipe(wholeText, v.minValue(1), v.maxValue(10_000)), '1000'),
 });

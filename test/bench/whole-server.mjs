@@ -32,7 +32,7 @@ register.close();
 const file = await plantFile(path);
 if (!file.ok) throw new Error(file.fault.join('\n'));
 const store = await openStore(data, groupEntries === undefined ? {} : { groupEntries });
-const settings = settle({ data, port: '0', 'log-level': 'silent' }, {}, {});
+const settings = settle({ data, port: '0', access: 'open', 'log-level': 'silent' }, {}, {});
 const served = await serveFrom(store, { settings, clock: { kind: 'wall' }, demo: false, log: logOf('silent') }, path, file.value);
 
 const delay = monitorEventLoopDelay({ resolution: 1 });

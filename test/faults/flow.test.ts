@@ -62,7 +62,7 @@ describe('a disk that falls behind', () => {
     const path = join(data.path, 'plant.yaml');
     const file = await plantFile(path);
     if (!file.ok) throw new Error(file.fault[0]);
-    const settings = settle({ data: data.path, port: '0', 'frames-in-flight': '10000' }, {}, {});
+    const settings = settle({ data: data.path, port: '0', access: 'open', 'frames-in-flight': '10000' }, {}, {});
     served = await serveFrom(slow.store, { settings, clock: { kind: 'records' }, demo: false, log: logOf('silent') }, path, file.value);
   });
   afterEach(async () => {

@@ -3,7 +3,7 @@ import { serve } from '../../.build/server/serve.js';
 import { logOf } from '../../.build/server/ops/log.js';
 import { settle } from '../../.build/server/settings/settings.js';
 
-const settings = settle({ data: process.argv[2], port: '0' }, {}, {});
+const settings = settle({ data: process.argv[2], port: '0', access: 'open' }, {}, {});
 const served = await serve({ settings, clock: { kind: 'records' }, demo: false, log: logOf('silent') });
 process.on('message', () => {
   globalThis.gc();

@@ -1,3 +1,4 @@
+import { anybody } from '../../server/access/caller.ts';
 import { createServer, type Server } from 'node:http';
 import type { AddressInfo } from 'node:net';
 import { setFlagsFromString } from 'node:v8';
@@ -42,7 +43,7 @@ beforeEach(async () => {
   const upgrades = new WebSocketServer({ server: http, perMessageDeflate: false, handleProtocols: () => liveProtocol });
   upgrades.on('connection', (socket) => {
     sockets.push(socket);
-    desk.connect(socket);
+    desk.connect(socket, anybody);
   });
   await new Promise<void>((resolve) => http.listen(0, '127.0.0.1', resolve));
 });

@@ -82,8 +82,8 @@ describe('a server', () => {
     expect(await live.until((message) => message.type === 'change' && message.alarms.length > 0)).toMatchObject({ alarms: [{ state: { kind: 'acknowledged', acknowledgement: { by: 'Mette' } } }] });
     source.send(records(1011, verdictPart(1200, [], monday + 1_010_000)));
     expect(await live.until((message) => message.type === 'change' && message.alarms.length > 0)).toMatchObject({ alarms: [{ state: { kind: 'ended' } }] });
-    const events = (await (await fetch(`${served.address}/api/events?kind=alarm`)).json()) as unknown;
-    expect(events).toMatchObject({ message: expect.stringContaining('kind') as string });
+    const events = (await (await fetch(`${served.address}/api/events?sort=alarm`)).json()) as unknown;
+    expect(events).toMatchObject({ message: expect.stringContaining('sort') as string });
   });
 
   it('lets a dashboard that comes back resume with what changed, and starts anew after a restart', async () => {
