@@ -1,5 +1,5 @@
 import { createHash } from 'node:crypto';
-import { readFile } from 'node:fs/promises';
+import { open, readFile, rename } from 'node:fs/promises';
 import type { PlantFault } from '../core/plant/plant-fault.ts';
 import type { Plant } from '../core/plant/plant.ts';
 import { readPlant } from '../core/plant/read-plant.ts';
@@ -25,9 +25,28 @@ export async function plantFile(path: string): Promise<Result<PlantFileText, rea
   } catch (cause) {
     return fault([`The plant file ${path} cannot be read: ${(cause as Error).message}`]);
   }
+  const read = plantText(text);
+  return read.ok ? read : fault(read.fault.map((one) => faultLine(path, one)));
+}
+
+/** Checks a plant file's text. */
+export function plantText(text: string): Result<PlantFileText, readonly PlantFault[]> {
   const version = plantVersionOf(text);
   const reading = readPlant(text, version);
-  return reading.ok ? ok({ text, version, plant: reading.value.plant }) : fault(reading.fault.map((one) => faultLine(path, one)));
+  return reading.ok ? ok({ text, version, plant: reading.value.plant }) : fault(reading.fault);
+}
+
+/** Puts a text in place of a plant file: the old one or the new one is there, whatever happens on the way. */
+export async function replacePlantFile(path: string, text: string): Promise<void> {
+  const beside = `${path}.${process.pid}.new`;
+  const file = await open(beside, 'w', 0o600);
+  try {
+    await file.writeFile(text);
+    await file.sync();
+  } finally {
+    await file.close();
+  }
+  await rename(beside, path);
 }
 
 const faultLine = (path: string, { line, column, sentence }: PlantFault): string => `${path}:${line}:${column}: ${sentence}`;

@@ -6,11 +6,14 @@ import { sourceLimits } from '../core/protocol/limits.ts';
 import { plantClock, type ClockSetting } from './clock/plant-clock.ts';
 import { accessOf } from './access/access-of.ts';
 import { checkOpenAccess } from './access/open-access.ts';
+import { changeRoutes } from './http/change-routes.ts';
 import { httpServer } from './http/http-server.ts';
 import { serveOperations } from './http/operations.ts';
+import { openApiRoute } from './http/open-api.ts';
 import { plantFileRoutes } from './http/plant-files.ts';
 import { plantRoutes } from './http/plant-routes.ts';
 import { serveRoutes } from './http/serve-routes.ts';
+import { sourceRoutes } from './http/source-routes.ts';
 import { serveSockets } from './http/sockets.ts';
 import { UploadDesk } from './http/upload-desk.ts';
 import { serveUploads } from './http/upload.ts';
@@ -20,7 +23,7 @@ import { LiveBoard } from './live/live-board.ts';
 import { measuresOf } from './ops/measures.ts';
 import type { Sender } from './pipeline/arrival.ts';
 import { PlantServer } from './pipeline/plant-server.ts';
-import { plantFile, type PlantFileText } from './plant-file.ts';
+import { plantFile, replacePlantFile, type PlantFileText } from './plant-file.ts';
 import { repeatEvery } from './repeat-every.ts';
 import type { Settings } from './settings/settings.ts';
 import { openStore } from './store/sqlite-store.ts';
@@ -80,6 +83,7 @@ export async function serve(setting: ServeSetting): Promise<Served> {
  */
 export async function serveFrom(store: Store, { settings, clock: clockSetting, demo, log }: ServeSetting, path: string, file: PlantFileText): Promise<Served> {
   const clock = plantClock(clockSetting);
+  let inForce = { text: file.text, version: file.version };
   const board = new LiveBoard({ boot: randomUUID(), clockRate: clock?.rate ?? 1, demo });
   const dashboards = new DashboardDesk(board);
   let up = false;
@@ -140,7 +144,14 @@ export async function serveFrom(store: Store, { settings, clock: clockSetting, d
   });
   const { guard } = access;
   access.onEnded((by) => dashboards.end(by));
-  serveRoutes(http, [...plantRoutes({ store, monitor: () => plant.monitor, act: (act) => plant.act(act) }), ...plantFileRoutes(), ...access.routes], guard);
+  const routes = [
+    ...plantRoutes({ store, monitor: () => plant.monitor, act: (act) => plant.act(act) }),
+    ...plantFileRoutes({ inForce: () => inForce, put: putPlant }),
+    ...changeRoutes(store.access),
+    ...sourceRoutes({ sources: store.sources, isConnected: (source) => sources.isConnected(source), endWithdrawn: () => sources.endWithdrawn() }),
+    ...access.routes,
+  ];
+  serveRoutes(http, [...routes, openApiRoute(routes)], guard);
   const closedBecause = (): string | undefined => (store.condition.kind === 'open' ? undefined : 'not-stored');
   const senderOf = (token: string): Promise<Sender | undefined> => sources.senderOf(token);
   serveUploads(http, {
@@ -179,16 +190,23 @@ export async function serveFrom(store: Store, { settings, clock: clockSetting, d
       board.refresh(plant.monitor, plant.now);
       dashboards.update(Date.now());
     }),
+    repeatEvery(1_000, () => void sources.endWithdrawn().catch((cause: unknown) => log.debug({ err: cause }, 'tokens were not looked up'))),
     repeatEvery(60_000, () => dashboards.endWhere((by) => access.isOver(by))),
     repeatEvery(settings.snapshotMinutes * 60_000, () => {
       plant.keepSnapshot().catch((cause: unknown) => log.error({ err: cause }, 'a snapshot was not kept'));
     }),
   ];
 
-  async function take(file: PlantFileText): Promise<void> {
-    await plant.usePlant(file);
+  async function take(file: PlantFileText, who?: string, why?: string): Promise<void> {
+    await plant.usePlant(file, who, why);
+    inForce = { text: file.text, version: file.version };
     board.begin(plant.monitor);
     log.info({ version: file.version }, 'plant file in force');
+  }
+
+  async function putPlant(file: PlantFileText, who: string, why: string): Promise<void> {
+    await replacePlantFile(path, file.text);
+    await take(file, who, why);
   }
 
   async function reload(): Promise<readonly string[]> {

@@ -37,6 +37,7 @@ export const refusalTable = {
   'too-many-parts': { effect: 'frame', sentence: 'The frame holds more parts than the limit.' },
   'sequence-gap': { effect: 'frame', sentence: 'The frame begins after the next expected sequence; send again from there.' },
   'station-not-allowed': { effect: 'frame', sentence: "The source's token does not cover this station." },
+  'product-not-allowed': { effect: 'frame', sentence: "The source's token does not cover this product." },
   'frame-too-large': { effect: 'connection', sentence: 'The message is larger than the limit.' },
   'too-many-in-flight': { effect: 'connection', sentence: 'More frames are in flight than the server granted.' },
   'foreign-origin': { effect: 'connection', sentence: 'A page of another place asked for the connection.' },

@@ -51,7 +51,7 @@ async function sourcesOf({ sources }: Store, at: number): Promise<{ senders: Rea
   const senders = new Map<string, Sender>();
   const tokens = new Map<string, string>();
   for (const { id: station } of demoStations) {
-    const { source, token } = known.has(station) ? await sources.rotate(station) : await sources.add(station, [station], at);
+    const { source, token } = known.has(station) ? await sources.rotate({ name: station }) : await sources.add({ name: station, stations: [station], at });
     senders.set(station, { id: source.id, name: source.name, stations: source.stations });
     tokens.set(station, token);
   }

@@ -16,7 +16,7 @@ export class UploadFault extends Error {
 
 /** The fault that a refused row is. */
 export function faultOfRow({ code, sentence, field, value, expected, line }: Refusal): UploadFault {
-  const status = code === 'station-not-allowed' ? 403 : code === 'frame-too-large' ? 413 : 400;
+  const status = code === 'station-not-allowed' || code === 'product-not-allowed' ? 403 : code === 'frame-too-large' ? 413 : 400;
   return new UploadFault(status, code, sentence, { line: line ?? 1, ...(field === '' ? {} : { field }), value, expected });
 }
 

@@ -59,7 +59,7 @@ export class UploadRun {
     this.#host = host;
     this.#turn = turn;
     this.#key = key;
-    this.#allowed = new AllowedStations(turn.sender.stations);
+    this.#allowed = new AllowedStations(turn.sender);
   }
 
   get sums(): UploadSums {

@@ -63,7 +63,7 @@ export class SourceConnection {
     this.#host = host;
     this.#binary = new BinaryFrameReader(host.limits);
     this.#json = new JsonFrameReader(host.limits);
-    this.#allowed = new AllowedStations(sender.stations);
+    this.#allowed = new AllowedStations(sender);
     socket.on('message', (data, isBinary) => this.#onMessage(data, isBinary));
     socket.on('close', () => {
       this.#open = false;

@@ -7,6 +7,10 @@ export interface Sender {
   readonly id: number;
   readonly name: string;
   readonly stations: readonly string[];
+  /** Products it may send for; empty or absent: every product. */
+  readonly products?: readonly string[];
+  /** Hash of the token it came by, hexadecimal: its connection ends with it. */
+  readonly tokenHash?: string;
 }
 
 /** Something that comes in from outside and is to be judged, in the order in which it came. */
@@ -24,7 +28,7 @@ export type Arrival =
     }
   | { readonly kind: 'refused'; readonly sender: Sender; readonly frames: number }
   | { readonly kind: 'act'; readonly act: Act; readonly done: (fault: ActFault | undefined) => void }
-  | { readonly kind: 'plant'; readonly text: string; readonly version: string; readonly done: () => void }
+  | { readonly kind: 'plant'; readonly text: string; readonly version: string; /** Who puts it in force, and why. */ readonly who: string; readonly why: string; readonly done: () => void }
   /** Told when everything that came before it is durable. */
   | { readonly kind: 'barrier'; readonly done: () => void }
   | { readonly kind: 'tick' };

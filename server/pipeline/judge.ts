@@ -1,4 +1,5 @@
 import type { Change } from '../../core/access/change.ts';
+import { limitChanges } from '../../core/access/limit-changes.ts';
 import { changeOfAct } from '../../core/access/change-of-act.ts';
 import type { Decisions, Monitor } from '../../core/monitor/monitor.ts';
 import { monitorFrom, snapshotOf } from '../../core/monitor/monitor-snapshot.ts';
@@ -85,13 +86,14 @@ export class Judge {
         return;
       }
       case 'plant': {
-        const { text, version } = arrival;
+        const { text, version, who, why } = arrival;
         this.#monitor.advance(this.now);
         this.#keepIfDecided(sheet);
-        const before = this.#monitor.plantVersion;
+        const { plantVersion, plant } = this.#monitor;
         this.#monitor = monitorFrom(this.#readPlant(text, version), version, snapshotOf(this.#monitor));
         this.#keep(sheet, { kind: 'plant', body: noteBody({ text, version, clock: this.#clock ? 'time' : 'records' }) });
-        sheet.record({ kind: 'plant', who: 'server', what: 'plant file', before, after: version, why: '', entry: this.#lastId });
+        const limits = limitChanges(plant.guarantees, this.#monitor.plant.guarantees);
+        sheet.record({ kind: 'plant', who, what: 'plant file', before: { version: plantVersion, guarantees: limits.before }, after: { version, guarantees: limits.after }, why, entry: this.#lastId });
         sheet.afterwards.push(arrival.done);
       }
     }

@@ -93,8 +93,8 @@ export class PlantServer {
   }
 
   /** Takes up another plant file; resolves when that is durable. */
-  usePlant({ text, version }: PlantFileText): Promise<void> {
-    return this.#unlessFailed((done) => this.inbox.put({ kind: 'plant', text, version, done }));
+  usePlant({ text, version }: PlantFileText, who = 'server', why = ''): Promise<void> {
+    return this.#unlessFailed((done) => this.inbox.put({ kind: 'plant', text, version, who, why, done }));
   }
 
   act(act: Act): Promise<ActFault | undefined> {

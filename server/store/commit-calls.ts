@@ -7,7 +7,7 @@ import { groupWriter } from './group-writer.ts';
 import type { PackedGroup } from './packed-group.ts';
 import { writeSnapshot } from './snapshot-table.ts';
 import { addSource, noteUse, revokeSource, rotateSource } from './source-table.ts';
-import type { Source, TokenGrant } from './source-register.ts';
+import type { NewSource, Renewal, Source, SourceDoer, TokenGrant } from './source-register.ts';
 import { storeErrorOf } from './sqlite-fault.ts';
 import { StoreError } from './store-error.ts';
 import type { Snapshot } from './store.ts';
@@ -17,9 +17,9 @@ import type { Calls } from './worker-answers.ts';
 export type CommitCalls = {
   readonly commit: (group: PackedGroup) => void;
   readonly keepSnapshot: (snapshot: Snapshot) => void;
-  readonly addSource: (source: { readonly name: string; readonly stations: readonly string[]; readonly at: number }) => TokenGrant;
-  readonly rotateSource: (name: string) => TokenGrant;
-  readonly revokeSource: (source: { readonly name: string; readonly at: number }) => Source;
+  readonly addSource: (source: NewSource) => TokenGrant;
+  readonly rotateSource: (renewal: Renewal) => TokenGrant;
+  readonly revokeSource: (source: { readonly name: string; readonly at: number; readonly doer: SourceDoer | undefined }) => Source;
   readonly noteUse: (use: { readonly id: number; readonly at: number }) => void;
   readonly writeAccess: (write: AccessWrite) => void;
   readonly backup: (path: string) => Promise<void>;
@@ -30,9 +30,9 @@ export type CommitCalls = {
 export function commitCalls(database: Database.Database, close: () => void): CommitCalls & Calls {
   return {
     ...journalCalls(database),
-    addSource: ({ name, stations, at }) => addSource(database, name, stations, at),
-    rotateSource: (name) => rotateSource(database, name),
-    revokeSource: ({ name, at }) => revokeSource(database, name, at),
+    addSource: (source) => addSource(database, source),
+    rotateSource: (renewal) => rotateSource(database, renewal),
+    revokeSource: ({ name, at, doer }) => revokeSource(database, name, at, doer),
     noteUse: ({ id, at }) => noteUse(database, id, at),
     writeAccess: (write) => writeAccess(database, write, Date.now()),
     backup: (path) => backupTo(database, path),

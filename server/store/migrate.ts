@@ -3,10 +3,11 @@ import { journalAndEvidence } from './migrations/0001-journal-and-evidence.ts';
 import { findWithoutScanning } from './migrations/0002-find-without-scanning.ts';
 import { recordOfChanges } from './migrations/0003-record-of-changes.ts';
 import { access } from './migrations/0004-access.ts';
+import { sourceTokens } from './migrations/0005-source-tokens.ts';
 import { StoreError } from './store-error.ts';
 
 /** Step n leads from schema version n to n + 1. */
-const steps: readonly ((database: Database.Database) => void)[] = [journalAndEvidence, findWithoutScanning, recordOfChanges, access];
+const steps: readonly ((database: Database.Database) => void)[] = [journalAndEvidence, findWithoutScanning, recordOfChanges, access, sourceTokens];
 
 /** The schema version this program reads and writes. */
 export const schemaVersion = steps.length;

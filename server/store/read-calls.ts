@@ -12,7 +12,7 @@ import { journalReader, readEntriesOf } from './journal-read.ts';
 import type { PackedEntries } from './packed-entries.ts';
 import { readNewestSnapshot } from './snapshot-table.ts';
 import type { Source } from './source-register.ts';
-import { listSources, sourceOfToken } from './source-table.ts';
+import { heldHashes, listSources, sourceOfToken } from './source-table.ts';
 import type { HappeningFound, HappeningQuery, HistoryQuery, HistorySteps, Page, SnapshotFound } from './store.ts';
 import { handingOver, type Calls } from './worker-answers.ts';
 
@@ -26,7 +26,8 @@ export type ReadCalls = {
   readonly openAlarms: (nothing: undefined) => readonly Alarm[];
   readonly endedAlarms: (page: Page) => readonly Alarm[];
   readonly listSources: (nothing: undefined) => readonly Source[];
-  readonly sourceOfToken: (token: string) => Source | undefined;
+  readonly sourceOfToken: (asked: { readonly token: string; readonly at: number }) => Source | undefined;
+  readonly heldHashes: (at: number) => readonly string[];
   readonly accessItems: (nothing: undefined) => readonly AccessItem[];
   readonly changes: (query: ChangeQuery) => readonly RecordedChange[];
   readonly close: (nothing: undefined) => void;
@@ -47,7 +48,8 @@ export function readCalls(database: Database.Database, close: () => void): ReadC
     openAlarms: () => readOpenAlarms(database),
     endedAlarms: (page) => readEndedAlarms(database, page),
     listSources: () => listSources(database),
-    sourceOfToken: (token) => sourceOfToken(database, token),
+    sourceOfToken: ({ token, at }) => sourceOfToken(database, token, at),
+    heldHashes: (at) => heldHashes(database, at),
     accessItems: () => readAccess(database),
     changes: (query) => readChanges(database, query),
     close,

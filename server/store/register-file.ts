@@ -4,7 +4,7 @@ import { openToWrite } from './database.ts';
 import { lockDirectory } from './directory-lock.ts';
 import { migrate, schemaVersion, schemaVersionOf } from './migrate.ts';
 import type { SourceRegister } from './source-register.ts';
-import { addSource, listSources, noteUse, revokeSource, rotateSource, sourceOfToken } from './source-table.ts';
+import { addSource, heldHashes, listSources, noteUse, revokeSource, rotateSource, sourceOfToken } from './source-table.ts';
 import { storeErrorOf } from './sqlite-fault.ts';
 
 export interface RegisterFile extends SourceRegister {
@@ -13,18 +13,19 @@ export interface RegisterFile extends SourceRegister {
 
 /**
  * The source register of a data directory for the command line, also beside a running server, which finds the changes
- * at the next hello. Without a server it makes the directory and brings the schema up to date.
+ * within a second. Without a server it makes the directory and brings the schema up to date.
  *
  * @throws StoreError 'in-use' (a server of another version has it), 'newer-schema', 'damaged', 'input-output'
  */
 export function openRegisterFile(directory: string): RegisterFile {
   const database = openMigrated(dataDirectory(directory));
   return {
-    add: (name, stations, at) => promised(() => addSource(database, name, stations, at)),
-    rotate: (name) => promised(() => rotateSource(database, name)),
-    revoke: (name, at) => promised(() => revokeSource(database, name, at)),
+    add: (source) => promised(() => addSource(database, source)),
+    rotate: (renewal) => promised(() => rotateSource(database, renewal)),
+    revoke: (name, at, doer) => promised(() => revokeSource(database, name, at, doer)),
     list: () => promised(() => listSources(database)),
-    ofToken: (token) => promised(() => sourceOfToken(database, token)),
+    ofToken: (token, at) => promised(() => sourceOfToken(database, token, at)),
+    heldHashes: (at) => promised(() => heldHashes(database, at)),
     used: (id, at) => promised(() => noteUse(database, id, at)),
     close: () => void database.close(),
   };

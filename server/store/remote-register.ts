@@ -7,11 +7,12 @@ import type { WorkerChannel } from './worker-channel.ts';
 /** The source register of a running server: changes go to the thread that writes, look-ups to the one that reads. */
 export function remoteRegister(writing: WorkerChannel<CommitCalls & Calls>, reading: WorkerChannel<ReadCalls & Calls>): SourceRegister {
   return {
-    add: (name, stations, at) => writing.call('addSource', { name, stations, at }),
-    rotate: (name) => writing.call('rotateSource', name),
-    revoke: (name, at) => writing.call('revokeSource', { name, at }),
+    add: (source) => writing.call('addSource', source),
+    rotate: (renewal) => writing.call('rotateSource', renewal),
+    revoke: (name, at, doer) => writing.call('revokeSource', { name, at, doer }),
     list: () => reading.call('listSources', undefined),
-    ofToken: (token) => reading.call('sourceOfToken', token),
+    ofToken: (token, at) => reading.call('sourceOfToken', { token, at }),
+    heldHashes: (at) => reading.call('heldHashes', at),
     used: (id, at) => writing.call('noteUse', { id, at }),
   };
 }

@@ -4,9 +4,10 @@ import { StoreError } from './store-error.ts';
 const word = /^[\p{L}\p{N}._-]{1,64}$/u;
 
 /** @throws StoreError 'bad-source' naming the field, its value and what was expected */
-export function checkSource(name: string, stations: readonly string[]): void {
+export function checkSource(name: string, stations: readonly string[], products: readonly string[] = []): void {
   checkWord('name', name);
   if (stations.length === 0) throw new StoreError('bad-source', 'stations: none given, expected one station or more.');
+  for (const product of products) checkWord('product', product);
   for (const station of stations) if (station !== everyStation) checkWord('station', station);
 }
 

@@ -37,7 +37,7 @@ const steps = {
   /** Stores the records; a snapshot is kept at the end only where it is wanted. */
   async fill() {
     const register = openRegisterFile(data);
-    await register.add('gateway', Array.from({ length: streams }, (_, stream) => stationOf(stream)), 0);
+    await register.add({ name: 'gateway', stations: Array.from({ length: streams }, (_, stream) => stationOf(stream)), at: 0 });
     register.close();
     const store = await openStore(data);
     const running = await server(store);

@@ -26,7 +26,7 @@ const path = join(data, 'plant.yaml');
 writeFileSync(path, plantText(streams, kind, probes));
 const register = openRegisterFile(data);
 const tokens = [];
-for (let index = 0; index < sources; index += 1) tokens.push((await register.add(`source-${index}`, stationsOf(index), 0)).token);
+for (let index = 0; index < sources; index += 1) tokens.push((await register.add({ name: `source-${index}`, stations: stationsOf(index), at: 0 })).token);
 register.close();
 
 const file = await plantFile(path);

@@ -72,7 +72,7 @@ describe('a disk that falls behind', () => {
   });
 
   it('holds the sources: what waits stays bounded, people are still answered, and all is acknowledged in the end', async () => {
-    const { token } = await slow.store.sources.add('leak-tester', ['A.leak-test'], 0);
+    const { token } = await slow.store.sources.add({ name: 'leak-tester', stations: ['A.leak-test'], at: 0 });
     const { talk } = await connectedSource(served.address, token);
     slow.shut = true;
     const frame = unevenFrame();

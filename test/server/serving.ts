@@ -20,7 +20,7 @@ export function dataDirectory(plant: string): { path: string; remove: () => void
 
 export async function tokenFor(data: string, name: string, stations: readonly string[]): Promise<string> {
   const register = openRegisterFile(data);
-  const { token } = await register.add(name, stations, 0);
+  const { token } = await register.add({ name: name, stations: stations, at: 0 });
   register.close();
   return token;
 }

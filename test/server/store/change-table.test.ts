@@ -73,11 +73,11 @@ describe('the record of changes', () => {
   });
 
   it('holds what was done to sources, without their tokens, and nothing of what was refused', () => {
-    const { token } = addSource(database, 'filler', ['fill'], morning);
-    rotateSource(database, 'filler');
+    const { token } = addSource(database, { name: 'filler', stations: ['fill'], at: morning });
+    rotateSource(database, { name: 'filler' });
     revokeSource(database, 'filler', morning + 1);
-    expect(() => addSource(database, 'filler', ['fill'], morning)).toThrow('taken');
-    expect(() => rotateSource(database, 'nobody')).toThrow('nobody');
+    expect(() => addSource(database, { name: 'filler', stations: ['fill'], at: morning })).toThrow('taken');
+    expect(() => rotateSource(database, { name: 'nobody' })).toThrow('nobody');
     const rows = database.prepare('SELECT body FROM changes WHERE id > 5 ORDER BY id').pluck().all() as string[];
     expect(rows.map((row) => JSON.parse(row) as Change)).toMatchObject([
       { kind: 'source-made', who: 'command line', what: 'source filler', before: null, after: { stations: ['fill'], revoked: null } },

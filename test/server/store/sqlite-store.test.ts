@@ -64,7 +64,7 @@ describe('data directory', () => {
 
   it('keeps tokens only as hashes', async () => {
     const store = await open();
-    const { token } = await store.sources.add('leak-tester-a', ['leak-a'], morning);
+    const { token } = await store.sources.add({ name: 'leak-tester-a', stations: ['leak-a'], at: morning });
     await store.close();
     const rows = new Database(join(directory, 'vouchline.db')).prepare('SELECT * FROM sources').raw().all();
     expect(rows).toHaveLength(1);
@@ -190,7 +190,7 @@ describe('backup', () => {
   it('is a store of its own with everything in it', async () => {
     const store = await open();
     await store.commit(group({ entries: entries(1, 100), alarms: [alarm(1)], minutes: [minute('leak-a', 0)] }));
-    const { token } = await store.sources.add('filler', ['fill'], morning);
+    const { token } = await store.sources.add({ name: 'filler', stations: ['fill'], at: morning });
     const other = join(top, 'copy');
     mkdirSync(other);
     await store.backup(join(other, 'vouchline.db'));
@@ -199,7 +199,7 @@ describe('backup', () => {
     const copy = await open();
     expect(await allEntries(copy)).toEqual(entries(1, 100));
     expect(await copy.openAlarms()).toEqual([alarm(1)]);
-    expect(await copy.sources.ofToken(token)).toMatchObject({ name: 'filler' });
+    expect(await copy.sources.ofToken(token, morning)).toMatchObject({ name: 'filler' });
     expect(modeOf(join(other, 'vouchline.db'))).toBe('600');
   });
 
@@ -215,15 +215,15 @@ describe('backup', () => {
 describe('source register on its own', () => {
   it('makes a directory before the first server, and is heard by a running one', async () => {
     const before = openRegisterFile(directory);
-    const first = await before.add('filler', ['fill'], morning);
+    const first = await before.add({ name: 'filler', stations: ['fill'], at: morning });
     before.close();
     const store = await open();
-    expect(await store.sources.ofToken(first.token)).toEqual(first.source);
+    expect(await store.sources.ofToken(first.token, morning)).toEqual(first.source);
     const beside = openRegisterFile(directory);
-    const second = await beside.rotate('filler');
-    expect(await store.sources.ofToken(first.token)).toBeUndefined();
-    expect(await store.sources.ofToken(second.token)).toEqual(first.source);
-    await expect(beside.add('filler', ['fill'], morning)).rejects.toEqual(withFault('name-taken'));
+    const second = await beside.rotate({ name: 'filler' });
+    expect(await store.sources.ofToken(first.token, morning)).toBeUndefined();
+    expect(await store.sources.ofToken(second.token, morning)).toEqual(first.source);
+    await expect(beside.add({ name: 'filler', stations: ['fill'], at: morning })).rejects.toEqual(withFault('name-taken'));
     beside.close();
   });
 });

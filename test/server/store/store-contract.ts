@@ -1,5 +1,6 @@
 import { afterEach, beforeEach, describe, expect, it } from 'vitest';
 import type { Entry } from '../../../server/store/entry.ts';
+import { hashOfToken } from '../../../server/store/source-token.ts';
 import { StoreError, type StoreFault } from '../../../server/store/store-error.ts';
 import type { Store, StoreOptions } from '../../../server/store/store.ts';
 import { alarm, ended, entries, entry, evidence, group, minute, morning } from './examples.ts';
@@ -165,35 +166,48 @@ export function storeContract(name: string, makePlace: () => StorePlace): void {
     });
 
     it('knows sources by their token alone', async () => {
-      const { source, token } = await store.sources.add('leak-tester-a', ['leak-a', 'leak-a', 'final-a'], morning);
-      expect(source).toEqual({ id: 1, name: 'leak-tester-a', stations: ['leak-a', 'final-a'], created: morning, lastUsed: undefined, revoked: undefined });
+      const { source, token } = await store.sources.add({ name: 'leak-tester-a', stations: ['leak-a', 'leak-a', 'final-a'], at: morning });
+      expect(source).toEqual({ id: 1, name: 'leak-tester-a', stations: ['leak-a', 'final-a'], products: [], created: morning, lastUsed: undefined, revoked: undefined, oldUntil: undefined });
       expect(token).toMatch(/^vouchline_[\w-]{43}$/);
-      expect(await store.sources.ofToken(token)).toEqual(source);
-      expect(await store.sources.ofToken(`${token.slice(0, -2)}zz`)).toBeUndefined();
+      expect(await store.sources.ofToken(token, morning)).toEqual(source);
+      expect(await store.sources.ofToken(`${token.slice(0, -2)}zz`, morning)).toBeUndefined();
       await store.sources.used(1, morning + 5);
       expect(await store.sources.list()).toEqual([{ ...source, lastUsed: morning + 5 }]);
     });
 
     it('replaces and revokes tokens, and brings a revoked source back', async () => {
-      const first = await store.sources.add('filler', ['fill'], morning);
-      const second = await store.sources.rotate('filler');
+      const first = await store.sources.add({ name: 'filler', stations: ['fill'], at: morning });
+      const second = await store.sources.rotate({ name: 'filler' });
       expect(second.token).not.toBe(first.token);
-      expect(await store.sources.ofToken(first.token)).toBeUndefined();
-      expect(await store.sources.ofToken(second.token)).toEqual(first.source);
+      expect(await store.sources.ofToken(first.token, morning)).toBeUndefined();
+      expect(await store.sources.ofToken(second.token, morning)).toEqual(first.source);
       expect(await store.sources.revoke('filler', morning + 1)).toEqual({ ...first.source, revoked: morning + 1 });
       expect(await store.sources.revoke('filler', morning + 2)).toMatchObject({ revoked: morning + 1 });
-      expect(await store.sources.ofToken(second.token)).toBeUndefined();
-      await expect(store.sources.add('filler', ['fill'], morning)).rejects.toEqual(withFault('name-taken'));
-      const third = await store.sources.rotate('filler');
+      expect(await store.sources.ofToken(second.token, morning)).toBeUndefined();
+      await expect(store.sources.add({ name: 'filler', stations: ['fill'], at: morning })).rejects.toEqual(withFault('name-taken'));
+      const third = await store.sources.rotate({ name: 'filler' });
       await reopen();
-      expect(await store.sources.ofToken(third.token)).toEqual(first.source);
+      expect(await store.sources.ofToken(third.token, morning)).toEqual(first.source);
+    });
+
+    it('takes the old token beside the new one until its time is over, and neither after a revocation', async () => {
+      const first = await store.sources.add({ name: 'filler', stations: ['fill'], products: ['FK-250'], at: morning });
+      const second = await store.sources.rotate({ name: 'filler', oldUntil: morning + 10 });
+      expect(second.source).toMatchObject({ products: ['FK-250'], oldUntil: morning + 10 });
+      expect([await store.sources.ofToken(first.token, morning + 9), await store.sources.ofToken(first.token, morning + 10)]).toEqual([second.source, undefined]);
+      expect(await store.sources.ofToken(second.token, morning + 10)).toEqual(second.source);
+      const hash = (token: string): string => hashOfToken(token).toString('hex');
+      expect([...(await store.sources.heldHashes(morning + 9))].sort()).toEqual([hash(first.token), hash(second.token)].sort());
+      expect(await store.sources.heldHashes(morning + 10)).toEqual([hash(second.token)]);
+      await store.sources.revoke('filler', morning + 5);
+      expect([await store.sources.heldHashes(morning), await store.sources.ofToken(first.token, morning)]).toEqual([[], undefined]);
     });
 
     it('says what is wrong with a source', async () => {
-      await expect(store.sources.add('two words', ['fill'], 0)).rejects.toThrow('name: "two words", expected 1 to 64 letters');
-      await expect(store.sources.add('filler', [], 0)).rejects.toThrow('stations: none given');
-      await expect(store.sources.add('filler', [''], 0)).rejects.toThrow('station: "", expected');
-      await expect(store.sources.rotate('nobody')).rejects.toEqual(withFault('unknown-source'));
+      await expect(store.sources.add({ name: 'two words', stations: ['fill'], at: 0 })).rejects.toThrow('name: "two words", expected 1 to 64 letters');
+      await expect(store.sources.add({ name: 'filler', stations: [], at: 0 })).rejects.toThrow('stations: none given');
+      await expect(store.sources.add({ name: 'filler', stations: [''], at: 0 })).rejects.toThrow('station: "", expected');
+      await expect(store.sources.rotate({ name: 'nobody' })).rejects.toEqual(withFault('unknown-source'));
       await expect(store.sources.revoke('nobody', 0)).rejects.toEqual(withFault('unknown-source'));
       await expect(store.sources.used(5, 0)).rejects.toEqual(withFault('unknown-source'));
     });
