@@ -1,20 +1,23 @@
 import { randomUUID } from 'node:crypto';
+import type { Server } from 'node:https';
 import type { AddressInfo } from 'node:net';
 import { join } from 'node:path';
 import type { Logger } from 'pino';
 import { sourceLimits } from '../core/protocol/limits.ts';
 import { plantClock, type ClockSetting } from './clock/plant-clock.ts';
 import { accessOf } from './access/access-of.ts';
-import { checkOpenAccess } from './access/open-access.ts';
+import { checkOpenAccess, checkPlainHttp } from './access/open-access.ts';
 import { changeRoutes } from './http/change-routes.ts';
+import { hopsOf } from './http/hops.ts';
 import { httpServer } from './http/http-server.ts';
-import { serveOperations } from './http/operations.ts';
+import { mayReadMeasures, serveOperations } from './http/operations.ts';
 import { openApiRoute } from './http/open-api.ts';
 import { plantFileRoutes } from './http/plant-files.ts';
 import { plantRoutes } from './http/plant-routes.ts';
 import { serveRoutes } from './http/serve-routes.ts';
 import { sourceRoutes } from './http/source-routes.ts';
 import { serveSockets } from './http/sockets.ts';
+import { tlsPair, tlsReload } from './http/tls.ts';
 import { UploadDesk } from './http/upload-desk.ts';
 import { serveUploads } from './http/upload.ts';
 import { SourceDesk } from './ingest/source-desk.ts';
@@ -62,7 +65,10 @@ const updateMs = 100;
  */
 export async function serve(setting: ServeSetting): Promise<Served> {
   const { settings, log } = setting;
-  if (!setting.demo) checkOpenAccess(settings);
+  if (!setting.demo) {
+    checkOpenAccess(settings);
+    checkPlainHttp(settings);
+  }
   const path = settings.plant ?? join(settings.data, 'plant.yaml');
   const read = await plantFile(path);
   if (!read.ok) throw new BadPlantFile(read.fault.join('\n'));
@@ -133,8 +139,9 @@ export async function serveFrom(store: Store, { settings, clock: clockSetting, d
   board.begin(plant.monitor);
   board.remember([...(await store.endedAlarms({ limit: 200 }))].reverse());
 
-  const http = await httpServer();
-  serveOperations(http, { store, measures });
+  const hops = hopsOf(settings.trustedHops);
+  const tls = tlsPair(settings);
+  const http = await httpServer({ hops, tls, requestsPerSecond: settings.requestsPerSecond });
   const access = await accessOf({
     file: store.access,
     settings,
@@ -144,6 +151,7 @@ export async function serveFrom(store: Store, { settings, clock: clockSetting, d
   });
   const { guard } = access;
   access.onEnded((by) => dashboards.end(by));
+  serveOperations(http, { store, measures, maySeeMeasures: (request) => mayReadMeasures(guard, request) });
   const routes = [
     ...plantRoutes({ store, monitor: () => plant.monitor, act: (act) => plant.act(act) }),
     ...plantFileRoutes({ inForce: () => inForce, put: putPlant }),
@@ -173,6 +181,8 @@ export async function serveFrom(store: Store, { settings, clock: clockSetting, d
       sources.connect(socket, sender);
     },
     guard,
+    hops,
+    upgradesPerSecond: settings.upgradesPerSecond,
     onDashboard: (socket, caller) => dashboards.connect(socket, caller),
     closedBecause,
     onError: (cause) => log.debug({ err: cause }, 'a socket failed'),
@@ -190,6 +200,7 @@ export async function serveFrom(store: Store, { settings, clock: clockSetting, d
       board.refresh(plant.monitor, plant.now);
       dashboards.update(Date.now());
     }),
+    ...(tls === undefined ? [] : [repeatEvery(10_000, tlsReload(http.server as unknown as Server, settings, log))]),
     repeatEvery(1_000, () => void sources.endWithdrawn().catch((cause: unknown) => log.debug({ err: cause }, 'tokens were not looked up'))),
     repeatEvery(60_000, () => dashboards.endWhere((by) => access.isOver(by))),
     repeatEvery(settings.snapshotMinutes * 60_000, () => {
@@ -233,8 +244,8 @@ export async function serveFrom(store: Store, { settings, clock: clockSetting, d
     log.info('stopped');
   }
 
-  log.info({ address: `http://${settings.host}:${port}`, version: file.version }, 'listening');
-  const address = `http://${settings.host.includes(':') ? `[${settings.host}]` : settings.host}:${port}`;
+  const address = `${tls === undefined ? 'http' : 'https'}://${settings.host.includes(':') ? `[${settings.host}]` : settings.host}:${port}`;
+  log.info({ address, version: file.version }, 'listening');
   return { address, firstLink: access.firstCode === undefined ? undefined : `${address}/join#${access.firstCode}`, reload, stop: (reason) => (stopping ??= stopOnce(reason)) };
 }
 

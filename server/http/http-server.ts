@@ -1,8 +1,13 @@
 import { existsSync, readFileSync } from 'node:fs';
+import type { IncomingMessage } from 'node:http';
 import { fileURLToPath } from 'node:url';
 import fastifyStatic from '@fastify/static';
 import { fastify, type FastifyInstance } from 'fastify';
 import { hasForeignOrigin } from '../access/foreign-origin.ts';
+import { TooManyTries } from '../access/too-many-tries.ts';
+import type { Hops } from './hops.ts';
+import { RateLimit } from './rate-limit.ts';
+import type { TlsPair } from './tls.ts';
 
 /** Where the built dashboard lies: beside the built server, also for a server that runs from its sources (tests). */
 const folder = fileURLToPath(new URL(import.meta.url.endsWith('.ts') ? '../../.build/client' : '../../client', import.meta.url));
@@ -14,19 +19,56 @@ const securityHeaders = {
   'referrer-policy': 'no-referrer',
   'cross-origin-opener-policy': 'same-origin',
   'cross-origin-resource-policy': 'same-origin',
+  'permissions-policy': 'camera=(), geolocation=(), microphone=(), payment=(), usb=()',
 } as const;
+
+/** Ends the connection of a request whose body does not arrive in time: who sends a byte a minute holds nothing open. */
+function endIfLate(request: IncomingMessage, withinMs: number): void {
+  if (request.complete) return;
+  const timer = setTimeout(() => request.socket.destroy(), withinMs);
+  timer.unref();
+  request.once('close', () => clearTimeout(timer));
+  request.once('end', () => clearTimeout(timer));
+}
 
 /** Requests other than record uploads are small, bytes. */
 const bodyLimit = 65_536;
 
+/** How the server meets the network. */
+export interface HttpSetting {
+  readonly hops: Hops;
+  /** undefined: plain HTTP. */
+  readonly tls: TlsPair | undefined;
+  /** Requests a second from one address; the burst is ten times as many. */
+  readonly requestsPerSecond: number;
+  /** How long a request that is no upload may take to arrive, ms. */
+  readonly arriveWithinMs?: number;
+}
+
+const usualArrival = 20_000;
+const uploads = '/source/records';
+
 /** An HTTP server with the dashboard's files, safe headers and one form of error; routes are added by the caller. */
-export async function httpServer(): Promise<FastifyInstance> {
+export async function httpServer({ hops, tls, requestsPerSecond, arriveWithinMs = usualArrival }: HttpSetting): Promise<FastifyInstance> {
   // An upload may take its time, but a connection that says nothing is ended.
-  const http = fastify({ bodyLimit, forceCloseConnections: true, requestTimeout: 0, connectionTimeout: 60_000, return503OnClosing: true });
+  const options = { bodyLimit, forceCloseConnections: true, requestTimeout: 0, connectionTimeout: 60_000, return503OnClosing: true, trustProxy: (address: string) => hops.trusts(address), logger: false } as const;
+  const http = (tls === undefined ? fastify(options) : fastify({ ...options, https: { ...tls, minVersion: 'TLSv1.2' } })) as FastifyInstance;
+  http.server.headersTimeout = arriveWithinMs;
+  const limit = new RateLimit(requestsPerSecond, 10 * requestsPerSecond);
   http.addHook('onRequest', async (request, reply) => {
-    if (request.method !== 'GET' && request.method !== 'HEAD' && hasForeignOrigin(request.headers)) {
+    const path = request.url.split('?')[0];
+    if (path !== uploads) {
+      const wait = limit.take(request.ip);
+      if (wait > 0) throw new TooManyTries(wait);
+      endIfLate(request.raw, arriveWithinMs);
+    }
+    if (request.method !== 'GET' && request.method !== 'HEAD' && hasForeignOrigin(request.headers, hops.hostOf(request.raw))) {
       await reply.status(403).send({ message: 'this was asked by a page of another place; expected a page of this server or a program' });
     }
+  });
+  http.addHook('onSend', async (request, reply) => {
+    if (request.url.startsWith('/api/')) reply.header('cache-control', 'no-store');
+    if (hops.isSecure(request.raw)) reply.header('strict-transport-security', 'max-age=31536000');
   });
   http.addHook('onSend', async (_request, reply) => {
     reply.headers(securityHeaders);

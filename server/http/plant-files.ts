@@ -14,6 +14,9 @@ export interface PlantFileHost {
   readonly put: (file: PlantFileText, who: string, why: string) => Promise<void>;
 }
 
+/** A plant file of a million characters, with what JSON needs to write them. */
+const mostBytes = 4_194_304;
+
 const text = v.pipe(v.string('the text of a plant file'), v.maxLength(1_048_576, 'at most 1,048,576 characters'));
 const checkRequest = v.strictObject({ text });
 const putRequest = v.strictObject({
@@ -38,14 +41,14 @@ export function plantFileRoutes(host: PlantFileHost): readonly AnyRoute[] {
     }),
     route({ method: 'GET', path: '/api/plant', summary: 'The plant file in force', needs: { action: 'see', at: 'plant' }, handle: () => host.inForce() }),
     route({
-      method: 'POST', path: '/api/plant/check', summary: 'Says everything that is wrong with a plant file', needs: { action: 'see', at: 'plant' }, body: checkRequest,
+      method: 'POST', path: '/api/plant/check', summary: 'Says everything that is wrong with a plant file', needs: { action: 'see', at: 'plant' }, body: checkRequest, bodyBytes: mostBytes,
       handle: ({ body }) => {
         const read = plantText(body.text);
         return read.ok ? { faults: [], version: read.value.version } : { faults: read.fault };
       },
     }),
     route({
-      method: 'PUT', path: '/api/plant', summary: 'Puts a plant file in force', needs: { action: 'load-plant', at: 'plant' }, body: putRequest,
+      method: 'PUT', path: '/api/plant', summary: 'Puts a plant file in force', needs: { action: 'load-plant', at: 'plant' }, body: putRequest, bodyBytes: mostBytes,
       handle: async ({ body: { text, was, why, by }, caller }) => {
         const who = actingName(caller, by);
         const { version } = host.inForce();

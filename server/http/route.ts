@@ -39,6 +39,8 @@ export interface Route<P extends Schema | undefined = undefined, Q extends Schem
   readonly params?: P;
   readonly query?: Q;
   readonly body?: B;
+  /** Largest body, bytes; 65,536 when absent. */
+  readonly bodyBytes?: number;
   /** The form of the answer; a media type where it is not JSON. */
   readonly answer?: Schema | `${string}/${string}`;
   readonly handle: (asked: Asked<P, Q, B>) => unknown;

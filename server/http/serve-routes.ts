@@ -12,7 +12,7 @@ import type { AnyRoute, Asked, Need } from './route.ts';
  */
 export function serveRoutes(http: FastifyInstance, routes: readonly AnyRoute[], guard: Guard): void {
   for (const one of routes) {
-    http.route({ method: one.method, url: one.path, handler: (request, reply) => answered(one, request, reply, guard) });
+    http.route({ method: one.method, url: one.path, ...(one.bodyBytes === undefined ? {} : { bodyLimit: one.bodyBytes }), handler: (request, reply) => answered(one, request, reply, guard) });
   }
 }
 

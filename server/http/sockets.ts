@@ -8,6 +8,8 @@ import type { Caller } from '../access/caller.ts';
 import { hasForeignOrigin } from '../access/foreign-origin.ts';
 import type { Guard } from '../access/guard.ts';
 import { bearerToken } from '../ingest/bearer-token.ts';
+import type { Hops } from './hops.ts';
+import { RateLimit } from './rate-limit.ts';
 import type { Sender } from '../pipeline/arrival.ts';
 
 /** Who may connect, and what happens then. */
@@ -18,6 +20,9 @@ export interface SocketHost {
   readonly onSource: (socket: WebSocket, sender: Sender) => void;
   readonly onDashboard: (socket: WebSocket, caller: Caller) => void;
   readonly guard: Guard;
+  readonly hops: Hops;
+  /** Upgrades a second from one address; the burst is ten times as many. */
+  readonly upgradesPerSecond: number;
   /** Why nobody is let in now; undefined if they are. */
   readonly closedBecause: () => string | undefined;
   readonly mostDashboards: number;
@@ -35,6 +40,8 @@ const offered = (request: IncomingMessage): readonly string[] => (request.header
 export function serveSockets(server: Server, host: SocketHost): () => void {
   const sources = new WebSocketServer({ noServer: true, maxPayload: host.frameBytes, perMessageDeflate: false, handleProtocols: () => sourceProtocol });
   const dashboards = new WebSocketServer({ noServer: true, maxPayload: 1_024, perMessageDeflate: false, handleProtocols: () => liveProtocol });
+
+  const limit = new RateLimit(host.upgradesPerSecond, 10 * host.upgradesPerSecond);
 
   async function upgradeSource(request: IncomingMessage, socket: Duplex, head: Buffer): Promise<void> {
     const closed = host.closedBecause();
@@ -54,7 +61,7 @@ export function serveSockets(server: Server, host: SocketHost): () => void {
     const closed = host.closedBecause();
     if (closed !== undefined) return refuse(socket, 503, closed); // What is in memory is ahead of the disk: it is not shown as live.
     if (!offered(request).includes(liveProtocol)) return refuse(socket, 400, 'subprotocol-missing');
-    const caller = host.guard.callerOf({ headers: request.headers, address: request.socket.remoteAddress ?? '' });
+    const caller = host.guard.callerOf({ headers: request.headers, address: host.hops.addressOf(request) });
     if (caller === undefined) return refuse(socket, 401, 'not-signed-in');
     if (!mayDoSomewhere(caller, 'see')) {
       host.guard.noteRefused(caller, 'see', '/live');
@@ -70,7 +77,8 @@ export function serveSockets(server: Server, host: SocketHost): () => void {
   function onUpgrade(request: IncomingMessage, socket: Duplex, head: Buffer): void {
     socket.on('error', host.onError);
     const path = (request.url ?? '').split('?')[0];
-    if (hasForeignOrigin(request.headers)) refuse(socket, 403, 'foreign-origin');
+    if (limit.take(host.hops.addressOf(request)) > 0) refuse(socket, 429, 'too-many-connections');
+    else if (hasForeignOrigin(request.headers, host.hops.hostOf(request))) refuse(socket, 403, 'foreign-origin');
     else if (path === '/live') upgradeDashboard(request, socket, head);
     else if (path === '/source') {
       upgradeSource(request, socket, head).catch((cause: unknown) => {
@@ -88,7 +96,7 @@ export function serveSockets(server: Server, host: SocketHost): () => void {
   };
 }
 
-const reasons: Readonly<Record<number, string>> = { 400: 'Bad Request', 401: 'Unauthorized', 403: 'Forbidden', 404: 'Not Found', 500: 'Internal Server Error', 503: 'Service Unavailable' };
+const reasons: Readonly<Record<number, string>> = { 400: 'Bad Request', 401: 'Unauthorized', 403: 'Forbidden', 404: 'Not Found', 429: 'Too Many Requests', 500: 'Internal Server Error', 503: 'Service Unavailable' };
 
 function refuse(socket: Duplex, status: number, code: string): void {
   if (socket.destroyed) return;

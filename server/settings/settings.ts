@@ -13,6 +13,12 @@ export interface Settings {
   readonly framesInFlight: number;
   readonly frameBytes: number;
   readonly dashboards: number;
+  readonly tlsCert: string | undefined;
+  readonly tlsKey: string | undefined;
+  readonly trustedHops: string;
+  readonly plainHttp: 'refused' | 'allowed';
+  readonly requestsPerSecond: number;
+  readonly upgradesPerSecond: number;
   readonly access: 'accounts' | 'open';
   readonly sessionIdleHours: number;
   readonly sessionDays: number;
@@ -45,6 +51,12 @@ export const settingRules: readonly SettingRule[] = [
   { key: 'framesInFlight', name: 'frames-in-flight', of: { kind: 'whole', from: 1, to: 10_000 }, preset: 64, help: 'frames a source may have sent and not yet seen acknowledged' },
   { key: 'frameBytes', name: 'frame-bytes', of: { kind: 'whole', from: 1_024, to: 67_108_864 }, preset: 1_048_576, help: 'largest frame, bytes' },
   { key: 'dashboards', name: 'dashboards', of: { kind: 'whole', from: 1, to: 100_000 }, preset: 5_000, help: 'dashboards connected at the same time at most' },
+  { key: 'tlsCert', name: 'tls-cert', of: { kind: 'text' }, preset: undefined, help: 'certificate file (PEM) for HTTPS; taken up anew when it changes' },
+  { key: 'tlsKey', name: 'tls-key', of: { kind: 'text' }, preset: undefined, help: 'its key file (PEM)' },
+  { key: 'trustedHops', name: 'trusted-hops', of: { kind: 'text' }, preset: '', help: 'proxies in front whose word on client, host and TLS is believed: addresses or networks, separated by commas' },
+  { key: 'plainHttp', name: 'plain-http', of: { kind: 'choice', of: ['refused', 'allowed'] }, preset: 'refused', help: 'allowed: listen beyond this machine without TLS, so that passwords and records can be read on the way' },
+  { key: 'requestsPerSecond', name: 'requests-per-second', of: { kind: 'whole', from: 1, to: 1_000_000 }, preset: 100, help: 'requests a second from one address; ten times as many at once' },
+  { key: 'upgradesPerSecond', name: 'upgrades-per-second', of: { kind: 'whole', from: 1, to: 1_000_000 }, preset: 500, help: 'sockets opened a second from one address; ten times as many at once' },
   { key: 'access', name: 'access', of: { kind: 'choice', of: ['accounts', 'open'] }, preset: 'accounts', help: 'accounts: people sign in, and each role does its work; open: whoever reaches the server does everything (on this machine only)' },
   { key: 'sessionIdleHours', name: 'session-idle-hours', of: { kind: 'whole', from: 1, to: 720 }, preset: 12, help: 'hours after which a session that is not used ends' },
   { key: 'sessionDays', name: 'session-days', of: { kind: 'whole', from: 1, to: 365 }, preset: 30, help: 'days after which every session ends' },

@@ -1,6 +1,7 @@
 import type { FastifyInstance } from 'fastify';
 import { accessOf, type Access } from '../../../server/access/access-of.ts';
 import type { AccessFile } from '../../../server/access/access-file.ts';
+import { hopsOf } from '../../../server/http/hops.ts';
 import { httpServer } from '../../../server/http/http-server.ts';
 import { serveRoutes } from '../../../server/http/serve-routes.ts';
 import { logOf } from '../../../server/ops/log.ts';
@@ -48,7 +49,7 @@ export class Plant {
   async open(): Promise<this> {
     this.file = openMemoryStore(this.#disk).access;
     this.access = await accessOf({ file: this.file, settings: { access: 'accounts', sessionIdleHours: 12, sessionDays: 30 }, plantName: () => 'Hose works', lines: () => ['A', 'B'], log: logOf('silent'), now: () => this.now });
-    this.http = await httpServer();
+    this.http = await httpServer({ hops: hopsOf(''), tls: undefined, requestsPerSecond: 10_000 });
     serveRoutes(this.http, this.access.routes, this.access.guard);
     return this;
   }

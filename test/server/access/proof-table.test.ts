@@ -64,8 +64,9 @@ describe('role by action by route', () => {
       if (!allowed) refused.push(`${method} ${path.replaceAll(/\{(\w+)\}/g, ':$1')}`);
       if (path === '/api/own/sign-out-everywhere') await person.signIn();
     }
-    const recorded = await administrator.json<RecordedChange[]>('GET', `/api/changes?kind=refused&holds=${encodeURIComponent(person.name)}&limit=1000`);
-    expect(recorded.map(({ what }) => what).sort()).toEqual(refused.sort());
+    const recorded = async (): Promise<string[]> =>
+      (await administrator.json<RecordedChange[]>('GET', `/api/changes?kind=refused&holds=${encodeURIComponent(person.name)}&limit=1000`)).map(({ what }) => what).sort();
+    await expect.poll(recorded, { timeout: 10_000 }).toEqual(refused.sort());
     expect(await person.live()).toBe(101);
   });
 
@@ -80,6 +81,6 @@ describe('role by action by route', () => {
   it('a token without sight opens no live socket, and that is on record', async () => {
     const { token } = await administrator.json<{ token: string }>('POST', '/api/own/tokens', { name: 'accounts only', actions: ['manage-accounts'], days: 1 });
     expect(await administrator.live({ authorization: `Bearer ${token}` })).toBe(403);
-    expect(await administrator.json<RecordedChange[]>('GET', '/api/changes?kind=refused&holds=/live')).toMatchObject([{ who: 'first Holm', what: '/live', after: { action: 'see', by: 'token' } }]);
+    await expect.poll(() => administrator.json<RecordedChange[]>('GET', '/api/changes?kind=refused&holds=/live')).toMatchObject([{ who: 'first Holm', what: '/live', after: { action: 'see', by: 'token' } }]);
   });
 });
