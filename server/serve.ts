@@ -6,6 +6,7 @@ import type { Logger } from 'pino';
 import { sourceLimits } from '../core/protocol/limits.ts';
 import { plantClock, type ClockSetting } from './clock/plant-clock.ts';
 import { accessOf } from './access/access-of.ts';
+import { directorySetting } from './access/directory-setting.ts';
 import { checkOpenAccess, checkPlainHttp } from './access/open-access.ts';
 import { changeRoutes } from './http/change-routes.ts';
 import { hopsOf } from './http/hops.ts';
@@ -145,6 +146,7 @@ export async function serveFrom(store: Store, { settings, clock: clockSetting, d
   const access = await accessOf({
     file: store.access,
     settings,
+    directory: directorySetting(settings),
     plantName: () => plant.monitor.plant.name,
     lines: () => plant.monitor.plant.lines.map(({ id }) => id),
     log,

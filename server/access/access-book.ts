@@ -1,7 +1,8 @@
 import type { Change, ChangeKind } from '../../core/access/change.ts';
 import type { Json } from '../../core/access/canonical-json.ts';
 import type { AccessFile, AccessItem } from './access-file.ts';
-import { accountSchema, displaySchema, invitationSchema, sessionSchema, tokenSchema } from './access-items.ts';
+import type { Passkey } from './access-items.ts';
+import { accountSchema, displaySchema, identitySchema, invitationSchema, passkeySchema, sessionSchema, tokenSchema } from './access-items.ts';
 import { Kept, type Staged } from './kept.ts';
 
 /** How long sessions hold. */
@@ -27,6 +28,8 @@ export class AccessBook {
   readonly sessions = new Kept('session', sessionSchema);
   readonly displays = new Kept('display', displaySchema);
   readonly tokens = new Kept('token', tokenSchema);
+  readonly passkeys = new Kept('passkey', passkeySchema);
+  readonly identities = new Kept('identity', identitySchema);
   readonly now: () => number;
   readonly #file: AccessFile;
   readonly #onEnded: ((by: string) => void)[] = [];
@@ -93,7 +96,11 @@ export class AccessBook {
     ]));
   }
 
+  passkeysOf(account: string): [string, Passkey][] {
+    return this.passkeys.entries().filter(([, passkey]) => passkey.account === account);
+  }
+
   #keptOf({ kind }: AccessItem): { load(item: AccessItem): void } | undefined {
-    return [this.accounts, this.invitations, this.sessions, this.displays, this.tokens].find((kept) => kept.kind === kind);
+    return [this.accounts, this.invitations, this.sessions, this.displays, this.tokens, this.passkeys, this.identities].find((kept) => kept.kind === kind);
   }
 }

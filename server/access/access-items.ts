@@ -42,6 +42,19 @@ export const tokenSchema = v.strictObject({
   hash, name: text(80), account: text(64), actions: v.array(v.picklist(actions)), grants: v.nullable(grants), made: moment, expires: moment, lastUsed: v.nullable(moment),
 });
 
+/** Its id is the credential's, base64url. */
+export const passkeySchema = v.strictObject({
+  account: text(64), name: text(80),
+  /** COSE public key, base64url. */
+  publicKey: text(4_096),
+  counter: v.pipe(v.number(), v.safeInteger(), v.minValue(0)),
+  transports: v.array(text(32)), made: moment, lastUsed: v.nullable(moment),
+});
+/** Somebody as a directory knows them; its id is made of issuer and subject. */
+export const identitySchema = v.strictObject({ account: text(64), issuer: text(500), subject: text(300), made: moment });
+
+export type Passkey = v.InferOutput<typeof passkeySchema>;
+export type Identity = v.InferOutput<typeof identitySchema>;
 export type Account = v.InferOutput<typeof accountSchema>;
 export type Invitation = v.InferOutput<typeof invitationSchema>;
 export type Session = v.InferOutput<typeof sessionSchema>;

@@ -1,9 +1,11 @@
 import type { Logger } from 'pino';
 import type { AccessHost } from '../http/access/access-host.ts';
 import { accountRoutes } from '../http/access/account-routes.ts';
+import { directoryRoutes } from '../http/access/directory-routes.ts';
 import { displayRoutes } from '../http/access/display-routes.ts';
 import { meRoute } from '../http/access/me-route.ts';
 import { ownRoutes } from '../http/access/own-routes.ts';
+import { passkeyRoutes } from '../http/access/passkey-routes.ts';
 import { signInRoutes } from '../http/access/sign-in-routes.ts';
 import { terminalRoutes } from '../http/access/terminal-routes.ts';
 import type { AnyRoute } from '../http/route.ts';
@@ -12,15 +14,19 @@ import { AccessBook } from './access-book.ts';
 import type { AccessFile } from './access-file.ts';
 import { AccountGuard } from './account-guard.ts';
 import { ActingPeople } from './acting.ts';
+import { Directory, type DirectorySetting } from './directory.ts';
 import { openGuard, type Guard } from './guard.ts';
 import { Invitations } from './invitations.ts';
 import { OwnAccount } from './own-account.ts';
+import { Passkeys } from './passkeys.ts';
 import { Passwords } from './passwords.ts';
 import { SignIn } from './sign-in.ts';
 
 export interface AccessSetting {
   readonly file: AccessFile;
   readonly settings: Pick<Settings, 'access' | 'sessionIdleHours' | 'sessionDays'>;
+  /** undefined: none is set up. */
+  readonly directory: DirectorySetting | undefined;
   readonly plantName: () => string;
   readonly lines: () => readonly string[];
   readonly log: Logger;
@@ -41,10 +47,10 @@ export interface Access {
 }
 
 /** @throws DamagedAccessItem, StoreError */
-export async function accessOf({ file, settings, plantName, lines, log, now = Date.now }: AccessSetting): Promise<Access> {
+export async function accessOf({ file, settings, directory: told, plantName, lines, log, now = Date.now }: AccessSetting): Promise<Access> {
   const { access } = settings;
   if (access === 'open') {
-    return { guard: openGuard, routes: [meRoute({ access, hasAccounts: () => false, lines })], firstCode: undefined, onEnded: () => undefined, isOver: () => false };
+    return { guard: openGuard, routes: [meRoute({ access, hasAccounts: () => false, hasPasskeys: () => false, directory: undefined, lines })], firstCode: undefined, onEnded: () => undefined, isOver: () => false };
   }
   const book = await AccessBook.load(file, now);
   const passwords = new Passwords();
@@ -52,13 +58,16 @@ export async function accessOf({ file, settings, plantName, lines, log, now = Da
   const spans = { idleMs: settings.sessionIdleHours * 3_600_000, mostMs: settings.sessionDays * 86_400_000 };
   const guard = new AccountGuard(book, acting, spans, (cause) => log.error({ err: cause }, 'a use or a refusal was not kept'));
   const invitations = new Invitations(book, passwords, plantName);
-  const host: AccessHost = { book, signIn: new SignIn(book, passwords), invitations, own: new OwnAccount(book, passwords, plantName), acting, sessionSeconds: settings.sessionDays * 86_400, lines };
+  const signIn = new SignIn(book, passwords);
+  const host: AccessHost = { book, signIn, passkeys: new Passkeys(book, signIn), invitations, own: new OwnAccount(book, passwords, plantName), acting, sessionSeconds: settings.sessionDays * 86_400, lines };
+  const directory = told && new Directory(told, book);
   await book.dropOver(spans);
   return {
     guard,
     routes: [
-      meRoute({ access, hasAccounts: () => book.accounts.size > 0, lines }),
-      ...signInRoutes(host), ...accountRoutes(host), ...ownRoutes(host), ...displayRoutes(host), ...terminalRoutes(host),
+      meRoute({ access, hasAccounts: () => book.accounts.size > 0, hasPasskeys: () => book.passkeys.size > 0, directory: directory?.name, lines }),
+      ...signInRoutes(host), ...accountRoutes(host), ...ownRoutes(host), ...displayRoutes(host), ...terminalRoutes(host), ...passkeyRoutes(host),
+      ...(directory === undefined ? [] : directoryRoutes(host, directory)),
     ],
     firstCode: (await invitations.first())?.code,
     onEnded: (listener) => book.onEnded(listener),

@@ -66,6 +66,11 @@ export class OwnAccount {
     this.#book.ended([token]);
   }
 
+  /** Makes sure again of who sits there, before another way in is opened; an account without a password has none to ask for. @throws BadRequest */
+  async again(id: string, password: string | undefined): Promise<void> {
+    if (this.#account(id).password !== null) await this.#checked(id, password ?? '', 'password');
+  }
+
   #account(id: string): Account {
     const account = this.#book.accounts.get(id);
     if (account === undefined) throw new NotFound('there is no such account');

@@ -40,8 +40,8 @@ export class SignIn {
     this.#byAddress = new Throttle({ free: 50, first: 5_000, most: 15 * minute }, book.now);
   }
 
-  /** @throws TooManyTries, NotSignedIn (the same for an unknown name, a wrong password and a disabled account), TooBusy */
-  async signIn(name: string, password: string, from: Origin): Promise<Begun> {
+  /** @returns id of the account @throws TooManyTries, NotSignedIn (the same for an unknown name, a wrong password and a disabled account), TooBusy */
+  async check(name: string, password: string, from: Origin): Promise<string> {
     const pair = JSON.stringify([name.toLowerCase(), from.address]);
     const wait = Math.max(this.#byPair.wait(pair), this.#byAddress.wait(from.address));
     if (wait > 0) throw new TooManyTries(wait);
@@ -54,7 +54,7 @@ export class SignIn {
       throw new NotSignedIn('The name or the password is not right.');
     }
     this.#byPair.succeeded(pair);
-    return this.begin(found[0], from, 'password');
+    return found[0];
   }
 
   /** Begins a session with a new secret, whatever cookie came with the request. @param by how the person was known */

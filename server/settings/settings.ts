@@ -20,6 +20,10 @@ export interface Settings {
   readonly requestsPerSecond: number;
   readonly upgradesPerSecond: number;
   readonly access: 'accounts' | 'open';
+  readonly directoryIssuer: string | undefined;
+  readonly directoryClient: string | undefined;
+  readonly directorySecret: string | undefined;
+  readonly directoryName: string;
   readonly sessionIdleHours: number;
   readonly sessionDays: number;
 }
@@ -58,6 +62,10 @@ export const settingRules: readonly SettingRule[] = [
   { key: 'requestsPerSecond', name: 'requests-per-second', of: { kind: 'whole', from: 1, to: 1_000_000 }, preset: 100, help: 'requests a second from one address; ten times as many at once' },
   { key: 'upgradesPerSecond', name: 'upgrades-per-second', of: { kind: 'whole', from: 1, to: 1_000_000 }, preset: 500, help: 'sockets opened a second from one address; ten times as many at once' },
   { key: 'access', name: 'access', of: { kind: 'choice', of: ['accounts', 'open'] }, preset: 'accounts', help: 'accounts: people sign in, and each role does its work; open: whoever reaches the server does everything (on this machine only)' },
+  { key: 'directoryIssuer', name: 'directory-issuer', of: { kind: 'text' }, preset: undefined, help: 'issuer (URL) of the OpenID Connect provider of the plant, where people may sign in through it' },
+  { key: 'directoryClient', name: 'directory-client', of: { kind: 'text' }, preset: undefined, help: 'client id that the provider knows this server by' },
+  { key: 'directorySecret', name: 'directory-secret', of: { kind: 'text' }, preset: undefined, help: 'its client secret; better as variable or in the settings file than as a flag' },
+  { key: 'directoryName', name: 'directory-name', of: { kind: 'text' }, preset: 'the plant directory', help: 'what people call it' },
   { key: 'sessionIdleHours', name: 'session-idle-hours', of: { kind: 'whole', from: 1, to: 720 }, preset: 12, help: 'hours after which a session that is not used ends' },
   { key: 'sessionDays', name: 'session-days', of: { kind: 'whole', from: 1, to: 365 }, preset: 30, help: 'days after which every session ends' },
 ];

@@ -4,6 +4,7 @@ import type { ActingPeople } from '../../access/acting.ts';
 import type { Caller } from '../../access/caller.ts';
 import type { Invitations } from '../../access/invitations.ts';
 import type { OwnAccount } from '../../access/own-account.ts';
+import type { PasskeyPlace, Passkeys } from '../../access/passkeys.ts';
 import { sessionCookie } from '../../access/session-cookie.ts';
 import type { Begun, Origin, SignIn } from '../../access/sign-in.ts';
 
@@ -14,6 +15,7 @@ export interface AccessHost {
   readonly invitations: Invitations;
   readonly own: OwnAccount;
   readonly acting: ActingPeople;
+  readonly passkeys: Passkeys;
   /** How long a browser keeps the cookie, s. */
   readonly sessionSeconds: number;
   readonly lines: () => readonly string[];
@@ -31,3 +33,6 @@ export const accountOf = ({ account }: Caller): string => account ?? '';
 
 /** The name under which a person's act is recorded. */
 export const nameOf = ({ name }: Caller): string => name ?? 'unknown';
+
+/** Where a passkey holds: at the host the browser asked for. */
+export const placeOf = (request: FastifyRequest): PasskeyPlace => ({ host: request.hostname, origin: `${request.protocol}://${request.host}` });

@@ -29,4 +29,10 @@ export const tokenRequest = v.strictObject({
 export const displayRequest = v.strictObject({ name: words(1, 80, 'a name of 1 to 80 characters'), line: v.optional(words(1, 64, 'the id of a line')), acting: v.optional(v.boolean(), false) });
 export const displaySignInRequest = v.strictObject({ token: secret });
 export const actAsRequest = v.strictObject({ account: v.pipe(v.string(), v.maxLength(64)), pin: v.pipe(v.string('a PIN'), v.maxLength(16)) });
-export const idParams = v.object({ id: v.pipe(v.string(), v.maxLength(64)) });
+const answer = v.looseObject({ id: v.pipe(v.string('what the device answered'), v.maxLength(2_000)) });
+
+export const passwordAgainRequest = v.strictObject({ password: v.optional(secret) });
+export const makePasskeyRequest = v.strictObject({ name: words(1, 80, 'a name of 1 to 80 characters'), answer });
+export const passkeyBeginRequest = v.strictObject({ ticket: v.optional(secret) });
+export const passkeyAnswerRequest = v.strictObject({ ticket: v.optional(secret), answer });
+export const idParams = v.object({ id: v.pipe(v.string(), v.maxLength(1_400)) });

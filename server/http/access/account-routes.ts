@@ -10,7 +10,7 @@ const manages = { action: 'manage-accounts', at: 'plant' } as const;
 export function accountRoutes(host: AccessHost): readonly AnyRoute[] {
   const { book, invitations, signIn } = host;
   const shown = (id: string, { name, shownAs, grants, made, lastSeen, disabled, password, pin }: Account): object => ({
-    id, name, shownAs, grants, made, lastSeen, disabled, hasPassword: password !== null, hasPin: pin !== null, passkeys: 0, sessions: book.sessionsOf(id).length,
+    id, name, shownAs, grants, made, lastSeen, disabled, hasPassword: password !== null, hasPin: pin !== null, passkeys: book.passkeysOf(id).length, sessions: book.sessionsOf(id).length,
   });
   const link = (code: string): string => `/join#${code}`;
   return [

@@ -9,6 +9,9 @@ type May = Readonly<Record<Action, { readonly plant: boolean; readonly lines: 'a
 export interface MeHost {
   readonly access: 'open' | 'accounts';
   readonly hasAccounts: () => boolean;
+  readonly hasPasskeys: () => boolean;
+  /** What people call the directory; undefined where none is set up. */
+  readonly directory: string | undefined;
   readonly lines: () => readonly string[];
 }
 
@@ -19,8 +22,8 @@ export function meRoute(host: MeHost): AnyRoute {
     handle: ({ caller }) => ({
       access: host.access,
       firstAccount: host.access === 'accounts' && !host.hasAccounts(),
-      passkeys: false,
-      directory: null,
+      passkeys: host.hasPasskeys(),
+      directory: host.directory ?? null,
       caller: told(caller as Caller | undefined, host.lines()),
     }),
   });

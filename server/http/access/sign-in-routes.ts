@@ -16,7 +16,10 @@ export function signInRoutes(host: AccessHost): readonly AnyRoute[] {
     route({
       method: 'POST', path: '/api/sign-in', summary: 'Signs in by name and password', needs: 'nobody', body: signInRequest,
       handle: async ({ body: { name, password }, request, reply }) => {
-        const begun = await signIn.signIn(name, password, originOf(request));
+        const account = await signIn.check(name, password, originOf(request));
+        const ticket = host.passkeys.ticketFor(account);
+        if (ticket !== undefined) return { second: 'passkey', ticket };
+        const begun = await signIn.begin(account, originOf(request), 'password');
         return reply.header('set-cookie', cookieOf(begun, request, sessionSeconds)).send({ name: begun.name });
       },
     }),

@@ -168,7 +168,7 @@ describe('guessing', () => {
     const signIn = new SignIn(await AccessBook.load(plant.file, () => plant.now), passwords);
     const hashed = async (name: string): Promise<number> => {
       const before = passwords.hashings;
-      await expect(signIn.signIn(name, 'guess', { address: '10.0.0.1', agent: '' })).rejects.toThrow('not right');
+      await expect(signIn.check(name, 'guess', { address: '10.0.0.1', agent: '' })).rejects.toThrow('not right');
       return passwords.hashings - before;
     };
     expect([await hashed('olaf'), await hashed('nobody'), await hashed('olaf')]).toEqual([1, 1, 1]);

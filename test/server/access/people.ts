@@ -48,7 +48,7 @@ export class Plant {
 
   async open(): Promise<this> {
     this.file = openMemoryStore(this.#disk).access;
-    this.access = await accessOf({ file: this.file, settings: { access: 'accounts', sessionIdleHours: 12, sessionDays: 30 }, plantName: () => 'Hose works', lines: () => ['A', 'B'], log: logOf('silent'), now: () => this.now });
+    this.access = await accessOf({ file: this.file, settings: { access: 'accounts', sessionIdleHours: 12, sessionDays: 30 }, directory: undefined, plantName: () => 'Hose works', lines: () => ['A', 'B'], log: logOf('silent'), now: () => this.now });
     this.http = await httpServer({ hops: hopsOf(''), tls: undefined, requestsPerSecond: 10_000 });
     serveRoutes(this.http, this.access.routes, this.access.guard);
     return this;

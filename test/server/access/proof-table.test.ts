@@ -49,7 +49,7 @@ describe('role by action by route', () => {
   it('has every route with what it needs', () => {
     expect(table.length).toBeGreaterThan(45);
     expect(table.filter(({ needs }) => needs === undefined).map(({ method, path }) => `${method} ${path}`).sort()).toEqual([
-      'GET /api/me', 'GET /api/plant/example', 'GET /api/plant/schema', 'POST /api/display/sign-in', 'POST /api/invitations/accept', 'POST /api/invitations/look', 'POST /api/sign-in', 'POST /api/sign-out',
+      'GET /api/me', 'GET /api/plant/example', 'GET /api/plant/schema', 'POST /api/display/sign-in', 'POST /api/invitations/accept', 'POST /api/invitations/look', 'POST /api/sign-in', 'POST /api/sign-in/passkey/begin', 'POST /api/sign-in/passkey/finish', 'POST /api/sign-out',
     ]);
   });
 
