@@ -44,12 +44,12 @@ const ask = (method: string, path: string, body?: object): Promise<Answer> =>
 const make = (options: object): Promise<object> =>
   page.evaluate(async (json) => {
     const made = (await navigator.credentials.create({ publicKey: PublicKeyCredential.parseCreationOptionsFromJSON(json as never) })) as PublicKeyCredential;
-    return made.toJSON() as object;
+    return made.toJSON();
   }, options);
 const sign = (options: object): Promise<object> =>
   page.evaluate(async (json) => {
     const signed = (await navigator.credentials.get({ publicKey: PublicKeyCredential.parseRequestOptionsFromJSON(json as never) })) as PublicKeyCredential;
-    return signed.toJSON() as object;
+    return signed.toJSON();
   }, options);
 
 describe('a passkey', () => {

@@ -74,7 +74,8 @@ beforeAll(async () => {
     cookies: { keys: ['only for this test'] },
     ttl: { AccessToken: 60, AuthorizationCode: 60, Grant: 60, IdToken: 60, Interaction: 60, Session: 60 },
   });
-  provider.on('request', oidc.callback());
+  const answer = oidc.callback();
+  provider.on('request', (request, response) => void answer(request, response));
   first = await SignedIn.byLink(served, served.firstLink!, 'olaf');
 }, 30_000);
 afterAll(async () => {

@@ -65,7 +65,7 @@ describe('a server', () => {
     const database = new Database(join(directory.path, 'vouchline.db'), { readonly: true });
     const rows = (database.prepare('SELECT body FROM changes ORDER BY id').pluck().all() as string[]).map((body) => JSON.parse(body) as object);
     expect(rows).toMatchObject([
-      { kind: 'plant', who: 'server', after: expect.stringMatching(/^[0-9a-f]{16}$/) as string },
+      { kind: 'plant', who: 'server', after: { version: expect.stringMatching(/^[0-9a-f]{16}$/) as string } },
       { kind: 'restart', who: 'Ines', what: `guarantee ${id}`, why: 'new die' },
     ]);
     expect(checkChain(database)).toMatchObject({ kind: 'whole', head: { id: 2 } });
