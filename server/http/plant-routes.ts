@@ -5,6 +5,8 @@ import type { Watch } from '../../core/monitor/watch.ts';
 import { stripOf } from '../../core/view/strip-of.ts';
 import type { RunPaths } from '../../core/view/run-view.ts';
 import { runPathsOf } from '../../core/view/run-view-of.ts';
+import { togetherOf, type Together } from '../../core/view/together.ts';
+import type { Tail } from '../../core/units.ts';
 import { viewOf } from '../../core/view/view-of.ts';
 import { cardOf } from '../../core/view/card-of.ts';
 import type { History, Picture, Strip } from '../../core/view/history.ts';
@@ -13,7 +15,7 @@ import { seesLine, type Caller } from '../access/caller.ts';
 import type { HappeningFound, Page, Store } from '../store/store.ts';
 import { actingName } from './acting-name.ts';
 import { Conflict, NotFound } from './refusals.ts';
-import { acknowledgeRequest, alarmParams, alarmsQuery, eventsQuery, guaranteeParams, historyQuery, restartRequest } from './request-schemas.ts';
+import { acknowledgeRequest, alarmParams, alarmsQuery, eventsQuery, guaranteeParams, historyQuery, restartRequest, togetherQuery } from './request-schemas.ts';
 import { route, type AnyRoute } from './route.ts';
 
 /** What the requests of people and programs are answered from. */
@@ -44,6 +46,10 @@ export function plantRoutes(host: ApiHost): readonly AnyRoute[] {
         host.monitor().watches
           .filter(({ guarantee }) => seesLine(caller, guarantee.line))
           .map((watch) => ({ card: cardOf(watch.guarantee, host.monitor().plant), view: viewOf(watch) })),
+    }),
+    route({
+      method: 'GET', path: '/api/guarantees/together', summary: 'Which guarantees are demonstrated, said of all together', needs: { action: 'see', at: 'somewhere' }, query: togetherQuery,
+      handle: ({ query: { tail }, caller }): Together => togetherOf(host.monitor().watches.filter(({ guarantee }) => seesLine(caller, guarantee.line)), tail as Tail),
     }),
     route({
       method: 'GET', path: '/api/guarantees/:id/history', summary: 'Bound, estimate and events of a guarantee over a time', needs: { action: 'see', at: lineOf },

@@ -22,6 +22,8 @@ export const eventsQuery = v.strictObject({
   before: v.optional(wholeText),
   limit: v.optional(v.pipe(wholeText, v.minValue(1), v.maxValue(10_000)), '1000'),
 });
+/** All of the accepted error in one figure, e.g. 0.05. */
+export const togetherQuery = v.strictObject({ tail: v.optional(v.pipe(v.string(), v.regex(/^0?\.\d{1,15}$/, 'a number above 0, below 1'), v.transform(Number), v.minValue(1e-9, 'a number above 0, below 1')), '0.05') });
 export const alarmsQuery = v.strictObject({ before: v.optional(wholeText), limit: v.optional(v.pipe(wholeText, v.minValue(1), v.maxValue(1_000)), '50') });
 
 /** A request that does not fit: which field, what it held, what was expected. */
