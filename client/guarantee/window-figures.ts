@@ -5,7 +5,8 @@ import { windowWords } from '../words.ts';
 
 const names: Readonly<Record<string, string>> = {
   inspected: 'Inspected', nonconforming: 'Nonconforming', exposure: 'Exposure', count: 'Nonconformities', mean: 'Mean',
-  sd: 'Standard deviation', filled: 'Window filled', lotSize: 'Units in the lot', events: 'Events', runUnits: 'Units of the run', runNonconforming: 'Nonconforming in the run', runExposure: 'Exposure of the run',
+  sd: 'Standard deviation', filled: 'Window filled', lotSize: 'Units in the lot', events: 'Events', lots: 'Lots that ended', lotsOver: 'Lots with too many',
+  windowLots: 'Lots of the window', inspectedOfLot: 'Inspected of this lot', nonconformingOfLot: 'Nonconforming in this lot', runUnits: 'Units of the run', runNonconforming: 'Nonconforming in the run', runExposure: 'Exposure of the run',
   runCount: 'Nonconformities in the run', runRecords: 'Records of the run', runValues: 'Values of the run', runMean: 'Mean of the run', critical: 'Most it can take',
 };
 

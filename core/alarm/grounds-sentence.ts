@@ -20,7 +20,8 @@ export function groundsSentence(rule: RuleKind, quantity: Quantity, side: 'at-mo
 }
 
 function evidenceInWords(figures: Readonly<Record<string, number>>): string {
-  const { inspected, nonconforming, events, count, exposure, mean, values, seen, found, runUnits, runNonconforming } = figures;
+  const { inspected, nonconforming, events, count, exposure, mean, values, seen, found, runUnits, runNonconforming, lots, lotsOver } = figures;
+  if (lots !== undefined && lotsOver !== undefined) return `${lotsOver} of ${lots} lots held more nonconforming units than allowed`;
   if (seen !== undefined) return found === undefined ? `${seen} values since it last began` : `${found} found in ${Number(seen.toPrecision(9))} inspected since it last began`;
   if (runUnits !== undefined && runNonconforming !== undefined) return `${runNonconforming} nonconforming of ${runUnits} units since the run began`;
   if (inspected !== undefined && nonconforming !== undefined) {

@@ -24,16 +24,17 @@ import { TimedRecords } from './timed-records.ts';
 import { TimedUnitEvidence } from './timed-unit-evidence.ts';
 import { UnitEvidence } from './unit-evidence.ts';
 import type { Weighing } from './weighing.ts';
+import { WholeLotsEvidence } from './whole-lots-evidence.ts';
 
 /** The running evidence that a guarantee asks for. */
 export function evidenceOf(guarantee: Guarantee, standing: Standing): Evidence {
   const { promise } = guarantee;
   switch (promise.quantity) {
     case 'nonconforming-fraction':
-      return unitsOf(guarantee, fractionRule(guarantee, promise.atMost, promise.target), standing, {});
+      return fractionEvidence(guarantee, fractionRule(guarantee, promise.atMost, promise.target), standing, false);
     case 'yield': {
       const target = decimalComplement(promise.target) as Fraction;
-      return unitsOf(guarantee, fractionRule(guarantee, promise.atMostNonconforming, target), standing, { asYield: true });
+      return fractionEvidence(guarantee, fractionRule(guarantee, promise.atMostNonconforming, target), standing, true);
     }
     case 'fraction-beyond-limit':
       return beyondLimitOf(guarantee, promise, standing);
@@ -51,6 +52,12 @@ export function evidenceOf(guarantee: Guarantee, standing: Standing): Evidence {
       return new RecordEvidence(measuredRecords, held, new MeanRule(guarantee, promise), standing);
     }
   }
+}
+
+function fractionEvidence(guarantee: Guarantee, rule: CountRule, standing: Standing, asYield: boolean): Evidence {
+  const { clusters, window } = guarantee;
+  if (clusters?.kind !== 'lots') return unitsOf(guarantee, rule, standing, { asYield });
+  return new WholeLotsEvidence({ size: window.kind === 'units' ? window.units : undefined, allowed: clusters.allowed, asYield }, rule, standing);
 }
 
 function beyondLimitOf(guarantee: Guarantee, promise: BeyondLimit, standing: Standing): Evidence {

@@ -16,6 +16,8 @@ export interface Batch {
   readonly firstSequence: number;
   /** Which of the guarantee's stations it comes from, 0-based in line order. */
   readonly station: number;
+  /** The lot they belong to, where it was told. */
+  readonly lot?: string | undefined;
 }
 
 /** Estimate and bounds in the quantity's own unit; undefined where there is none. */
@@ -60,6 +62,8 @@ export interface Evidence {
   weigh(moment: Moment): void;
   /** Units in the finite lot the window belongs to, where the quantity asks for it. */
   setLotSize?(size: number | undefined): void;
+  /** A lot has ended, where whole lots are the units. */
+  endLot?(lot: string, moment: Moment): void;
   figures(): Readonly<Record<string, number>>;
   ranges(): readonly RecordRange[];
   bounds(): Bounds;

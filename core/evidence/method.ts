@@ -63,6 +63,13 @@ export const windowMethods = {
     assumes: ['Events come independently of each other at one rate.', 'An event has the declared number of units in the mean.'],
     source: `${clopperPearson}, on events: own derivation`,
   },
+  wholeLots: {
+    name: 'exact binomial bound on whole lots',
+    version: 1,
+    sentence: 'The largest share of nonconforming lots at which so few of them would still be seen with the probability that the confidence level leaves over. What happens within a lot is left open.',
+    assumes: ['Lots come from one steady process: each nonconforms with the same chance, independently of the others.', 'A lot counts once it has ended.'],
+    source: `${clopperPearson}, on lots`,
+  },
   studentMean: {
     name: 't bound on the mean',
     version: 1,
@@ -110,7 +117,7 @@ export const windowMethods = {
 export function methodOf(guarantee: Guarantee): Method {
   const { promise, stationError, clusters } = guarantee;
   if (stationError !== undefined) return told(stationError.kind === 'known' ? windowMethods.knownError : windowMethods.triedError, errorWords(stationError));
-  if (clusters !== undefined) return told(clusters.kind === 'events' ? windowMethods.events : windowMethods.designed, clusterWords(clusters));
+  if (clusters !== undefined) return told(clusterMethods[clusters.kind], clusterWords(clusters));
   switch (promise.quantity) {
     case 'nonconforming-fraction':
       return windowMethods.binomial;
@@ -129,6 +136,8 @@ export function methodOf(guarantee: Guarantee): Method {
       return windowMethods.lot;
   }
 }
+
+const clusterMethods = { events: windowMethods.events, 'design-effect': windowMethods.designed, lots: windowMethods.wholeLots } as const;
 
 /** A method with what the limit sheet declares for it. */
 const told = (method: Method, declared: string): Method => ({ ...method, assumes: [...method.assumes, declared] });

@@ -12,6 +12,7 @@ export function errorWords(error: StationError): string {
 
 /** What is declared of clusters, in a sentence. */
 export function clusterWords(clusters: Clusters): string {
+  if (clusters.kind === 'lots') return `Declared: a lot with more than ${clusters.allowed} nonconforming units does not conform; the promise is about lots.`;
   if (clusters.kind === 'design-effect') return `Declared: a design effect of ${clusters.designEffect} (${clusters.source}).`;
   return `Declared: nonconforming units within ${clusters.gap} units are one event, of ${clusters.clusterSize} units in the mean (${clusters.source}).`;
 }

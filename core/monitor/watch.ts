@@ -88,7 +88,7 @@ export class Watch {
         this.#beginAnew(moment);
       }
       this.#heard(moment);
-      const batch: Batch = { part, from, to, source, firstSequence, station };
+      const batch: Batch = { part, from, to, source, firstSequence, station, lot };
       if (late) this.#steps.fill(batch, moment);
       else this.#steps.take(batch, moment, (first, end) => this.#giveWindow(batch, first, end, moment));
       if (moment.at > this.newest) this.newest = moment.at;
@@ -160,6 +160,7 @@ export class Watch {
     if (mark.kind === 'line-stopped' || movedOn) this.#heard(moment);
     if (mark.kind === 'changeover' || mark.kind === 'lot-start') this.#productRuns(mark.product, moment);
     if (mark.kind === 'lot-start' && this.guarantee.window.kind === 'lot') this.#startLot(mark.lot, mark.size, moment);
+    if (mark.kind === 'lot-end') this.evidence.endLot?.(mark.lot, moment);
     this.#refreshDue();
   }
 

@@ -32,7 +32,7 @@ export function sharesOfBudget(falseCalls: number, known: readonly Known[], comp
 function takesPart(entry: GuaranteeFile): boolean {
   if (entry.quantity === 'chained-yield' || entry.quantity === 'lot-fraction') return false;
   if (entry.quantity === 'mean' && !entry.sigma && !entry.range) return false;
-  if ('clusters' in entry && entry.clusters !== undefined && 'design-effect' in entry.clusters) return false;
+  if ('clusters' in entry && entry.clusters !== undefined && !('merge-within' in entry.clusters)) return false;
   const rule = entry.alarms?.deterioration;
   return rule === undefined || (rule !== 'off' && rule['units-between-false-calls'] === undefined);
 }

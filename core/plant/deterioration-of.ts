@@ -35,8 +35,9 @@ export function deteriorationOf(file: DeteriorationFile | undefined, setting: Se
   const { baseline = 'line', detector = 'mixture' } = file ?? {};
   if (baseline === 'normal-rate' && normalRate === undefined) return void complain(['baseline'], 'line, or a normal-rate in the guarantee');
   const at = changeBaseline({ promise, tail, ...remedies }, baseline === 'normal-rate' ? normalRate : undefined);
-  if (remedies.clusters?.kind === 'design-effect') {
-    return file && void complain([], 'off: with a design-effect no distance between false calls is known; merge-within has one');
+  const { clusters } = remedies;
+  if (clusters?.kind === 'design-effect' || clusters?.kind === 'lots') {
+    return file && void complain([], `off: ${clusters.kind === 'lots' ? 'whole lots are too few for a change detector' : 'with a design-effect no distance between false calls is known'}; merge-within has one`);
   }
   const kind = kindOf(promise, at);
   if (typeof kind === 'string') return file && void complain([], kind);

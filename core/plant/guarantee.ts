@@ -105,7 +105,9 @@ export type Clusters =
   /** The sample counts as one 1 / designEffect its size; 1 or more. */
   | { readonly kind: 'design-effect'; readonly designEffect: number; readonly source: string }
   /** Nonconforming units at most `gap` units after the one before are one event; an event has `clusterSize` units in the mean. */
-  | { readonly kind: 'events'; readonly gap: number; readonly clusterSize: number; readonly source: string };
+  | { readonly kind: 'events'; readonly gap: number; readonly clusterSize: number; readonly source: string }
+  /** Whole lots are counted: one with more than `allowed` nonconforming units does not conform; the promise is about lots. */
+  | { readonly kind: 'lots'; readonly allowed: number };
 
 /** One promise with its settings: what a limit sheet says. */
 export interface Guarantee {

@@ -39,6 +39,10 @@ function stationErrorOf(file: StationErrorFile, tail: Tail, complain: Complain):
 }
 
 function clustersOf(file: ClustersFile, window: GuaranteeFile['window'], complain: Complain): Clusters {
+  if ('lots-with-more-than' in file) {
+    if (window !== undefined && window !== 'run' && !(typeof window === 'object' && 'units' in window)) complain(['clusters', 'lots-with-more-than'], 'a window of units, which are whole lots then, or run');
+    return { kind: 'lots', allowed: file['lots-with-more-than'] };
+  }
   const { source } = file;
   if ('design-effect' in file) return { kind: 'design-effect', designEffect: file['design-effect'], source };
   if (typeof window === 'object' && 'time' in window) {
@@ -56,7 +60,7 @@ export function countedWith({ stationError, clusters }: Remedies, counted: Count
     const { toDemonstrate, tail: left } = errorLines(stationError, tail);
     return { counted: mapped(counted, toDemonstrate), tail: left };
   }
-  if (clusters === undefined) return { counted, tail };
+  if (clusters === undefined || clusters.kind === 'lots') return { counted, tail };
   const by = clusters.kind === 'events' ? clusters.clusterSize : clusters.designEffect;
   return { counted: mapped(counted, (line) => line / by), tail };
 }

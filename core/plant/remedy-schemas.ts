@@ -15,11 +15,13 @@ export const stationErrorSchema = choice(
 const designEffect = record({ 'design-effect': sizeSchema, source: sourceSchema });
 const events = record({ 'merge-within': positiveCountSchema, 'cluster-size': sizeSchema, source: sourceSchema });
 
+const lots = record({ 'lots-with-more-than': countSchema });
+
 /** What is declared of nonconforming units that come in clusters. */
 export const clustersSchema = choice(
-  [designEffect, events],
-  (value) => (isMapping(value) && 'design-effect' in value ? designEffect : events),
-  'a remedy for clusters: design-effect and source; or merge-within (units), cluster-size and source',
+  [designEffect, events, lots],
+  (value) => (!isMapping(value) ? events : 'design-effect' in value ? designEffect : 'lots-with-more-than' in value ? lots : events),
+  'a remedy for clusters: design-effect and source; merge-within (units), cluster-size and source; or lots-with-more-than (units)',
 );
 
 export type StationErrorFile = v.InferOutput<typeof stationErrorSchema>;

@@ -87,8 +87,8 @@ export class GuaranteeRun {
 
   /** A batch with its nonconforming records listed. */
   read(batch: Batch): RunBatch {
-    const { part, from, to, source, firstSequence, station } = batch;
-    return { part, from, to, source, firstSequence, station, places: nonconformingPlaces(part, from, to, this.#limit) };
+    const { part, from, to, source, firstSequence, station, lot } = batch;
+    return { part, from, to, source, firstSequence, station, lot, places: nonconformingPlaces(part, from, to, this.#limit) };
   }
 
   /** Records of a batch come; taken step by step after this. */

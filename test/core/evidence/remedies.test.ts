@@ -4,7 +4,9 @@ import { knownErrorUpper } from '../../../core/bound/inspection-error.ts';
 import { fractionUpper } from '../../../core/bound/nonconforming-fraction.ts';
 import { methodOf } from '../../../core/evidence/method.ts';
 import type { Tail } from '../../../core/units.ts';
-import { bad, good, WatchOne } from './watch-one.ts';
+import type { Part } from '../../../core/record/part.ts';
+import { origins } from './evidence-plant.ts';
+import { bad, good, lotStart, WatchOne } from './watch-one.ts';
 
 const tail = 0.05 as Tail;
 const quiet = 'silence: off, bad-data: off';
@@ -94,5 +96,51 @@ describe('declared clusters', () => {
     const spread = [...Array(8).keys()].flatMap(() => [bad(1), good(4)]);
     expect(run.take(...spread).raised).toBe(0);
     expect(singly.take(...spread).raised).toBeGreaterThan(0);
+  });
+});
+
+describe('whole lots as units', () => {
+  const lots = leak('clusters: { lots-with-more-than: 2 }').replace('at-most: 1 %', 'at-most: 20 %');
+  const lot = (name: string, nonconforming: number): Part[] => [lotStart(name, undefined), bad(nonconforming), good(50)].filter((part) => part.records > 0);
+  const ended = (name: string): Part => ({ kind: 'lot-end', records: 1, at: 0, line: 'A', lot: name });
+
+  it('[E5][E7] count once they have ended, by a mark or by the next one', () => {
+    const one = new WatchOne(lots);
+    one.take(...lot('L-1', 2), ...lot('L-2', 3));
+    expect(one.watch.evidence.figures()).toMatchObject({ lots: 1, lotsOver: 0, inspectedOfLot: 53, nonconformingOfLot: 3 });
+    one.take(ended('L-2'));
+    expect(one.watch.evidence.figures()).toMatchObject({ lots: 2, lotsOver: 1 });
+    for (let k = 3; ; k += 1) {
+      const { lots: count = 0 } = one.watch.evidence.figures();
+      const safe = fractionUpper(1, count, tail) <= 0.2;
+      expect(one.state === 'demonstrated').toBe(safe);
+      if (safe) break;
+      one.take(...lot(`L-${k}`, 0), ended(`L-${k}`));
+    }
+  });
+
+  it('take late units and corrections of a lot that ended', () => {
+    const one = new WatchOne(lots);
+    one.take(lotStart('L-1', undefined), bad(3), good(40), ended('L-1'));
+    expect(one.watch.evidence.figures()).toMatchObject({ lots: 1, lotsOver: 1 });
+    one.take({ kind: 'correction', records: 1, origin: origins.leak, at: 0, corrects: 2, finding: { kind: 'verdict', nonconforming: false }, reason: 'inspected again' });
+    expect(one.watch.evidence.figures()).toMatchObject({ lots: 1, lotsOver: 0 });
+  });
+
+  it('leave a window of lots by number', () => {
+    const one = new WatchOne(lots.replace('window: run', 'window: { units: 20 }'));
+    one.take(...lot('bad', 9), ended('bad'));
+    for (let k = 0; k < 19; k += 1) one.take(...lot(`L-${k}`, 0), ended(`L-${k}`));
+    expect(one.watch.evidence.figures()).toMatchObject({ lots: 20, lotsOver: 1 });
+    one.take(...lot('L-20', 0), ended('L-20'));
+    expect([one.watch.evidence.figures()['lotsOver'], one.watch.evidence.position]).toEqual([0, 21]);
+  });
+
+  it('[E4] are unknown while no lot was told', () => {
+    const one = new WatchOne(lots);
+    one.take(good(10));
+    expect([one.state, one.watch.standing.remark]).toEqual(['unknown', 'The lot of the records has not been told.']);
+    one.take(...lot('L-1', 0));
+    expect(one.state).toBe('gathering');
   });
 });
