@@ -1,6 +1,7 @@
 import { html, type TemplateResult } from 'lit';
 import type { Actor } from './access/actor.ts';
-import type { Caller } from './access/me.ts';
+import { mayDo, type Caller } from './access/me.ts';
+import { roleMissing } from './access/role-words.ts';
 import type { Who } from './access/who.ts';
 import type { Lane } from './board/lane.ts';
 import type { LivePicture } from './feed/live-picture.ts';
@@ -16,6 +17,8 @@ export interface PageGround {
   readonly picture: LivePicture | undefined;
   readonly lanes: readonly Lane[];
   readonly formats: Formats;
+  /** The plant's, or this browser's while the plant is not known. */
+  readonly timeZone: string;
   readonly plantNow: number;
   readonly wall: boolean;
   readonly grouped: boolean;
@@ -36,6 +39,38 @@ export function pageOf(ground: PageGround, pages: FetchedPages): TemplateResult 
     case 'join':
     case 'display':
       return doorPage(route.kind, ground.who, '', pages);
+    default: {
+      const { kind } = route;
+      return fetchedPage(pages.standOf(kind), () => ownPage(kind, ground));
+    }
+  }
+}
+
+/** What each page of its own is for, and who may. */
+const ownPages = {
+  people: { doing: 'Managing accounts', action: 'manage-accounts' },
+  displays: { doing: 'Managing displays', action: 'manage-displays' },
+  sources: { doing: 'Managing sources', action: 'manage-sources' },
+  changes: { doing: 'Reading the record of changes', action: 'read-changes' },
+} as const;
+
+/** The pages of one's account, people, displays, sources and the record. */
+function ownPage(kind: 'account' | keyof typeof ownPages, { who: { me, caller }, picture, formats, timeZone }: PageGround): TemplateResult {
+  const lines = picture?.plant.lines ?? [];
+  if (kind !== 'account' && !mayDo(caller, ownPages[kind].action, undefined)) {
+    return html`<section class="sheet nowhere"><h1>This is not for you to do</h1><p>${roleMissing(ownPages[kind].doing, ownPages[kind].action, 'the whole plant')}</p><p><a href="/">Go to the line board</a></p></section>`;
+  }
+  switch (kind) {
+    case 'account':
+      return html`<account-page .caller=${caller} .lines=${lines} .formats=${formats} .passkeys=${me.passkeys}></account-page>`;
+    case 'people':
+      return html`<people-page .lines=${lines} .formats=${formats} .own=${caller.account}></people-page>`;
+    case 'displays':
+      return html`<displays-page .lines=${lines} .formats=${formats}></displays-page>`;
+    case 'sources':
+      return html`<sources-page .formats=${formats}></sources-page>`;
+    case 'changes':
+      return html`<changes-page .formats=${formats} .timeZone=${timeZone}></changes-page>`;
   }
 }
 

@@ -94,7 +94,8 @@ export class VouchlineApp extends LitElement {
     const { route } = this.#address;
     const now = this.#wiring.now();
     const freshness = freshnessOf(live.link, now);
-    const formats = this.#formatsFor(picture?.plant.timeZone ?? Intl.DateTimeFormat().resolvedOptions().timeZone, settings);
+    const timeZone = picture?.plant.timeZone ?? Intl.DateTimeFormat().resolvedOptions().timeZone;
+    const formats = this.#formatsFor(timeZone, settings);
     const plantNow = picture === undefined ? this.#wiring.wall() : plantTime(picture.clock, now);
     const lanes = picture === undefined ? [] : this.#lanesOf(picture);
     const needing = lanes.filter((lane) => lane.needsPerson).length;
@@ -111,7 +112,7 @@ export class VouchlineApp extends LitElement {
       <p class="fault" role="alert">${this.#fault}</p>
       </header>
       <main id="content" tabindex="-1" class=${freshness.kind === 'live' ? 'live' : 'stale'}>
-        ${pageOf({ route, who, actor: this.#actor, picture, lanes, formats, plantNow, wall, grouped: settings.grouped, lost: freshness.kind === 'lost' }, this.#pages)}
+        ${pageOf({ route, who, actor: this.#actor, picture, lanes, formats, timeZone, plantNow, wall, grouped: settings.grouped, lost: freshness.kind === 'lost' }, this.#pages)}
       </main>
       <alarm-announcer .alarms=${picture?.alarms} .cards=${picture?.cards} .formats=${formats} .actor=${this.#actor} .shown=${!wall && route.kind !== 'alarms'}></alarm-announcer>
       <acknowledge-dialog></acknowledge-dialog>

@@ -8,6 +8,11 @@ const fetchers: Readonly<Record<FetchedPage, () => Promise<unknown>>> = {
   'sign-in': () => import('./sign-in/sign-in-page.ts'),
   join: () => import('./sign-in/join-page.ts'),
   display: () => import('./sign-in/display-page.ts'),
+  account: () => import('./account/account-page.ts'),
+  people: () => import('./people/people-page.ts'),
+  displays: () => import('./displays/displays-page.ts'),
+  sources: () => import('./sources/sources-page.ts'),
+  changes: () => import('./changes/changes-page.ts'),
 };
 
 /** Fetches pages and knows how each stands. */

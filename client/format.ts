@@ -30,6 +30,8 @@ export interface Formats {
   readonly minute: (at: number) => string;
   readonly day: (at: number) => string;
   readonly moment: (at: number) => string;
+  /** To the second, with the year: for a record that is kept. */
+  readonly instant: (at: number) => string;
 }
 
 /** A figure and its unit in one, held together at the end of a line. */
@@ -107,5 +109,6 @@ export function formatsFor(locale: string | undefined, timeZone: string, shareUn
     minute: time({ hour: '2-digit', minute: '2-digit' }),
     day: time({ weekday: 'short', day: 'numeric', month: 'short' }),
     moment: time({ day: 'numeric', month: 'short', hour: '2-digit', minute: '2-digit' }),
+    instant: time({ day: 'numeric', month: 'short', year: 'numeric', hour: '2-digit', minute: '2-digit', second: '2-digit' }),
   };
 }

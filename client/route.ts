@@ -1,5 +1,5 @@
 /** Pages that have no more to their address than their name. */
-const plainPages = ['alarms', 'sign-in', 'join', 'display'] as const;
+const plainPages = ['alarms', 'sign-in', 'join', 'display', 'account', 'people', 'displays', 'sources', 'changes'] as const;
 export type PlainPage = (typeof plainPages)[number];
 
 /** The pages and their addresses: `/`, `/guarantees/:id`, and `/` with a plain page's name. */

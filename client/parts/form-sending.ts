@@ -26,7 +26,7 @@ export class FormSending implements ReactiveController {
       await work();
       return true;
     } catch (cause) {
-      this.refuse(cause instanceof Refusal ? (cause.field ?? '') : '', reasonOf(cause));
+      this.refuse(cause instanceof Refusal ? (cause.field ?? fieldIn(cause.message)) : '', reasonOf(cause));
       return false;
     } finally {
       this.busy = false;
@@ -62,6 +62,9 @@ export class FormSending implements ReactiveController {
     return this.#fault === undefined || fields.includes(rootOf(this.#fault.field)) ? '' : this.#fault.words;
   }
 }
+
+/** The field that a sentence names before its colon: 'name: somebody has this name already'. */
+const fieldIn = (sentence: string): string => /^([a-z][A-Za-z0-9.]*): /.exec(sentence)?.[1] ?? '';
 
 /** 'grants.0.role' is the field 'grants'. */
 const rootOf = (field: string): string => field.split('.')[0] ?? '';

@@ -18,7 +18,13 @@ export class PersonRequest extends Event {
   }
 }
 
-const pages: readonly { readonly path: PlainPage; readonly name: string; readonly action: Action }[] = [];
+const pages: readonly { readonly path: PlainPage; readonly name: string; readonly action: Action }[] = [
+  { path: 'account', name: 'My account', action: 'keep-own-account' },
+  { path: 'people', name: 'People', action: 'manage-accounts' },
+  { path: 'displays', name: 'Displays', action: 'manage-displays' },
+  { path: 'sources', name: 'Sources', action: 'manage-sources' },
+  { path: 'changes', name: 'Record of changes', action: 'read-changes' },
+];
 
 /** Who sits here, what they are, and where they may go; says plainly where access is open. */
 export class PersonMenu extends LitElement {
@@ -48,7 +54,7 @@ export class PersonMenu extends LitElement {
   protected override render(): TemplateResult | typeof nothing {
     if (this.who?.kind !== 'known') return nothing;
     const { caller } = this.who;
-    const links = pages.filter(({ action }) => mayDoSomewhere(caller, action));
+    const links = pages.filter(({ path, action }) => mayDoSomewhere(caller, action) && (path !== 'account' || caller.kind === 'account'));
     return html`<details>
       <summary><span>${this.#title(caller)}</span></summary>
       <div class="panel">

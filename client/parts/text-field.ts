@@ -6,7 +6,7 @@ export interface TextField {
   /** As in the body that is sent; refusals name it. */
   readonly name: string;
   readonly label: string;
-  readonly type?: 'text' | 'number' | 'datetime-local';
+  readonly type?: 'text' | 'password' | 'number' | 'datetime-local';
   readonly value?: string;
   readonly hint?: string | TemplateResult;
   readonly autocomplete?: string;

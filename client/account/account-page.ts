@@ -1,0 +1,47 @@
+import { ContextConsumer } from '@lit/context';
+import { html, LitElement, nothing, type TemplateResult } from 'lit';
+import type { Caller } from '../access/me.ts';
+import { grantsInWords, type LineName } from '../access/role-words.ts';
+import { wiringContext } from '../contexts.ts';
+import type { Formats } from '../format.ts';
+import { base } from '../look/base.ts';
+import { ownPage } from '../look/own-page.ts';
+import { ownDesk, type OwnDesk } from './own-desk.ts';
+import './own-passkeys.ts';
+import './own-password.ts';
+import './own-pin.ts';
+import './own-sessions.ts';
+import './own-tokens.ts';
+
+/** One's own account. */
+export class AccountPage extends LitElement {
+  static override properties = { caller: { attribute: false }, lines: { attribute: false }, formats: { attribute: false }, passkeys: { attribute: false } };
+  static override styles = [base, ownPage];
+
+  declare caller: Caller;
+  declare lines: readonly LineName[];
+  declare formats: Formats;
+  /** Whether one can sign in with a passkey here. */
+  declare passkeys: boolean;
+  readonly #wiring = new ContextConsumer(this, { context: wiringContext });
+  #desk: OwnDesk | undefined;
+
+  protected override render(): TemplateResult | typeof nothing {
+    const { caller, formats } = this;
+    const wiring = this.#wiring.value;
+    if (wiring === undefined) return nothing;
+    if (caller.kind !== 'account') return html`<section class="sheet part"><h1>Nobody is signed in here</h1><p>This page is for people with an account.</p></section>`;
+    this.#desk ??= ownDesk(wiring.ask);
+    const desk = this.#desk;
+    return html`<h1>${caller.name}</h1>
+      <p class="lead">${grantsInWords(caller.grants, this.lines)}. Roles are given by an administrator.</p>
+      <div class="columns">
+        <div><own-password .desk=${desk}></own-password><own-pin .desk=${desk}></own-pin></div>
+        <div><own-sessions .desk=${desk} .formats=${formats} .left=${wiring.who.signOut}></own-sessions>
+          ${this.passkeys ? html`<own-passkeys .desk=${desk} .formats=${formats}></own-passkeys>` : nothing}
+          <own-tokens .desk=${desk} .caller=${caller} .formats=${formats}></own-tokens></div>
+      </div>`;
+  }
+}
+
+customElements.define('account-page', AccountPage);

@@ -1,0 +1,66 @@
+import type { ChangeKind } from '../../core/access/change.ts';
+
+/** What happened, for the list and its filter. */
+export const changeWord: Readonly<Record<ChangeKind, string>> = {
+  acknowledge: 'Alarm acknowledged',
+  restart: 'Evidence restarted',
+  plant: 'Plant file loaded',
+  'source-made': 'Source made',
+  'token-renewed': 'Source’s token renewed',
+  'token-withdrawn': 'Source withdrawn',
+  refused: 'Refused',
+  'sign-in': 'Signed in',
+  'sign-in-failed': 'Sign-in failed',
+  'sign-out': 'Signed out',
+  account: 'Account changed',
+  invitation: 'Invitation',
+  session: 'Session',
+  token: 'API token',
+  display: 'Display',
+  passkey: 'Passkey',
+  pin: 'PIN',
+};
+
+/** A part of a record, and what it was and became; absent where it was not there. */
+export interface Difference {
+  /** Empty where the record speaks of one thing only. */
+  readonly name: string;
+  readonly before: string | undefined;
+  readonly after: string | undefined;
+}
+
+/** JSON of a record as it comes from the server, where absence is undefined. */
+export type Told = undefined | null | boolean | number | string | readonly Told[] | { readonly [name: string]: Told };
+
+const isList = (value: Told): value is readonly Told[] => Array.isArray(value);
+const isParts = (value: Told): value is { readonly [name: string]: Told } => typeof value === 'object' && value !== null && !isList(value);
+
+/** What differs between before and after, part by part; what stayed is left out. */
+export function differencesOf(before: Told, after: Told): readonly Difference[] {
+  const [was, is] = [before ?? {}, after ?? {}];
+  if (isParts(was) && isParts(is)) {
+    return [...new Set([...Object.keys(was), ...Object.keys(is)])]
+      .map((name) => ({ name: nameWords(name), before: partWords(name, was[name]), after: partWords(name, is[name]) }))
+      .filter((part) => part.before !== part.after);
+  }
+  return before === after ? [] : [{ name: '', before: wordsOf(before), after: wordsOf(after) }];
+}
+
+/** 'shownAs' is 'shown as'. */
+const nameWords = (name: string): string => name.replace(/([A-Z])/g, ' $1').toLowerCase();
+
+const times: ReadonlySet<string> = new Set(['expires', 'made', 'until', 'lastUsed', 'lastSeen']);
+
+const partWords = (name: string, value: Told): string | undefined =>
+  typeof value === 'number' && times.has(name) ? new Date(value).toISOString().slice(0, 16).replace('T', ' ') + ' UTC' : wordsOf(value);
+
+/** A value in words; undefined where there is none. */
+function wordsOf(value: Told): string | undefined {
+  if (value === undefined || value === null) return undefined;
+  if (typeof value === 'boolean') return value ? 'yes' : 'no';
+  if (isList(value)) return value.length === 0 ? 'none' : value.map((one) => wordsOf(one) ?? 'none').join(', ');
+  if (!isParts(value)) return String(value);
+  const { role, line } = value;
+  if (typeof role === 'string') return `${role} for ${typeof line === 'string' ? line : 'the plant'}`;
+  return Object.entries(value).map(([name, part]) => `${nameWords(name)} ${wordsOf(part) ?? 'none'}`).join(', ');
+}

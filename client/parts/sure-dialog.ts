@@ -1,0 +1,84 @@
+import { css, html, LitElement, nothing, type TemplateResult } from 'lit';
+import { base } from '../look/base.ts';
+import { dialog } from '../look/dialog.ts';
+import { form } from '../look/form.ts';
+import { FormSending, formOf, textsOf } from './form-sending.ts';
+import { textField, type TextField } from './text-field.ts';
+
+export interface SureAsked {
+  readonly title: string;
+  /** What it does, and whether it can be undone. */
+  readonly says: string;
+  /** The button's word: 'Withdraw'. */
+  readonly does: string;
+  /** What is asked besides: the reason that goes on record, hours, a password. */
+  readonly fields?: readonly TextField[];
+  readonly send: (text: (name: string) => string) => Promise<void>;
+}
+
+/** The reason that goes on record beside a change. */
+export const whyField: TextField = { name: 'why', label: 'Why', hint: 'Stands in the record of changes.', required: true, most: 500 };
+
+/** Asks before something is done, and for what the record wants to know of it. Says so when it is refused; nothing is closed then. */
+export class SureDialog extends LitElement {
+  static override styles = [base, dialog, form, css`p { text-wrap: pretty; }`];
+
+  readonly #sending = new FormSending(this);
+  #asked: SureAsked | undefined;
+  #done: ((done: boolean) => void) | undefined;
+
+  /** Whether it was done. */
+  ask(asked: SureAsked): Promise<boolean> {
+    this.#end(false);
+    return new Promise((done) => {
+      this.#asked = asked;
+      this.#done = done;
+      this.requestUpdate();
+      void this.updateComplete.then(() => {
+        this.renderRoot.querySelector('dialog')?.showModal();
+        this.renderRoot.querySelector<HTMLElement>('input, .cancel')?.focus();
+      });
+    });
+  }
+
+  protected override render(): TemplateResult {
+    return html`<dialog aria-labelledby="title" @close=${() => { this.#end(false); }}>${this.#asked === undefined ? nothing : this.#form(this.#asked)}</dialog>`;
+  }
+
+  #form({ title, says, does, fields = [], send }: SureAsked): TemplateResult {
+    return html`<form @submit=${(event: SubmitEvent) => { void this.#onSubmit(event, send); }}>
+      <h2 id="title">${title}</h2>
+      <p>${says}</p>
+      ${fields.map((field) => textField(this.#sending, field))}
+      <p class="fault" role="alert">${this.#sending.beyond(fields.map(({ name }) => name))}</p>
+      <div class="does">
+        <button type="button" class="cancel" @click=${() => { this.#end(false); }}>Cancel</button>
+        <button class="first" ?disabled=${this.#sending.busy}>${does}</button>
+      </div>
+    </form>`;
+  }
+
+  async #onSubmit(event: SubmitEvent, send: SureAsked['send']): Promise<void> {
+    const sent = formOf(event);
+    if (sent === undefined) return;
+    const text = textsOf(sent);
+    if (await this.#sending.send(() => send(text))) this.#end(true);
+  }
+
+  #end(done: boolean): void {
+    const tell = this.#done;
+    this.#done = undefined;
+    this.#asked = undefined;
+    this.#sending.clear();
+    this.renderRoot.querySelector('dialog')?.close();
+    tell?.(done);
+  }
+}
+
+customElements.define('sure-dialog', SureDialog);
+
+declare global {
+  interface HTMLElementTagNameMap {
+    'sure-dialog': SureDialog;
+  }
+}
