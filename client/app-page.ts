@@ -70,7 +70,7 @@ function ownPage(kind: 'account' | keyof typeof ownPages, { who: { me, caller },
     case 'sources':
       return html`<sources-page .formats=${formats}></sources-page>`;
     case 'changes':
-      return html`<changes-page .formats=${formats} .timeZone=${timeZone}></changes-page>`;
+      return html`<changes-page .lines=${lines} .formats=${formats} .timeZone=${timeZone}></changes-page>`;
   }
 }
 

@@ -29,6 +29,8 @@ export interface Formats {
   readonly clock: (at: number) => string;
   readonly minute: (at: number) => string;
   readonly day: (at: number) => string;
+  /** A day with its year. */
+  readonly date: (at: number) => string;
   readonly moment: (at: number) => string;
   /** To the second, with the year: for a record that is kept. */
   readonly instant: (at: number) => string;
@@ -108,6 +110,7 @@ export function formatsFor(locale: string | undefined, timeZone: string, shareUn
     clock: time({ hour: '2-digit', minute: '2-digit', second: '2-digit' }),
     minute: time({ hour: '2-digit', minute: '2-digit' }),
     day: time({ weekday: 'short', day: 'numeric', month: 'short' }),
+    date: time({ day: 'numeric', month: 'short', year: 'numeric' }),
     moment: time({ day: 'numeric', month: 'short', hour: '2-digit', minute: '2-digit' }),
     instant: time({ day: 'numeric', month: 'short', year: 'numeric', hour: '2-digit', minute: '2-digit', second: '2-digit' }),
   };

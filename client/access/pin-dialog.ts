@@ -1,4 +1,5 @@
 import { css, html, LitElement, nothing, type TemplateResult } from 'lit';
+import { keyed } from 'lit/directives/keyed.js';
 import { reasonOf, type Ask } from '../ask.ts';
 import { base } from '../look/base.ts';
 import { dialog } from '../look/dialog.ts';
@@ -56,19 +57,21 @@ export class PinDialog extends LitElement {
     });
   }
 
-  protected override render(): TemplateResult {
-    return html`<dialog aria-labelledby="title" @close=${() => { this.#end(undefined); }}>
-      ${this.#asked === undefined ? nothing : html`<div class="in">
+  /** A dialog of its own for each question: what the browser tells late of an earlier one ends no later one. */
+  protected override render(): unknown {
+    const asked = this.#asked;
+    return asked === undefined ? nothing : keyed(asked, html`<dialog aria-labelledby="title" @close=${() => { this.#end(asked, undefined); }}>
+      <div class="in">
         <h2 id="title">${this.#step.kind === 'pin' ? this.#step.person.shownAs : 'Who are you?'}</h2>
-        <p>${this.#asked.what}</p>
-        ${this.#body(this.#step, this.#asked)}
+        <p>${asked.what}</p>
+        ${this.#body(this.#step, asked)}
         <p class="fault" role="alert">${this.#fault}</p>
         <div class="does">
           ${this.#step.kind === 'pin' ? html`<button @click=${this.#another}>Somebody else</button>` : nothing}
-          <button @click=${this.#close}>Cancel</button>
+          <button @click=${() => { this.#end(asked, undefined); }}>Cancel</button>
         </div>
-      </div>`}
-    </dialog>`;
+      </div>
+    </dialog>`);
   }
 
   #body(step: Step, asked: Asked): TemplateResult {
@@ -102,13 +105,13 @@ export class PinDialog extends LitElement {
     }
   }
 
-  async #actAs({ ask }: Asked, person: TerminalPerson, pin: string): Promise<void> {
+  async #actAs(asked: Asked, person: TerminalPerson, pin: string): Promise<void> {
     this.#busy = true;
     this.#fault = '';
     this.requestUpdate();
     try {
-      const { name } = await ask<{ readonly name: string }>('POST', '/api/terminal/act-as', { account: person.account, pin });
-      this.#end(name);
+      const { name } = await asked.ask<{ readonly name: string }>('POST', '/api/terminal/act-as', { account: person.account, pin });
+      this.#end(asked, name);
     } catch (cause) {
       this.#fault = `Not taken: ${reasonOf(cause)}.`;
       this.renderRoot.querySelector('pin-pad')?.clear();
@@ -121,16 +124,12 @@ export class PinDialog extends LitElement {
     if (this.#step.kind === 'pin') this.#to({ kind: 'choosing', people: this.#step.people });
   };
 
-  readonly #close = (): void => {
-    this.#end(undefined);
-  };
-
-  #end(name: string | undefined): void {
-    const asked = this.#asked;
+  #end(asked: Asked, name: string | undefined): void {
+    if (asked !== this.#asked) return;
     this.#asked = undefined;
     this.renderRoot.querySelector('dialog')?.close();
     this.requestUpdate();
-    asked?.done(name);
+    asked.done(name);
   }
 }
 

@@ -49,7 +49,7 @@ export class OwnPasskeys extends LitElement {
   #row(passkey: OwnPasskey): TemplateResult {
     const { name, made, lastUsed } = passkey;
     return html`<li>
-      <div><b>${name}</b><br /><span class="quiet">Since ${this.formats.day(made)}, ${lastUsed === undefined ? 'never used' : `last used ${this.formats.moment(lastUsed)}`}</span></div>
+      <div><b>${name}</b><br /><span class="quiet">Since ${this.formats.date(made)}, ${lastUsed === undefined ? 'never used' : `last used ${this.formats.moment(lastUsed)}`}</span></div>
       <div class="does"><button aria-label="Remove: ${name}" @click=${() => { void this.#drop(passkey); }}>Remove</button></div>
     </li>`;
   }

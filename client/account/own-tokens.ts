@@ -49,7 +49,7 @@ export class OwnTokens extends LitElement {
   #row(token: OwnToken): TemplateResult {
     const { formats } = this;
     return html`<li>
-      <div><b>${token.name}</b><br /><span class="quiet">May ${listed(token.actions.map((action) => actionWord[action]))}. ${token.lastUsed === undefined ? 'Never used' : `Last used ${formats.moment(token.lastUsed)}`}, ends ${formats.day(token.expires)}.</span></div>
+      <div><b>${token.name}</b><br /><span class="quiet">May ${listed(token.actions.map((action) => actionWord[action]))}. ${token.lastUsed === undefined ? 'Never used' : `Last used ${formats.moment(token.lastUsed)}`}, ends ${formats.date(token.expires)}.</span></div>
       <div class="does"><button aria-label="Revoke: ${token.name}" @click=${() => { void this.#drop(token); }}>Revoke</button></div>
     </li>`;
   }

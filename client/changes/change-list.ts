@@ -1,13 +1,14 @@
 import { css, html, LitElement, nothing, type TemplateResult } from 'lit';
 import { repeat } from 'lit/directives/repeat.js';
 import type { RecordedChange } from '../../core/access/change.ts';
+import type { LineName } from '../access/role-words.ts';
 import type { Formats } from '../format.ts';
 import { base } from '../look/base.ts';
 import { changeWord, differencesOf, type Difference } from './change-words.ts';
 
 /** Records of changes, newest first: when, who, what, what was before and after, why. */
 export class ChangeList extends LitElement {
-  static override properties = { changes: { attribute: false }, formats: { attribute: false } };
+  static override properties = { changes: { attribute: false }, lines: { attribute: false }, formats: { attribute: false } };
 
   static override styles = [base, css`
     table { border-collapse: collapse; width: 100%; table-layout: fixed; }
@@ -30,6 +31,7 @@ export class ChangeList extends LitElement {
   `];
 
   declare changes: readonly RecordedChange[];
+  declare lines: readonly LineName[];
   declare formats: Formats;
 
   protected override render(): TemplateResult {
@@ -44,7 +46,7 @@ export class ChangeList extends LitElement {
       <td class="quiet"><span aria-label="Record ${id}">${this.formats.count(id)}.</span> ${this.formats.instant(at)}</td>
       <td>${who}</td>
       <td><b>${changeWord[kind] ?? kind}</b><br />${what}</td>
-      <td>${differencesOf(before, after).map((part) => this.#difference(part))}${why === '' ? nothing : html`<div class="why">${why}</div>`}</td>
+      <td>${differencesOf(before, after, this.lines).map((part) => this.#difference(part))}${why === '' ? nothing : html`<div class="why">${why}</div>`}</td>
     </tr>`;
   }
 

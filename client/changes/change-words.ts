@@ -1,4 +1,5 @@
 import type { ChangeKind } from '../../core/access/change.ts';
+import { lineNameOf, type LineName } from '../access/role-words.ts';
 
 /** What happened, for the list and its filter. */
 export const changeWord: Readonly<Record<ChangeKind, string>> = {
@@ -36,14 +37,14 @@ const isList = (value: Told): value is readonly Told[] => Array.isArray(value);
 const isParts = (value: Told): value is { readonly [name: string]: Told } => typeof value === 'object' && value !== null && !isList(value);
 
 /** What differs between before and after, part by part; what stayed is left out. */
-export function differencesOf(before: Told, after: Told): readonly Difference[] {
+export function differencesOf(before: Told, after: Told, lines: readonly LineName[]): readonly Difference[] {
   const [was, is] = [before ?? {}, after ?? {}];
   if (isParts(was) && isParts(is)) {
     return [...new Set([...Object.keys(was), ...Object.keys(is)])]
-      .map((name) => ({ name: nameWords(name), before: partWords(name, was[name]), after: partWords(name, is[name]) }))
+      .map((name) => ({ name: nameWords(name), before: partWords(name, was[name], lines), after: partWords(name, is[name], lines) }))
       .filter((part) => part.before !== part.after);
   }
-  return before === after ? [] : [{ name: '', before: wordsOf(before), after: wordsOf(after) }];
+  return before === after ? [] : [{ name: '', before: wordsOf(before, lines), after: wordsOf(after, lines) }];
 }
 
 /** 'shownAs' is 'shown as'. */
@@ -51,16 +52,16 @@ const nameWords = (name: string): string => name.replace(/([A-Z])/g, ' $1').toLo
 
 const times: ReadonlySet<string> = new Set(['expires', 'made', 'until', 'lastUsed', 'lastSeen']);
 
-const partWords = (name: string, value: Told): string | undefined =>
-  typeof value === 'number' && times.has(name) ? new Date(value).toISOString().slice(0, 16).replace('T', ' ') + ' UTC' : wordsOf(value);
+const partWords = (name: string, value: Told, lines: readonly LineName[]): string | undefined =>
+  typeof value === 'number' && times.has(name) ? new Date(value).toISOString().slice(0, 16).replace('T', ' ') + ' UTC' : wordsOf(value, lines);
 
 /** A value in words; undefined where there is none. */
-function wordsOf(value: Told): string | undefined {
+function wordsOf(value: Told, lines: readonly LineName[]): string | undefined {
   if (value === undefined || value === null) return undefined;
   if (typeof value === 'boolean') return value ? 'yes' : 'no';
-  if (isList(value)) return value.length === 0 ? 'none' : value.map((one) => wordsOf(one) ?? 'none').join(', ');
+  if (isList(value)) return value.length === 0 ? 'none' : value.map((one) => wordsOf(one, lines) ?? 'none').join(', ');
   if (!isParts(value)) return String(value);
   const { role, line } = value;
-  if (typeof role === 'string') return `${role} for ${typeof line === 'string' ? line : 'the plant'}`;
-  return Object.entries(value).map(([name, part]) => `${nameWords(name)} ${wordsOf(part) ?? 'none'}`).join(', ');
+  if (typeof role === 'string') return `${role} for ${typeof line === 'string' ? lineNameOf(lines, line) : 'the whole plant'}`;
+  return Object.entries(value).map(([name, part]) => `${nameWords(name)} ${wordsOf(part, lines) ?? 'none'}`).join(', ');
 }

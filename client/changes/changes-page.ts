@@ -1,6 +1,7 @@
 import { ContextConsumer } from '@lit/context';
 import { css, html, LitElement, nothing, type TemplateResult } from 'lit';
 import { changeKinds, type RecordedChange } from '../../core/access/change.ts';
+import type { LineName } from '../access/role-words.ts';
 import { reasonOf, type Ask } from '../ask.ts';
 import { wiringContext } from '../contexts.ts';
 import type { Formats } from '../format.ts';
@@ -18,10 +19,12 @@ import './record-head.ts';
 import type { ChainHead } from './record-head.ts';
 
 const pageSize = 100;
+/** Where there is room the filter stands open. */
+const wide = matchMedia('(min-width: 761px)');
 
 /** The record of changes: read, filtered, taken along. */
 export class ChangesPage extends LitElement {
-  static override properties = { formats: { attribute: false }, timeZone: { attribute: false }, query: { state: true } };
+  static override properties = { lines: { attribute: false }, formats: { attribute: false }, timeZone: { attribute: false }, query: { state: true } };
 
   static override styles = [base, form, ownPage, css`
     .filter { grid-template-columns: 1fr 1fr 1.2fr 1.5fr auto; align-items: start; gap: 0.8rem; }
@@ -31,6 +34,7 @@ export class ChangesPage extends LitElement {
     @media (max-width: 560px) { .filter { grid-template-columns: minmax(0, 1fr); } }
   `];
 
+  declare lines: readonly LineName[];
   declare formats: Formats;
   declare timeZone: string;
   declare query: ChangeQuery;
@@ -53,7 +57,7 @@ export class ChangesPage extends LitElement {
   protected override render(): TemplateResult {
     return html`<h1>Record of changes</h1>
       <p class="lead">Everything that changed the meaning of a figure or an alarm, or who may do so. It is only added to, and chained so that it can be checked.</p>
-      <section class="sheet part" aria-label="Filter">${this.#filter()}</section>
+      <section class="sheet part" aria-label="Filter"><details ?open=${wide.matches}><summary>Filter</summary>${this.#filter()}</details></section>
       <section class="sheet part" aria-label="Records">
         <div class="over"><h2>${this.query === wholeRecord ? 'Newest first' : 'Found, newest first'}</h2>
           <div class="does"><a class="button" download href=${this.#exportPath('ndjson')}>Export as NDJSON</a><a class="button" download href=${this.#exportPath('csv')}>Export as CSV</a></div></div>
@@ -77,7 +81,7 @@ export class ChangesPage extends LitElement {
     if (changes.length === 0) {
       return html`<p class="empty">${this.query === wholeRecord ? 'Nothing is on record yet. Sign-ins, acknowledgements, restarts, plant files and changes of accounts will stand here.' : 'Nothing on record fits the filter.'}</p>`;
     }
-    return html`<change-list .changes=${changes} .formats=${this.formats}></change-list>
+    return html`<change-list .changes=${changes} .lines=${this.lines} .formats=${this.formats}></change-list>
       <div class="foot">
         ${this.#allRead ? html`<p class="empty">${counted(this.formats, changes.length, 'record')}; there are no older ones${this.query === wholeRecord ? '' : ' that fit the filter'}.</p>` : html`<button @click=${() => { void this.#readOlder(changes.at(-1)?.id); }}>Show older</button>`}
         <p class="fault" role="alert">${this.#fault}</p>

@@ -76,7 +76,7 @@ export class DisplaysPage extends LitElement {
     const { formats } = this;
     return html`<li>
       <div><b>${name}</b>${acting ? html`<span class="mark">acts by PIN</span>` : nothing}<br />Shows ${line === undefined ? 'the whole plant' : lineNameOf(this.lines, line)}<br />
-        <span class="quiet">${lastSeen === undefined ? 'Never seen' : `Last seen ${formats.moment(lastSeen)}`}; added by ${by}, ${formats.day(made)}</span></div>
+        <span class="quiet">${lastSeen === undefined ? 'Never seen' : `Last seen ${formats.moment(lastSeen)}`}; added by ${by}, ${formats.date(made)}</span></div>
       <div class="does"><button aria-label="Withdraw: ${name}" @click=${() => { void this.#withdraw(display); }}>Withdraw</button></div>
     </li>`;
   }

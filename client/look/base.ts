@@ -20,7 +20,8 @@ export const base = css`
     border: 1.5px solid var(--edge); border-radius: 5px; padding: 0.35em 0.85em; min-height: 2.1em;
     cursor: pointer; touch-action: manipulation;
   }
-  button:hover { border-color: var(--ink); }
+  a.button { display: inline-grid; place-items: center; text-decoration: none; text-align: center; }
+  button:hover, a.button:hover { border-color: var(--ink); }
   button.first { background: var(--button); color: var(--button-ink); border-color: var(--button); }
   button.plain { border-color: transparent; background: none; text-decoration: underline; text-underline-offset: 0.2em; }
   button:disabled { opacity: 0.55; cursor: default; }

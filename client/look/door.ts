@@ -9,5 +9,4 @@ export const door = css`
   .told { border-left: 3px solid var(--ink); padding-left: 0.8rem; font-weight: 600; }
   .first { min-height: 3rem; font-size: 1.05rem; }
   .others { display: grid; gap: 0.5rem; border-top: 1px solid var(--rule); padding-top: 0.95rem; }
-  .others .button { display: grid; place-items: center; text-decoration: none; text-align: center; }
 `;

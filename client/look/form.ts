@@ -16,7 +16,7 @@ export const form = css`
   .does { display: flex; gap: 0.6rem; flex-wrap: wrap; align-items: center; }
   .does.end { justify-content: flex-end; }
   fieldset { border: 0; margin: 0; padding: 0; min-width: 0; }
-  .tick { display: flex; gap: 0.55rem; align-items: baseline; font-weight: 400; }
+  .tick { display: flex; gap: 0.55rem; align-items: baseline; font-weight: 400; padding-block: 0.25rem; }
   .tick input, td input[type='checkbox'] { width: 1.15em; height: 1.15em; flex: none; margin: 0; accent-color: var(--ink); translate: 0 0.15em; }
   .narrow { max-width: 10rem; }
   @media (pointer: coarse) { input, select { min-height: 48px; } .tick { padding-block: 0.5rem; } .tick input { min-height: 0; } }

@@ -2,7 +2,7 @@ import { css } from 'lit';
 
 /** Pages of people, displays, sources and the record: sheets of rows, each row what it is, what is known of it, what can be done. */
 export const ownPage = css`
-  :host { display: grid; gap: 0.9rem; max-width: 78rem; margin: 0 auto; }
+  :host { display: grid; gap: 0.9rem; }
   h1 { font-size: 1.4rem; margin-top: 0.3rem; }
   h2 { font-size: 1.1rem; }
   .lead { color: var(--quiet); max-width: 80ch; text-wrap: pretty; margin-top: -0.6rem; }
@@ -18,12 +18,15 @@ export const ownPage = css`
   .rows .off { color: var(--quiet); }
   .rows .does { justify-content: flex-end; }
   .mark { display: inline-block; border: 1px solid var(--edge); border-radius: 3px; padding: 0 0.4em; font-size: 0.86rem; font-weight: 600; margin-left: 0.5em; vertical-align: 0.06em; }
+  summary { cursor: pointer; font-weight: 650; padding: 0.35rem 0; }
+  details form { margin-top: 0.5rem; }
   .empty { color: var(--quiet); }
   .failed { display: grid; gap: 0.5rem; justify-items: start; }
   .failed p { color: var(--harm); font-weight: 600; }
   .said:empty { display: none; }
   .said { font-weight: 600; }
   code { font-family: ui-monospace, 'DejaVu Sans Mono', monospace; font-size: 0.93em; }
+  @media (pointer: coarse) { summary { padding: 0.9rem 0; } }
   @media (max-width: 1000px) { .columns, .aside { grid-template-columns: minmax(0, 1fr); } }
   @media (max-width: 760px) {
     .part { padding: 0.85rem 0.9rem 1rem; }

@@ -3,7 +3,7 @@ import { base } from '../look/base.ts';
 
 /** A link or token that is shown this once, with a button that copies it. */
 export class SecretOnce extends LitElement {
-  static override properties = { secret: { attribute: false }, label: { attribute: false }, note: { attribute: false }, said: { state: true } };
+  static override properties = { secret: { attribute: false }, label: {}, note: {}, said: { state: true } };
 
   static override styles = [base, css`
     section { border: 2px solid var(--ink); border-radius: 8px; padding: 0.8rem 1rem 0.95rem; background: var(--raised); display: grid; gap: 0.5rem; }

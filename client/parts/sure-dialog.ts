@@ -1,4 +1,5 @@
 import { css, html, LitElement, nothing, type TemplateResult } from 'lit';
+import { keyed } from 'lit/directives/keyed.js';
 import { base } from '../look/base.ts';
 import { dialog } from '../look/dialog.ts';
 import { form } from '../look/form.ts';
@@ -29,7 +30,7 @@ export class SureDialog extends LitElement {
 
   /** Whether it was done. */
   ask(asked: SureAsked): Promise<boolean> {
-    this.#end(false);
+    this.#end(this.#asked, false);
     return new Promise((done) => {
       this.#asked = asked;
       this.#done = done;
@@ -41,31 +42,35 @@ export class SureDialog extends LitElement {
     });
   }
 
-  protected override render(): TemplateResult {
-    return html`<dialog aria-labelledby="title" @close=${() => { this.#end(false); }}>${this.#asked === undefined ? nothing : this.#form(this.#asked)}</dialog>`;
+  /** A dialog of its own for each question: what the browser tells late of an earlier one ends no later one. */
+  protected override render(): unknown {
+    const asked = this.#asked;
+    return asked === undefined ? nothing : keyed(asked, html`<dialog aria-labelledby="title" @close=${() => { this.#end(asked, false); }}>${this.#form(asked)}</dialog>`);
   }
 
-  #form({ title, says, does, fields = [], send }: SureAsked): TemplateResult {
-    return html`<form @submit=${(event: SubmitEvent) => { void this.#onSubmit(event, send); }}>
+  #form(asked: SureAsked): TemplateResult {
+    const { title, says, does, fields = [] } = asked;
+    return html`<form @submit=${(event: SubmitEvent) => { void this.#onSubmit(event, asked); }}>
       <h2 id="title">${title}</h2>
       <p>${says}</p>
       ${fields.map((field) => textField(this.#sending, field))}
       <p class="fault" role="alert">${this.#sending.beyond(fields.map(({ name }) => name))}</p>
       <div class="does">
-        <button type="button" class="cancel" @click=${() => { this.#end(false); }}>Cancel</button>
+        <button type="button" class="cancel" @click=${() => { this.#end(asked, false); }}>Cancel</button>
         <button class="first" ?disabled=${this.#sending.busy}>${does}</button>
       </div>
     </form>`;
   }
 
-  async #onSubmit(event: SubmitEvent, send: SureAsked['send']): Promise<void> {
+  async #onSubmit(event: SubmitEvent, asked: SureAsked): Promise<void> {
     const sent = formOf(event);
     if (sent === undefined) return;
     const text = textsOf(sent);
-    if (await this.#sending.send(() => send(text))) this.#end(true);
+    if (await this.#sending.send(() => asked.send(text))) this.#end(asked, true);
   }
 
-  #end(done: boolean): void {
+  #end(asked: SureAsked | undefined, done: boolean): void {
+    if (asked !== this.#asked) return;
     const tell = this.#done;
     this.#done = undefined;
     this.#asked = undefined;

@@ -1,5 +1,4 @@
 import { html, nothing, type TemplateResult } from 'lit';
-import { live } from 'lit/directives/live.js';
 import type { FormSending } from './form-sending.ts';
 
 export interface TextField {
@@ -7,6 +6,7 @@ export interface TextField {
   readonly name: string;
   readonly label: string;
   readonly type?: 'text' | 'password' | 'number' | 'datetime-local';
+  /** What stands in it at first, and again when the form is emptied. */
   readonly value?: string;
   readonly hint?: string | TemplateResult;
   readonly autocomplete?: string;
@@ -16,7 +16,6 @@ export interface TextField {
   readonly from?: number;
   readonly to?: number;
   readonly narrow?: boolean;
-  readonly onInput?: (value: string) => void;
 }
 
 /** One labelled field with what is wanted below it and what is wrong beside it. */
@@ -24,14 +23,11 @@ export function textField(sending: FormSending, field: TextField): TemplateResul
   const fault = sending.of(field.name);
   return html`<div class="field">
     <label for=${field.name}>${field.label}</label>
-    <input class=${field.narrow === true ? 'narrow' : ''} id=${field.name} name=${field.name} type=${field.type ?? 'text'} .value=${field.onInput === undefined ? (field.value ?? '') : live(field.value ?? '')}
+    <input class=${field.narrow === true ? 'narrow' : ''} id=${field.name} name=${field.name} type=${field.type ?? 'text'} value=${field.value ?? ''}
       autocomplete=${field.autocomplete ?? 'off'} spellcheck="false" autocapitalize="none" ?required=${field.required === true} maxlength=${field.most ?? nothing}
       min=${field.from ?? nothing} max=${field.to ?? nothing}
       aria-invalid=${fault === '' ? 'false' : 'true'} aria-describedby="${field.name}-says"
-      @input=${(event: Event) => {
-        sending.typed(field.name);
-        if (event.target instanceof HTMLInputElement) field.onInput?.(event.target.value);
-      }} />
+      @input=${() => { sending.typed(field.name); }} />
     ${fieldSays(field.name, fault, field.hint)}
   </div>`;
 }

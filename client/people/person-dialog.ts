@@ -1,4 +1,5 @@
 import { css, html, LitElement, nothing, type TemplateResult } from 'lit';
+import { keyed } from 'lit/directives/keyed.js';
 import type { Grant } from '../../core/access/role.ts';
 import type { LineName } from '../access/role-words.ts';
 import { base } from '../look/base.ts';
@@ -20,7 +21,7 @@ export class PersonDialog extends LitElement {
   static override styles = [base, dialog, form, css`
     dialog { width: min(46rem, calc(100vw - 1.5rem)); }
     .in { display: grid; gap: 1rem; }
-    .more { border-top: 1px solid var(--rule); padding-top: 0.9rem; justify-content: flex-start; }
+    dialog .more { border-top: 1px solid var(--rule); padding-top: 0.9rem; justify-content: flex-start; }
     dialog .more button { flex: 0 1 auto; }
   `];
 
@@ -50,7 +51,8 @@ export class PersonDialog extends LitElement {
   }
 
   protected override render(): TemplateResult {
-    return html`<dialog aria-labelledby="title" @close=${this.#onClose}>${this.#person === undefined ? nothing : this.#body(this.#person)}</dialog><sure-dialog></sure-dialog>`;
+    const person = this.#person;
+    return html`${person === undefined ? nothing : keyed(person, html`<dialog aria-labelledby="title" @close=${() => { this.#onClose(person); }}>${this.#body(person)}</dialog>`)}<sure-dialog></sure-dialog>`;
   }
 
   #body(person: Person): TemplateResult {
@@ -119,11 +121,12 @@ export class PersonDialog extends LitElement {
     this.renderRoot.querySelector('dialog')?.close();
   };
 
-  readonly #onClose = (): void => {
+  #onClose(person: Person): void {
+    if (person !== this.#person) return;
     this.#person = undefined;
     this.link = '';
     this.requestUpdate();
-  };
+  }
 }
 
 customElements.define('person-dialog', PersonDialog);

@@ -19,15 +19,17 @@ export class RoleMatrix extends LitElement {
   static override properties = { grants: { attribute: false }, lines: { attribute: false } };
 
   static override styles = [base, form, css`
+    :host { container-type: inline-size; }
     table { border-collapse: collapse; width: 100%; }
     th { text-align: left; font-weight: 600; padding: 0.35rem 0.5rem 0.35rem 0; overflow-wrap: anywhere; }
-    thead th { font-size: 0.93rem; color: var(--quiet); }
-    thead th:not(:first-child), td { text-align: center; padding: 0; width: 17%; }
+    thead th { font-size: 0.86rem; color: var(--quiet); vertical-align: bottom; }
+    thead th:not(:first-child), td { text-align: center; padding: 0; width: 15.5%; overflow-wrap: normal; }
     tbody tr { border-top: 1px solid var(--rule); }
     td label { display: grid; place-items: center; min-height: 2.4rem; cursor: pointer; }
     td input[type='checkbox'] { translate: none; }
     td.held { color: var(--quiet); font-size: 0.86rem; }
-    @media (max-width: 560px) { thead th:not(:first-child) span { writing-mode: vertical-rl; rotate: 180deg; padding-block: 0.3rem; } td label { min-height: 3rem; } }
+    @container (max-width: 34rem) { thead th:not(:first-child) span { writing-mode: vertical-rl; rotate: 180deg; padding-block: 0.3rem; } thead th:not(:first-child), td { width: 12.5%; } }
+    @media (pointer: coarse) { td label { min-height: 3rem; } }
   `];
 
   declare grants: readonly Grant[];

@@ -27,6 +27,6 @@ export function lastUseWords({ lastUsed, revoked }: Source, formats: Formats): s
 export function tokenWords(tokens: Source['tokens'], formats: Formats): string {
   const ending = tokens.flatMap(({ expires }) => (expires === undefined ? [] : [expires]));
   const made = Math.max(...tokens.map((token) => token.made));
-  const since = tokens.length === 0 ? '' : `Token since ${formats.day(made)}.`;
+  const since = tokens.length === 0 ? '' : `Token since ${formats.date(made)}.`;
   return ending.length === 0 ? since : `${since} ${counted(formats, ending.length, 'old token')} until ${formats.moment(Math.max(...ending))}.`;
 }

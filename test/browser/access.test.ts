@@ -1,12 +1,8 @@
-import { readFileSync } from 'node:fs';
-import { createRequire } from 'node:module';
-import type { AxeResults } from 'axe-core';
-import type { Page } from 'playwright-core';
 import { afterAll, beforeAll, describe, expect, it } from 'vitest';
+import { axeFindings as findings } from './axe-findings.ts';
 import { startFake, type FakeServer } from './fake-server.ts';
 import { openBrowser, type Browser, type Size } from './open-browser.ts';
 
-const axe = readFileSync(createRequire(import.meta.url).resolve('axe-core/axe.min.js'), 'utf8');
 let browser: Browser;
 let fake: FakeServer;
 
@@ -18,15 +14,6 @@ afterAll(async () => {
   await browser.close();
   await fake.stop();
 });
-
-/** What the WCAG 2.2 A and AA rules of axe find, by rule and place. */
-async function findings(page: Page): Promise<string[]> {
-  await page.evaluate(axe);
-  const results = await page.evaluate(() =>
-    (globalThis as unknown as { axe: { run: (options: object) => Promise<AxeResults> } }).axe.run({ runOnly: ['wcag2a', 'wcag2aa', 'wcag21a', 'wcag21aa', 'wcag22aa', 'best-practice'] }));
-  expect(results.passes.length).toBeGreaterThan(10);
-  return results.violations.flatMap((one) => one.nodes.map((node) => `${one.id}: ${node.target.join(' ')} ${node.failureSummary ?? ''}`));
-}
 
 const pages: readonly (readonly [string, string])[] = [['/', 'board-lane'], ['/alarms', 'alarm-card'], ['/guarantees/leak-bh4', 'history-chart svg'], ['/guarantees/chain-b', 'guarantee-picture table'], ['/guarantees/pull-bh5', 'guarantee-picture svg']];
 const cases = pages.flatMap(([path, ready]) => (['desk', 'phone'] as const).flatMap((size) => (['light', 'dark'] as const).map((theme) => [path, size, theme, ready] as const)));

@@ -51,8 +51,6 @@ function invite(access: FakeAccess, part: Omit<FakeInvitation, 'id' | 'code' | '
   return made;
 }
 
-const linkTo = (request: IncomingMessage, path: string): string => `http://${request.headers.host ?? ''}${path}`;
-
 function accountView(access: FakeAccess, one: FakeAccount): object {
   const { id, name, shownAs, made, lastSeen, disabled } = one;
   return { id, name, shownAs, grants: told(one.grants), made, lastSeen, disabled, hasPassword: one.password !== '', hasPin: one.pin !== undefined, passkeys: one.passkeys.length, sessions: [...access.sessions.values()].filter(({ account }) => account === id).length };
@@ -139,8 +137,6 @@ function changesAsked({ access, url }: Asked): FakeAnswer {
   return ok(found.slice(0, Number(ask('limit') ?? 100)));
 }
 
-const madeWithLink = (path: string, code: string, { request }: Asked): string => linkTo(request, `${path}#${code}`);
-
 const accessRoutes: readonly FakeRoute[] = [
   { method: 'GET', path: /^\/api\/me$/, needs: undefined, does: ({ access, caller, known }) => ok(access.me(known ? caller : undefined)) },
   { method: 'POST', path: /^\/api\/sign-in$/, needs: undefined, does: signIn },
@@ -150,23 +146,23 @@ const accessRoutes: readonly FakeRoute[] = [
   { method: 'GET', path: /^\/api\/accounts$/, needs: 'manage-accounts', does: ({ access }) => ok([...access.accounts.values()].map((one) => accountView(access, one))) },
   { method: 'PUT', path: /^\/api\/accounts\/([^/]+)$/, needs: 'manage-accounts', does: changeAccount },
   { method: 'POST', path: /^\/api\/accounts\/([^/]+)\/new-password-link$/, needs: 'manage-accounts', does: (asked) => {
-    const { access, caller, request } = asked;
+    const { access, caller } = asked;
     const one = accountOf(asked);
     const { code, expires } = invite(access, { kind: 'new-password', grants: [], account: one.name, shownAs: one.shownAs, by: caller.name ?? '', expires: Date.now() + day });
-    return ok({ link: linkTo(request, `/join#${code}`), expires });
+    return ok({ link: `/join#${code}`, expires });
   } },
   { method: 'POST', path: /^\/api\/accounts\/([^/]+)\/sign-out-everywhere$/, needs: 'manage-accounts', does: (asked) => {
     const one = accountOf(asked);
     for (const session of [...asked.access.sessions.values()]) if (session.account === one.id) asked.access.end(session.id);
     return done;
   } },
-  { method: 'GET', path: /^\/api\/invitations$/, needs: 'manage-accounts', does: ({ access }) => ok([...access.invitations.values()].filter(({ kind }) => kind === 'account').map(({ id, grants, shownAs, made, by, expires }) => ({ id, grants: told(grants), shownAs, made, by, expires }))) },
+  { method: 'GET', path: /^\/api\/invitations$/, needs: 'manage-accounts', does: ({ access }) => ok([...access.invitations.values()].map(({ id, kind, grants, shownAs, made, by, expires }) => ({ id, kind, grants: told(grants), shownAs, made, by, expires }))) },
   { method: 'POST', path: /^\/api\/invitations$/, needs: 'manage-accounts', does: (asked) => {
     const { access, body, caller } = asked;
     const grants = grantsIn(body);
     if (grants.length === 0) throw new FakeRefusal(400, 'grants: give at least one role', 'grants');
     const { id, code, expires } = invite(access, { kind: 'account', grants, account: null, shownAs: text(body, 'shownAs') || null, by: caller.name ?? '', expires: Date.now() + Number(body['days'] ?? 7) * day });
-    return ok({ id, link: madeWithLink('/join', code, asked), expires });
+    return ok({ id, link: `/join#${code}`, expires });
   } },
   { method: 'DELETE', path: /^\/api\/invitations\/([^/]+)$/, needs: 'manage-accounts', does: ({ access, id }) => { for (const one of [...access.invitations.values()]) if (one.id === id) access.invitations.delete(one.code); return done; } },
   { method: 'GET', path: /^\/api\/own\/sessions$/, needs: 'keep-own-account', does: (asked) => ok([...asked.access.sessions.values()].filter(({ account }) => account === own(asked).id).map(({ id, made, lastSeen, address, agent }) => ({ id, made, lastSeen, address, agent, current: id === asked.caller.session?.id }))) },
@@ -180,7 +176,7 @@ const accessRoutes: readonly FakeRoute[] = [
     own(asked).pin = text(asked.body, 'pin');
     return done;
   } },
-  { method: 'DELETE', path: /^\/api\/own\/pin$/, needs: 'keep-own-account', does: (asked) => { own(asked).pin = undefined; return done; } },
+  { method: 'DELETE', path: /^\/api\/own\/pin$/, needs: 'keep-own-account', does: (asked) => { checkOwn(asked, 'password'); own(asked).pin = undefined; return done; } },
   { method: 'GET', path: /^\/api\/own\/tokens$/, needs: 'keep-own-account', does: (asked) => ok(own(asked).tokens.map((one) => ({ ...one, grants: told(one.grants) }))) },
   { method: 'POST', path: /^\/api\/own\/tokens$/, needs: 'keep-own-account', does: (asked) => {
     const { access, body } = asked;
@@ -214,7 +210,7 @@ const accessRoutes: readonly FakeRoute[] = [
     const id = access.id('display');
     if (text(body, 'name') === '') throw new FakeRefusal(400, 'name: give it a name', 'name');
     access.displays.set(id, { id, token: `token-${id}`, name: text(body, 'name'), line: text(body, 'line') || null, acting: body['acting'] === true, made: Date.now(), by: caller.name ?? '', lastSeen: null });
-    return ok({ id, link: madeWithLink('/display', `token-${id}`, asked) });
+    return ok({ id, link: `/display#token-${id}` });
   } },
   { method: 'DELETE', path: /^\/api\/displays\/([^/]+)$/, needs: 'manage-displays', does: ({ access, id }) => { access.displays.delete(id); return done; } },
   { method: 'POST', path: /^\/api\/display\/sign-in$/, needs: undefined, does: ({ access, body }) => {

@@ -1,5 +1,7 @@
+import type { Json } from '../../core/access/canonical-json.ts';
+import type { ChangeKind, RecordedChange } from '../../core/access/change.ts';
 import type { Grant, Role } from '../../core/access/role.ts';
-import { day, hour, type FakeAccessOptions, type FakeAccount, type FakeDisplay } from './fake-access.ts';
+import { day, hour, type FakeAccessOptions, type FakeAccount, type FakeDisplay, type FakeInvitation, type FakeSource } from './fake-access.ts';
 
 const now = Date.now();
 const grant = (role: Role, line?: string): Grant => ({ role, line });
@@ -24,3 +26,51 @@ export const displays: readonly FakeDisplay[] = [
 
 /** Accounts as they are in the plant, with whoever comes taken for one of them. */
 export const signedInAs = (as: string, part: FakeAccessOptions = {}): FakeAccessOptions => ({ access: 'accounts', accounts: people, displays, as, ...part });
+
+const source = (name: string, stations: readonly string[], part: Partial<FakeSource> = {}): FakeSource =>
+  ({ id: name, name, stations, products: [], made: now - 80 * day, lastUsed: now - 2_000, revoked: null, connected: true, tokens: [{ made: now - 80 * day, expires: null }], ...part });
+
+export const sources: readonly FakeSource[] = [
+  source('leak-a-1', ['a.leak-test'], { products: ['bh-4', 'bh-5'], tokens: [{ made: now - 80 * day, expires: now + 20 * hour }, { made: now - 4 * hour, expires: null }] }),
+  source('crimp-b', ['b.crimp', 'b.final'], { connected: false, lastUsed: now - 3 * hour }),
+  source('cap-torque-1', ['f.capping'], { connected: false, lastUsed: null }),
+  source('old-tester', ['*'], { connected: false, lastUsed: now - 50 * day, revoked: now - 30 * day }),
+];
+
+const invitation = (id: string, part: Partial<FakeInvitation>): FakeInvitation =>
+  ({ id, code: `code-${id}`, kind: 'account', grants: [grant('viewer')], account: null, shownAs: null, made: now - 3 * hour, by: 'Ada Lindqvist', expires: now + 6 * day, ...part });
+
+export const invitations: readonly FakeInvitation[] = [
+  invitation('one', { shownAs: 'Selma Aydin', grants: [grant('maintenance', 'a'), grant('maintenance', 'b')] }),
+  invitation('two', {}),
+];
+
+const told = (...grants: Grant[]): Json => grants.map(({ role, line }) => ({ role, line: line ?? null }));
+const happened: readonly (readonly [ChangeKind, string, string, Json, Json, string])[] = [
+  ['acknowledge', 'Ines Maurer', 'alarm 40', 'unacknowledged', 'acknowledged', 'Die changed, watching'],
+  ['sign-in', 'Ines Maurer', 'account ines', null, { by: 'password', address: '10.0.4.17' }, ''],
+  ['refused', 'Mette Sørensen', 'POST /api/guarantees/:id/restart', null, { action: 'restart-evidence', by: 'account' }, ''],
+  ['restart', 'Tom Reiter', 'guarantee leak-bh4', null, 'evidence gathered anew', 'Seal of the test head replaced'],
+  ['account', 'Ada Lindqvist', 'account ines', { shownAs: 'Ines Maurer', grants: told(grant('supervisor', 'a'), grant('viewer')), disabled: false }, { shownAs: 'Ines Maurer', grants: told(grant('supervisor', 'a'), grant('maintenance', 'a'), grant('viewer')), disabled: false }, 'Takes over for Olaf'],
+  ['account', 'Ada Lindqvist', 'account olaf', { disabled: false }, { disabled: true }, 'Left the plant'],
+  ['sign-in-failed', 'unknown', 'account admin', null, { address: '10.0.9.2' }, ''],
+  ['plant', 'Ada Lindqvist', 'plant.yaml', 'b1946ac92492', '591785b794601e21', 'New limit of the fill volume after the customer’s audit'],
+  ['token-renewed', 'Ada Lindqvist', 'source leak-a-1', null, { expires: now + 20 * hour }, 'Yearly'],
+  ['display', 'Ada Lindqvist', 'display hall: Hall 2, by the gate', null, { line: null, acting: false }, ''],
+];
+
+/** The record of changes, `count` of them, the newest first. */
+export const changesOf = (count: number): readonly RecordedChange[] => Array.from({ length: count }, (_, index) => {
+  const [kind, who, what, before, after, why] = happened[index % happened.length]!;
+  const id = count - index;
+  return { id, at: now - index * 37 * 60_000, hash: id.toString(16).padStart(64, 'c0de'), kind, who, what, before, after, why, entry: null };
+});
+
+/** Everything a page can show, with whoever comes taken for the administrator. */
+export const fullPlant = (part: FakeAccessOptions = {}): FakeAccessOptions => signedInAs('ada', {
+  sources, invitations, changes: changesOf(230), passkeys: true,
+  accounts: people.map((one) => (one.id !== 'ada' ? one : {
+    ...one, passkeys: [{ id: 'key', name: 'Key on my ring', made: now - 30 * day, lastUsed: now - day }],
+    tokens: [{ id: 't', name: 'Shift report', actions: ['see', 'read-changes'] as const, grants: one.grants, made: now - 20 * day, expires: now + 70 * day, lastUsed: now - hour }],
+  })), ...part,
+});

@@ -9,6 +9,7 @@ import type { GuaranteeView } from '../../core/view/guarantee-view.ts';
 import { FakeAccess, FakeRefusal, type FakeAccessOptions, type FakeAnswer } from './fake-access.ts';
 import { answerOfAccess } from './fake-access-routes.ts';
 import { historyOf, pictureOf, runPathsOf, stripOf } from './fake-answers.ts';
+import { withHostileText } from './hostile-text.ts';
 import { guaranteesOf, plantStart, snapshotOf, type FakeGuarantee } from './fake-plant.ts';
 
 export interface FakeOptions {
@@ -18,6 +19,8 @@ export interface FakeOptions {
   readonly noRecords?: boolean;
   /** Who may come; open to everybody where absent. */
   readonly access?: FakeAccessOptions;
+  /** Every text that somebody wrote ends in markup that would run if it were taken for such. */
+  readonly hostile?: boolean;
 }
 
 export interface FakeServer {
@@ -63,6 +66,7 @@ async function bodyOf(request: IncomingMessage): Promise<Record<string, unknown>
 
 /** The client's other side for tests and pictures: the built files, a scripted plant, the live socket. */
 export async function startFake(options: FakeOptions = {}): Promise<FakeServer> {
+  const texts = <T>(value: T): T => (options.hostile === true ? withHostileText(value) : value);
   const bare = (of: FakeGuarantee): FakeGuarantee =>
     options.noRecords !== true ? of : { card: of.card, view: { ...of.view, state: 'gathering', newest: undefined, estimate: undefined, bound: undefined, oppositeBound: undefined, drift: undefined, figures: { inspected: 0, filled: 0 }, margin: { unitsToGather: 14_978 }, alarmIds: [], warnings: [], lot: undefined, allowance: { estimate: undefined, bound: undefined, opposite: undefined, trail: [] } } };
   const guarantees = guaranteesOf(options.guarantees ?? 8).map(bare);
@@ -82,10 +86,10 @@ export async function startFake(options: FakeOptions = {}): Promise<FakeServer> 
   async function answer(request: IncomingMessage, response: ServerResponse): Promise<void> {
     const url = new URL(request.url ?? '/', 'http://fake');
     const json = (value: unknown, status = 200): void => {
-      response.writeHead(status, { 'content-type': 'application/json' }).end(JSON.stringify(value));
+      response.writeHead(status, { 'content-type': 'application/json' }).end(JSON.stringify(texts(value)));
     };
     const answered = ({ status, body, headers }: FakeAnswer): void => {
-      response.writeHead(status, { 'content-type': 'application/json', ...headers }).end(typeof body === 'string' ? body : body === undefined ? undefined : JSON.stringify(body));
+      response.writeHead(status, { 'content-type': 'application/json', ...headers }).end(typeof body === 'string' ? body : body === undefined ? undefined : JSON.stringify(texts(body)));
     };
     if (!url.pathname.startsWith('/api/')) { await sendFile(url.pathname, response); return; }
     const [, , kind, id = '', what] = url.pathname.split('/');
@@ -122,7 +126,7 @@ export async function startFake(options: FakeOptions = {}): Promise<FakeServer> 
 
   const http = createServer((request, response) => { void answer(request, response); });
   const live = new WebSocketServer({ noServer: true, handleProtocols: (asked) => (asked.has(liveProtocol) ? liveProtocol : false) });
-  const send = (socket: WebSocket, message: LiveMessage): void => { if (!silent) socket.send(JSON.stringify(message)); };
+  const send = (socket: WebSocket, message: LiveMessage): void => { if (!silent) socket.send(JSON.stringify(texts(message))); };
   http.on('upgrade', (request, socket, head) => {
     if (cut || request.url !== '/live' || access.callerOf(request) === undefined) { socket.destroy(); return; }
     live.handleUpgrade(request, socket, head, (dashboard) => {

@@ -1,11 +1,11 @@
-// Pictures of every page, size and theme into .screens/: node test/browser/screens.mjs [name part]
+// Pictures of every page, size and theme into .screens/: node test/browser/screens.mjs [beginning of a name]
 import { mkdirSync } from 'node:fs';
 import { runnerImport } from 'vite';
 
 const load = async (name) => (await runnerImport(new URL(name, import.meta.url).pathname)).module;
 const { startFake } = await load('./fake-server.ts');
 const { openBrowser } = await load('./open-browser.ts');
-const { people, signedInAs } = await load('./fake-people.ts');
+const { fullPlant, people, signedInAs } = await load('./fake-people.ts');
 
 const only = process.argv[2] ?? '';
 const out = new URL('../../.screens/', import.meta.url).pathname;
@@ -54,6 +54,32 @@ const scenes = [
     await page.getByLabel('Name to sign in with').fill('ada');
     await page.keyboard.press('Enter');
   } },
+  { name: 'account', path: '/account', fake: { access: fullPlant() }, sizes: ['wide', 'phone'], themes: ['light', 'dark'], full: true, act: async (page) => { await page.getByText('Make a token').click(); } },
+  { name: 'people', path: '/people', fake: { access: fullPlant() }, sizes: ['wide', 'phone'], themes: ['light', 'dark'], full: true },
+  { name: 'invite', path: '/people', fake: { access: fullPlant() }, sizes: ['wide', 'phone'], themes: ['light'], full: true, act: async (page) => {
+    await page.getByLabel('Maintenance, Hose line A').check();
+    await page.getByRole('button', { name: 'Make the link' }).click();
+  } },
+  { name: 'edit-person', path: '/people', fake: { access: fullPlant() }, sizes: ['wide', 'phone', 'narrow'], themes: ['light', 'dark'], act: async (page) => {
+    await page.getByRole('button', { name: 'Change Ines Maurer' }).click();
+    await page.getByRole('dialog').getByLabel('Supervisor, Hose line B').check();
+    await page.getByRole('dialog').getByLabel('Viewer, The whole plant').uncheck();
+  } },
+  { name: 'why', path: '/people', fake: { access: fullPlant() }, sizes: ['wide', 'phone'], themes: ['dark'], act: async (page) => {
+    await page.getByRole('button', { name: 'Change Ines Maurer' }).click();
+    await page.getByRole('button', { name: 'Disable the account' }).click();
+  } },
+  { name: 'displays', path: '/displays', fake: { access: fullPlant() }, sizes: ['wide', 'phone'], themes: ['light', 'dark'], full: true },
+  { name: 'displays-none', path: '/displays', fake: { access: fullPlant({ displays: [] }) }, sizes: ['wide'], themes: ['light'] },
+  { name: 'sources', path: '/sources', fake: { access: fullPlant() }, sizes: ['wide', 'phone'], themes: ['light', 'dark'], full: true },
+  { name: 'sources-renewed', path: '/sources', fake: { access: fullPlant() }, sizes: ['wide', 'phone'], themes: ['light'], act: async (page) => {
+    await page.getByRole('button', { name: 'Renew the token of crimp-b' }).click();
+    await page.getByLabel('Why').last().fill('Yearly');
+    await page.getByRole('button', { name: 'Renew', exact: true }).click();
+  } },
+  { name: 'changes', path: '/changes', fake: { access: fullPlant() }, sizes: ['wide', 'phone'], themes: ['light', 'dark'] },
+  { name: 'changes-end', path: '/changes', fake: { access: fullPlant({ changes: fullPlant().changes.slice(0, 12) }) }, sizes: ['wide', 'phone'], themes: ['light'], full: true },
+  { name: 'changes-none', path: '/changes', fake: { access: fullPlant({ changes: [] }) }, sizes: ['wide'], themes: ['light'] },
 ];
 
 const browser = await openBrowser();
