@@ -55,10 +55,13 @@ const ownPages = {
 } as const;
 
 /** The pages of one's account, people, displays, sources and the record. */
-function ownPage(kind: 'account' | keyof typeof ownPages, { who: { me, caller }, picture, formats, timeZone }: PageGround): TemplateResult {
+function ownPage(kind: 'account' | keyof typeof ownPages, { who: { me, caller }, actor, picture, formats, timeZone }: PageGround): TemplateResult {
   const lines = picture?.plant.lines ?? [];
   if (kind !== 'account' && !mayDo(caller, ownPages[kind].action, undefined)) {
     return html`<section class="sheet nowhere"><h1>This is not for you to do</h1><p>${roleMissing(ownPages[kind].doing, ownPages[kind].action, 'the whole plant')}</p><p><a href="/">Go to the line board</a></p></section>`;
+  }
+  if (me.access === 'open' && (kind === 'account' || kind === 'people' || kind === 'displays')) {
+    return html`<section class="sheet nowhere"><h1>There are no accounts here</h1><p>Access is open to everybody who reaches this server. Start it with <code>--access accounts</code> to have people sign in.</p></section>`;
   }
   switch (kind) {
     case 'account':
@@ -68,7 +71,7 @@ function ownPage(kind: 'account' | keyof typeof ownPages, { who: { me, caller },
     case 'displays':
       return html`<displays-page .lines=${lines} .formats=${formats}></displays-page>`;
     case 'sources':
-      return html`<sources-page .formats=${formats}></sources-page>`;
+      return html`<sources-page .formats=${formats} .actor=${actor}></sources-page>`;
     case 'changes':
       return html`<changes-page .lines=${lines} .formats=${formats} .timeZone=${timeZone}></changes-page>`;
   }

@@ -1,4 +1,4 @@
-import { actions, type Action } from '../../core/access/action.ts';
+import type { Action } from '../../core/access/action.ts';
 import type { Grant } from '../../core/access/role.ts';
 
 /** Where an action is allowed: for what concerns the plant, and on which lines. */
@@ -46,23 +46,3 @@ export function mayDoSomewhere(caller: Caller, action: Action): boolean {
   const reach = caller.may[action];
   return reach !== undefined && (reach.plant || reach.lines === 'all' || reach.lines.length > 0);
 }
-
-const everywhere: Reach = { plant: true, lines: 'all' };
-
-/** What a server without accounts would say of itself: whoever reaches it may do everything. */
-export const openMe: Me = {
-  access: 'open',
-  firstAccount: true,
-  passkeys: false,
-  directory: undefined,
-  caller: {
-    kind: 'open',
-    name: undefined,
-    account: undefined,
-    grants: [],
-    until: undefined,
-    may: Object.fromEntries(actions.map((action) => [action, everywhere])),
-    pin: undefined,
-    terminal: false,
-  },
-};

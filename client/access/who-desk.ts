@@ -1,7 +1,7 @@
 import { BehaviorSubject, timer, type Observable, type Subscription } from 'rxjs';
 import { Refusal, type Ask } from '../ask.ts';
 import { backoffMs } from '../feed/backoff.ts';
-import { openMe, type Me } from './me.ts';
+import type { Me } from './me.ts';
 import { nextWho, type Who, type WhoEvent } from './who.ts';
 
 export interface WhoDesk {
@@ -45,8 +45,7 @@ export function whoDesk({ ask, wall, chance, display }: WhoEnds): WhoDesk {
       const me = await ask<Me>('GET', '/api/me');
       failures = 0;
       next({ kind: 'told', me });
-    } catch (cause) {
-      if (cause instanceof Refusal && cause.status === 404) return next({ kind: 'told', me: openMe });
+    } catch {
       failures += 1;
       next({ kind: 'unanswered' });
     }

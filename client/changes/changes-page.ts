@@ -72,7 +72,7 @@ export class ChangesPage extends LitElement {
       ${textField(this.#sending, { name: 'from', label: 'From', type: 'datetime-local', value: query.from })}
       ${textField(this.#sending, { name: 'to', label: 'To', type: 'datetime-local', value: query.to })}
       <div class="field"><label for="kind">What</label><select id="kind" name="kind"><option value="">Everything</option>${changeKinds.map((kind) => html`<option value=${kind} ?selected=${query.kind === kind}>${changeWord[kind]}</option>`)}</select></div>
-      ${textField(this.#sending, { name: 'holds', label: 'Holds', value: query.holds, hint: 'In who, what or why.', most: 200 })}
+      ${textField(this.#sending, { name: 'holds', label: 'Holds', value: query.holds, hint: 'In who, what or why.', most: 100 })}
       <div class="does"><button class="first">Filter</button>${query === wholeRecord ? nothing : html`<button type="button" @click=${this.#all}>All</button>`}</div>
     </form>`;
   }
@@ -89,8 +89,7 @@ export class ChangesPage extends LitElement {
   }
 
   #exportPath(written: 'ndjson' | 'csv'): string {
-    const { from, to } = this.query;
-    return `/api/changes/export${addressPart({ ...wholeRecord, from, to }, this.timeZone, { form: written })}`;
+    return `/api/changes/export${addressPart(this.query, this.timeZone, { form: written })}`;
   }
 
   async #read(before?: number): Promise<readonly RecordedChange[]> {

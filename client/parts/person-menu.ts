@@ -54,7 +54,7 @@ export class PersonMenu extends LitElement {
   protected override render(): TemplateResult | typeof nothing {
     if (this.who?.kind !== 'known') return nothing;
     const { caller } = this.who;
-    const links = pages.filter(({ path, action }) => mayDoSomewhere(caller, action) && (path !== 'account' || caller.kind === 'account'));
+    const links = pages.filter(({ path, action }) => mayDoSomewhere(caller, action) && (caller.kind === 'account' || path === 'sources' || path === 'changes'));
     return html`<details>
       <summary><span>${this.#title(caller)}</span></summary>
       <div class="panel">

@@ -1,5 +1,6 @@
 import { ContextConsumer } from '@lit/context';
 import { html, LitElement, nothing, type TemplateResult } from 'lit';
+import type { Actor } from '../access/actor.ts';
 import type { Ask } from '../ask.ts';
 import { wiringContext } from '../contexts.ts';
 import type { Formats } from '../format.ts';
@@ -11,17 +12,18 @@ import { Loaded } from '../parts/loaded.ts';
 import '../parts/secret-once.ts';
 import '../parts/sure-dialog.ts';
 import { whyField } from '../parts/sure-dialog.ts';
-import { textField } from '../parts/text-field.ts';
-import { lastUseWords, namesIn, tokenWords, type Source } from './source-words.ts';
+import { textField, type TextField } from '../parts/text-field.ts';
+import { namesIn, useWords, type Source } from './source-words.ts';
 
 const ofSource = (name: string): string => `/api/sources/${encodeURIComponent(name)}`;
 
 /** Who may send records, for which stations and products; their tokens made, renewed and withdrawn. */
 export class SourcesPage extends LitElement {
-  static override properties = { formats: { attribute: false }, token: { state: true } };
+  static override properties = { formats: { attribute: false }, actor: { attribute: false }, token: { state: true } };
   static override styles = [base, form, ownPage];
 
   declare formats: Formats;
+  declare actor: Actor;
   /** The token that was made last, and for whom; shown this once. */
   declare token: { readonly of: string; readonly text: string };
   readonly #wiring = new ContextConsumer(this, { context: wiringContext });
@@ -52,8 +54,8 @@ export class SourcesPage extends LitElement {
             ${textField(this.#sending, { name: 'name', label: 'Name', hint: '“leak-tester-a”', required: true, most: 64 })}
             ${textField(this.#sending, { name: 'stations', label: 'Stations', hint: 'Their ids in the plant file, with commas between: “A.leak-test”. A * stands for every station.', required: true, most: 500 })}
             ${textField(this.#sending, { name: 'products', label: 'Products', hint: 'With commas between; empty for every product.', most: 500 })}
-            ${textField(this.#sending, whyField)}
-            <p class="fault" role="alert">${this.#sending.beyond(['name', 'stations', 'products', 'why'])}</p>
+            ${this.#recordFields().map((field) => textField(this.#sending, field))}
+            <p class="fault" role="alert">${this.#sending.beyond(['name', 'stations', 'products', 'why', 'by'])}</p>
             <div class="does"><button class="first" ?disabled=${this.#sending.busy}>Make the token</button></div>
           </form>
         </section>
@@ -62,12 +64,12 @@ export class SourcesPage extends LitElement {
   }
 
   #row(source: Source): TemplateResult {
-    const { name, stations, products, connected, revoked } = source;
+    const { name, stations, products = [], connected, revoked } = source;
     const standing = revoked === undefined;
     return html`<li>
       <div class=${standing ? '' : 'off'}><b>${name}</b>${connected ? html`<span class="mark">connected</span>` : nothing}${standing ? nothing : html`<span class="mark">withdrawn</span>`}<br />
         ${stations.includes('*') ? 'Every station' : stations.join(', ')}; ${products.length === 0 ? 'every product' : products.join(', ')}<br />
-        <span class="quiet">${lastUseWords(source, this.formats)} ${standing ? tokenWords(source.tokens, this.formats) : ''}</span></div>
+        <span class="quiet">${useWords(source, this.formats, this.#wiring.value?.wall() ?? 0)}</span></div>
       ${standing ? html`<div class="does">
         <button aria-label="Renew the token of ${name}" @click=${() => { void this.#renew(source); }}>Renew</button>
         <button aria-label="Withdraw ${name}" @click=${() => { void this.#withdraw(source); }}>Withdraw</button>
@@ -83,7 +85,7 @@ export class SourcesPage extends LitElement {
     const products = namesIn(text('products'));
     if (stations.length === 0) return this.#sending.refuse('stations', 'name at least one station');
     const of = text('name');
-    const body = { name: of, stations, ...(products.length === 0 ? {} : { products }), why: text('why') };
+    const body = { name: of, stations, ...(products.length === 0 ? {} : { products }), ...this.#record(text) };
     if (!(await this.#sending.send(() => this.#take(of, '/api/sources', body)))) return;
     sent.reset();
     await this.#sources.reload();
@@ -92,20 +94,31 @@ export class SourcesPage extends LitElement {
   async #renew({ name }: Source): Promise<void> {
     const done = await this.renderRoot.querySelector('sure-dialog')?.ask({
       title: `A new token for ${name}?`, says: 'The old one goes on for the hours you give, so that the source can be changed over without a gap.', does: 'Renew',
-      fields: [{ name: 'overlapHours', label: 'Hours the old token still holds', type: 'number', value: '24', from: 0, to: 720, required: true, narrow: true }, whyField],
-      send: (text) => this.#take(name, `${ofSource(name)}/renew`, { overlapHours: Number(text('overlapHours')), why: text('why') }),
+      fields: [{ name: 'overlapHours', label: 'Hours the old token still holds', type: 'number', value: '24', from: 0, to: 720, required: true, narrow: true }, ...this.#recordFields()],
+      send: (text) => this.#take(name, `${ofSource(name)}/renew`, { overlapHours: Number(text('overlapHours')), ...this.#record(text) }),
     });
     if (done === true) await this.#sources.reload();
   }
 
   async #withdraw({ name }: Source): Promise<void> {
     const done = await this.renderRoot.querySelector('sure-dialog')?.ask({
-      title: `Withdraw ${name}?`, says: 'Its connection ends at once and its tokens hold no more. What it sent stays. Its guarantees will fall silent and say so.', does: 'Withdraw', fields: [whyField],
-      send: async (text) => { await this.#ask?.('POST', `${ofSource(name)}/withdraw`, { why: text('why') }); },
+      title: `Withdraw ${name}?`, says: 'Its connection ends at once and its tokens hold no more. What it sent stays. Its guarantees will fall silent and say so.', does: 'Withdraw', fields: this.#recordFields(),
+      send: async (text) => { await this.#ask?.('POST', `${ofSource(name)}/withdraw`, this.#record(text)); },
     });
     if (done !== true) return;
     this.token = { of: '', text: '' };
     await this.#sources.reload();
+  }
+
+  /** What the record wants to know: why, and who where nobody is known. */
+  #recordFields(): readonly TextField[] {
+    return this.actor.named === 'typed' ? [whyField, { name: 'by', label: 'Your name', value: this.actor.ownName, autocomplete: 'name', required: true, most: 80 }] : [whyField];
+  }
+
+  #record(text: (name: string) => string): object {
+    if (this.actor.named !== 'typed') return { why: text('why') };
+    this.#wiring.value?.settings.change({ personName: text('by') });
+    return { why: text('why'), by: text('by') };
   }
 
   async #take(of: string, path: string, body: object): Promise<void> {

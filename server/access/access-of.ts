@@ -7,7 +7,7 @@ import { meRoute } from '../http/access/me-route.ts';
 import { ownRoutes } from '../http/access/own-routes.ts';
 import { passkeyRoutes } from '../http/access/passkey-routes.ts';
 import { signInRoutes } from '../http/access/sign-in-routes.ts';
-import { terminalRoutes } from '../http/access/terminal-routes.ts';
+import { isTerminal, terminalRoutes } from '../http/access/terminal-routes.ts';
 import type { AnyRoute } from '../http/route.ts';
 import type { Settings } from '../settings/settings.ts';
 import { AccessBook } from './access-book.ts';
@@ -50,7 +50,7 @@ export interface Access {
 export async function accessOf({ file, settings, directory: told, plantName, lines, log, now = Date.now }: AccessSetting): Promise<Access> {
   const { access } = settings;
   if (access === 'open') {
-    return { guard: openGuard, routes: [meRoute({ access, hasAccounts: () => false, hasPasskeys: () => false, directory: undefined, lines })], firstCode: undefined, onEnded: () => undefined, isOver: () => false };
+    return { guard: openGuard, routes: [meRoute({ access, hasAccounts: () => false, hasPasskeys: () => false, directory: undefined, lines, isTerminal: () => false })], firstCode: undefined, onEnded: () => undefined, isOver: () => false };
   }
   const book = await AccessBook.load(file, now);
   const passwords = new Passwords();
@@ -65,7 +65,7 @@ export async function accessOf({ file, settings, directory: told, plantName, lin
   return {
     guard,
     routes: [
-      meRoute({ access, hasAccounts: () => book.accounts.size > 0, hasPasskeys: () => book.passkeys.size > 0, directory: directory?.name, lines }),
+      meRoute({ access, hasAccounts: () => book.accounts.size > 0, hasPasskeys: () => book.passkeys.size > 0, directory: directory?.name, lines, isTerminal: (caller) => isTerminal(book, caller) }),
       ...signInRoutes(host), ...accountRoutes(host), ...ownRoutes(host), ...displayRoutes(host), ...terminalRoutes(host), ...passkeyRoutes(host),
       ...(directory === undefined ? [] : directoryRoutes(host, directory)),
     ],

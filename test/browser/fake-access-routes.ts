@@ -228,12 +228,12 @@ const accessRoutes: readonly FakeRoute[] = [
   { method: 'POST', path: /^\/api\/sources$/, needs: 'manage-sources', does: ({ access, body }) => {
     const name = text(body, 'name');
     if (access.sources.has(name)) throw new FakeRefusal(409, 'name: a source has this name already', 'name');
-    access.sources.set(name, { id: access.id('source'), name, stations: body['stations'] as string[], products: (body['products'] as string[] | undefined) ?? [], made: Date.now(), lastUsed: null, revoked: null, connected: false, tokens: [{ made: Date.now(), expires: null }] });
+    access.sources.set(name, { id: access.id('source'), name, stations: body['stations'] as string[], products: (body['products'] as string[] | undefined) ?? [], made: Date.now(), lastUsed: null, revoked: null, connected: false, oldTokenUntil: null });
     return ok({ token: `vouchline_${name}_shown-once` });
   } },
   { method: 'POST', path: /^\/api\/sources\/([^/]+)\/renew$/, needs: 'manage-sources', does: ({ access, id, body }) => {
     const source = access.sources.get(id)!;
-    source.tokens = [...source.tokens.map((token) => ({ ...token, expires: Date.now() + Number(body['overlapHours'] ?? 0) * (day / 24) })), { made: Date.now(), expires: null }];
+    source.oldTokenUntil = Date.now() + Number(body['overlapHours'] ?? 0) * (day / 24);
     return ok({ token: `vouchline_${id}_renewed` });
   } },
   { method: 'POST', path: /^\/api\/sources\/([^/]+)\/withdraw$/, needs: 'manage-sources', does: ({ access, id }) => { access.sources.get(id)!.revoked = Date.now(); return done; } },

@@ -65,8 +65,8 @@ export interface FakeSource {
   readonly made: number;
   readonly lastUsed: number | null;
   revoked: number | null;
+  oldTokenUntil: number | null;
   readonly connected: boolean;
-  tokens: { readonly made: number; expires: number | null }[];
 }
 
 export interface FakeAccessOptions {
@@ -163,7 +163,7 @@ export class FakeAccess {
     const session = this.sessions.get(cookie ?? this.#default?.id ?? '');
     const display = session?.display === undefined ? undefined : this.displays.get(session.display);
     const account = session?.account === undefined ? undefined : this.accounts.get(session.account);
-    if (display !== undefined) return { session, account: undefined, display, name: display.name, grants: [{ role: 'viewer', line: display.line ?? undefined }] };
+    if (display !== undefined) return { session, account: undefined, display, name: `display ${display.name}`, grants: [{ role: 'viewer', line: display.line ?? undefined }] };
     if (account === undefined || account.disabled) return undefined;
     return { session, account, display: undefined, name: account.shownAs, grants: account.grants };
   }

@@ -28,10 +28,10 @@ export const displays: readonly FakeDisplay[] = [
 export const signedInAs = (as: string, part: FakeAccessOptions = {}): FakeAccessOptions => ({ access: 'accounts', accounts: people, displays, as, ...part });
 
 const source = (name: string, stations: readonly string[], part: Partial<FakeSource> = {}): FakeSource =>
-  ({ id: name, name, stations, products: [], made: now - 80 * day, lastUsed: now - 2_000, revoked: null, connected: true, tokens: [{ made: now - 80 * day, expires: null }], ...part });
+  ({ id: name, name, stations, products: [], made: now - 80 * day, lastUsed: now - 2_000, revoked: null, connected: true, oldTokenUntil: null, ...part });
 
 export const sources: readonly FakeSource[] = [
-  source('leak-a-1', ['a.leak-test'], { products: ['bh-4', 'bh-5'], tokens: [{ made: now - 80 * day, expires: now + 20 * hour }, { made: now - 4 * hour, expires: null }] }),
+  source('leak-a-1', ['a.leak-test'], { products: ['bh-4', 'bh-5'], oldTokenUntil: now + 20 * hour }),
   source('crimp-b', ['b.crimp', 'b.final'], { connected: false, lastUsed: now - 3 * hour }),
   source('cap-torque-1', ['f.capping'], { connected: false, lastUsed: null }),
   source('old-tester', ['*'], { connected: false, lastUsed: now - 50 * day, revoked: now - 30 * day }),

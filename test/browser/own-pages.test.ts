@@ -260,7 +260,7 @@ describe('sources', () => {
     await dialog().getByLabel('Why').fill('Yearly');
     await dialog().getByRole('button', { name: 'Renew' }).click();
     await expect.poll(secret).toBe('vouchline_leak-a-2_renewed');
-    await page.locator('.rows li').filter({ hasText: 'leak-a-2' }).getByText('1 old token until').waitFor();
+    await page.locator('.rows li').filter({ hasText: 'leak-a-2' }).getByText('The old token holds until').waitFor();
     await page.getByRole('button', { name: 'Withdraw leak-a-2' }).click();
     await dialog().getByLabel('Why').fill('Scrapped');
     await dialog().getByRole('button', { name: 'Withdraw' }).click();

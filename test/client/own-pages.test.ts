@@ -4,7 +4,7 @@ import { addressPart, momentOf, wholeRecord } from '../../client/changes/change-
 import { changeWord, differencesOf } from '../../client/changes/change-words.ts';
 import { formatsFor } from '../../client/format.ts';
 import { grantsChange } from '../../client/people/grants-change.ts';
-import { lastUseWords, namesIn, tokenWords } from '../../client/sources/source-words.ts';
+import { namesIn, useWords } from '../../client/sources/source-words.ts';
 import { changeKinds } from '../../core/access/change.ts';
 import type { Grant } from '../../core/access/role.ts';
 
@@ -85,13 +85,12 @@ describe('sources', () => {
     expect(namesIn(' , ')).toEqual([]);
   });
 
-  it('say when they were used and which tokens run out', () => {
+  it('say when they were used and until when an old token holds', () => {
     const at = Date.UTC(2026, 2, 3, 8, 12);
-    const source = { id: 's', name: 's', stations: [], products: [], made: at, lastUsed: undefined, revoked: undefined, connected: false, tokens: [] };
-    expect(lastUseWords(source, formats)).toBe('Never used.');
-    expect(lastUseWords({ ...source, lastUsed: at, revoked: at }, formats)).toBe('Last used 3 Mar, 09:12. Withdrawn 3 Mar, 09:12.');
-    expect(tokenWords([{ made: at, expires: undefined }], formats)).toBe('Token since 3 Mar 2026.');
-    expect(tokenWords([{ made: 0, expires: at }, { made: at, expires: undefined }], formats)).toBe('Token since 3 Mar 2026. 1 old token until 3 Mar, 09:12.');
-    expect(tokenWords([], formats)).toBe('');
+    const source = { id: 's', name: 's', stations: [], products: undefined, made: at, lastUsed: undefined, revoked: undefined, oldTokenUntil: undefined, connected: false };
+    expect(useWords(source, formats, at)).toBe('Never used, made 3 Mar 2026.');
+    expect(useWords({ ...source, lastUsed: at, revoked: at, oldTokenUntil: at + 1 }, formats, at)).toBe('Last used 3 Mar, 09:12, made 3 Mar 2026. Withdrawn 3 Mar, 09:12.');
+    expect(useWords({ ...source, oldTokenUntil: at + 60_000 }, formats, at)).toBe('Never used, made 3 Mar 2026. The old token holds until 3 Mar, 09:13.');
+    expect(useWords({ ...source, oldTokenUntil: at - 1 }, formats, at)).toBe('Never used, made 3 Mar 2026.');
   });
 });

@@ -13,6 +13,8 @@ export interface MeHost {
   /** What people call the directory; undefined where none is set up. */
   readonly directory: string | undefined;
   readonly lines: () => readonly string[];
+  /** Whether people act by PIN where this caller asks from. */
+  readonly isTerminal: (caller: Caller) => boolean;
 }
 
 /** GET /api/me: who asks, and what they may; open to all, so that a page knows whether to ask for a name. */
@@ -24,12 +26,12 @@ export function meRoute(host: MeHost): AnyRoute {
       firstAccount: host.access === 'accounts' && !host.hasAccounts(),
       passkeys: host.hasPasskeys(),
       directory: host.directory ?? null,
-      caller: told(caller as Caller | undefined, host.lines()),
+      caller: told(caller as Caller | undefined, host),
     }),
   });
 }
 
-function told(caller: Caller | undefined, lines: readonly string[]): object | null {
+function told(caller: Caller | undefined, { lines, isTerminal }: MeHost): object | null {
   if (caller === undefined) return null;
   const { kind, name, account, grants, until, acting } = caller;
   return {
@@ -38,8 +40,9 @@ function told(caller: Caller | undefined, lines: readonly string[]): object | nu
     account: account ?? null,
     grants: grants.map(({ role, line }) => ({ role, line: line ?? null })),
     until: until ?? null,
-    may: mayOf(caller, lines),
+    may: mayOf(caller, lines()),
     pin: acting === undefined ? null : { name: acting.name, until: acting.until },
+    terminal: isTerminal(caller),
   };
 }
 

@@ -1,5 +1,6 @@
 import { mayDoSomewhere } from '../../../core/access/may-do.ts';
 import type { Caller } from '../../access/caller.ts';
+import type { AccessBook } from '../../access/access-book.ts';
 import { grantsOf } from '../../access/access-items.ts';
 import { NotAllowed } from '../refusals.ts';
 import { route, type AnyRoute } from '../route.ts';
@@ -8,12 +9,14 @@ import { actAsRequest } from './access-schemas.ts';
 
 const sees = { action: 'see', at: 'somewhere' } as const;
 
+/** Whether several people share the screen that asks: a display made for it, or anybody's browser. */
+export const isTerminal = (book: AccessBook, { kind, by }: Caller): boolean => kind === 'account' || (kind === 'display' && by !== undefined && book.displays.get(by)?.acting === true);
+
 /** Acting by PIN at a screen that several people share. */
 export function terminalRoutes({ book, acting }: AccessHost): readonly AnyRoute[] {
-  const terminal = ({ kind, by }: Caller): string => {
-    const shared = kind === 'account' || (kind === 'display' && by !== undefined && book.displays.get(by)?.acting === true);
-    if (!shared || by === undefined) throw new NotAllowed('Nobody acts here by PIN: this display only shows.');
-    return by;
+  const terminal = (caller: Caller): string => {
+    if (!isTerminal(book, caller) || caller.by === undefined) throw new NotAllowed('Nobody acts here by PIN: this display only shows.');
+    return caller.by;
   };
   return [
     route({
