@@ -65,7 +65,7 @@ function ownPage(kind: 'account' | keyof typeof ownPages, { who: { me, caller },
   }
   switch (kind) {
     case 'account':
-      return html`<account-page .caller=${caller} .lines=${lines} .formats=${formats} .passkeys=${me.passkeys}></account-page>`;
+      return html`<account-page .caller=${caller} .lines=${lines} .formats=${formats} .directory=${me.directory}></account-page>`;
     case 'people':
       return html`<people-page .lines=${lines} .formats=${formats} .own=${caller.account}></people-page>`;
     case 'displays':

@@ -48,6 +48,7 @@ export class VouchlineApp extends LitElement {
   readonly #acknowledging: Acknowledging;
   #lanes: { readonly of: LivePicture; readonly made: readonly Lane[] } | undefined;
   #fault = '';
+  #wasIn = false;
   #formats: { readonly key: string; readonly made: Formats } | undefined;
 
   constructor(wiring: Wiring) {
@@ -69,6 +70,8 @@ export class VouchlineApp extends LitElement {
   protected override willUpdate(): void {
     const who = this.#who.value;
     const { route, isDoor } = this.#address;
+    if (who?.kind === 'known' && !this.#wasIn) this.#comeBack();
+    this.#wasIn = who?.kind === 'known';
     if (who?.kind !== 'nobody' || isDoor || who.why === 'withdrawn') return;
     if (who.why !== 'left' && route.kind !== 'nowhere') keepReturn(sessionStorage, location.pathname);
     this.#address.go('/sign-in', 'instead');
@@ -145,6 +148,13 @@ export class VouchlineApp extends LitElement {
     const key = `${timeZone} ${settings.shareUnit}`;
     if (this.#formats?.key !== key) this.#formats = { key, made: formatsFor(navigator.language, timeZone, settings.shareUnit) };
     return this.#formats.made;
+  }
+
+  /** Who came in by way of the directory stands at the board, and is brought to where they wanted to go. */
+  #comeBack(): void {
+    if (this.#address.route.kind !== 'board') return;
+    const path = takeReturn(sessionStorage);
+    if (path !== '/') this.#address.go(path, 'instead');
   }
 
   async #onSignedIn(): Promise<void> {

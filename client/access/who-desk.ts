@@ -8,7 +8,8 @@ export interface WhoDesk {
   readonly who$: Observable<Who>;
   /** Asks the server again; resolves when it answered or could not. */
   readonly refresh: () => Promise<void>;
-  readonly signOut: () => Promise<void>;
+  /** Leaves on purpose. @param end  how the session is ended; absent: this one alone */
+  readonly signOut: (end?: () => Promise<void>) => Promise<void>;
 }
 
 export interface WhoEnds {
@@ -27,6 +28,7 @@ const longestMs = 2_147_483_647;
 export function whoDesk({ ask, wall, chance, display }: WhoEnds): WhoDesk {
   const who$ = new BehaviorSubject<Who>({ kind: 'asking', unanswered: false, display: display.is() });
   let failures = 0;
+  let leaving = false;
   let again: Subscription | undefined;
   let asking: Promise<void> | undefined;
 
@@ -44,6 +46,7 @@ export function whoDesk({ ask, wall, chance, display }: WhoEnds): WhoDesk {
     try {
       const me = await ask<Me>('GET', '/api/me');
       failures = 0;
+      if (leaving && me.caller === undefined) next({ kind: 'left' });
       next({ kind: 'told', me });
     } catch {
       failures += 1;
@@ -59,11 +62,16 @@ export function whoDesk({ ask, wall, chance, display }: WhoEnds): WhoDesk {
   return {
     who$: who$.asObservable(),
     refresh,
-    signOut: async () => {
-      await ask('POST', '/api/sign-out').catch((cause: unknown) => {
-        if (!(cause instanceof Refusal && cause.status === 401)) throw cause;
-      });
-      next({ kind: 'left' });
+    signOut: async (end = () => ask('POST', '/api/sign-out')) => {
+      leaving = true;
+      try {
+        await end().catch((cause: unknown) => {
+          if (!(cause instanceof Refusal && cause.status === 401)) throw cause;
+        });
+        next({ kind: 'left' });
+      } finally {
+        leaving = false;
+      }
       await refresh();
     },
   };

@@ -15,14 +15,14 @@ import './own-tokens.ts';
 
 /** One's own account. */
 export class AccountPage extends LitElement {
-  static override properties = { caller: { attribute: false }, lines: { attribute: false }, formats: { attribute: false }, passkeys: { attribute: false } };
+  static override properties = { caller: { attribute: false }, lines: { attribute: false }, formats: { attribute: false }, directory: { attribute: false } };
   static override styles = [base, ownPage];
 
   declare caller: Caller;
   declare lines: readonly LineName[];
   declare formats: Formats;
-  /** Whether one can sign in with a passkey here. */
-  declare passkeys: boolean;
+  /** Name of the directory one can sign in with. */
+  declare directory: string | undefined;
   readonly #wiring = new ContextConsumer(this, { context: wiringContext });
   #desk: OwnDesk | undefined;
 
@@ -36,9 +36,10 @@ export class AccountPage extends LitElement {
     return html`<h1>${caller.name}</h1>
       <p class="lead">${grantsInWords(caller.grants, this.lines)}. Roles are given by an administrator.</p>
       <div class="columns">
-        <div><own-password .desk=${desk}></own-password><own-pin .desk=${desk}></own-pin></div>
-        <div><own-sessions .desk=${desk} .formats=${formats} .left=${wiring.who.signOut}></own-sessions>
-          ${this.passkeys ? html`<own-passkeys .desk=${desk} .formats=${formats}></own-passkeys>` : nothing}
+        <div><own-password .desk=${desk}></own-password><own-pin .desk=${desk}></own-pin>
+          ${this.directory === undefined ? nothing : html`<section class="sheet part"><h2>${this.directory}</h2><p class="quiet">Link your account once, and from then on you can sign in with ${this.directory} too.</p><p><a class="button" href="/api/sign-in/directory">Link the account</a></p></section>`}</div>
+        <div><own-sessions .desk=${desk} .formats=${formats} .leave=${wiring.who.signOut}></own-sessions>
+          <own-passkeys .desk=${desk} .formats=${formats}></own-passkeys>
           <own-tokens .desk=${desk} .caller=${caller} .formats=${formats}></own-tokens></div>
       </div>`;
   }

@@ -10,13 +10,13 @@ import type { OwnDesk, OwnSession } from './own-desk.ts';
 
 /** Where one is signed in; each can be ended, this one is marked. */
 export class OwnSessions extends LitElement {
-  static override properties = { desk: { attribute: false }, formats: { attribute: false }, left: { attribute: false } };
+  static override properties = { desk: { attribute: false }, formats: { attribute: false }, leave: { attribute: false } };
   static override styles = [base, form, ownPage];
 
   declare desk: OwnDesk;
   declare formats: Formats;
-  /** Called when this browser's own session was ended. */
-  declare left: () => Promise<void>;
+  /** Leaves on purpose, by ending what is told. */
+  declare leave: (end: () => Promise<void>) => Promise<void>;
   readonly #sessions = new Loaded(this, () => this.desk.sessions());
 
   protected override render(): TemplateResult {
@@ -41,16 +41,15 @@ export class OwnSessions extends LitElement {
       title: current ? 'Sign out here?' : `Sign out ${agentWords(agent)}?`,
       says: current ? 'It is the browser you sit at.' : 'Whoever sits there has to sign in again.',
       does: 'Sign out',
-      send: () => this.desk.endSession(id),
+      send: () => (current ? this.leave(() => this.desk.endSession(id)) : this.desk.endSession(id)),
     });
-    if (done === true) await (current ? this.left() : this.#sessions.reload());
+    if (done === true && !current) await this.#sessions.reload();
   }
 
   async #endAll(): Promise<void> {
-    const done = await this.renderRoot.querySelector('sure-dialog')?.ask({
-      title: 'Sign out everywhere?', says: 'All your sessions end, this one too. API tokens go on.', does: 'Sign out everywhere', send: () => this.desk.endAllSessions(),
+    await this.renderRoot.querySelector('sure-dialog')?.ask({
+      title: 'Sign out everywhere?', says: 'All your sessions end, this one too. API tokens go on.', does: 'Sign out everywhere', send: () => this.leave(() => this.desk.endAllSessions()),
     });
-    if (done === true) await this.left();
   }
 }
 

@@ -28,8 +28,18 @@ export class SignInPage extends LitElement {
   readonly #wiring = new ContextConsumer(this, { context: wiringContext });
   readonly #sending = new FormSending(this);
   readonly #wait = new DoorWait(this);
+  /** Why the directory sent somebody back; taken out of the address. */
+  #sentBack = '';
   /** Of a sign-in whose password was right and whose passkey is still wanted. */
   #ticket: string | undefined;
+
+  override connectedCallback(): void {
+    super.connectedCallback();
+    const fault = new URLSearchParams(location.search).get('fault');
+    if (fault === null) return;
+    this.#sentBack = fault.slice(0, 300);
+    history.replaceState(null, '', location.pathname);
+  }
 
   override firstUpdated(): void {
     this.renderRoot.querySelector<HTMLElement>('input, button, a')?.focus();
@@ -49,6 +59,7 @@ export class SignInPage extends LitElement {
     const told = toldOf(who);
     const waits = this.#wait.leftS > 0;
     return html`<h1>Sign in</h1>
+      ${this.#sentBack === '' ? nothing : html`<p class="fault" role="alert">${who.me.directory ?? 'The directory'} did not sign you in: ${this.#sentBack}</p>`}
       ${told === '' ? nothing : html`<p class="told" role="status">${told}</p>`}
       <form @submit=${(event: SubmitEvent) => { void this.#onSubmit(event, wiring); }}>
         ${textField(this.#sending, { name: 'name', label: 'Name', autocomplete: 'username', required: true, most: 80 })}

@@ -13,6 +13,14 @@ describe('the built client', () => {
     expect(bytes).toBeLessThan(250_000);
   });
 
+  it('loads less than 65 kB of script for the board, gzipped: the pages of accounts come when they are opened', () => {
+    const page = readFileSync(new URL('index.html', built), 'utf8');
+    const first = [...page.matchAll(/(?:src|href)="\/(assets\/[^"]+\.js)"/g)].map(([, name]) => name ?? '');
+    expect(first.length).toBeGreaterThan(0);
+    expect(first.reduce((sum, name) => sum + gzipSync(readFileSync(new URL(name, built))).length, 0)).toBeLessThan(65_000);
+    for (const name of ['sign-in', 'join', 'display', 'account', 'people', 'displays', 'sources', 'changes']) expect(files.some((file) => file.startsWith(`assets/${name}-page-`)), name).toBe(true);
+  });
+
   it('has no script or style inside the page, and names its files by their content', () => {
     const page = readFileSync(new URL('index.html', built), 'utf8');
     expect(page).not.toMatch(/<script(?![^>]*\ssrc=)/);

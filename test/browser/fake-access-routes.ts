@@ -187,10 +187,10 @@ const accessRoutes: readonly FakeRoute[] = [
   } },
   { method: 'DELETE', path: /^\/api\/own\/tokens\/([^/]+)$/, needs: 'keep-own-account', does: (asked) => { own(asked).tokens = own(asked).tokens.filter(({ id }) => id !== asked.id); return done; } },
   { method: 'GET', path: /^\/api\/own\/passkeys$/, needs: 'keep-own-account', does: (asked) => ok(own(asked).passkeys) },
-  { method: 'POST', path: /^\/api\/own\/passkeys\/begin$/, needs: 'keep-own-account', does: (asked) => ok({
+  { method: 'POST', path: /^\/api\/own\/passkeys\/begin$/, needs: 'keep-own-account', does: (asked) => { checkOwn(asked, 'password'); return ok({
     challenge: 'bm90LXJhbmRvbS1hdC1hbGw', rp: { id: 'localhost', name: 'Vouchline' }, user: { id: 'aW5lcw', name: own(asked).name, displayName: own(asked).shownAs },
     pubKeyCredParams: [{ type: 'public-key', alg: -7 }], authenticatorSelection: { residentKey: 'required', userVerification: 'required' }, excludeCredentials: [],
-  }) },
+  }); } },
   { method: 'POST', path: /^\/api\/own\/passkeys\/finish$/, needs: 'keep-own-account', does: (asked) => {
     const { id } = asked.body['answer'] as { id: string };
     own(asked).passkeys.push({ id, name: text(asked.body, 'name'), made: Date.now(), lastUsed: null });

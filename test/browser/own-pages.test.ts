@@ -200,6 +200,11 @@ describe('one’s own account', () => {
     await expect.poll(() => page.getByText('Andon lamp').count()).toBe(0);
   });
 
+  it('is linked with the directory where there is one', async () => {
+    await show('/account', fullPlant({ directory: 'Hose plant directory' }));
+    expect(await page.getByRole('link', { name: 'Link the account' }).getAttribute('href')).toBe('/api/sign-in/directory');
+  });
+
   it('adds a passkey, signs in with it, and removes it', async () => {
     fake = await startFake({ access: fullPlant() });
     const address = fake.url.replace('127.0.0.1', 'localhost'); // a passkey belongs to a name, not to an address

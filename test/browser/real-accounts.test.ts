@@ -174,6 +174,31 @@ describe('on a real server with accounts', () => {
     source.socket.terminate();
   });
 
+  it('a passkey, added on one’s own page, is asked for after the password and signs in alone', async () => {
+    const devtools = await browser.context.newCDPSession(page);
+    await devtools.send('WebAuthn.enable');
+    await devtools.send('WebAuthn.addVirtualAuthenticator', { options: { protocol: 'ctap2', transport: 'internal', hasResidentKey: true, hasUserVerification: true, isUserVerified: true, automaticPresenceSimulation: true } });
+    await join(served.firstLink!.replace('127.0.0.1', 'localhost'), 'Ada Lindqvist', 'ada'); // a passkey belongs to a name, not to an address
+    await menu('My account');
+    await page.getByText('You have no passkey.').waitFor();
+    await page.getByText('Add a passkey').click();
+    await page.locator('own-passkeys').getByLabel('What it is').fill('Phone');
+    await page.locator('own-passkeys').getByLabel('Your password', { exact: true }).fill(password);
+    await page.getByRole('button', { name: 'Add the passkey' }).click();
+    await page.getByText('The passkey “Phone” is added.').waitFor();
+    await menu('Sign out');
+    await signIn('ada', password);
+    await page.locator('board-lane').first().waitFor();
+    await menu('Sign out');
+    await page.getByRole('button', { name: 'Use a passkey' }).click();
+    await page.locator('board-lane').first().waitFor();
+    await menu('My account');
+    await page.getByText(/last used/).first().waitFor();
+    await page.getByRole('button', { name: 'Remove: Phone' }).click();
+    await dialog().getByRole('button', { name: 'Remove' }).click();
+    await page.getByText('You have no passkey.').waitFor();
+  });
+
   it('one’s own account: password, sessions, tokens', async () => {
     await join(served.firstLink!, 'Ada Lindqvist', 'ada');
     await menu('My account');

@@ -94,6 +94,24 @@ describe('signing in', () => {
     await page.getByRole('button', { name: 'Use a passkey' }).waitFor();
   });
 
+  it('says why the directory sent one back, and takes it out of the address', async () => {
+    await show(`/sign-in?fault=${encodeURIComponent('The sign-in took too long; begin again.')}`, { ...accounts, directory: 'Hose plant directory' });
+    await page.getByText('Hose plant directory did not sign you in: The sign-in took too long; begin again.').waitFor();
+    expect(page.url()).toBe(`${fake.url}/sign-in`);
+  });
+
+  it('whoever comes back from the directory gets to where they wanted to go', async () => {
+    await show('/alarms', accounts);
+    await page.getByRole('heading', { name: 'Sign in' }).waitFor();
+    const { cookie } = fake.access.sessionFor({ account: 'ines' }, '10.0.4.2', '');
+    await browser.context.addCookies([{ name: 'vouchline-session', value: cookie.split(/[=;]/)[1]!, url: fake.url }]);
+    await page.goto(fake.url);
+    await page.locator('alarm-card').first().waitFor();
+    expect(path()).toBe('/alarms');
+    await page.goto(fake.url);
+    await page.locator('board-lane').first().waitFor();
+  });
+
   it('tells a plant without accounts where the first one comes from', async () => {
     await show('/', { access: 'accounts' });
     await page.getByText(/printed a link for the first one/).waitFor();

@@ -64,6 +64,13 @@ describe('asking who sits here', () => {
     expect(other.seen.at(-1)?.kind).toBe('known');
   });
 
+  it('a session that ends while somebody leaves was left, not ended', async () => {
+    const { desk, seen } = deskWith([() => meOf(account), () => meOf(undefined), () => meOf(undefined)]);
+    await desk.refresh();
+    await desk.signOut(async () => { await desk.refresh(); }); // the connection ends before the answer is here
+    expect(seen.flatMap((who) => (who.kind === 'nobody' ? [who.why] : []))).toEqual(['left', 'left', 'left', 'left']);
+  });
+
   it('keeps whether this browser is a display, until somebody signs out', async () => {
     const { desk, kept } = deskWith([() => meOf({ ...account, kind: 'display' }), () => meOf(undefined), () => undefined]);
     await desk.refresh();
