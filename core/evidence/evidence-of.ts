@@ -78,7 +78,7 @@ function recordsOf<T, S extends RecordSum<T, S>>({ window }: Guarantee, width: 1
 }
 
 function unitsOf({ window, clusters }: Guarantee, rule: CountRule, weighing: Weighing, { limit, asYield = false }: { limit?: Limit; asYield?: boolean }): StationEvidence {
-  if (window.kind === 'time') return new TimedUnitEvidence({ span: window, limit, asYield }, rule, weighing);
+  if (window.kind === 'time') return new TimedUnitEvidence({ span: window, limit, clustersDeclared: clusters !== undefined, asYield }, rule, weighing);
   const gap = clusters?.kind === 'events' ? clusters.gap : undefined;
   return new UnitEvidence({ size: window.kind === 'units' ? window.units : undefined, gap, clustersDeclared: clusters !== undefined, limit, asYield }, rule, weighing);
 }

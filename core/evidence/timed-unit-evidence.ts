@@ -5,6 +5,7 @@ import type { Margin } from '../view/guarantee-view.ts';
 import type { RecordIdentity, RecordRange } from '../window/record-identity.ts';
 import { endOfStep, type TimeSpan } from '../window/time-steps.ts';
 import { TimeWindow, type TimeWindowSnapshot } from '../window/time-window.ts';
+import { stepWarnings } from './cluster-warnings.ts';
 import { countBounds } from './count-bounds.ts';
 import { countFigures } from './count-figures.ts';
 import { countMargin } from './count-margin.ts';
@@ -20,6 +21,8 @@ export interface TimedUnitSettings {
   readonly span: TimeSpan;
   /** Judges measurements, where the quantity counts values beyond a limit. */
   readonly limit: Limit | undefined;
+  /** Clusters are declared and allowed for: they need no warning. */
+  readonly clustersDeclared?: boolean;
   /** Shows the share of conforming units instead of that of nonconforming ones. */
   readonly asYield: boolean;
 }
@@ -41,6 +44,9 @@ export class TimedUnitEvidence implements Evidence {
   readonly #rule: CountRule;
   readonly #cover: SpanCover;
   #position = 0;
+  /** At which count and step the warnings were looked for last. */
+  #clustersAt = '';
+  #clusterWarnings: readonly string[] = [];
   /** Position before which, with conforming units only and no step leaving, nothing can change. */
   #wakeAt = 0;
 
@@ -128,8 +134,12 @@ export class TimedUnitEvidence implements Evidence {
   }
 
   warnings(): readonly string[] {
-    const doubt = this.#rule.doubt?.(this.window.inspected, this.window.nonconforming);
-    return doubt === undefined ? [] : [doubt];
+    const { inspected, nonconforming, since } = this.window;
+    const doubt = this.#rule.doubt?.(inspected, nonconforming);
+    if (this.#settings.clustersDeclared === true) return doubt === undefined ? [] : [doubt];
+    const stands = `${nonconforming} ${since}`;
+    if (this.#clustersAt !== stands) [this.#clustersAt, this.#clusterWarnings] = [stands, stepWarnings(this.window)];
+    return doubt === undefined ? this.#clusterWarnings : [doubt, ...this.#clusterWarnings];
   }
 
   snapshot(): TimedUnitSnapshot {

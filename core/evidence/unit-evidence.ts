@@ -41,6 +41,8 @@ export class UnitEvidence implements Evidence {
   readonly #weighing: Weighing;
   #rule: CountRule;
   #position = 0;
+  #clustersAt = '';
+  #clusterWarnings: readonly string[] = [];
   /** Position before which, with conforming units only, nothing can change. */
   #wakeAt = 0;
 
@@ -162,7 +164,15 @@ export class UnitEvidence implements Evidence {
 
   warnings(): readonly string[] {
     const doubt = this.#rule.doubt?.(this.window.inspected, this.window.events);
-    return [...(doubt === undefined ? [] : [doubt]), ...(this.#settings.clustersDeclared ? [] : clusterWarnings(this.window))];
+    return [...(doubt === undefined ? [] : [doubt]), ...(this.#settings.clustersDeclared ? [] : this.#clusters())];
+  }
+
+  /** Looked at anew where a nonconforming unit came, left or was corrected: a screen asks ten times a second. */
+  #clusters(): readonly string[] {
+    const [newest] = this.window.newestNonconforming(1);
+    const stands = `${this.window.nonconforming} ${this.#position - (newest?.ago ?? 0)}`;
+    if (this.#clustersAt !== stands) [this.#clustersAt, this.#clusterWarnings] = [stands, clusterWarnings(this.window)];
+    return this.#clusterWarnings;
   }
 
   strip(most: number): WindowStrip {

@@ -133,6 +133,11 @@ export class TimeWindow {
     return found;
   }
 
+  /** What was inspected in each step of the window that held anything, in no order. */
+  steps(): { readonly inspected: number; readonly nonconforming: number }[] {
+    return this.#steps.flatMap((step) => (step === undefined || step.inspected === 0 ? [] : [{ inspected: step.inspected, nonconforming: step.nonconforming }]));
+  }
+
   /** Records in the window, as far as they are indexed, source by source. */
   ranges(): RecordRange[] {
     const ranges = [...this.#covered()].flatMap(([, tally]) => tally.ranges());

@@ -208,6 +208,29 @@ describe('units in clusters', () => {
   });
 });
 
+describe('stretches of a window that differ more than chance would have it', () => {
+  const uneven = [...Array(20).keys()].map((stretch) => (stretch % 4 === 0 ? 5 : 0));
+
+  it.each([
+    ['units', '{ units: 2500 }'],
+    ['time', '{ time: 50 min, step: 125 s }'],
+  ])('are said in a window of %s, even ones are not', (_kind, window) => {
+    const take = (one: WatchOne, counts: readonly number[]): WatchOne => {
+      for (const count of counts) for (let part = 0; part < 5; part += 1) one.take(...(part < count ? [good(24), bad(1)] : [good(25)]));
+      return one;
+    };
+    const told = (counts: readonly number[]): readonly string[] => take(new WatchOne(`${leak}, window: ${window}, alarms: { ${quiet} }`), counts).watch.evidence.warnings();
+    expect(told(uneven)).toEqual([expect.stringMatching(/clusters, or their rate changed within the window: \d+ stretches of it differ .* Remedy/)]);
+    expect(told(uneven.map((_, stretch) => Number(stretch % 2 === 0)))).toEqual([]);
+  });
+
+  it('are not said where clusters are declared', () => {
+    const one = new WatchOne(`${leak}, window: { time: 50 min, step: 125 s }, clusters: { design-effect: 2, source: history }, alarms: { ${quiet} }`);
+    for (const count of uneven) for (let part = 0; part < 5; part += 1) one.take(...(part < count ? [good(24), bad(1)] : [good(25)]));
+    expect(one.watch.evidence.warnings()).toEqual([]);
+  });
+});
+
 describe('records of another kind than an evidence counts', () => {
   it('demonstrate nothing', () => {
     const one = new WatchOne(`${leak}, window: { units: 400 }, alarms: { ${quiet} }`);
