@@ -185,6 +185,7 @@ export async function serveFrom(store: Store, { settings, clock: clockSetting, d
     guard,
     hops,
     upgradesPerSecond: settings.upgradesPerSecond,
+    mostOfAddress: settings.socketsPerAddress,
     onDashboard: (socket, caller) => dashboards.connect(socket, caller),
     closedBecause,
     onError: (cause) => log.debug({ err: cause }, 'a socket failed'),

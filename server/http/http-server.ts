@@ -51,9 +51,10 @@ const uploads = '/source/records';
 /** An HTTP server with the dashboard's files, safe headers and one form of error; routes are added by the caller. */
 export async function httpServer({ hops, tls, requestsPerSecond, arriveWithinMs = usualArrival }: HttpSetting): Promise<FastifyInstance> {
   // An upload may take its time, but a connection that says nothing is ended.
-  const options = { bodyLimit, forceCloseConnections: true, requestTimeout: 0, connectionTimeout: 60_000, return503OnClosing: true, trustProxy: (address: string) => hops.trusts(address), logger: false } as const;
-  const http = (tls === undefined ? fastify(options) : fastify({ ...options, https: { ...tls, minVersion: 'TLSv1.2' } })) as FastifyInstance;
-  http.server.headersTimeout = arriveWithinMs;
+  const options = { bodyLimit, forceCloseConnections: true, requestTimeout: 0, connectionTimeout: 60_000, return503OnClosing: true, trustProxy: (address: string) => hops.trusts(address) } as const;
+  // How often heads that are late are looked for; how long a head may be, bytes.
+  const heads = { connectionsCheckingInterval: Math.min(5_000, arriveWithinMs), headersTimeout: arriveWithinMs, requestTimeout: 0, maxHeaderSize: 16_384 };
+  const http = (tls === undefined ? fastify({ ...options, http: heads }) : fastify({ ...options, https: { ...heads, ...tls, minVersion: 'TLSv1.2' } })) as FastifyInstance;
   const limit = new RateLimit(requestsPerSecond, 10 * requestsPerSecond);
   http.addHook('onRequest', async (request, reply) => {
     const path = request.url.split('?')[0];

@@ -32,7 +32,9 @@ export function serveOperations(http: FastifyInstance, { store, measures, maySee
 
 /** Scrapers on the same machine need no token; others need sight of the plant. */
 export function mayReadMeasures(guard: Guard, request: FastifyRequest): boolean {
-  if (isLoopback(request.ip.replace(/^::ffff:/, ''))) return true;
+  // A proxy on this machine that nobody named makes every client look like this machine: what came through one needs a token.
+  const forwarded = request.headers['x-forwarded-for'] !== undefined || request.headers.forwarded !== undefined;
+  if (!forwarded && isLoopback(request.ip.replace(/^::ffff:/, ''))) return true;
   const caller = guard.callerOf({ headers: request.headers, address: request.ip });
   return caller !== undefined && mayDo(caller, 'see', undefined);
 }

@@ -23,6 +23,8 @@ export interface SocketHost {
   readonly hops: Hops;
   /** Upgrades a second from one address; the burst is ten times as many. */
   readonly upgradesPerSecond: number;
+  /** Sockets open at the same time from one address at most. */
+  readonly mostOfAddress: number;
   /** Why nobody is let in now; undefined if they are. */
   readonly closedBecause: () => string | undefined;
   readonly mostDashboards: number;
@@ -42,6 +44,20 @@ export function serveSockets(server: Server, host: SocketHost): () => void {
   const dashboards = new WebSocketServer({ noServer: true, maxPayload: 1_024, perMessageDeflate: false, handleProtocols: () => liveProtocol });
 
   const limit = new RateLimit(host.upgradesPerSecond, 10 * host.upgradesPerSecond);
+  const open = new Map<string, number>();
+
+  /** Counts a socket of an address until it closes. @returns whether there is room for it */
+  function hasRoom(address: string, socket: Duplex): boolean {
+    const count = open.get(address) ?? 0;
+    if (count >= host.mostOfAddress) return false;
+    open.set(address, count + 1);
+    socket.once('close', () => {
+      const left = (open.get(address) ?? 1) - 1;
+      if (left <= 0) open.delete(address);
+      else open.set(address, left);
+    });
+    return true;
+  }
 
   async function upgradeSource(request: IncomingMessage, socket: Duplex, head: Buffer): Promise<void> {
     const closed = host.closedBecause();
@@ -77,7 +93,10 @@ export function serveSockets(server: Server, host: SocketHost): () => void {
   function onUpgrade(request: IncomingMessage, socket: Duplex, head: Buffer): void {
     socket.on('error', host.onError);
     const path = (request.url ?? '').split('?')[0];
-    if (limit.take(host.hops.addressOf(request)) > 0) refuse(socket, 429, 'too-many-connections');
+    const address = host.hops.addressOf(request);
+    const wait = limit.take(address);
+    if (wait > 0) refuse(socket, 429, 'too-many-connections', wait);
+    else if (!hasRoom(address, socket)) refuse(socket, 503, 'too-many-connections', 10_000);
     else if (hasForeignOrigin(request.headers, host.hops.hostOf(request))) refuse(socket, 403, 'foreign-origin');
     else if (path === '/live') upgradeDashboard(request, socket, head);
     else if (path === '/source') {
@@ -98,9 +117,10 @@ export function serveSockets(server: Server, host: SocketHost): () => void {
 
 const reasons: Readonly<Record<number, string>> = { 400: 'Bad Request', 401: 'Unauthorized', 403: 'Forbidden', 404: 'Not Found', 429: 'Too Many Requests', 500: 'Internal Server Error', 503: 'Service Unavailable' };
 
-function refuse(socket: Duplex, status: number, code: string): void {
+/** @param waitMs after which it may be tried again */
+function refuse(socket: Duplex, status: number, code: string, waitMs?: number): void {
   if (socket.destroyed) return;
   const body = JSON.stringify({ code });
   socket.once('finish', () => socket.destroy()); // A peer that never closes its side would hold the socket for ever.
-  socket.end(`HTTP/1.1 ${status} ${reasons[status] ?? ''}\r\nContent-Type: application/json\r\nContent-Length: ${Buffer.byteLength(body)}\r\nConnection: close\r\n\r\n${body}`);
+  socket.end(`HTTP/1.1 ${status} ${reasons[status] ?? ''}\r\nContent-Type: application/json\r\nContent-Length: ${Buffer.byteLength(body)}\r\nConnection: close\r\n${waitMs === undefined ? '' : `Retry-After: ${Math.ceil(waitMs / 1000)}\r\n`}\r\n${body}`);
 }

@@ -19,6 +19,7 @@ export interface Settings {
   readonly plainHttp: 'refused' | 'allowed';
   readonly requestsPerSecond: number;
   readonly upgradesPerSecond: number;
+  readonly socketsPerAddress: number;
   readonly access: 'accounts' | 'open';
   readonly directoryIssuer: string | undefined;
   readonly directoryClient: string | undefined;
@@ -61,6 +62,7 @@ export const settingRules: readonly SettingRule[] = [
   { key: 'plainHttp', name: 'plain-http', of: { kind: 'choice', of: ['refused', 'allowed'] }, preset: 'refused', help: 'allowed: listen beyond this machine without TLS, so that passwords and records can be read on the way' },
   { key: 'requestsPerSecond', name: 'requests-per-second', of: { kind: 'whole', from: 1, to: 1_000_000 }, preset: 100, help: 'requests a second from one address; ten times as many at once' },
   { key: 'upgradesPerSecond', name: 'upgrades-per-second', of: { kind: 'whole', from: 1, to: 1_000_000 }, preset: 500, help: 'sockets opened a second from one address; ten times as many at once' },
+  { key: 'socketsPerAddress', name: 'sockets-per-address', of: { kind: 'whole', from: 1, to: 1_000_000 }, preset: 5_000, help: 'sockets open at the same time from one address at most' },
   { key: 'access', name: 'access', of: { kind: 'choice', of: ['accounts', 'open'] }, preset: 'accounts', help: 'accounts: people sign in, and each role does its work; open: whoever reaches the server does everything (on this machine only)' },
   { key: 'directoryIssuer', name: 'directory-issuer', of: { kind: 'text' }, preset: undefined, help: 'issuer (URL) of the OpenID Connect provider of the plant, where people may sign in through it' },
   { key: 'directoryClient', name: 'directory-client', of: { kind: 'text' }, preset: undefined, help: 'client id that the provider knows this server by' },

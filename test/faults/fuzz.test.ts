@@ -120,6 +120,19 @@ describe('a server under hostile input', () => {
     expect(after.bytes - before.bytes).toBeLessThan(4 * mebibyte);
   }, 90_000);
 
+  it('takes 3,000 messages from dashboards that mean nothing, and ends those that are too long', async () => {
+    const chance = new Chance('dashboards', seed);
+    const beginnings = ['{"type":"watch"}', '{"type":"watch","boot":1,"revision":{}}', '[', 'null', '\u0000', '{"__proto__":{"boot":"b"}}', '{"boot":"b","revision":-1}', '{"boot":"b","revision":1e300}', 'x'.repeat(1_000)];
+    for (let dashboard = 0; dashboard < 30; dashboard += 1) {
+      const socket = new WebSocket(`${server.address.replace('http', 'ws')}/live`, 'vouchline-live.1');
+      await new Promise((resolve) => socket.on('open', resolve));
+      for (let sent = 0; sent < 100; sent += 1) socket.send(chance.oneOf(beginnings as [string, ...string[]]));
+      socket.send('x'.repeat(2_000));
+      expect((await within('the close', new Promise<{ code: number }>((resolve) => socket.on('close', (code) => resolve({ code }))))).code).toBe(1009);
+    }
+    await expectHealthy();
+  });
+
   it('lets go of a refused connection whose peer never closes its side', async () => {
     const before = await server.held();
     const peers = await Promise.all(Array.from({ length: 40 }, () => rawSocket(true)));

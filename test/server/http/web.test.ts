@@ -64,6 +64,37 @@ describe('TLS', () => {
   });
 });
 
+describe('sockets of one address', () => {
+  it('are bounded, and told when to come again', async () => {
+    const data = dataDirectory(leakPlant);
+    const served = await servedOn(data.path, { kind: 'records' }, { 'sockets-per-address': '2' });
+    const dial = (): Promise<WebSocket | { status: number; retry: string | undefined }> =>
+      new Promise((resolve) => {
+        const socket = new WebSocket(`${served.address.replace('http', 'ws')}/live`, liveProtocol);
+        socket.on('open', () => resolve(socket));
+        socket.on('unexpected-response', (_request, answer) => resolve({ status: answer.statusCode ?? 0, retry: answer.headers['retry-after'] }));
+        socket.on('error', () => undefined);
+      });
+    const [first] = [(await dial()) as WebSocket, await dial()];
+    expect(await dial()).toEqual({ status: 503, retry: '10' });
+    first.terminate();
+    await expect.poll(async () => (await dial()) instanceof WebSocket).toBe(true);
+    await served.stop('the test is over');
+    data.remove();
+  });
+});
+
+describe('the measures', () => {
+  it('are for this machine, but not for whoever comes through a proxy on it that nobody named', async () => {
+    const data = dataDirectory(leakPlant);
+    const served = await servedOn(data.path, { kind: 'records' }, { access: 'accounts' });
+    const status = async (headers: Record<string, string>): Promise<number> => (await fetch(`${served.address}/metrics`, { headers })).status;
+    expect([await status({}), await status({ 'x-forwarded-for': '203.0.113.9' }), await status({ forwarded: 'for=203.0.113.9' })]).toEqual([200, 401, 401]);
+    await served.stop('the test is over');
+    data.remove();
+  });
+});
+
 describe('a certificate', () => {
   it('is taken up anew when its files change, and one that cannot be used changes nothing', async () => {
     const http = await httpServer({ hops: hopsOf(''), tls: tlsPair(files), requestsPerSecond: 1000 });
@@ -180,7 +211,9 @@ describe('a request that is no good', () => {
 
   it('is let go where its body or its head does not arrive in time; an upload may take its time', async () => {
     const slow = await open(`${head('/api/something', 100)}{"a`);
-    await slow.ended;
+    const slowHead = await open('GET /api/something HTTP/1.1\r\nHost: a\r\nX-One: ');
+    await Promise.all([slow.ended, slowHead.ended]);
+    expect(slowHead.heard()).toContain(' 408 ');
     const upload = await open(`${head('/source/records', 3).replace('application/json', 'application/json')}{}`);
     await new Promise((resolve) => setTimeout(resolve, 700));
     upload.socket.write(' ');
@@ -214,6 +247,12 @@ describe('a request that is no good', () => {
     await one.ended;
     expect(one.heard()).toMatch(/^HTTP\/1\.1 (400|403|404) /);
     expect(one.heard()).not.toContain('root:');
+  });
+
+  it('has a head of a bounded length', async () => {
+    const long = await open(`GET /api/nothing HTTP/1.1\r\nHost: a\r\nX-Long: ${'x'.repeat(20_000)}\r\n\r\n`);
+    await long.ended;
+    expect(long.heard()).toContain(' 431 ');
   });
 
   it('puts no header of its own into an answer', async () => {
