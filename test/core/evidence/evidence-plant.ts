@@ -22,6 +22,7 @@ const quantities: Readonly<Record<string, string>> = {
   designed: 'station: A.leak, characteristic: tightness, quantity: nonconforming-fraction, at-most: 4 %, clusters: { design-effect: 1.7, source: three months of crimping }',
   events: 'station: A.leak, characteristic: tightness, quantity: nonconforming-fraction, at-most: 4 %, clusters: { merge-within: 6, cluster-size: 1.5, source: three months of crimping }',
   lots: 'station: A.leak, characteristic: tightness, quantity: nonconforming-fraction, at-most: 40 %, clusters: { lots-with-more-than: 3 }',
+  cusum: 'station: A.leak, characteristic: tightness, quantity: nonconforming-fraction, at-most: 2 %',
   leakAll: 'station: A.leak, characteristic: tightness, quantity: nonconforming-fraction, at-most: 4 %, looks: all',
   yieldBoth: 'station: A.leak, characteristic: tightness, quantity: yield, at-least: 96 %, looks: both',
   flawsAll: 'station: A.cutting, characteristic: surface, quantity: rate, at-most: 4 per 100 m, looks: all',
@@ -43,7 +44,7 @@ export function everyGuarantee(): string {
   const lines = Object.entries(quantities).flatMap(([name, what]) =>
     (Object.keys(windows) as WindowName[]).filter((window) => ((name !== 'events' && name !== 'lots') || !windows[window].includes('time')) && (!/All|Both/.test(name) || window === 'last')).map(
       (window) =>
-        `  - { id: ${name}-${window}, ${what}, confidence: 90 %, window: ${windows[window]}, alarms: { crossing: { return: { distance: 0.05, units: 20 } }, violation: { confidence: 95 %, return: { distance: 0, units: 10 } }, silence: off, bad-data: off } }`,
+        `  - { id: ${name}-${window}, ${what}, confidence: 90 %, window: ${windows[window]}, alarms: { crossing: { return: { distance: 0.05, units: 20 } }, violation: { confidence: 95 %, return: { distance: 0, units: 10 } }, silence: off, bad-data: off${name === 'cusum' ? ', deterioration: { detector: cusum, units-between-false-calls: 3000 }' : ''} } }`,
     ),
   );
   return [...lines, '  - { id: lot, station: A.leak, characteristic: outgoing, quantity: lot-fraction, at-most: 4 %, confidence: 90 %, alarms: { violation: { confidence: 95 % }, silence: off, bad-data: off } }'].join('\n');

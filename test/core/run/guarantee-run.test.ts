@@ -68,7 +68,7 @@ describe('the beginning of a run', () => {
   });
 
   it('[L1] comes back with its product, and with a lot where the guarantee is about lots', () => {
-    const one = new WatchOne(leak('product: BH-4, window: { units: 1000 }, looks: all').replace('window', 'window'));
+    const one = new WatchOne(leak('product: BH-4, window: { units: 1000 }, looks: all'));
     const told: Happening[] = [];
     let next = 1;
     const take = (...parts: Parameters<typeof feed>[1]): void => {
