@@ -8,6 +8,7 @@ const commands: Readonly<Record<string, () => Promise<Command>>> = {
   serve: async () => (await import('./serve-command.ts')).serveCommand(),
   demo: async () => (await import('./demo-command.ts')).demoCommand(),
   source: async () => (await import('./source-command.ts')).sourceCommand(),
+  account: async () => (await import('./account-command.ts')).accountCommand(),
   feed: async () => (await import('./feed-command.ts')).feedCommand(),
   replay: async () => (await import('./replay-command.ts')).replayCommand(),
   plant: async () => (await import('./plant-command.ts')).plantCommand(),
