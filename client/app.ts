@@ -32,7 +32,7 @@ import './parts/masthead.ts';
 import { PersonRequest } from './parts/person-menu.ts';
 import type { Settings } from './settings.ts';
 import { SignedIn } from './sign-in/signed-in.ts';
-import { wallOf, wallQuery } from './wall.ts';
+import { onWallChange, wallOf } from './wall.ts';
 import { headline } from './words.ts';
 
 /** The whole page: masthead, what the connection says, one of the pages; or a door for whoever is not in. */
@@ -63,7 +63,7 @@ export class VouchlineApp extends LitElement {
     this.#acknowledging = new Acknowledging(this, { ...wiring, actor, cards: () => this.#live.value?.picture?.cards ?? [] });
     this.addEventListener(SignedIn.type, () => { void this.#onSignedIn(); });
     this.addEventListener(PersonRequest.type, (event) => { if (event instanceof PersonRequest) void this.#onWish(event.wish).catch(this.#onFault); });
-    wallQuery.addEventListener('change', () => { this.requestUpdate(); });
+    onWallChange(() => { this.requestUpdate(); });
   }
 
   /** Whoever is not in is sent to the door, and comes back from there to where they were. */
@@ -84,7 +84,7 @@ export class VouchlineApp extends LitElement {
     if (settings === undefined || live === undefined || who === undefined) return nothing;
     showTheme(settings.theme);
     const { route } = this.#address;
-    const wall = wallOf(settings.wall) && route.kind === 'board';
+    const wall = wallOf(settings.wall, who.kind === 'known' ? who.caller : undefined) && route.kind === 'board';
     document.documentElement.classList.toggle('wall', wall);
     document.title = pageTitle(route);
     if (who.kind === 'asking') return this.#waiting(who.unanswered);

@@ -43,7 +43,7 @@ export class ChangeList extends LitElement {
 
   #row({ id, at, who, kind, what, before, after, why }: RecordedChange): TemplateResult {
     return html`<tr>
-      <td class="quiet"><span aria-label="Record ${id}">${this.formats.count(id)}.</span> ${this.formats.instant(at)}</td>
+      <td>${this.formats.instant(at)}<br /><span class="quiet">Record ${this.formats.count(id)}</span></td>
       <td>${who}</td>
       <td><b>${changeWord[kind] ?? kind}</b><br />${what}</td>
       <td>${differencesOf(before, after, this.lines).map((part) => this.#difference(part))}${why === '' ? nothing : html`<div class="why">${why}</div>`}</td>

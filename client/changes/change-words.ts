@@ -33,22 +33,31 @@ export interface Difference {
 /** JSON of a record as it comes from the server, where absence is undefined. */
 export type Told = undefined | null | boolean | number | string | readonly Told[] | { readonly [name: string]: Told };
 
+type Parts = { readonly [name: string]: Told };
+
 const isList = (value: Told): value is readonly Told[] => Array.isArray(value);
-const isParts = (value: Told): value is { readonly [name: string]: Told } => typeof value === 'object' && value !== null && !isList(value);
+const isParts = (value: Told): value is Parts => typeof value === 'object' && value !== null && !isList(value);
 
 /** What differs between before and after, part by part; what stayed is left out. */
 export function differencesOf(before: Told, after: Told, lines: readonly LineName[]): readonly Difference[] {
   const [was, is] = [before ?? {}, after ?? {}];
-  if (isParts(was) && isParts(is)) {
-    return [...new Set([...Object.keys(was), ...Object.keys(is)])]
-      .map((name) => ({ name: nameWords(name), before: partWords(name, was[name], lines), after: partWords(name, is[name], lines) }))
-      .filter((part) => part.before !== part.after);
-  }
+  if (isParts(was) && isParts(is)) return partsOf(was, is, '', lines);
   return before === after ? [] : [{ name: '', before: wordsOf(before, lines), after: wordsOf(after, lines) }];
 }
 
-/** 'shownAs' is 'shown as'. */
-const nameWords = (name: string): string => name.replace(/([A-Z])/g, ' $1').toLowerCase();
+/** Parts of parts are told under both names: 'guarantees, leak-A, guarantee line'. */
+function partsOf(was: Parts, is: Parts, within: string, lines: readonly LineName[]): readonly Difference[] {
+  return [...new Set([...Object.keys(was), ...Object.keys(is)])].flatMap((key) => {
+    const [from, to] = [was[key], is[key]];
+    const name = within === '' ? nameWords(key) : `${within}, ${nameWords(key)}`;
+    if (isParts(from) && isParts(to)) return partsOf(from, to, name, lines);
+    const part = { name, before: partWords(key, from, lines), after: partWords(key, to, lines) };
+    return part.before === part.after ? [] : [part];
+  });
+}
+
+/** 'shownAs' is 'shown as'; an id stays as it is. */
+const nameWords = (name: string): string => (/^[a-z]+([A-Z][a-z]+)+$/.test(name) ? name.replace(/([A-Z])/g, ' $1').toLowerCase() : name);
 
 const times: ReadonlySet<string> = new Set(['expires', 'made', 'until', 'lastUsed', 'lastSeen']);
 

@@ -27,10 +27,10 @@ export class ChangesPage extends LitElement {
   static override properties = { lines: { attribute: false }, formats: { attribute: false }, timeZone: { attribute: false }, query: { state: true } };
 
   static override styles = [base, form, ownPage, css`
-    .filter { grid-template-columns: minmax(15.5rem, 1fr) minmax(15.5rem, 1fr) minmax(0, 1fr) minmax(0, 1.2fr) auto; align-items: start; gap: 0.8rem; }
+    .filter { grid-template-columns: 16.5rem 16.5rem minmax(0, 1fr) minmax(0, 1.2fr) auto; align-items: start; gap: 0.8rem; }
     .filter .does { padding-top: 1.6rem; flex-wrap: nowrap; }
     .foot { display: grid; gap: 0.5rem; justify-items: start; }
-    @media (max-width: 1100px) { .filter { grid-template-columns: minmax(0, 1fr) minmax(0, 1fr); } .filter input, .filter select { width: 100%; min-width: 0; } .filter .does { padding-top: 0; } }
+    @media (max-width: 1100px) { .filter { grid-template-columns: minmax(0, 1fr) minmax(0, 1fr); } .filter .does { padding-top: 0; } }
     @media (max-width: 560px) { .filter { grid-template-columns: minmax(0, 1fr); } }
   `];
 

@@ -3,7 +3,7 @@ import { css } from 'lit';
 /** Forms: a label above its field, what is wanted below it, what is wrong beside it. */
 export const form = css`
   form { display: grid; gap: 0.95rem; }
-  .field { display: grid; gap: 0.25rem; min-width: 0; }
+  .field { display: grid; grid-template-columns: minmax(0, 1fr); gap: 0.25rem; min-width: 0; }
   .field > label, legend { font-weight: 650; padding: 0; }
   .hint { color: var(--quiet); font-size: 0.93rem; text-wrap: pretty; }
   .fault { color: var(--harm); font-weight: 600; }

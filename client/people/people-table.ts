@@ -16,6 +16,7 @@ export class PeopleTable extends LitElement {
     tbody tr { border-top: 1px solid var(--rule); }
     tbody th, td { padding: 0.6rem 0.8rem 0.6rem 0; vertical-align: top; overflow-wrap: anywhere; }
     .name { font-weight: 700; }
+    th .quiet { font-weight: 400; }
     .where { font-weight: 600; }
     .where.line { font-weight: 400; }
     .none { color: var(--edge); }

@@ -24,6 +24,7 @@ export class RoleMatrix extends LitElement {
     th { text-align: left; font-weight: 600; padding: 0.35rem 0.5rem 0.35rem 0; overflow-wrap: anywhere; }
     thead th { font-size: 0.86rem; color: var(--quiet); vertical-align: bottom; }
     thead th:not(:first-child), td { text-align: center; padding: 0; width: 15.5%; overflow-wrap: normal; }
+    thead th:not(:first-child) { padding-bottom: 0.35rem; }
     tbody tr { border-top: 1px solid var(--rule); }
     td label { display: grid; place-items: center; min-height: 2.4rem; cursor: pointer; }
     td input[type='checkbox'] { translate: none; }

@@ -54,7 +54,7 @@ const happened: readonly (readonly [ChangeKind, string, string, Json, Json, stri
   ['account', 'Ada Lindqvist', 'account ines', { shownAs: 'Ines Maurer', grants: told(grant('supervisor', 'a'), grant('viewer')), disabled: false }, { shownAs: 'Ines Maurer', grants: told(grant('supervisor', 'a'), grant('maintenance', 'a'), grant('viewer')), disabled: false }, 'Takes over for Olaf'],
   ['account', 'Ada Lindqvist', 'account olaf', { disabled: false }, { disabled: true }, 'Left the plant'],
   ['sign-in-failed', 'unknown', 'account admin', null, { address: '10.0.9.2' }, ''],
-  ['plant', 'Ada Lindqvist', 'plant.yaml', 'b1946ac92492', '591785b794601e21', 'New limit of the fill volume after the customer’s audit'],
+  ['plant', 'Ada Lindqvist', 'plant file', { version: 'b1946ac92492', guarantees: { fill: { guaranteeLine: 249.5 } } }, { version: '591785b794601e21', guarantees: { fill: { guaranteeLine: 250 } } }, 'New limit of the fill volume after the customer’s audit'],
   ['token-renewed', 'Ada Lindqvist', 'source leak-a-1', null, { expires: now + 20 * hour }, 'Yearly'],
   ['display', 'Ada Lindqvist', 'display hall: Hall 2, by the gate', null, { line: null, acting: false }, ''],
 ];

@@ -28,7 +28,7 @@ const scenes = [
   { name: 'alarms-none', path: '/alarms', fake: { noRecords: true }, sizes: ['phone'], themes: ['light'] },
   { name: 'board-open', path: '/', fake: {}, sizes: ['desk', 'phone'], themes: ['light'], act: (page) => page.locator('person-menu summary').click() },
   { name: 'person', path: '/', fake: { access: signedInAs('ada') }, sizes: ['desk', 'phone'], themes: ['light', 'dark'], act: (page) => page.locator('person-menu summary').click() },
-  { name: 'display', path: '/', fake: { access: signedInAs('hall') }, sizes: ['hd', 'wall'], themes: ['light', 'dark'], settings: { wall: 'on' } },
+  { name: 'display', path: '/', fake: { access: signedInAs('hall') }, sizes: ['hd', 'wall'], themes: ['light', 'dark'] },
   { name: 'withdrawn', path: '/', fake: { access: signedInAs('hall') }, sizes: ['hd', 'phone'], themes: ['light'], act: async (page, fake) => { fake.access.displays.clear(); fake.endSockets(); await page.waitForTimeout(600); } },
   { name: 'pin', path: '/', fake: { access: signedInAs('bench') }, sizes: ['desk', 'phone'], themes: ['light', 'dark'], act: async (page) => {
     await page.getByRole('button', { name: /^Acknowledge/ }).first().click();

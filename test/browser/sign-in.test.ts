@@ -222,6 +222,18 @@ describe('a display', () => {
     await page.getByText('Not yet acknowledged').first().waitFor();
   });
 
+  it('that only shows has the words of a wall; one that people act at has not', async () => {
+    await show('/', signedInAs('hall'), 'hd');
+    await page.locator('board-lane').first().waitFor();
+    const walls = (): Promise<boolean> => page.evaluate(() => document.documentElement.classList.contains('wall'));
+    expect(await walls()).toBe(true);
+    await fake.stop();
+    fake = await startFake({ access: signedInAs('bench') });
+    await page.goto(fake.url);
+    await page.getByRole('button', { name: /^Acknowledge/ }).first().waitFor();
+    expect(await walls()).toBe(false);
+  });
+
   it('says in words when it was withdrawn, also after a start', async () => {
     await show('/display#token-hall', { ...accounts, ...signedInAs('nobody') });
     await page.locator('board-lane').first().waitFor();

@@ -29,7 +29,16 @@ describe('before and after', () => {
   it('say times as times and what is deeper in words', () => {
     expect(differencesOf(undefined, { lastUsed: Date.UTC(2026, 2, 3, 8, 12), deep: { aB: [], c: { d: 1 } } }, lines)).toEqual([
       { name: 'last used', before: undefined, after: '2026-03-03 08:12 UTC' },
-      { name: 'deep', before: undefined, after: 'a b none, c d 1' },
+      { name: 'deep', before: undefined, after: 'aB none, c d 1' },
+    ]);
+  });
+
+  it('go into the parts of parts, and leave ids as they are', () => {
+    const plant = (line: number, more: object = {}): never => ({ version: `v${line}`, guarantees: { 'leak-A': { guaranteeLine: line, window: { kind: 'units', units: 1000 } }, ...more } }) as never;
+    expect(differencesOf(plant(0.01), plant(0.005, { fill: { name: 'Fill' } }), lines)).toEqual([
+      { name: 'version', before: 'v0.01', after: 'v0.005' },
+      { name: 'guarantees, leak-A, guarantee line', before: '0.01', after: '0.005' },
+      { name: 'guarantees, fill', before: undefined, after: 'name Fill' },
     ]);
   });
 
