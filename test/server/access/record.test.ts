@@ -136,6 +136,29 @@ describe('sources over HTTP', () => {
   });
 });
 
+describe('SQL in a text', () => {
+  const hostile = ["'; DROP TABLE changes; --", "' OR '1'='1", '%_[]\\"', "'; UPDATE access SET body = '{}'; --"];
+
+  it.each(hostile)('is a text wherever one can be given: %s', async (text) => {
+    expect((await first.ask('POST', '/api/guarantees/leak-A/restart', { reason: text })).status).toBe(200);
+    expect((await first.ask('POST', '/api/displays', { name: text })).status).toBe(200);
+    expect((await first.ask('POST', '/api/own/tokens', { name: text, actions: ['see'], days: 1 })).status).toBe(200);
+    const { link } = await first.json<{ link: string }>('POST', '/api/invitations', { grants: [{ role: 'viewer', line: text.slice(0, 64) }], shownAs: text });
+    expect(await first.json('POST', '/api/invitations/look', { code: link.split('#')[1] })).toMatchObject({ shownAs: text });
+    expect((await first.ask('POST', '/api/invitations/look', { code: text })).status).toBe(404);
+    expect((await first.ask('POST', '/api/sign-in', { name: text, password: text })).status).toBe(401);
+    expect((await first.ask('POST', '/api/display/sign-in', { token: text })).status).toBe(401);
+    expect((await first.ask('POST', '/api/sources', { name: text, stations: [text], why: text })).status).toBe(400);
+    expect((await first.ask('POST', `/api/sources/${encodeURIComponent(text)}/withdraw`, { why: text })).status).toBe(404);
+    expect((await first.ask('PUT', `/api/accounts/${encodeURIComponent(text)}`, { disabled: true, why: text })).status).toBe(404);
+    expect((await first.ask('GET', `/api/guarantees/${encodeURIComponent(text)}/strip`)).status).toBe(404);
+    expect(await first.json('GET', `/api/events?guarantee=${encodeURIComponent(text)}`)).toEqual([]);
+    const found = await first.json<RecordedChange[]>('GET', `/api/changes?holds=${encodeURIComponent(text)}`);
+    expect(found.map(({ kind }) => kind).sort()).toEqual(['display', 'invitation', 'restart', 'sign-in-failed', 'token']);
+    expect((await first.json<object[]>('GET', '/api/accounts')).length).toBe(1);
+  });
+});
+
 it('a plant file changed by hand goes on record as loaded by the server', async () => {
   writeFileSync(join(data.path, 'plant.yaml'), leakPlant.replace('confidence: 95 %', 'confidence: 99 %'));
   expect(await served.reload()).toEqual([]);
