@@ -1,5 +1,6 @@
-import { createHash } from 'node:crypto';
+import { createHash, randomUUID } from 'node:crypto';
 import { open, readFile, rename } from 'node:fs/promises';
+import { dirname } from 'node:path';
 import type { PlantFault } from '../core/plant/plant-fault.ts';
 import type { Plant } from '../core/plant/plant.ts';
 import { readPlant } from '../core/plant/read-plant.ts';
@@ -38,7 +39,7 @@ export function plantText(text: string): Result<PlantFileText, readonly PlantFau
 
 /** Puts a text in place of a plant file: the old one or the new one is there, whatever happens on the way. */
 export async function replacePlantFile(path: string, text: string): Promise<void> {
-  const beside = `${path}.${process.pid}.new`;
+  const beside = `${path}.${randomUUID()}.new`;
   const file = await open(beside, 'w', 0o600);
   try {
     await file.writeFile(text);
@@ -47,6 +48,12 @@ export async function replacePlantFile(path: string, text: string): Promise<void
     await file.close();
   }
   await rename(beside, path);
+  const folder = await open(dirname(path), 'r');
+  try {
+    await folder.sync(); // The new name is on disk, too.
+  } finally {
+    await folder.close();
+  }
 }
 
 const faultLine = (path: string, { line, column, sentence }: PlantFault): string => `${path}:${line}:${column}: ${sentence}`;

@@ -27,7 +27,8 @@ import { LiveBoard } from './live/live-board.ts';
 import { measuresOf } from './ops/measures.ts';
 import type { Sender } from './pipeline/arrival.ts';
 import { PlantServer } from './pipeline/plant-server.ts';
-import { plantFile, replacePlantFile, type PlantFileText } from './plant-file.ts';
+import { PlantDesk } from './plant-desk.ts';
+import { plantFile, type PlantFileText } from './plant-file.ts';
 import { repeatEvery } from './repeat-every.ts';
 import type { Settings } from './settings/settings.ts';
 import { openStore } from './store/sqlite-store.ts';
@@ -90,7 +91,6 @@ export async function serve(setting: ServeSetting): Promise<Served> {
  */
 export async function serveFrom(store: Store, { settings, clock: clockSetting, demo, log }: ServeSetting, path: string, file: PlantFileText): Promise<Served> {
   const clock = plantClock(clockSetting);
-  let inForce = { text: file.text, version: file.version };
   const board = new LiveBoard({ boot: randomUUID(), clockRate: clock?.rate ?? 1, demo });
   const dashboards = new DashboardDesk(board);
   let up = false;
@@ -143,6 +143,11 @@ export async function serveFrom(store: Store, { settings, clock: clockSetting, d
   const hops = hopsOf(settings.trustedHops);
   const tls = tlsPair(settings);
   const http = await httpServer({ hops, tls, requestsPerSecond: settings.requestsPerSecond });
+  const desk = new PlantDesk(path, file, async (taken, who, why) => {
+    await plant.usePlant(taken, who, why);
+    board.begin(plant.monitor);
+    log.info({ version: taken.version }, 'plant file in force');
+  });
   const access = await accessOf({
     file: store.access,
     settings,
@@ -156,7 +161,7 @@ export async function serveFrom(store: Store, { settings, clock: clockSetting, d
   serveOperations(http, { store, measures, maySeeMeasures: (request) => mayReadMeasures(guard, request) });
   const routes = [
     ...plantRoutes({ store, monitor: () => plant.monitor, act: (act) => plant.act(act) }),
-    ...plantFileRoutes({ inForce: () => inForce, put: putPlant }),
+    ...plantFileRoutes({ inForce: () => desk.inForce, put: (...asked) => desk.put(...asked) }),
     ...changeRoutes(store.access),
     ...sourceRoutes({ sources: store.sources, isConnected: (source) => sources.isConnected(source), endWithdrawn: () => sources.endWithdrawn() }),
     ...access.routes,
@@ -211,26 +216,10 @@ export async function serveFrom(store: Store, { settings, clock: clockSetting, d
     }),
   ];
 
-  async function take(file: PlantFileText, who?: string, why?: string): Promise<void> {
-    await plant.usePlant(file, who, why);
-    inForce = { text: file.text, version: file.version };
-    board.begin(plant.monitor);
-    log.info({ version: file.version }, 'plant file in force');
-  }
-
-  async function putPlant(file: PlantFileText, who: string, why: string): Promise<void> {
-    await replacePlantFile(path, file.text);
-    await take(file, who, why);
-  }
-
   async function reload(): Promise<readonly string[]> {
-    const again = await plantFile(path);
-    if (!again.ok) {
-      log.error({ faults: again.fault }, 'the plant file is not valid; the old one stays in force');
-      return again.fault;
-    }
-    if (again.value.version !== plant.monitor.plantVersion) await take(again.value);
-    return [];
+    const faults = await desk.reload();
+    if (faults.length > 0) log.error({ faults }, 'the plant file is not valid; the old one stays in force');
+    return faults;
   }
 
   let stopping: Promise<void> | undefined;

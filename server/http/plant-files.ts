@@ -1,6 +1,7 @@
 import { readFileSync } from 'node:fs';
 import * as v from 'valibot';
 import { plantJsonSchema } from '../../core/plant/plant-json-schema.ts';
+import type { PutFault } from '../plant-desk.ts';
 import { plantText, type PlantFileText } from '../plant-file.ts';
 import { actingName } from './acting-name.ts';
 import { Conflict } from './refusals.ts';
@@ -11,7 +12,7 @@ export interface PlantFileHost {
   /** What is in force. */
   readonly inForce: () => { readonly text: string; readonly version: string };
   /** Writes it to its file and puts it in force; both are durable when it resolves. */
-  readonly put: (file: PlantFileText, who: string, why: string) => Promise<void>;
+  readonly put: (file: PlantFileText, was: string, who: string, why: string) => Promise<PutFault | undefined>;
 }
 
 /** A plant file of a million characters, with what JSON needs to write them. */
@@ -51,11 +52,11 @@ export function plantFileRoutes(host: PlantFileHost): readonly AnyRoute[] {
       method: 'PUT', path: '/api/plant', summary: 'Puts a plant file in force', needs: { action: 'load-plant', at: 'plant' }, body: putRequest, bodyBytes: mostBytes,
       handle: async ({ body: { text, was, why, by }, caller }) => {
         const who = actingName(caller, by);
-        const { version } = host.inForce();
-        if (was !== version) throw new Conflict(`was: the plant file in force is ${version} by now, not ${was}: read it anew and put your change into it`);
         const read = plantText(text);
         if (!read.ok) throw new BadRequest('text', read.fault.slice(0, 20).map(({ sentence }) => sentence).join(' '));
-        await host.put(read.value, who, why);
+        const fault = await host.put(read.value, was, who, why);
+        if (fault === 'another-in-force') throw new Conflict(`was: the plant file in force is ${host.inForce().version} by now, not ${was}: read it anew and put your change into it`);
+        if (fault === 'changed-by-hand') throw new Conflict('text: the plant file on disk was changed by hand and not read anew; have the server read it (vouchline serve --reload) before');
         return { version: read.value.version };
       },
     }),

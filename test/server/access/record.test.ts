@@ -77,6 +77,18 @@ describe('the plant file over HTTP', () => {
     expect([await asked(), readFileSync(join(data.path, 'plant.yaml'), 'utf8')]).toEqual([{ text, version }, text]);
   });
 
+  it('takes one of two that were made from the same, and none over a file changed by hand', async () => {
+    const { text, version } = await asked();
+    const put = (limit: string): Promise<Response> => first.ask('PUT', '/api/plant', { text: text.replace('1 %', limit), was: version, why: 'at the same time' });
+    expect((await Promise.all([put('2 %'), put('3 %'), put('4 %')])).map(({ status }) => status).sort()).toEqual([200, 409, 409]);
+    const now = await asked();
+    expect(readFileSync(join(data.path, 'plant.yaml'), 'utf8')).toBe(now.text);
+    writeFileSync(join(data.path, 'plant.yaml'), now.text.replace('confidence: 95 %', 'confidence: 90 %'));
+    const over = await first.ask('PUT', '/api/plant', { text: text.replace('1 %', '5 %'), was: now.version, why: 'x' });
+    expect([over.status, ((await over.json()) as { message: string }).message]).toEqual([409, expect.stringContaining('changed by hand')]);
+    expect(await served.reload()).toEqual([]);
+  });
+
   it('says of limits what is gone and what is new', () => {
     const guarantee = { id: 'a', tail: 0.05 } as never;
     expect(limitChanges([guarantee], [])).toEqual({ before: { a: { id: 'a', tail: 0.05 } }, after: { a: null } });
