@@ -142,7 +142,8 @@ export async function serveFrom(store: Store, { settings, clock: clockSetting, d
 
   const hops = hopsOf(settings.trustedHops);
   const tls = tlsPair(settings);
-  const http = await httpServer({ hops, tls, requestsPerSecond: settings.requestsPerSecond });
+  const ownHostsOnly = settings.access === 'open';
+  const http = await httpServer({ hops, tls, ownHostsOnly, requestsPerSecond: settings.requestsPerSecond });
   const desk = new PlantDesk(path, file, async (taken, who, why) => {
     await plant.usePlant(taken, who, why);
     board.begin(plant.monitor);
@@ -189,6 +190,7 @@ export async function serveFrom(store: Store, { settings, clock: clockSetting, d
     },
     guard,
     hops,
+    ownHostsOnly,
     upgradesPerSecond: settings.upgradesPerSecond,
     mostOfAddress: settings.socketsPerAddress,
     onDashboard: (socket, caller) => dashboards.connect(socket, caller),

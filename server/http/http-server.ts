@@ -3,6 +3,7 @@ import type { IncomingMessage } from 'node:http';
 import { fileURLToPath } from 'node:url';
 import fastifyStatic from '@fastify/static';
 import { fastify, type FastifyInstance } from 'fastify';
+import { isForeignHost } from '../access/foreign-host.ts';
 import { hasForeignOrigin } from '../access/foreign-origin.ts';
 import { TooManyTries } from '../access/too-many-tries.ts';
 import type { Hops } from './hops.ts';
@@ -39,6 +40,8 @@ export interface HttpSetting {
   readonly hops: Hops;
   /** undefined: plain HTTP. */
   readonly tls: TlsPair | undefined;
+  /** Whether only this machine's own names are answered to. */
+  readonly ownHostsOnly?: boolean;
   /** Requests a second from one address; the burst is ten times as many. */
   readonly requestsPerSecond: number;
   /** How long a request that is no upload may take to arrive, ms. */
@@ -49,7 +52,7 @@ const usualArrival = 20_000;
 const uploads = '/source/records';
 
 /** An HTTP server with the dashboard's files, safe headers and one form of error; routes are added by the caller. */
-export async function httpServer({ hops, tls, requestsPerSecond, arriveWithinMs = usualArrival }: HttpSetting): Promise<FastifyInstance> {
+export async function httpServer({ hops, tls, requestsPerSecond, ownHostsOnly = false, arriveWithinMs = usualArrival }: HttpSetting): Promise<FastifyInstance> {
   // An upload may take its time, but a connection that says nothing is ended.
   const options = { bodyLimit, forceCloseConnections: true, requestTimeout: 0, connectionTimeout: 60_000, return503OnClosing: true, trustProxy: (address: string) => hops.trusts(address) } as const;
   // How often heads that are late are looked for; how long a head may be, bytes.
@@ -63,12 +66,17 @@ export async function httpServer({ hops, tls, requestsPerSecond, arriveWithinMs 
       if (wait > 0) throw new TooManyTries(wait);
       endIfLate(request.raw, arriveWithinMs);
     }
-    if (request.method !== 'GET' && request.method !== 'HEAD' && hasForeignOrigin(request.headers, hops.hostOf(request.raw))) {
-      await reply.status(403).send({ message: 'this was asked by a page of another place; expected a page of this server or a program' });
+    const host = hops.hostOf(request.raw);
+    if (ownHostsOnly && isForeignHost(host)) {
+      return reply.status(403).send({ message: `this was asked of ${JSON.stringify(host ?? '')}; without accounts this server answers to this machine's own names alone: localhost, 127.0.0.1` });
     }
+    if (request.method !== 'GET' && request.method !== 'HEAD' && hasForeignOrigin(request.headers, host, hops.isSecure(request.raw))) {
+      return reply.status(403).send({ message: 'this was asked by a page of another place; expected a page of this server or a program' });
+    }
+    return undefined;
   });
   http.addHook('onSend', async (request, reply) => {
-    if (request.url.startsWith('/api/')) reply.header('cache-control', 'no-store');
+    if (!reply.hasHeader('cache-control')) reply.header('cache-control', 'no-store'); // What the files of the pages do not say of themselves is kept nowhere.
     if (hops.isSecure(request.raw)) reply.header('strict-transport-security', 'max-age=31536000');
   });
   http.addHook('onSend', async (_request, reply) => {

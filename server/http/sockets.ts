@@ -5,6 +5,7 @@ import { liveProtocol } from '../../core/live/message.ts';
 import { sourceProtocol } from '../../core/protocol/source-messages.ts';
 import { mayDoSomewhere } from '../../core/access/may-do.ts';
 import type { Caller } from '../access/caller.ts';
+import { isForeignHost } from '../access/foreign-host.ts';
 import { hasForeignOrigin } from '../access/foreign-origin.ts';
 import type { Guard } from '../access/guard.ts';
 import { bearerToken } from '../ingest/bearer-token.ts';
@@ -21,6 +22,8 @@ export interface SocketHost {
   readonly onDashboard: (socket: WebSocket, caller: Caller) => void;
   readonly guard: Guard;
   readonly hops: Hops;
+  /** Whether only this machine's own names are answered to. */
+  readonly ownHostsOnly: boolean;
   /** Upgrades a second from one address; the burst is ten times as many. */
   readonly upgradesPerSecond: number;
   /** Sockets open at the same time from one address at most. */
@@ -94,10 +97,12 @@ export function serveSockets(server: Server, host: SocketHost): () => void {
     socket.on('error', host.onError);
     const path = (request.url ?? '').split('?')[0];
     const address = host.hops.addressOf(request);
+    const asked = host.hops.hostOf(request);
     const wait = limit.take(address);
     if (wait > 0) refuse(socket, 429, 'too-many-connections', wait);
     else if (!hasRoom(address, socket)) refuse(socket, 503, 'too-many-connections', 10_000);
-    else if (hasForeignOrigin(request.headers, host.hops.hostOf(request))) refuse(socket, 403, 'foreign-origin');
+    else if (host.ownHostsOnly && isForeignHost(asked)) refuse(socket, 403, 'foreign-host');
+    else if (hasForeignOrigin(request.headers, asked, host.hops.isSecure(request))) refuse(socket, 403, 'foreign-origin');
     else if (path === '/live') upgradeDashboard(request, socket, head);
     else if (path === '/source') {
       upgradeSource(request, socket, head).catch((cause: unknown) => {
