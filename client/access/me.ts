@@ -21,6 +21,8 @@ export interface Caller {
   readonly pin: { readonly name: string; readonly until: number } | undefined;
   /** Whether people may identify themselves here by PIN. */
   readonly terminal: boolean;
+  /** Whether there is a password that can be asked for again; who came from the directory alone has none. */
+  readonly hasPassword: boolean;
 }
 
 /** What the server tells anybody of itself and of who asks. */

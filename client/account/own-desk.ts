@@ -43,23 +43,26 @@ export interface OwnDesk {
   /** What a new passkey is made from. */
   readonly beginPasskey: (password: string) => Promise<object>;
   readonly finishPasskey: (name: string, answer: object) => Promise<void>;
-  readonly dropPasskey: (id: string) => Promise<void>;
+  readonly dropPasskey: (id: string, password: string) => Promise<void>;
 }
 
 const path = (of: string, id: string): string => `/api/own/${of}/${encodeURIComponent(id)}`;
+
+/** A password where there is one to be asked for. */
+const known = (password: string): { readonly password?: string } => (password === '' ? {} : { password });
 
 export const ownDesk = (ask: Ask): OwnDesk => ({
   sessions: () => ask('GET', '/api/own/sessions'),
   endSession: (id) => ask('DELETE', path('sessions', id)),
   endAllSessions: () => ask('POST', '/api/own/sign-out-everywhere'),
   setPassword: (old, next) => ask('POST', '/api/own/password', { old, new: next }),
-  setPin: (password, pin) => ask('PUT', '/api/own/pin', { password, pin }),
-  dropPin: (password) => ask('DELETE', '/api/own/pin', { password }),
+  setPin: (password, pin) => ask('PUT', '/api/own/pin', { ...known(password), pin }),
+  dropPin: (password) => ask('DELETE', '/api/own/pin', known(password)),
   tokens: () => ask('GET', '/api/own/tokens'),
   makeToken: async (name, actions, days) => (await ask<{ readonly token: string }>('POST', '/api/own/tokens', { name, actions, days })).token,
   dropToken: (id) => ask('DELETE', path('tokens', id)),
   passkeys: () => ask('GET', '/api/own/passkeys'),
-  beginPasskey: (password) => ask('POST', '/api/own/passkeys/begin', { password }),
+  beginPasskey: (password) => ask('POST', '/api/own/passkeys/begin', known(password)),
   finishPasskey: (name, answer) => ask('POST', '/api/own/passkeys/finish', { name, answer }),
-  dropPasskey: (id) => ask('DELETE', path('passkeys', id)),
+  dropPasskey: (id, password) => ask('DELETE', path('passkeys', id), known(password)),
 });

@@ -1,4 +1,4 @@
-import { html, LitElement, type TemplateResult } from 'lit';
+import { html, LitElement, nothing, type TemplateResult } from 'lit';
 import type { Formats } from '../format.ts';
 import { base } from '../look/base.ts';
 import { form } from '../look/form.ts';
@@ -7,16 +7,20 @@ import { FormSending, formOf, textsOf } from '../parts/form-sending.ts';
 import { Loaded } from '../parts/loaded.ts';
 import { passwordField } from '../parts/password-field.ts';
 import '../parts/sure-dialog.ts';
-import { textField } from '../parts/text-field.ts';
+import { textField, type TextField } from '../parts/text-field.ts';
 import { newPasskey } from '../sign-in/passkey-answer.ts';
 import type { OwnDesk, OwnPasskey } from './own-desk.ts';
 
+const passwordAgain: TextField = { name: 'password', label: 'Your password', type: 'password', autocomplete: 'current-password', required: true };
+
 /** Passkeys of one's account: a device or key that signs one in, beside the password or instead of it. */
 export class OwnPasskeys extends LitElement {
-  static override properties = { desk: { attribute: false }, formats: { attribute: false }, said: { state: true } };
+  static override properties = { desk: { attribute: false }, hasPassword: { attribute: false }, formats: { attribute: false }, said: { state: true } };
   static override styles = [base, form, ownPage];
 
   declare desk: OwnDesk;
+  /** Whether it is asked for again. */
+  declare hasPassword: boolean;
   declare formats: Formats;
   declare said: string;
   readonly #sending = new FormSending(this);
@@ -38,7 +42,7 @@ export class OwnPasskeys extends LitElement {
       <details><summary>Add a passkey</summary>
         <form @submit=${(event: SubmitEvent) => { void this.#onSubmit(event); }}>
           ${textField(this.#sending, { name: 'name', label: 'What it is', hint: '“Phone”, “Key on my ring”', required: true, most: 80 })}
-          ${passwordField(this.#sending, { name: 'password', label: 'Your password', fresh: false }, 0, () => undefined)}
+          ${this.hasPassword ? passwordField(this.#sending, { name: 'password', label: 'Your password', fresh: false }, 0, () => undefined) : nothing}
           <p class="fault" role="alert">${this.#sending.beyond(['name', 'password'])}</p>
           <div class="does"><button ?disabled=${this.#sending.busy}>Add the passkey</button></div>
         </form></details>
@@ -68,7 +72,7 @@ export class OwnPasskeys extends LitElement {
   }
 
   async #drop({ id, name }: OwnPasskey): Promise<void> {
-    const done = await this.renderRoot.querySelector('sure-dialog')?.ask({ title: `Remove “${name}”?`, says: 'It signs you in no more. Add it again if you want it back.', does: 'Remove', send: () => this.desk.dropPasskey(id) });
+    const done = await this.renderRoot.querySelector('sure-dialog')?.ask({ title: `Remove “${name}”?`, says: 'It signs you in no more. Add it again if you want it back.', does: 'Remove', fields: this.hasPassword ? [passwordAgain] : [], send: (text) => this.desk.dropPasskey(id, text('password')) });
     if (done === true) await this.#passkeys.reload();
   }
 }

@@ -10,10 +10,12 @@ import type { OwnDesk } from './own-desk.ts';
 
 /** The PIN by which one acknowledges at a screen that several people share. */
 export class OwnPin extends LitElement {
-  static override properties = { desk: { attribute: false }, said: { state: true } };
+  static override properties = { desk: { attribute: false }, hasPassword: { attribute: false }, said: { state: true } };
   static override styles = [base, form, ownPage];
 
   declare desk: OwnDesk;
+  /** Whether it is asked for again. */
+  declare hasPassword: boolean;
   declare said: string;
   readonly #sending = new FormSending(this);
 
@@ -27,7 +29,7 @@ export class OwnPin extends LitElement {
       <p class="hint">With it you acknowledge at a screen that several people share, under your own name, and nothing else. Leave the field empty to take the PIN away.</p>
       <form @submit=${(event: SubmitEvent) => { void this.#onSubmit(event); }}>
         ${textField(this.#sending, { name: 'pin', label: 'New PIN', type: 'password', most: pinLength.most, narrow: true, hint: `${pinLength.least} to ${pinLength.most} digits, no run and not one digit again and again.` })}
-        ${passwordField(this.#sending, { name: 'password', label: 'Your password', fresh: false }, 0, () => undefined)}
+        ${this.hasPassword ? passwordField(this.#sending, { name: 'password', label: 'Your password', fresh: false }, 0, () => undefined) : nothing}
         <p class="fault" role="alert">${this.#sending.beyond(['pin', 'password'])}</p>
         <div class="does"><button ?disabled=${this.#sending.busy}>Set the PIN</button></div>
         ${this.said === '' ? nothing : html`<p class="said" role="status">${this.said}</p>`}

@@ -1,5 +1,6 @@
 import { ContextConsumer } from '@lit/context';
 import { html, LitElement, nothing, type TemplateResult } from 'lit';
+import { directoryFaults, isDirectoryFault } from '../../core/access/directory-fault.ts';
 import type { Me } from '../access/me.ts';
 import type { Who } from '../access/who.ts';
 import { wiringContext, type Wiring } from '../contexts.ts';
@@ -37,7 +38,7 @@ export class SignInPage extends LitElement {
     super.connectedCallback();
     const fault = new URLSearchParams(location.search).get('fault');
     if (fault === null) return;
-    this.#sentBack = fault.slice(0, 300);
+    this.#sentBack = isDirectoryFault(fault) ? directoryFaults[fault] : 'it gave no reason.';
     history.replaceState(null, '', location.pathname);
   }
 

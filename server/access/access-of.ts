@@ -50,22 +50,22 @@ export interface Access {
 export async function accessOf({ file, settings, directory: told, plantName, lines, log, now = Date.now }: AccessSetting): Promise<Access> {
   const { access } = settings;
   if (access === 'open') {
-    return { guard: openGuard, routes: [meRoute({ access, hasAccounts: () => false, hasPasskeys: () => false, directory: undefined, lines, isTerminal: () => false })], firstCode: undefined, onEnded: () => undefined, isOver: () => false };
+    return { guard: openGuard, routes: [meRoute({ access, hasAccounts: () => false, hasPasskeys: () => false, directory: undefined, lines, hasPassword: () => false, isTerminal: () => false })], firstCode: undefined, onEnded: () => undefined, isOver: () => false };
   }
   const book = await AccessBook.load(file, now);
   const passwords = new Passwords();
-  const acting = new ActingPeople(book, passwords);
+  const signIn = new SignIn(book, passwords);
+  const acting = new ActingPeople(book, passwords, signIn);
   const spans = { idleMs: settings.sessionIdleHours * 3_600_000, mostMs: settings.sessionDays * 86_400_000 };
   const guard = new AccountGuard(book, acting, spans, (cause) => log.error({ err: cause }, 'a use or a refusal was not kept'));
   const invitations = new Invitations(book, passwords, plantName);
-  const signIn = new SignIn(book, passwords);
   const host: AccessHost = { book, signIn, passkeys: new Passkeys(book, signIn), invitations, own: new OwnAccount(book, passwords, plantName), acting, sessionSeconds: settings.sessionDays * 86_400, lines };
   const directory = told && new Directory(told, book);
   await book.dropOver(spans);
   return {
     guard,
     routes: [
-      meRoute({ access, hasAccounts: () => book.accounts.size > 0, hasPasskeys: () => book.passkeys.size > 0, directory: directory?.name, lines, isTerminal: (caller) => isTerminal(book, caller) }),
+      meRoute({ access, hasAccounts: () => book.accounts.size > 0, hasPasskeys: () => book.passkeys.size > 0, directory: directory?.name, lines, hasPassword: (account) => typeof book.accounts.get(account)?.password === 'string', isTerminal: (caller) => isTerminal(book, caller) }),
       ...signInRoutes(host), ...accountRoutes(host), ...ownRoutes(host), ...displayRoutes(host), ...terminalRoutes(host), ...passkeyRoutes(host),
       ...(directory === undefined ? [] : directoryRoutes(host, directory)),
     ],

@@ -1,3 +1,4 @@
+import { nameKey } from '../../core/access/person-name.ts';
 import { Conflict, NotFound } from '../http/refusals.ts';
 import { changeOf, type AccessBook } from './access-book.ts';
 import type { Account, StoredGrant } from './access-items.ts';
@@ -24,7 +25,7 @@ export async function changeAccount(book: AccessBook, by: string, id: string, { 
     const after: Account = { ...before, grants: grants === undefined ? before.grants : [...grants], disabled: disabled ?? before.disabled, shownAs: shownAs ?? before.shownAs };
     const others = book.accounts.entries().some(([other, account]) => other !== id && isAdministrator(account));
     if (isAdministrator(before) && !isAdministrator(after) && !others) throw new Conflict('the last administrator of the plant stays one: make another first');
-    if (shownAs !== undefined && book.accounts.find((account) => account !== before && account.shownAs.toLowerCase() === shownAs.toLowerCase())) throw new Conflict('shownAs: somebody is shown under this name already');
+    if (shownAs !== undefined && book.accounts.find((account) => account !== before && nameKey(account.shownAs) === nameKey(shownAs))) throw new Conflict('shownAs: somebody is shown under this name already');
     const drops = after.disabled ? book.sessionsOf(id).map(([session]) => session) : [];
     ended.push(...drops, ...(after.disabled ? book.tokens.entries().filter(([, token]) => token.account === id).map(([token]) => token) : []));
     await book.write([book.accounts.written(id, after), ...drops.map((session) => book.sessions.dropped(session))], [changeOf('account', by, `account ${before.name}`, told(before), told(after), why)]);

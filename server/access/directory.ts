@@ -1,5 +1,6 @@
 import * as openid from 'openid-client';
-import { Conflict, NotAllowed } from '../http/refusals.ts';
+import type { DirectoryFault } from '../../core/access/directory-fault.ts';
+import { keptName, nameKey, personNameFault } from '../../core/access/person-name.ts';
 import { changeOf, type AccessBook } from './access-book.ts';
 import type { Account } from './access-items.ts';
 import { isLoopback } from './open-access.ts';
@@ -21,6 +22,16 @@ interface UnderWay {
   readonly nonce: string;
   /** Account that is to be known by it; undefined: signs in. */
   readonly link: string | undefined;
+}
+
+/** A sign-in through the directory that does not hold. */
+export class DirectoryRefusal extends Error {
+  readonly fault: DirectoryFault;
+
+  constructor(fault: DirectoryFault) {
+    super(fault);
+    this.fault = fault;
+  }
 }
 
 const fiveMinutes = 300_000;
@@ -60,18 +71,18 @@ export class Directory {
    * @param answered the address that was come back to, with what the directory says
    * @param state that the cookie brought back
    * @returns id of the account
-   * @throws NotAllowed where the answer does not hold or the account is disabled, Conflict where the name is somebody's
+   * @throws DirectoryRefusal where the answer does not hold, the account is disabled, or the name is somebody's or no name
    */
   async finish(answered: URL, state: string | undefined): Promise<string> {
     const underWay = state === undefined || answered.searchParams.get('state') !== state ? undefined : this.#underWay.take(state);
-    if (underWay === undefined || state === undefined) throw new NotAllowed('This sign-in was not begun here, or took too long; begin again.');
+    if (underWay === undefined || state === undefined) throw new DirectoryRefusal('begun-elsewhere');
     const tokens = await openid
       .authorizationCodeGrant(await this.#configuration(), answered, { pkceCodeVerifier: underWay.verifier, expectedNonce: underWay.nonce, expectedState: state, idTokenExpected: true })
       .catch(() => {
-        throw new NotAllowed('The directory did not let you in.');
+        throw new DirectoryRefusal('not-let-in');
       });
     const claims = tokens.claims();
-    if (claims === undefined) throw new NotAllowed('The directory did not say who you are.');
+    if (claims === undefined) throw new DirectoryRefusal('says-nothing');
     const text = (name: string): string | undefined => (typeof claims[name] === 'string' && claims[name] !== '' ? claims[name] : undefined);
     return this.#accountOf(claims.iss, claims.sub, text('preferred_username') ?? claims.sub, text('name'), underWay.link);
   }
@@ -82,13 +93,13 @@ export class Directory {
       const known = this.#book.identities.get(key);
       const person = known && this.#book.accounts.get(known.account);
       if (known !== undefined && person !== undefined) {
-        if (person.disabled) throw new NotAllowed('This account is disabled.');
+        if (person.disabled) throw new DirectoryRefusal('account-disabled');
         return known.account;
       }
       const identity = (account: string) => this.#book.identities.written(key, { account, issuer, subject, made: this.#book.now() });
       if (link !== undefined) {
         const own = this.#book.accounts.get(link);
-        if (own === undefined) throw new NotAllowed('This account is gone.');
+        if (own === undefined) throw new DirectoryRefusal('account-gone');
         await this.#book.write([identity(link)], [changeOf('account', own.shownAs, `account ${own.name}`, null, { directory: this.name })]);
         return link;
       }
@@ -97,10 +108,12 @@ export class Directory {
   }
 
   async #make(username: string, fullName: string, identity: (account: string) => ReturnType<AccessBook['identities']['written']>): Promise<string> {
-    const name = username.replaceAll(/[^\p{L}\p{N}._@-]/gu, '-').slice(0, 64);
-    if (accountNamed(this.#book, name) !== undefined) throw new Conflict(`Somebody here is called ${name} already. If that is you, sign in by your password and link the account.`);
-    const taken = this.#book.accounts.find(({ shownAs }) => shownAs.toLowerCase() === fullName.toLowerCase()) !== undefined;
-    const account: Account = { name, shownAs: (taken ? `${fullName} (${name})` : fullName).slice(0, 80), grants: [], made: this.#book.now(), lastSeen: null, disabled: false, password: null, pin: null };
+    const name = keptName(username).replaceAll(/[^\p{L}\p{M}\p{N}._@-]/gu, '-').slice(0, 64);
+    const said = keptName(fullName);
+    if (personNameFault(name) !== undefined || said === '' || personNameFault(said) !== undefined) throw new DirectoryRefusal('name-unfit');
+    if (accountNamed(this.#book, name) !== undefined) throw new DirectoryRefusal('name-taken');
+    const taken = this.#book.accounts.find(({ shownAs }) => nameKey(shownAs) === nameKey(said)) !== undefined;
+    const account: Account = { name, shownAs: (taken ? `${said} (${name})` : said).slice(0, 80), grants: [], made: this.#book.now(), lastSeen: null, disabled: false, password: null, pin: null };
     const id = newId();
     await this.#book.write([this.#book.accounts.written(id, account), identity(id)], [changeOf('account', account.shownAs, `account ${name}`, null, { shownAs: account.shownAs, grants: [], directory: this.name }, 'known to the directory')]);
     return id;

@@ -1,3 +1,4 @@
+import { nameKey } from '../../core/access/person-name.ts';
 import { BadRequest } from '../http/request-schemas.ts';
 import { Conflict, NotFound } from '../http/refusals.ts';
 import { changeOf, type AccessBook } from './access-book.ts';
@@ -114,7 +115,7 @@ export class Invitations {
 
   #checkNames(name: string, shownAs: string): void {
     if (accountNamed(this.#book, name) !== undefined) throw new Conflict('name: somebody has this name already; choose another');
-    if (this.#book.accounts.find((account) => account.shownAs.toLowerCase() === shownAs.toLowerCase()) !== undefined) {
+    if (this.#book.accounts.find((account) => nameKey(account.shownAs) === nameKey(shownAs)) !== undefined) {
       throw new Conflict('shownAs: somebody is shown under this name already; add something that tells you apart');
     }
   }

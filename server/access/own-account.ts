@@ -5,6 +5,8 @@ import type { Account, ApiToken, StoredGrant } from './access-items.ts';
 import type { Action } from '../../core/access/action.ts';
 import { pinFault } from '../../core/access/pin-fault.ts';
 import { newPasswordFault, type Passwords } from './passwords.ts';
+import { Throttle } from './throttle.ts';
+import { TooManyTries } from './too-many-tries.ts';
 import { hashOfSecret, newId, newSecret } from './secret.ts';
 
 const day = 86_400_000;
@@ -14,14 +16,17 @@ export class OwnAccount {
   readonly #book: AccessBook;
   readonly #passwords: Passwords;
   readonly #plantName: () => string;
+  /** Whoever sits at somebody's open session does not guess the password there. */
+  readonly #throttle: Throttle;
 
   constructor(book: AccessBook, passwords: Passwords, plantName: () => string) {
     this.#book = book;
     this.#passwords = passwords;
     this.#plantName = plantName;
+    this.#throttle = new Throttle({ free: 5, first: 5_000, most: 15 * 60_000 }, book.now);
   }
 
-  /** Sets a new password and ends every session but this one. @throws BadRequest */
+  /** Sets a new password and ends every session but this one. @throws BadRequest, TooManyTries */
   async changePassword(id: string, session: string, old: string, next: string): Promise<void> {
     const { name, shownAs } = await this.#checked(id, old, 'old');
     const fault = newPasswordFault(next, [name, shownAs, this.#plantName(), 'vouchline']);
@@ -36,9 +41,10 @@ export class OwnAccount {
     this.#book.ended(ended);
   }
 
-  /** @param pin 4 to 8 digits, not all the same nor a run up or down; undefined takes it away @throws BadRequest */
-  async setPin(id: string, password: string, pin: string | undefined): Promise<void> {
-    const { name, shownAs } = await this.#checked(id, password, 'password');
+  /** @param pin 4 to 8 digits, not all the same nor a run up or down; undefined takes it away @throws BadRequest, TooManyTries */
+  async setPin(id: string, password: string | undefined, pin: string | undefined): Promise<void> {
+    await this.again(id, password);
+    const { name, shownAs } = this.#account(id);
     const fault = pin === undefined ? undefined : pinFault(pin);
     if (fault !== undefined) throw new BadRequest('pin', `pin: ${fault}`);
     const hash = pin === undefined ? null : await this.#passwords.hash(pin);
@@ -66,7 +72,7 @@ export class OwnAccount {
     this.#book.ended([token]);
   }
 
-  /** Makes sure again of who sits there, before another way in is opened; an account without a password has none to ask for. @throws BadRequest */
+  /** Makes sure again of who sits there, before another way in is opened; an account without a password has none to ask for. @throws BadRequest, TooManyTries */
   async again(id: string, password: string | undefined): Promise<void> {
     if (this.#account(id).password !== null) await this.#checked(id, password ?? '', 'password');
   }
@@ -79,7 +85,13 @@ export class OwnAccount {
 
   async #checked(id: string, password: string, field: string): Promise<Account> {
     const account = this.#account(id);
-    if (await this.#passwords.matches(account.password, password)) return account;
+    const wait = this.#throttle.wait(id);
+    if (wait > 0) throw new TooManyTries(wait);
+    this.#throttle.tried(id);
+    if (await this.#passwords.matches(account.password, password)) {
+      this.#throttle.succeeded(id);
+      return account;
+    }
     throw new BadRequest(field, `${field}: the password is not right`);
   }
 }

@@ -1,7 +1,9 @@
+import { nameKey } from '../../core/access/person-name.ts';
 import { NotSignedIn } from '../http/refusals.ts';
 import { changeOf, type AccessBook } from './access-book.ts';
 import type { Account } from './access-items.ts';
 import type { Passwords } from './passwords.ts';
+import { networkOf } from './network-of.ts';
 import { hashOfSecret, newId, newSecret } from './secret.ts';
 import { Throttle } from './throttle.ts';
 import { TooManyTries } from './too-many-tries.ts';
@@ -42,18 +44,20 @@ export class SignIn {
 
   /** @returns id of the account @throws TooManyTries, NotSignedIn (the same for an unknown name, a wrong password and a disabled account), TooBusy */
   async check(name: string, password: string, from: Origin): Promise<string> {
-    const pair = JSON.stringify([name.toLowerCase(), from.address]);
-    const wait = Math.max(this.#byPair.wait(pair), this.#byAddress.wait(from.address));
+    const place = networkOf(from.address);
+    const pair = JSON.stringify([nameKey(name), place]);
+    const wait = Math.max(this.#byPair.wait(pair), this.#byAddress.wait(place));
     if (wait > 0) throw new TooManyTries(wait);
+    this.#byPair.tried(pair);
+    this.#byAddress.tried(place);
     const found = accountNamed(this.#book, name);
     const matches = await this.#passwords.matches(found?.[1].password, password);
     if (!matches || found === undefined || found[1].disabled) {
-      this.#byPair.failed(pair);
-      this.#byAddress.failed(from.address);
-      await this.#recordFailure(name, from);
+      await this.noteFailed(`account ${name.slice(0, 64)}`, { by: 'password', address: from.address.slice(0, 64) });
       throw new NotSignedIn('The name or the password is not right.');
     }
     this.#byPair.succeeded(pair);
+    this.#byAddress.untried(place);
     return found[0];
   }
 
@@ -86,16 +90,17 @@ export class SignIn {
     this.#book.ended(ended);
   }
 
-  async #recordFailure(name: string, from: Origin): Promise<void> {
+  /** Puts a failure on record. @param how by which means and from where it was tried */
+  async noteFailed(what: string, how: Readonly<Record<string, string>>): Promise<void> {
     const at = this.#book.now();
     if (at - this.#recorded.since >= minute) this.#recorded = { since: at, count: 0 };
     this.#recorded.count += 1;
     if (this.#recorded.count > mostRecorded) return;
-    await this.#book.write([], [changeOf('sign-in-failed', 'unknown', `account ${name.slice(0, 64)}`, null, { address: from.address.slice(0, 64) })]);
+    await this.#book.write([], [changeOf('sign-in-failed', 'unknown', what, null, how)]);
   }
 }
 
-/** Names are compared without regard to case. */
 export function accountNamed(book: AccessBook, name: string): [string, Account] | undefined {
-  return book.accounts.find((account) => account.name.toLowerCase() === name.trim().toLowerCase());
+  const key = nameKey(name);
+  return book.accounts.find((account) => nameKey(account.name) === key);
 }

@@ -16,7 +16,10 @@ interface Failures {
 const forgottenMs = 3_600_000;
 const mostKeys = 10_000;
 
-/** Slows down guessing: waits grow with the failures of a key and fade with time; nobody is locked out for good. */
+/**
+ * Slows down guessing: waits grow with the failures of a key and fade with time; nobody is locked out for good. A try
+ * counts as a failure until it has succeeded, so that many at the same time are no way around.
+ */
 export class Throttle {
   readonly #rule: ThrottleRule;
   readonly #now: () => number;
@@ -41,13 +44,19 @@ export class Throttle {
     return over <= 0 ? 0 : Math.max(0, Math.min(this.#rule.most, this.#rule.first * 2 ** (over - 1)) - since);
   }
 
-  failed(key: string): void {
+  tried(key: string): void {
     const count = (this.#failures.get(key)?.count ?? 0) + 1;
     this.#failures.delete(key);
     this.#failures.set(key, { count, last: this.#now() });
     if (this.#failures.size <= mostKeys) return;
     const [oldest] = this.#failures.keys();
     if (oldest !== undefined) this.#failures.delete(oldest);
+  }
+
+  /** A try that was none: of one that succeeded, where failures from the same place before it still count. */
+  untried(key: string): void {
+    const failures = this.#failures.get(key);
+    if (failures !== undefined) failures.count -= 1;
   }
 
   succeeded(key: string): void {

@@ -5,6 +5,7 @@ import fastifyStatic from '@fastify/static';
 import { fastify, type FastifyInstance } from 'fastify';
 import { isForeignHost } from '../access/foreign-host.ts';
 import { hasForeignOrigin } from '../access/foreign-origin.ts';
+import { networkOf } from '../access/network-of.ts';
 import { TooManyTries } from '../access/too-many-tries.ts';
 import type { Hops } from './hops.ts';
 import { RateLimit } from './rate-limit.ts';
@@ -62,7 +63,7 @@ export async function httpServer({ hops, tls, requestsPerSecond, ownHostsOnly = 
   http.addHook('onRequest', async (request, reply) => {
     const path = request.url.split('?')[0];
     if (path !== uploads) {
-      const wait = limit.take(request.ip);
+      const wait = limit.take(networkOf(request.ip));
       if (wait > 0) throw new TooManyTries(wait);
       endIfLate(request.raw, arriveWithinMs);
     }

@@ -8,6 +8,7 @@ import type { Caller } from '../access/caller.ts';
 import { isForeignHost } from '../access/foreign-host.ts';
 import { hasForeignOrigin } from '../access/foreign-origin.ts';
 import type { Guard } from '../access/guard.ts';
+import { networkOf } from '../access/network-of.ts';
 import { bearerToken } from '../ingest/bearer-token.ts';
 import type { Hops } from './hops.ts';
 import { RateLimit } from './rate-limit.ts';
@@ -96,7 +97,7 @@ export function serveSockets(server: Server, host: SocketHost): () => void {
   function onUpgrade(request: IncomingMessage, socket: Duplex, head: Buffer): void {
     socket.on('error', host.onError);
     const path = (request.url ?? '').split('?')[0];
-    const address = host.hops.addressOf(request);
+    const address = networkOf(host.hops.addressOf(request));
     const asked = host.hops.hostOf(request);
     const wait = limit.take(address);
     if (wait > 0) refuse(socket, 429, 'too-many-connections', wait);

@@ -196,7 +196,7 @@ const accessRoutes: readonly FakeRoute[] = [
     own(asked).passkeys.push({ id, name: text(asked.body, 'name'), made: Date.now(), lastUsed: null });
     return ok({ id });
   } },
-  { method: 'DELETE', path: /^\/api\/own\/passkeys\/([^/]+)$/, needs: 'keep-own-account', does: (asked) => { own(asked).passkeys = own(asked).passkeys.filter(({ id }) => id !== asked.id); return done; } },
+  { method: 'DELETE', path: /^\/api\/own\/passkeys\/([^/]+)$/, needs: 'keep-own-account', does: (asked) => { checkOwn(asked, 'password'); own(asked).passkeys = own(asked).passkeys.filter(({ id }) => id !== asked.id); return done; } },
   { method: 'POST', path: /^\/api\/sign-in\/passkey\/begin$/, needs: undefined, does: () => ok({ challenge: 'bm90LXJhbmRvbS1hdC1hbGw', rpId: 'localhost', userVerification: 'required' }) },
   { method: 'POST', path: /^\/api\/sign-in\/passkey\/finish$/, needs: undefined, does: ({ access, body, request }) => {
     const { id } = body['answer'] as { id: string };

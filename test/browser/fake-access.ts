@@ -190,7 +190,7 @@ export class FakeAccess {
         name: caller.name ?? null, account: caller.account?.id ?? null, grants: caller.grants.map(({ role, line }) => ({ role, line: line ?? null })), until: null,
         may: Object.fromEntries(actions.map((action) => [action, may(action)])),
         pin: pin === undefined ? null : { name: pin.shownAs, until: caller.session?.pin?.until },
-        terminal: caller.account !== undefined || caller.display?.acting === true,
+        terminal: caller.account !== undefined || caller.display?.acting === true, hasPassword: caller.account !== undefined && caller.account.password !== '',
       },
     };
   }

@@ -205,6 +205,15 @@ describe('one’s own account', () => {
     expect(await page.getByRole('link', { name: 'Link the account' }).getAttribute('href')).toBe('/api/sign-in/directory');
   });
 
+  it('of who has no password asks for none', async () => {
+    const plant = fullPlant({ directory: 'Hose plant directory' });
+    await show('/account', { ...plant, accounts: plant.accounts!.map((one) => ({ ...one, password: '' })) });
+    await page.locator('own-pin').getByLabel('New PIN').fill('28464917');
+    await page.getByRole('button', { name: 'Set the PIN' }).click();
+    await page.getByText('The PIN is set.').waitFor();
+    expect([await page.locator('own-password').count(), await page.getByLabel('Your password', { exact: true }).count()]).toEqual([0, 0]);
+  });
+
   it('adds a passkey, signs in with it, and removes it', async () => {
     fake = await startFake({ access: fullPlant() });
     const address = fake.url.replace('127.0.0.1', 'localhost'); // a passkey belongs to a name, not to an address
@@ -223,6 +232,10 @@ describe('one’s own account', () => {
     await page.locator('board-lane').first().waitFor();
     await page.goto(`${address}/account`);
     await page.getByRole('button', { name: 'Remove: Phone' }).click();
+    await dialog().getByLabel('Your password').fill('wrong');
+    await dialog().getByRole('button', { name: 'Remove' }).click();
+    await dialog().getByText('this is not your password').waitFor();
+    await dialog().getByLabel('Your password').fill('ada-password-1');
     await dialog().getByRole('button', { name: 'Remove' }).click();
     await expect.poll(() => page.getByText('Phone', { exact: true }).count()).toBe(0);
   });

@@ -87,7 +87,8 @@ describe('a passkey', () => {
 
   it('is removed, and then lets nobody in', async () => {
     const [{ id }] = (await ask('GET', '/api/own/passkeys')).body as unknown as [{ id: string }];
-    expect((await ask('DELETE', `/api/own/passkeys/${id}`)).status).toBe(204);
+    expect((await ask('DELETE', `/api/own/passkeys/${id}`, { password: 'wrong' })).body['field']).toBe('password');
+    expect((await ask('DELETE', `/api/own/passkeys/${id}`, { password })).status).toBe(204);
     await ask('POST', '/api/sign-out');
     const answer = await sign((await ask('POST', '/api/sign-in/passkey/begin', {})).body);
     expect((await ask('POST', '/api/sign-in/passkey/finish', { answer })).status).toBe(401);

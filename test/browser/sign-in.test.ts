@@ -95,8 +95,8 @@ describe('signing in', () => {
   });
 
   it('says why the directory sent one back, and takes it out of the address', async () => {
-    await show(`/sign-in?fault=${encodeURIComponent('The sign-in took too long; begin again.')}`, { ...accounts, directory: 'Hose plant directory' });
-    await page.getByText('Hose plant directory did not sign you in: The sign-in took too long; begin again.').waitFor();
+    await show('/sign-in?fault=name-taken', { ...accounts, directory: 'Hose plant directory' });
+    await page.getByText('Hose plant directory did not sign you in: somebody here has your name already.').waitFor();
     expect(page.url()).toBe(`${fake.url}/sign-in`);
   });
 

@@ -10,7 +10,7 @@ import { liveOfCaller } from '../../client/feed/live-of-caller.ts';
 import { startState, type LiveState } from '../../client/feed/live-state.ts';
 
 const onA = { plant: false, lines: ['a'] } as const;
-const caller = (part: Partial<Caller> = {}): Caller => ({ kind: 'account', name: 'Ines Maurer', account: 'ines', grants: [], until: undefined, may: { see: onA, acknowledge: onA }, pin: undefined, terminal: true, ...part });
+const caller = (part: Partial<Caller> = {}): Caller => ({ kind: 'account', name: 'Ines Maurer', account: 'ines', grants: [], until: undefined, may: { see: onA, acknowledge: onA }, pin: undefined, terminal: true, hasPassword: true, ...part });
 const me = (of?: Caller): Me => ({ access: 'accounts', firstAccount: false, passkeys: false, directory: undefined, caller: of });
 const asking: Who = { kind: 'asking', unanswered: false, display: false };
 const known = (of: Caller = caller()): Who => nextWho(asking, { kind: 'told', me: me(of) });

@@ -1,12 +1,20 @@
 import * as v from 'valibot';
+import { keptName, personNameFault } from '../../../core/access/person-name.ts';
 import { actions } from '../../../core/access/action.ts';
 import { grantSchema } from '../../access/access-items.ts';
 
 const words = (least: number, most: number, what: string) => v.pipe(v.string(what), v.trim(), v.minLength(least, what), v.maxLength(most, what));
 const secret = v.pipe(v.string('a text'), v.maxLength(1_024, 'at most 1,024 characters'));
 
-export const signInName = v.pipe(v.string('a name'), v.trim(), v.regex(/^[\p{L}\p{N}._@-]{1,64}$/u, 'a name of 1 to 64 letters, digits and . _ @ -'));
-const shownAs = words(1, 80, 'a name of 1 to 80 characters');
+/** A name that stands on the record. */
+const personName = <T extends v.GenericSchema<string>>(schema: T) =>
+  v.pipe(schema, v.transform(keptName), v.rawCheck(({ dataset, addIssue }) => {
+    const fault = dataset.typed ? personNameFault(dataset.value) : undefined;
+    if (fault !== undefined) addIssue({ message: fault, expected: fault });
+  }));
+
+export const signInName = personName(v.pipe(v.string('a name'), v.trim(), v.regex(/^[\p{L}\p{M}\p{N}._@-]{1,64}$/u, 'a name of 1 to 64 letters, digits and . _ @ -')));
+const shownAs = personName(words(1, 80, 'a name of 1 to 80 characters'));
 const why = words(1, 500, 'a reason of 1 to 500 characters');
 const grants = v.pipe(v.array(grantSchema, 'a list of roles'), v.maxLength(200, 'at most 200 roles'));
 const days = (most: number) => v.pipe(v.number(`a whole number of days, 1 to ${most}`), v.integer(), v.minValue(1), v.maxValue(most));
@@ -18,8 +26,7 @@ export const inviteRequest = v.strictObject({ grants: v.pipe(grants, v.minLength
 export const accountRequest = v.strictObject({ grants: v.optional(grants), disabled: v.optional(v.boolean()), shownAs: v.optional(shownAs), why });
 export const whyRequest = v.strictObject({ why });
 export const passwordRequest = v.strictObject({ old: secret, new: secret });
-export const pinRequest = v.strictObject({ password: secret, pin: secret });
-export const pinEndRequest = v.strictObject({ password: secret });
+export const pinRequest = v.strictObject({ password: v.optional(secret), pin: secret });
 export const tokenRequest = v.strictObject({
   name: words(1, 80, 'a name of 1 to 80 characters'),
   actions: v.pipe(v.array(v.picklist(actions, `one of ${actions.join(', ')}`)), v.minLength(1, 'at least one action')),

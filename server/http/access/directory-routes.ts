@@ -1,6 +1,7 @@
 import type { FastifyRequest } from 'fastify';
 import type { Caller } from '../../access/caller.ts';
-import type { Directory } from '../../access/directory.ts';
+import type { DirectoryFault } from '../../../core/access/directory-fault.ts';
+import { DirectoryRefusal, type Directory } from '../../access/directory.ts';
 import { route, type AnyRoute } from '../route.ts';
 import { cookieOf, isSecure, originOf, placeOf, type AccessHost } from './access-host.ts';
 
@@ -14,6 +15,8 @@ const cookie = (state: string, secure: boolean, seconds: number): string =>
 const stateOf = ({ headers }: FastifyRequest): string | undefined =>
   (headers.cookie ?? '').split(';').map((part) => part.trim()).find((part) => part.startsWith(`${cookieName}=`))?.slice(cookieName.length + 1);
 
+const sentBack = (fault: DirectoryFault): string => `/sign-in?fault=${fault}`;
+
 /** Signing in through the plant's directory: there and back. */
 export function directoryRoutes(host: AccessHost, directory: Directory): readonly AnyRoute[] {
   return [
@@ -21,7 +24,11 @@ export function directoryRoutes(host: AccessHost, directory: Directory): readonl
       method: 'GET', path: '/api/sign-in/directory', summary: 'Sends the browser to the directory; who is signed in links their account', needs: 'nobody', answer: 'text/html',
       handle: async ({ caller, request, reply }) => {
         const asker = caller as Caller | undefined;
-        const { to, state } = await directory.begin(`${placeOf(request).origin}${back}`, asker?.kind === 'account' ? asker.account : undefined);
+        const begun = await directory.begin(`${placeOf(request).origin}${back}`, asker?.kind === 'account' ? asker.account : undefined).catch((cause: unknown) => {
+          request.log.warn({ err: cause }, 'the directory cannot be asked');
+        });
+        if (begun === undefined) return reply.redirect(sentBack('unreachable'), 302);
+        const { to, state } = begun;
         return reply.header('set-cookie', cookie(state, isSecure(request), 300)).redirect(to, 302);
       },
     }),
@@ -33,8 +40,7 @@ export function directoryRoutes(host: AccessHost, directory: Directory): readonl
         try {
           account = await directory.finish(new URL(request.url, placeOf(request).origin), stateOf(request));
         } catch (cause) {
-          const words = 'statusCode' in (cause as object) ? (cause as Error).message : 'The directory cannot be reached.';
-          return reply.redirect(`/sign-in?fault=${encodeURIComponent(words)}`, 302);
+          return reply.redirect(sentBack(cause instanceof DirectoryRefusal ? cause.fault : 'unreachable'), 302);
         }
         const begun = await host.signIn.begin(account, originOf(request), 'directory');
         return reply.header('set-cookie', cookieOf(begun, request, host.sessionSeconds)).redirect('/', 302);

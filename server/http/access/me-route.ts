@@ -13,6 +13,8 @@ export interface MeHost {
   /** What people call the directory; undefined where none is set up. */
   readonly directory: string | undefined;
   readonly lines: () => readonly string[];
+  /** Whether an account has a password, that it can be asked for again. */
+  readonly hasPassword: (account: string) => boolean;
   /** Whether people act by PIN where this caller asks from. */
   readonly isTerminal: (caller: Caller) => boolean;
 }
@@ -31,7 +33,7 @@ export function meRoute(host: MeHost): AnyRoute {
   });
 }
 
-function told(caller: Caller | undefined, { lines, isTerminal }: MeHost): object | null {
+function told(caller: Caller | undefined, { lines, hasPassword, isTerminal }: MeHost): object | null {
   if (caller === undefined) return null;
   const { kind, name, account, grants, until, acting } = caller;
   return {
@@ -43,6 +45,7 @@ function told(caller: Caller | undefined, { lines, isTerminal }: MeHost): object
     may: mayOf(caller, lines()),
     pin: acting === undefined ? null : { name: acting.name, until: acting.until },
     terminal: isTerminal(caller),
+    hasPassword: account !== undefined && hasPassword(account),
   };
 }
 

@@ -2,7 +2,7 @@ import { NotAllowed, NotFound } from '../refusals.ts';
 import { route, type AnyRoute } from '../route.ts';
 import type { Caller } from '../../access/caller.ts';
 import { accountOf, nameOf, type AccessHost } from './access-host.ts';
-import { idParams, passwordRequest, pinEndRequest, pinRequest, tokenRequest } from './access-schemas.ts';
+import { idParams, passwordRequest, passwordAgainRequest, pinRequest, tokenRequest } from './access-schemas.ts';
 
 const own = { action: 'keep-own-account', at: 'somewhere' } as const;
 
@@ -50,7 +50,7 @@ export function ownRoutes(host: AccessHost): readonly AnyRoute[] {
       },
     }),
     route({
-      method: 'DELETE', path: '/api/own/pin', summary: 'Takes the PIN away', needs: own, body: pinEndRequest,
+      method: 'DELETE', path: '/api/own/pin', summary: 'Takes the PIN away', needs: own, body: passwordAgainRequest,
       handle: async ({ body: { password }, caller, reply }) => {
         await host.own.setPin(person(caller), password, undefined);
         return reply.status(204).send();

@@ -26,9 +26,10 @@ export function passkeyRoutes(host: AccessHost): readonly AnyRoute[] {
       handle: ({ body: { name, answer }, caller, request }) => passkeys.finishMaking(accountOf(caller), name, answer, placeOf(request)),
     }),
     route({
-      method: 'DELETE', path: '/api/own/passkeys/:id', summary: 'Removes a passkey', needs: own, params: idParams,
-      handle: async ({ params: { id }, caller, reply }) => {
+      method: 'DELETE', path: '/api/own/passkeys/:id', summary: 'Removes a passkey', needs: own, params: idParams, body: passwordAgainRequest,
+      handle: async ({ params: { id }, body: { password }, caller, reply }) => {
         if (caller.kind !== 'account') throw new NotAllowed('Only the person signed in does this, no token and no display.');
+        await host.own.again(accountOf(caller), password);
         await passkeys.remove(accountOf(caller), id);
         return reply.status(204).send();
       },

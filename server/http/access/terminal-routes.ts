@@ -4,7 +4,7 @@ import type { AccessBook } from '../../access/access-book.ts';
 import { grantsOf } from '../../access/access-items.ts';
 import { NotAllowed } from '../refusals.ts';
 import { route, type AnyRoute } from '../route.ts';
-import type { AccessHost } from './access-host.ts';
+import { nameOf, type AccessHost } from './access-host.ts';
 import { actAsRequest } from './access-schemas.ts';
 
 const sees = { action: 'see', at: 'somewhere' } as const;
@@ -31,7 +31,7 @@ export function terminalRoutes({ book, acting }: AccessHost): readonly AnyRoute[
     route({
       method: 'POST', path: '/api/terminal/act-as', summary: 'Acts as somebody by their PIN for two minutes', needs: sees, body: actAsRequest,
       handle: async ({ body: { account, pin }, caller }) => {
-        const { name, until } = await acting.actAs(terminal(caller), account, pin);
+        const { name, until } = await acting.actAs(terminal(caller), nameOf(caller), account, pin);
         return { name, until };
       },
     }),

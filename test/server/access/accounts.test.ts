@@ -1,5 +1,6 @@
 import { beforeEach, describe, expect, it } from 'vitest';
 import { AccessBook } from '../../../server/access/access-book.ts';
+import { networkOf } from '../../../server/access/network-of.ts';
 import { Passwords } from '../../../server/access/passwords.ts';
 import { SignIn } from '../../../server/access/sign-in.ts';
 import { memoryDisk } from '../../../server/store/memory-store.ts';
@@ -174,13 +175,59 @@ describe('guessing', () => {
     expect([await hashed('olaf'), await hashed('nobody'), await hashed('olaf')]).toEqual([1, 1, 1]);
   });
 
+  it('many at the same time is no way around, nor are spaces and capitals', async () => {
+    const eve = plant.person('10.0.0.66');
+    const all = await Promise.all(Array.from({ length: 30 }, (_, k) => eve.signIn([' olaf', 'OLAF', 'olaf  '][k % 3]!, `guess ${k}`)));
+    expect(all.filter(({ status }) => status === 401).length).toBe(6);
+    expect(all.filter(({ status }) => status === 429).length).toBe(24);
+  });
+
+  it('from all over one network of addresses is guessing from one place', async () => {
+    const tries = async (address: (k: number) => string): Promise<number[]> => {
+      const statuses: number[] = [];
+      for (let k = 0; k < 8; k += 1) statuses.push((await plant.person(address(k)).signIn('olaf', 'guess')).status);
+      return statuses;
+    };
+    expect(await tries((k) => `2001:db8:1:2::${k + 1}`)).toEqual([401, 401, 401, 401, 401, 401, 429, 429]);
+    expect(await tries((k) => `2001:db8:1:${k + 3}::1`)).toEqual(Array(8).fill(401));
+  });
+
+  it('of the present password at an open session is slowed down, too', async () => {
+    const change = (old: string): Promise<{ status: number }> => olaf.ask('POST', '/api/own/password', { old, new: 'eight long hoses in the snow' });
+    for (let tries = 0; tries < 6; tries += 1) expect((await change('guess')).status).toBe(400);
+    expect([(await change(password)).status, (await olaf.ask('PUT', '/api/own/pin', { password, pin: '28464917' })).status]).toEqual([429, 429]);
+    plant.now += 5_000;
+    expect((await change(password)).status).toBe(204);
+  });
+
   it('is on record, ten a minute at most', async () => {
     for (let from = 0; from < 30; from += 1) await plant.person(`10.0.1.${from}`).signIn('olaf', 'guess');
     expect((await plant.changes()).filter(({ kind }) => kind === 'sign-in-failed').length).toBe(10);
   });
 });
 
+describe('a network of addresses', () => {
+  it.each([
+    ['10.0.0.7', '10.0.0.7'], ['::ffff:10.0.0.7', '10.0.0.7'], ['::1', '0:0:0:0::/64'], ['2001:DB8:0:1::5', '2001:db8:0:1::/64'],
+    ['2001:db8:0:1:ffff:ffff:ffff:ffff', '2001:db8:0:1::/64'], ['fe80::1%eth0', 'fe80:0:0:0::/64'], ['2001:db8::', '2001:db8:0:0::/64'], ['unknown', 'unknown'],
+  ])('of %s is %s', (address, network) => {
+    expect(networkOf(address)).toBe(network);
+  });
+});
+
 describe('accounts', () => {
+  it('of two people look different on record', async () => {
+    await plant.account(olaf, 'mette', viewer);
+    const made = async (name: string, shownAs: string): Promise<{ status: number; body: Record<string, unknown> }> => {
+      const { body } = await olaf.ask('POST', '/api/invitations', { grants: viewer });
+      return plant.person().ask('POST', '/api/invitations/accept', { code: (body['link'] as string).split('#')[1], name, shownAs, password });
+    };
+    for (const twin of ['Mette  Holm', 'METTE HOLM', 'mette\u00a0Holm']) expect([twin, (await made('other', twin)).status]).toEqual([twin, 409]);
+    for (const twin of ['mette\u200b Holm', 'm\u0435tte Holm', 'mette\u202eHolm']) expect([twin, await made('other', twin)]).toMatchObject([twin, { status: 400, body: { field: 'shownAs' } }]);
+    expect((await made('m\u0435tte', 'Other')).body['field']).toBe('name');
+    expect((await made('METTE', 'Other')).status).toBe(409);
+  });
+
   it('keep their last administrator', async () => {
     const id = await idOf('olaf');
     expect((await olaf.ask('PUT', `/api/accounts/${id}`, { grants: viewer, why: 'x' })).status).toBe(409);

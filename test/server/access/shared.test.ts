@@ -85,6 +85,23 @@ describe('acting by PIN', () => {
     expect((await screen.ask('POST', '/api/terminal/act-as', { account: mette, pin: '2846' })).status).toBe(200);
   });
 
+  it('is on record, and so are PINs that were wrong: whose, and at which screen', async () => {
+    const { screen } = await display({ name: 'Hall 2', acting: true });
+    await screen.ask('POST', '/api/terminal/act-as', { account: mette, pin: '9999' });
+    await screen.ask('POST', '/api/terminal/act-as', { account: mette, pin: '2846' });
+    const told = (await plant.changes()).filter(({ after }) => (after as { by?: string } | null)?.by === 'PIN').map(({ kind, who, what, after }) => [kind, who, what, after]);
+    expect(told).toEqual(expect.arrayContaining([
+      ['sign-in-failed', 'unknown', 'account mette', { by: 'PIN', at: 'display Hall 2' }],
+      ['sign-in', 'mette Holm', 'account mette', { by: 'PIN', at: 'display Hall 2' }],
+    ]));
+  });
+
+  it('ten at the same time are not ten guesses', async () => {
+    const { screen } = await display({ name: 'Hall 2', acting: true });
+    const all = await Promise.all(Array.from({ length: 10 }, (_, k) => screen.ask('POST', '/api/terminal/act-as', { account: mette, pin: `000${k}` })));
+    expect(all.filter(({ status }) => status === 401).length).toBe(4);
+  });
+
   it('ends when it is ended', async () => {
     const { screen } = await display({ name: 'Hall 2', acting: true });
     await screen.ask('POST', '/api/terminal/act-as', { account: mette, pin: '2846' });

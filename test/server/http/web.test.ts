@@ -264,8 +264,8 @@ describe('a request that is no good', () => {
     expect(folded.heard().split('\r\n\r\n')[0]).not.toMatch(/set-cookie/i);
   });
 
-  it('is answered with headers that keep a browser in bounds', async () => {
-    const one = await open('GET /api/nothing HTTP/1.1\r\nHost: a\r\nConnection: close\r\n\r\n');
+  it.each(['/api/nothing', '/%61pi/nothing', '/source/nothing'])('is answered with headers that keep a browser in bounds: %s', async (path) => {
+    const one = await open(`GET ${path} HTTP/1.1\r\nHost: a\r\nConnection: close\r\n\r\n`);
     await one.ended;
     for (const header of ["script-src 'self'", 'x-content-type-options: nosniff', 'referrer-policy: no-referrer', 'cache-control: no-store', 'permissions-policy: ', "frame-ancestors 'none'"]) expect(one.heard()).toContain(header);
     expect(one.heard()).not.toContain('unsafe-inline');
