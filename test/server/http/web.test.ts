@@ -222,6 +222,14 @@ describe('a request that is no good', () => {
     upload.socket.destroy();
   });
 
+  it('is let go where it was answered long ago and still sends, an upload too', async () => {
+    const refused = await open(head('/source/records', 1000).replace('application/json', 'application/nothing'));
+    const dribble = setInterval(() => refused.socket.write('a'), 50);
+    await refused.ended;
+    clearInterval(dribble);
+    expect(refused.heard()).toContain(' 415 ');
+  });
+
   const post = (body: string, headers: Record<string, string> = {}): Promise<{ status: number; text: string }> =>
     new Promise((resolve, reject) => {
       const request = plain({ port, host: '127.0.0.1', path: '/api/something', method: 'POST', headers: { 'content-type': 'application/json', ...headers } }, (answer) => {
