@@ -68,7 +68,7 @@ function rawSocket(allowHalfOpen: boolean): Promise<Socket> {
 }
 
 const handshake = (path: string, headers: string): string =>
-  `GET ${path} HTTP/1.1\r\nHost: a\r\nConnection: Upgrade\r\nUpgrade: websocket\r\nSec-WebSocket-Version: 13\r\nSec-WebSocket-Key: dGhlIHNhbXBsZSBub25jZQ==\r\n${headers}\r\n`;
+  `GET ${path} HTTP/1.1\r\nHost: localhost\r\nConnection: Upgrade\r\nUpgrade: websocket\r\nSec-WebSocket-Version: 13\r\nSec-WebSocket-Key: dGhlIHNhbXBsZSBub25jZQ==\r\n${headers}\r\n`;
 
 /** Opens many connections with broken beginnings, a few at a time; their peers never close them by themselves. */
 async function handshakes(chance: Chance, count: number): Promise<void> {
