@@ -64,7 +64,7 @@ export async function httpServer({ hops, tls, requestsPerSecond, ownHostsOnly = 
     const path = request.url.split('?')[0];
     if (path !== uploads) {
       const wait = limit.take(networkOf(request.ip));
-      if (wait > 0) throw new TooManyTries(wait);
+      if (wait > 0) throw new TooManyTries(wait, 'requests at a time');
       endIfLate(request.raw, arriveWithinMs);
     }
     const host = hops.hostOf(request.raw);

@@ -56,7 +56,7 @@ function operation(one: AnyRoute): Part {
       ...(open ? {} : { '401': refusal('Nobody known asks.'), '403': refusal('Who asks may not do this; that is on record.') }),
       ...(params === undefined ? {} : { '404': refusal('There is no such thing.') }),
       ...(method === 'GET' ? {} : { '409': refusal('It cannot be done as things stand now.') }),
-      '429': refusal('Too many tries; Retry-After says when to try again.'),
+      '429': refusal('Too many tries or requests; Retry-After says when to try again.'),
     },
   };
 }

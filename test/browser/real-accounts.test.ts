@@ -195,6 +195,7 @@ describe('on a real server with accounts', () => {
     await menu('My account');
     await page.getByText(/last used/).first().waitFor();
     await page.getByRole('button', { name: 'Remove: Phone' }).click();
+    await dialog().getByLabel('Your password').fill(password);
     await dialog().getByRole('button', { name: 'Remove' }).click();
     await page.getByText('You have no passkey.').waitFor();
   });

@@ -34,13 +34,18 @@ interface Shown {
   readonly card: GuaranteeCard;
   readonly view: GuaranteeView;
 }
-const shown = async ({ served }: Demo): Promise<readonly Shown[]> => (await (await fetch(`${served.address}/api/guarantees`)).json()) as readonly Shown[];
+const shown = async ({ served }: Demo): Promise<readonly Shown[]> => {
+  const answer = await fetch(`${served.address}/api/guarantees`);
+  if (!answer.ok) throw new Error(`${answer.status}: ${await answer.text()}`);
+  return (await answer.json()) as readonly Shown[];
+};
 
 /** Asks again and again until the answer fits; the test's own time limit ends it. */
 async function until<T>(ask: () => Promise<T>, fits: (answer: T) => boolean): Promise<T> {
   for (;;) {
     const answer = await ask();
     if (fits(answer)) return answer;
+    await new Promise((resolve) => setTimeout(resolve, 50)); // So that the server does not find it asks too much.
   }
 }
 

@@ -20,10 +20,10 @@ it.each([{ others: false }, { others: true }])('an upload cut off by the end of 
       const answer = await fetch(`${address}/source/records`, { method: 'POST', headers, body });
       return { status: answer.status, body: (await answer.json()) as object };
     };
-    const { hostname, port } = new URL(address);
+    const { host, hostname, port } = new URL(address);
     const socket = connect(Number(port), hostname).on('error', () => undefined);
     const text = rows(10);
-    socket.write(`POST /source/records HTTP/1.1\r\nHost: x\r\nAuthorization: Bearer ${token}\r\nContent-Type: application/x-ndjson\r\nIdempotency-Key: "k"\r\nContent-Length: 100000\r\n\r\n${text}`);
+    socket.write(`POST /source/records HTTP/1.1\r\nHost: ${host}\r\nAuthorization: Bearer ${token}\r\nContent-Type: application/x-ndjson\r\nIdempotency-Key: "k"\r\nContent-Length: 100000\r\n\r\n${text}`);
     await eventually('ten records are taken', async () => (/^vouchline_records_total 10$/m.test(await (await fetch(`${address}/metrics`)).text()) ? true : undefined));
     await eventually('they are durable', async () => (/^vouchline_waiting_bytes 0$/m.test(await (await fetch(`${address}/metrics`)).text()) ? true : undefined));
     await server.kill();

@@ -103,9 +103,9 @@ describe('rows without sequences', () => {
 
 /** A request whose body goes on as the test says. */
 function slowPost(headers: string): { readonly write: (text: string) => void; readonly answer: Promise<string>; readonly drop: () => void } {
-  const { hostname, port } = new URL(server.address);
+  const { host, hostname, port } = new URL(server.address);
   const socket = connect(Number(port), hostname);
-  socket.write(`POST /source/records HTTP/1.1\r\nHost: x\r\nAuthorization: Bearer ${token}\r\nContent-Type: application/x-ndjson\r\nTransfer-Encoding: chunked\r\n${headers}\r\n`);
+  socket.write(`POST /source/records HTTP/1.1\r\nHost: ${host}\r\nAuthorization: Bearer ${token}\r\nContent-Type: application/x-ndjson\r\nTransfer-Encoding: chunked\r\n${headers}\r\n`);
   let said = '';
   const answer = new Promise<string>((resolve) => {
     socket.on('data', (piece) => {
