@@ -76,8 +76,9 @@ export async function httpServer({ hops, tls, requestsPerSecond, ownHostsOnly = 
     }
     return undefined;
   });
-  http.addHook('onResponse', async (request) => {
+  http.addHook('onResponse', (request, _reply, done) => {
     endIfLate(request.raw, arriveWithinMs); // Answered before it was all there, as refused uploads are.
+    done();
   });
   http.addHook('onSend', async (request, reply) => {
     if (!reply.hasHeader('cache-control')) reply.header('cache-control', 'no-store'); // What the files of the pages do not say of themselves is kept nowhere.
