@@ -10,6 +10,11 @@ export interface Batch {
   /** Places in the part: from (included) to `to` (excluded). */
   readonly from: number;
   readonly to: number;
+  /**
+   * Where records are single units, places of the nonconforming ones, rising: at least of those from `from` to `to` - 1.
+   * Looked for once for all that live on the records.
+   */
+  readonly places: Uint32Array;
   /** Index of the source in the monitor's list. */
   readonly source: number;
   /** Sequence of the part's first record (place 0). */

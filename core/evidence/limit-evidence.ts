@@ -36,7 +36,7 @@ export class LimitEvidence extends UnitEvidence {
     super.take(batch, moment);
     const { part, from, to } = batch;
     if (part.kind !== 'measurements') return;
-    for (let place = Math.max(from, to - this.#most); place < to; place += 1) this.#values.push(part.value[place] as number);
+    this.#values.pushAll(part.value.subarray(Math.max(from, to - this.#most), to));
     if (this.#values.length > this.#most) this.#values.dropOldest(this.#values.length - this.#most);
   }
 

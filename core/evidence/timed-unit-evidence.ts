@@ -13,7 +13,7 @@ import type { CountRule } from './count-rule.ts';
 import { countedFinding } from './counted-finding.ts';
 import type { Batch, Bounds, CorrectionFate, Evidence } from './evidence.ts';
 import { clockMoment, type Moment, type RecordMoment } from './moment.ts';
-import { nonconformingPlaces, tellsUnits, type Limit } from './nonconforming-places.ts';
+import { firstAtOrAfter, tellsUnits, type Limit } from './nonconforming-places.ts';
 import { SpanCover } from './span-cover.ts';
 import type { Weighing } from './weighing.ts';
 
@@ -171,7 +171,7 @@ export class TimedUnitEvidence implements Evidence {
 
   /** Records of one step: `from` to `to` of one part, verdicts or measurements, or one tally. */
   #takeInStep(batch: Batch, moment: RecordMoment): void {
-    const { part, from, to, source, firstSequence } = batch;
+    const { part, from, to, places, source, firstSequence } = batch;
     const at = timeAt(part.time, from);
     if (part.kind === 'tallies') {
       const [inspected, nonconforming] = [part.inspected[from] as number, part.nonconforming[from] as number];
@@ -180,10 +180,10 @@ export class TimedUnitEvidence implements Evidence {
       else this.#admit(at, this.window.admitConforming(at, source, firstSequence + from, 1, inspected), inspected, moment);
       return;
     }
-    const places = nonconformingPlaces(part, from, to, this.#settings.limit);
     let done = from;
-    for (let k = 0; k < places.length; k += 1) {
-      const place = places[k] as number;
+    for (let row = firstAtOrAfter(places, from); row < places.length; row += 1) {
+      const place = places[row] as number;
+      if (place >= to) break;
       this.#conforming(batch, at, done, place, moment);
       moment.place = place;
       this.#admit(at, this.window.admitNonconforming(at, source, firstSequence + place), 1, moment);

@@ -10,7 +10,7 @@ import type { CountRule } from './count-rule.ts';
 import { countedFinding } from './counted-finding.ts';
 import type { Batch, Bounds, CorrectionFate, Evidence, WindowStrip } from './evidence.ts';
 import type { Moment, RecordMoment } from './moment.ts';
-import { nonconformingPlaces, tellsUnits, type Limit } from './nonconforming-places.ts';
+import { firstAtOrAfter, tellsUnits, type Limit } from './nonconforming-places.ts';
 import type { Weighing } from './weighing.ts';
 
 export interface UnitEvidenceSettings {
@@ -69,7 +69,7 @@ export class UnitEvidence implements Evidence {
   }
 
   take(batch: Batch, moment: RecordMoment): void {
-    const { part, from, to, source, firstSequence } = batch;
+    const { part, from, to, places, source, firstSequence } = batch;
     if (!tellsUnits(part, this.#settings.limit)) return;
     if (part.kind === 'tallies') {
       for (let place = from; place < to; place += 1) {
@@ -82,11 +82,11 @@ export class UnitEvidence implements Evidence {
       }
       return;
     }
-    const places = nonconformingPlaces(part, from, to, this.#settings.limit);
     this.window.admitRun(source, firstSequence + from, to - from);
     let done = from;
-    for (let k = 0; k < places.length; k += 1) {
-      const place = places[k] as number;
+    for (let row = firstAtOrAfter(places, from); row < places.length; row += 1) {
+      const place = places[row] as number;
+      if (place >= to) break;
       if (place > done) this.#conforming(place - done, moment, done);
       moment.place = place;
       this.#nonconforming(moment);
@@ -97,18 +97,18 @@ export class UnitEvidence implements Evidence {
   }
 
   fill(batch: Batch, moment: RecordMoment): void {
-    const { part, from, to, source, firstSequence } = batch;
+    const { part, from, to, places, source, firstSequence } = batch;
     if (!tellsUnits(part, this.#settings.limit)) return;
     if (part.kind === 'tallies') {
       for (let place = from; place < to; place += 1) {
         const unitsPerRecord = part.inspected[place] as number;
         const nonconforming = part.nonconforming[place] as number;
-        const places = Array.from({ length: nonconforming }, (_, unit) => unitsPerRecord - nonconforming + unit);
-        this.window.insertLate({ source, sequence: firstSequence + place, records: 1, unitsPerRecord, places });
+        const last = Array.from({ length: nonconforming }, (_, unit) => unitsPerRecord - nonconforming + unit);
+        this.window.insertLate({ source, sequence: firstSequence + place, records: 1, unitsPerRecord, places: last });
       }
     } else {
-      const places = Array.from(nonconformingPlaces(part, from, to, this.#settings.limit), (place) => place - from);
-      this.window.insertLate({ source, sequence: firstSequence + from, records: to - from, unitsPerRecord: 1, places });
+      const within = Array.from(places.subarray(firstAtOrAfter(places, from), firstAtOrAfter(places, to)), (place) => place - from);
+      this.window.insertLate({ source, sequence: firstSequence + from, records: to - from, unitsPerRecord: 1, places: within });
     }
     moment.place = to - 1;
     this.weigh(moment);

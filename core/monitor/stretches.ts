@@ -1,3 +1,4 @@
+import { lastWhere } from '../numerics/integer-search.ts';
 import { timeAt, type TimeColumn } from '../record/time-column.ts';
 
 /** Consecutive records of a part inspected within one minute of the plant's clock: places from (included) to `to` (excluded). */
@@ -31,7 +32,20 @@ export function cutByMinute(time: TimeColumn, records: number, latest: number): 
   if ((time.kind === 'steady' || records === 1) && last <= latest && minuteOf(first) === minuteOf(last)) {
     return { stretches: [{ from: 0, to: records, minute: minuteOf(first) }], implausible: none };
   }
+  if (time.kind === 'steady' && last <= latest) return { stretches: cutSteady(time, records), implausible: none };
   return cutOneByOne(time, records, latest);
+}
+
+/** A steady part rises: where a minute ends is found without looking at what stands between. */
+function cutSteady(time: TimeColumn, records: number): Stretch[] {
+  const stretches: Stretch[] = [];
+  for (let from = 0; from < records; ) {
+    const minute = minuteOf(timeAt(time, from));
+    const last = lastWhere((place) => timeAt(time, place) < minute + minuteMs, from, records - 1, records - 1);
+    stretches.push({ from, to: last + 1, minute });
+    from = last + 1;
+  }
+  return stretches;
 }
 
 function cutOneByOne(time: TimeColumn, records: number, latest: number): CutPart {

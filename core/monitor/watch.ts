@@ -2,6 +2,7 @@ import type { AlarmGrounds } from '../alarm/alarm.ts';
 import type { Batch, Evidence } from '../evidence/evidence.ts';
 import { evidenceOf } from '../evidence/evidence-of.ts';
 import { clockMoment, type Moment, type RecordMoment } from '../evidence/moment.ts';
+import { nonconformingPlaces, type Limit } from '../evidence/nonconforming-places.ts';
 import { Standing } from '../evidence/standing.ts';
 import { TipTrail } from '../evidence/tip-trail.ts';
 import type { AlarmRule, Guarantee } from '../plant/guarantee.ts';
@@ -40,6 +41,8 @@ export class Watch {
   changed = true;
   /** Newest time of inspection, ms; 0 before the first record. */
   newest = 0;
+  /** Judges measurements, where values beyond a limit are counted. */
+  readonly #limit: Limit | undefined;
   readonly #period: Period;
   readonly #steps: RecordSteps;
   readonly #starts: RunStarts;
@@ -52,6 +55,7 @@ export class Watch {
   constructor(guarantee: Guarantee, around: WatchSurroundings) {
     this.guarantee = guarantee;
     this.around = around;
+    this.#limit = guarantee.promise.quantity === 'fraction-beyond-limit' ? guarantee.promise.limit : undefined;
     this.#dueMovesWithRecords = guarantee.window.kind === 'time' || guarantee.window.kind === 'shift';
     this.#period = new Period(guarantee.window.kind, around.calendar);
     const badData = guarantee.rules.find((rule): rule is BadDataRule => rule.kind === 'bad-data');
@@ -72,12 +76,13 @@ export class Watch {
   }
 
   /** Takes a part's records in order. `late`: they fill a hole declared lost before. */
-  take(part: InspectionPart, stretches: readonly Stretch[], base: Omit<Batch, 'from' | 'to' | 'part'>, moment: RecordMoment, late: boolean): void {
+  take(part: InspectionPart, stretches: readonly Stretch[], base: Pick<Batch, 'source' | 'firstSequence' | 'station'>, moment: RecordMoment, late: boolean): void {
     this.changed = true;
     const { source, firstSequence, station } = base; // spreading it into each batch costs more than all the rest
     const lot = part.origin.lot ?? this.around.line.lot;
     for (const { from, to, minute } of stretches) {
-      noteMinutes(this.minutes, this.guarantee, part, from, to, minute);
+      const batch: Batch = { part, from, to, places: nonconformingPlaces(part, from, to, this.#limit), source, firstSequence, station, lot };
+      noteMinutes(this.minutes, batch, minute);
       moment.place = from;
       if (moment.at > this.newest) this.newest = moment.at;
       const belonging = this.#period.of(minute, lot);
@@ -88,7 +93,6 @@ export class Watch {
         this.#beginAnew(moment);
       }
       this.#heard(moment);
-      const batch: Batch = { part, from, to, source, firstSequence, station, lot };
       if (late) this.#steps.fill(batch, moment);
       else this.#steps.take(batch, moment, (first, end) => this.#giveWindow(batch, first, end, moment));
       if (moment.at > this.newest) this.newest = moment.at;

@@ -1,4 +1,4 @@
-import type { RunBatch } from './run-evidence.ts';
+import type { Batch } from '../evidence/evidence.ts';
 
 /** What a detector's alarm tells of the records since it last began anew. */
 export interface ChangeFigures {
@@ -18,7 +18,7 @@ export interface ChangeWatch {
    *
    * @returns the place behind the last one taken, at most batch.to
    */
-  take(batch: RunBatch, from: number): number;
+  take(batch: Batch, from: number): number;
   /** Since it last began anew; at the raising of an alarm those that led to it. */
   figures(): ChangeFigures;
   /** Share of the way to the alarm on a logarithmic scale, 0 to 1; while an alarm stands, of the way back. */

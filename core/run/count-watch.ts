@@ -3,7 +3,7 @@ import type { CusumState } from '../sequential/cusum.ts';
 import type { DetectorState } from '../sequential/change-detector.ts';
 import type { ChangeFigures, ChangeWatch } from './change-watch.ts';
 import type { DetectorArithmetic } from './detector-arithmetic.ts';
-import type { RunBatch } from './run-evidence.ts';
+import type { Batch } from '../evidence/evidence.ts';
 
 /** Units without a nonconforming one that would speak for the baseline at 95 %, times the baseline. */
 const usualDistances = 3;
@@ -60,7 +60,7 @@ export class CountWatch<S extends State> implements ChangeWatch {
     return this.#detector.alarms;
   }
 
-  take(batch: RunBatch, from: number): number {
+  take(batch: Batch, from: number): number {
     const { part, to } = batch;
     if (part.kind === 'exposures' && this.#exposures) {
       for (let place = from; place < to; place += 1) if (this.#record(part.count[place] as number, part.exposure[place] as number)) return place + 1;
@@ -116,7 +116,7 @@ export class CountWatch<S extends State> implements ChangeWatch {
   }
 
   /** Single units: runs of conforming ones in one step. */
-  #units({ places, to }: RunBatch, from: number): number {
+  #units({ places, to }: Batch, from: number): number {
     let row = firstAtOrAfter(places, from);
     for (let place = from; place < to; row += 1) {
       const found = Math.min(to, places[row] ?? to);

@@ -1,4 +1,4 @@
-import type { RunBatch } from './run-evidence.ts';
+import type { Batch } from '../evidence/evidence.ts';
 
 /**
  * Keeps, of nonconforming units in a stream, those that begin an event: each that stands more than `gap` units behind
@@ -28,7 +28,7 @@ export class EventSieve {
   }
 
   /** Records with those nonconforming units alone that begin an event; of a tally, whose nonconforming units stand last, one at most. */
-  batch(records: RunBatch): RunBatch {
+  batch(records: Batch): Batch {
     const { part, from, to, places } = records;
     if (part.kind === 'tallies') {
       const nonconforming = new Uint32Array(part.nonconforming);

@@ -1,9 +1,9 @@
 import type { Assessment } from '../evidence/assessment.ts';
-import type { Bounds } from '../evidence/evidence.ts';
+import type { Batch, Bounds } from '../evidence/evidence.ts';
 import { exposedRecords } from '../evidence/record-columns.ts';
 import type { Margin } from '../view/guarantee-view.ts';
 import { CountRun, type CountRunSnapshot } from './count-run.ts';
-import type { CountChange, RunBatch, RunEvidence } from './run-evidence.ts';
+import type { CountChange, RunEvidence } from './run-evidence.ts';
 import type { RunRule } from './run-rule.ts';
 
 interface ExposureRunSnapshot extends CountRunSnapshot {
@@ -27,7 +27,7 @@ export class ExposureRun implements RunEvidence {
     return this.#run.size;
   }
 
-  take({ part, to }: RunBatch, from: number): number {
+  take({ part, to }: Batch, from: number): number {
     const columns = exposedRecords.columns(part, from, to);
     if (columns?.b === undefined) return to;
     for (let place = from; place < to; place += 1) {

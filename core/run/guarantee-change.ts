@@ -7,7 +7,7 @@ import type { DetectorView } from './detector-view.ts';
 import { EventSieve } from './event-sieve.ts';
 import { MarkedPath, type MarkedPathSnapshot } from './marked-path.ts';
 import { RecordSpans, type RecordSpansSnapshot } from './record-spans.ts';
-import type { RunBatch } from './run-evidence.ts';
+import type { Batch } from '../evidence/evidence.ts';
 
 const clusterDoubt =
   'Nonconforming units come in clusters now, so the distance between false calls no longer holds: it calls falsely more often. Find the common cause, or count events (clusters: merge-within) in the plant file.';
@@ -49,7 +49,7 @@ export class GuaranteeChange {
     this.#listener = listener;
   }
 
-  take(records: RunBatch, moment: RecordMoment): void {
+  take(records: Batch, moment: RecordMoment): void {
     const batch = this.#sieve?.batch(records) ?? records;
     const { source, firstSequence, to } = batch;
     for (let place = batch.from; place < to; ) {

@@ -1,12 +1,11 @@
 import type { Assessment } from '../evidence/assessment.ts';
 import type { Batch } from '../evidence/evidence.ts';
 import type { Moment, RecordMoment } from '../evidence/moment.ts';
-import { nonconformingPlaces, type Limit } from '../evidence/nonconforming-places.ts';
 import type { Guarantee } from '../plant/guarantee.ts';
 import { MarkedPath, type MarkedPathSnapshot } from './marked-path.ts';
 import { RecordSpans, type RecordSpansSnapshot } from './record-spans.ts';
 import type { RunCause } from './run-cause.ts';
-import type { CountChange, RunBatch, RunEvidence } from './run-evidence.ts';
+import type { CountChange, RunEvidence } from './run-evidence.ts';
 import { runOf } from './run-of.ts';
 
 /** When the run first said something, and after how much. */
@@ -36,7 +35,6 @@ export class GuaranteeRun {
   readonly spans = new RecordSpans();
   /** log10 of the evidence for and against the guarantee, since the run began. */
   readonly path = new MarkedPath('from the beginning', 2);
-  readonly #limit: Limit | undefined;
   #number = 1;
   #cause: RunCause = 'first';
   #detail = '';
@@ -46,7 +44,6 @@ export class GuaranteeRun {
 
   constructor(guarantee: Guarantee) {
     this.evidence = runOf(guarantee);
-    this.#limit = guarantee.promise.quantity === 'fraction-beyond-limit' ? guarantee.promise.limit : undefined;
   }
 
   /** The first run is number 1. */
@@ -85,12 +82,6 @@ export class GuaranteeRun {
     return this.spans.ranges().length === 0;
   }
 
-  /** A batch with its nonconforming records listed. */
-  read(batch: Batch): RunBatch {
-    const { part, from, to, source, firstSequence, station, lot } = batch;
-    return { part, from, to, source, firstSequence, station, lot, places: nonconformingPlaces(part, from, to, this.#limit) };
-  }
-
   /** Records of a batch come; taken step by step after this. */
   note({ source, firstSequence, from, to }: Batch, at: number): void {
     this.spans.note(source, firstSequence + from, firstSequence + to - 1);
@@ -98,7 +89,7 @@ export class GuaranteeRun {
   }
 
   /** Takes records from place `from` on, up to the first at which the assessment changes. @returns the place behind the last */
-  take(batch: RunBatch, from: number, moment: RecordMoment): number {
+  take(batch: Batch, from: number, moment: RecordMoment): number {
     const { evidence } = this;
     if (evidence === undefined) return batch.to;
     const before = evidence.assessment;

@@ -1,5 +1,5 @@
 import type { Assessment } from '../evidence/assessment.ts';
-import type { Bounds } from '../evidence/evidence.ts';
+import type { Batch, Bounds } from '../evidence/evidence.ts';
 import type { MeanPromised } from '../evidence/mean-rule.ts';
 import type { Side } from '../evidence/mean-method.ts';
 import { measuredRecords } from '../evidence/record-columns.ts';
@@ -12,7 +12,7 @@ import { BoundedLaw } from './bounded-law.ts';
 import { GaussianLaw, knownSigmaMixture, unknownSigmaMixture } from './gaussian-law.ts';
 import type { MeanLaw, MeanLevels } from './mean-law.ts';
 import { runAssessment } from './run-assessment.ts';
-import type { RunBatch, RunEvidence } from './run-evidence.ts';
+import type { RunEvidence } from './run-evidence.ts';
 
 interface MeanRunSnapshot {
   readonly law: unknown;
@@ -53,7 +53,7 @@ export class MeanRun implements RunEvidence {
     return this.#law.values;
   }
 
-  take({ part, to }: RunBatch, from: number): number {
+  take({ part, to }: Batch, from: number): number {
     const columns = measuredRecords.columns(part, from, to);
     if (columns === undefined) return to;
     for (let place = from; place < to; place += 1) {

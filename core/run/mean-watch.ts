@@ -1,7 +1,7 @@
 import { measuredRecords } from '../evidence/record-columns.ts';
 import { admitMean, clearMeanAlarm, meanDetectorGauge, newMeanDetector, type MeanDetectorState, type MeanDetectorTuning } from '../sequential/mean-detector.ts';
 import type { ChangeFigures, ChangeWatch } from './change-watch.ts';
-import type { RunBatch } from './run-evidence.ts';
+import type { Batch } from '../evidence/evidence.ts';
 
 interface MeanWatchSnapshot {
   readonly detector: MeanDetectorState;
@@ -34,7 +34,7 @@ export class MeanWatch implements ChangeWatch {
     return this.#detector.alarms;
   }
 
-  take({ part, to }: RunBatch, from: number): number {
+  take({ part, to }: Batch, from: number): number {
     const columns = measuredRecords.columns(part, from, to);
     if (columns === undefined) return to;
     for (let place = from; place < to; place += 1) if (this.#value(columns.a[place - from] as number)) return place + 1;

@@ -37,12 +37,11 @@ export class RecordSteps {
   /** @param window gives the window the records from one place to another */
   take(batch: Batch, moment: RecordMoment, window: (from: number, to: number) => void): void {
     const { run, change, evidence } = this.#living;
-    const read = run.read(batch);
     moment.place = batch.from;
     run.note(batch, moment.at);
     for (let place = batch.from; place < batch.to; ) {
       const before = run.assessment;
-      const next = run.take(read, place, moment);
+      const next = run.take(batch, place, moment);
       if (this.#runDecides && run.assessment !== before) {
         if (next - 1 > place) window(place, next - 1);
         this.tellRun();
@@ -52,7 +51,7 @@ export class RecordSteps {
       place = next;
     }
     if (!this.#runDecides) window(batch.from, batch.to);
-    change?.take(read, moment); // Last, so that at the same unit the crossing is told before the change.
+    change?.take(batch, moment); // Last, so that at the same unit the crossing is told before the change.
     moment.place = batch.to - 1;
   }
 
@@ -60,10 +59,9 @@ export class RecordSteps {
   fill(batch: Batch, moment: RecordMoment): void {
     const { run, evidence } = this.#living;
     if (!run.spans.isBefore(batch.source, batch.firstSequence + batch.from)) {
-      const read = run.read(batch);
       moment.place = batch.from;
       run.note(batch, moment.at);
-      for (let place = batch.from; place < batch.to; ) place = run.take(read, place, moment);
+      for (let place = batch.from; place < batch.to; ) place = run.take(batch, place, moment);
       this.tellRun();
     }
     evidence.fill(batch, moment);

@@ -2,11 +2,6 @@ import type { Assessment } from '../evidence/assessment.ts';
 import type { Batch, Bounds } from '../evidence/evidence.ts';
 import type { Margin } from '../view/guarantee-view.ts';
 
-/** Records as a run takes them; `places` lists the nonconforming ones where records are single units, computed once. */
-export interface RunBatch extends Batch {
-  readonly places: Uint32Array;
-}
-
 /** By how much a correction changed what was counted. */
 export interface CountChange {
   readonly size: number;
@@ -26,7 +21,7 @@ export interface RunEvidence {
    *
    * @returns the place behind the last one taken, at most batch.to
    */
-  take(batch: RunBatch, from: number): number;
+  take(batch: Batch, from: number): number;
   /** A record of the run was corrected. */
   correct(change: CountChange): void;
   /** The run begins anew. */

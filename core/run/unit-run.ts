@@ -1,10 +1,10 @@
 import type { Assessment } from '../evidence/assessment.ts';
-import type { Bounds } from '../evidence/evidence.ts';
+import type { Batch, Bounds } from '../evidence/evidence.ts';
 import type { Limit } from '../evidence/nonconforming-places.ts';
 import { firstAtOrAfter, tellsUnits } from '../evidence/nonconforming-places.ts';
 import type { Margin } from '../view/guarantee-view.ts';
 import { CountRun, type CountRunSnapshot } from './count-run.ts';
-import type { CountChange, RunBatch, RunEvidence } from './run-evidence.ts';
+import type { CountChange, RunEvidence } from './run-evidence.ts';
 import type { RunRule } from './run-rule.ts';
 
 interface UnitRunSnapshot extends CountRunSnapshot {
@@ -39,7 +39,7 @@ export class UnitRun implements RunEvidence {
     return this.#run.size;
   }
 
-  take({ part, places, to }: RunBatch, from: number): number {
+  take({ part, places, to }: Batch, from: number): number {
     if (!tellsUnits(part, this.#settings.limit)) return to;
     if (part.kind === 'tallies') {
       for (let place = from; place < to; place += 1) {

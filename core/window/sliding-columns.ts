@@ -46,6 +46,15 @@ export class SlidingColumns {
     if (fourth !== undefined) fourth[at] = d;
   }
 
+  /** Adds a row a number at the new end, in the first column; the others are 0. */
+  pushAll(numbers: Float64Array): void {
+    this.#makeRoom(numbers.length);
+    const [first, ...others] = this.#columns;
+    first?.set(numbers, this.#to);
+    for (const column of others) column.fill(0, this.#to, this.#to + numbers.length);
+    this.#to += numbers.length;
+  }
+
   /** Removes the `rows` oldest rows. */
   dropOldest(rows: number): void {
     this.#from += rows;
