@@ -3,8 +3,10 @@ import type { Server } from 'node:https';
 import type { AddressInfo } from 'node:net';
 import { join } from 'node:path';
 import type { Logger } from 'pino';
+import type { Refusal } from '../core/record/refusal.ts';
 import { sourceLimits } from '../core/protocol/limits.ts';
 import { plantClock, type ClockSetting } from './clock/plant-clock.ts';
+import { SourceRefusals } from './access/source-refusals.ts';
 import { accessOf } from './access/access-of.ts';
 import { directorySetting } from './access/directory-setting.ts';
 import { checkOpenAccess, checkPlainHttp } from './access/open-access.ts';
@@ -128,7 +130,12 @@ export async function serveFrom(store: Store, { settings, clock: clockSetting, d
     measures.frames.inc();
     measures.records.inc(records);
   };
-  const sources = new SourceDesk({ plant, store, limits, frameRead, frameRefused: () => measures.refusedFrames.inc() });
+  const refusals = new SourceRefusals(store.access, Date.now, (cause) => log.error({ err: cause }, 'a refusal was not kept'));
+  const frameRefused = (sender: Sender, refusal: Refusal | undefined): void => {
+    measures.refusedFrames.inc();
+    if (refusal !== undefined) refusals.noteRefused(sender.name, refusal);
+  };
+  const sources = new SourceDesk({ plant, store, limits, frameRead, frameRefused });
   const uploads = new UploadDesk({
     monitor: () => plant.monitor,
     act: (act) => plant.act(act),
@@ -170,6 +177,7 @@ export async function serveFrom(store: Store, { settings, clock: clockSetting, d
   serveRoutes(http, [...routes, openApiRoute(routes)], guard);
   const closedBecause = (): string | undefined => (store.condition.kind === 'open' ? undefined : 'not-stored');
   const senderOf = (token: string): Promise<Sender | undefined> => sources.senderOf(token);
+  const tokenUnknown = (what: string, address: string): Promise<void> => refusals.noteUnknown(what, address);
   serveUploads(http, {
     desk: uploads,
     put: (arrival) => plant.inbox.put(arrival),
@@ -178,12 +186,14 @@ export async function serveFrom(store: Store, { settings, clock: clockSetting, d
     frameRead,
     senderOf,
     closedBecause,
-    rowRefused: (sender) => sources.noteRefused(sender),
+    rowRefused: (sender, refusal) => sources.noteRefused(sender, refusal),
+    tokenUnknown,
   });
   const stopSockets = serveSockets(http.server, {
     frameBytes: limits.frameBytes,
     mostDashboards: settings.dashboards,
     senderOf,
+    tokenUnknown,
     onSource: (socket, sender) => {
       uploads.interrupt(sender);
       sources.connect(socket, sender);

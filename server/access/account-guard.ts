@@ -9,8 +9,11 @@ import type { Guard, Shown } from './guard.ts';
 import type { Kept } from './kept.ts';
 import { hashOfSecret } from './secret.ts';
 import { sessionSecret } from './session-cookie.ts';
+import { Sparing } from './sparing.ts';
 
 const minute = 60_000;
+/** Refusals on record a minute at most, of all callers; the same one once. */
+const mostRefused = 600;
 /** Places a display sees but nothing else. */
 const viewer = (line: string | null): readonly Grant[] => [{ role: 'viewer', line: line ?? undefined }];
 
@@ -20,14 +23,14 @@ export class AccountGuard implements Guard {
   readonly #acting: ActingPeople;
   readonly #spans: SessionSpans;
   readonly #onFault: (cause: unknown) => void;
-  /** When each refusal was recorded last. */
-  readonly #refused = new Map<string, number>();
+  readonly #refused: Sparing;
   readonly #touching = new Set<string>();
 
   constructor(book: AccessBook, acting: ActingPeople, spans: SessionSpans, onFault: (cause: unknown) => void) {
     this.#book = book;
     this.#acting = acting;
     this.#spans = spans;
+    this.#refused = new Sparing(mostRefused, book.now);
     this.#onFault = onFault;
   }
 
@@ -42,14 +45,9 @@ export class AccountGuard implements Guard {
     this.#acting.acted(by);
   }
 
-  /** At most once a minute for the same caller, action and place, so that a refused program cannot fill the disk. */
-  noteRefused(caller: Caller, action: Action, what: string): void {
-    const at = this.#book.now();
-    const key = JSON.stringify([caller.by, action, what]);
-    if (at - (this.#refused.get(key) ?? -Infinity) < minute) return;
-    if (this.#refused.size > 10_000) this.#refused.clear();
-    this.#refused.set(key, at);
-    this.#keep(this.#book.write([], [changeOf('refused', caller.name ?? 'unknown', what, null, { action, by: caller.kind })]));
+  async noteRefused(caller: Caller, action: Action, what: string): Promise<void> {
+    if (!this.#refused.lets(JSON.stringify([caller.by, action, what]))) return;
+    await this.#book.write([], [changeOf('refused', caller.name ?? 'unknown', what, null, { action, by: caller.kind })]).catch(this.#onFault);
   }
 
   #bySession(hash: string): Caller | undefined {

@@ -13,11 +13,11 @@ export interface Shown {
 export interface Guard {
   /** undefined: nobody known; what is open to all may still be asked. */
   callerOf(shown: Shown): Caller | undefined;
-  /** Puts a refusal on record. @param what the route or message */
-  noteRefused(caller: Caller, action: Action, what: string): void;
+  /** Puts a refusal on record; there when it resolves, whether or not that went well. @param what the route or message */
+  noteRefused(caller: Caller, action: Action, what: string): Promise<void>;
   /** Somebody who acts by PIN at a session or display did something. */
   noteActed(by: string): void;
 }
 
 /** Lets everybody do everything. */
-export const openGuard: Guard = { callerOf: () => anybody, noteRefused: () => undefined, noteActed: () => undefined };
+export const openGuard: Guard = { callerOf: () => anybody, noteRefused: () => Promise.resolve(), noteActed: () => undefined };

@@ -5,6 +5,7 @@ import type { Account } from './access-items.ts';
 import type { Passwords } from './passwords.ts';
 import { networkOf } from './network-of.ts';
 import { hashOfSecret, newId, newSecret } from './secret.ts';
+import { Sparing } from './sparing.ts';
 import { Throttle } from './throttle.ts';
 import { TooManyTries } from './too-many-tries.ts';
 
@@ -23,7 +24,7 @@ export interface Begun {
 }
 
 const minute = 60_000;
-/** Failed sign-ins on record a minute at most, so that guessing cannot fill the disk. */
+/** Failed sign-ins on record a minute at most. */
 const mostRecorded = 10;
 
 /** Lets people in by name and password, and slows down guessing. */
@@ -33,12 +34,13 @@ export class SignIn {
   /** By account and address together: guessing from elsewhere keeps nobody out. */
   readonly #byPair: Throttle;
   readonly #byAddress: Throttle;
-  #recorded = { since: 0, count: 0 };
+  readonly #recorded: Sparing;
 
   constructor(book: AccessBook, passwords: Passwords) {
     this.#book = book;
     this.#passwords = passwords;
     this.#byPair = new Throttle({ free: 5, first: 5_000, most: 15 * minute }, book.now);
+    this.#recorded = new Sparing(mostRecorded, book.now);
     this.#byAddress = new Throttle({ free: 50, first: 5_000, most: 15 * minute }, book.now);
   }
 
@@ -92,10 +94,7 @@ export class SignIn {
 
   /** Puts a failure on record. @param how by which means and from where it was tried */
   async noteFailed(what: string, how: Readonly<Record<string, string>>): Promise<void> {
-    const at = this.#book.now();
-    if (at - this.#recorded.since >= minute) this.#recorded = { since: at, count: 0 };
-    this.#recorded.count += 1;
-    if (this.#recorded.count > mostRecorded) return;
+    if (!this.#recorded.lets()) return;
     await this.#book.write([], [changeOf('sign-in-failed', 'unknown', what, null, how)]);
   }
 }

@@ -2,6 +2,7 @@ import { Readable } from 'node:stream';
 import * as v from 'valibot';
 import { changeKinds, type RecordedChange } from '../../core/access/change.ts';
 import type { AccessFile, ChangeQuery } from '../access/access-file.ts';
+import { changesAnswer, headAnswer } from './answers/record-answers.ts';
 import { changeCells, csvLine } from './change-csv.ts';
 import { route, type AnyRoute } from './route.ts';
 
@@ -22,18 +23,18 @@ const page = 1_000;
 export function changeRoutes(file: AccessFile): readonly AnyRoute[] {
   return [
     route({
-      method: 'GET', path: '/api/changes', summary: 'The record of changes, newest first', needs: reads, query: changesQuery,
+      method: 'GET', path: '/api/changes', summary: 'The record of changes, newest first', needs: reads, query: changesQuery, answer: changesAnswer,
       handle: ({ query }) => file.changes(known(query)),
     }),
     route({
-      method: 'GET', path: '/api/changes/head', summary: 'Number and hash of the newest record; note them where nobody can alter them here', needs: reads,
+      method: 'GET', path: '/api/changes/head', summary: 'Number and hash of the newest record; note them where nobody can alter them here', needs: reads, answer: headAnswer,
       handle: async () => {
         const [newest] = await file.changes({ from: 0, to: Number.MAX_SAFE_INTEGER, limit: 1 });
         return { id: newest?.id ?? 0, hash: newest?.hash ?? '0'.repeat(64) };
       },
     }),
     route({
-      method: 'GET', path: '/api/changes/export', summary: 'The record of changes as a file, newest first', needs: reads, query: exportQuery, answer: 'application/x-ndjson',
+      method: 'GET', path: '/api/changes/export', summary: 'The record of changes as a file, newest first', needs: reads, query: exportQuery, answer: { media: ['application/x-ndjson', 'text/csv'] },
       handle: ({ query: { form, ...rest }, reply }) =>
         reply
           .type(form === 'csv' ? 'text/csv; charset=utf-8' : 'application/x-ndjson')

@@ -1,6 +1,6 @@
 import { toJsonSchema, type JsonSchema } from '@valibot/to-json-schema';
 import type { GenericSchema } from 'valibot';
-import { route, type AnyRoute, type Need } from './route.ts';
+import { route, type AnyRoute, type Answer, type Need } from './route.ts';
 
 /** A JSON object of the description. */
 type Part = Record<string, unknown>;
@@ -11,7 +11,7 @@ const refusal = (description: string): Part => ({ description, content: { 'appli
 export function openApiRoute(routes: readonly AnyRoute[]): AnyRoute {
   let text: string | undefined;
   const described: AnyRoute = route({
-    method: 'GET', path: '/api/openapi.json', summary: 'This description', needs: { action: 'see', at: 'somewhere' }, answer: 'application/json',
+    method: 'GET', path: '/api/openapi.json', summary: 'This description', needs: { action: 'see', at: 'somewhere' }, answer: { media: ['application/json'] },
     handle: ({ reply }) => reply.type('application/json').send((text ??= JSON.stringify(openApi([...routes, described])))),
   });
   return described;
@@ -51,7 +51,7 @@ function operation(one: AnyRoute): Part {
     parameters: [...parameters(params, 'path'), ...parameters(query, 'query')],
     ...(body === undefined ? {} : { requestBody: { required: true, content: { 'application/json': { schema: schemaOf(body) } } } }),
     responses: {
-      '200': { description: 'Done.', content: typeof answer === 'string' ? { [answer]: {} } : { 'application/json': answer === undefined ? {} : { schema: schemaOf(answer, 'output') } } },
+      ...answered(answer),
       ...(params === undefined && query === undefined && body === undefined ? {} : { '400': refusal('The request does not fit; `field` says where.') }),
       ...(open ? {} : { '401': refusal('Nobody known asks.'), '403': refusal('Who asks may not do this; that is on record.') }),
       ...(params === undefined ? {} : { '404': refusal('There is no such thing.') }),
@@ -59,6 +59,13 @@ function operation(one: AnyRoute): Part {
       '429': refusal('Too many tries or requests; Retry-After says when to try again.'),
     },
   };
+}
+
+function answered(answer: Answer): Part {
+  if (answer === 'nothing') return { '204': { description: 'Done.' } };
+  if (answer === 'elsewhere') return { '302': { description: 'Location says where it goes on.' } };
+  if ('media' in answer) return { '200': { description: 'As asked.', content: Object.fromEntries(answer.media.map((type) => [type, {}])) } };
+  return { '200': { description: 'As asked.', content: { 'application/json': { schema: schemaOf(answer, 'output') } } } };
 }
 
 const needed = ({ action, at }: Need<never>): Part => ({ action, at: typeof at === 'string' ? at : 'the line it concerns' });

@@ -4,6 +4,7 @@ import { plantJsonSchema } from '../../core/plant/plant-json-schema.ts';
 import type { PutFault } from '../plant-desk.ts';
 import { plantText, type PlantFileText } from '../plant-file.ts';
 import { actingName } from './acting-name.ts';
+import { checkAnswer, plantFileAnswer, versionAnswer } from './answers/plant-file-answers.ts';
 import { Conflict } from './refusals.ts';
 import { BadRequest } from './request-schemas.ts';
 import { route, type AnyRoute } from './route.ts';
@@ -33,23 +34,23 @@ export function plantFileRoutes(host: PlantFileHost): readonly AnyRoute[] {
   const example = readFileSync(new URL('../cli/example-plant.yaml', import.meta.url), 'utf8');
   return [
     route({
-      method: 'GET', path: '/api/plant/schema', summary: 'JSON Schema of the plant file', needs: 'nobody', answer: 'application/schema+json',
+      method: 'GET', path: '/api/plant/schema', summary: 'JSON Schema of the plant file', needs: 'nobody', answer: { media: ['application/schema+json'] },
       handle: ({ reply }) => reply.type('application/schema+json').send(schema),
     }),
     route({
-      method: 'GET', path: '/api/plant/example', summary: 'A plant file to begin with', needs: 'nobody', answer: 'application/yaml',
+      method: 'GET', path: '/api/plant/example', summary: 'A plant file to begin with', needs: 'nobody', answer: { media: ['application/yaml'] },
       handle: ({ reply }) => reply.type('application/yaml').send(example),
     }),
-    route({ method: 'GET', path: '/api/plant', summary: 'The plant file in force', needs: { action: 'see', at: 'plant' }, handle: () => host.inForce() }),
+    route({ method: 'GET', path: '/api/plant', summary: 'The plant file in force', needs: { action: 'see', at: 'plant' }, answer: plantFileAnswer, handle: () => host.inForce() }),
     route({
-      method: 'POST', path: '/api/plant/check', summary: 'Says everything that is wrong with a plant file', needs: { action: 'see', at: 'plant' }, body: checkRequest, bodyBytes: mostBytes,
+      method: 'POST', path: '/api/plant/check', summary: 'Says everything that is wrong with a plant file', needs: { action: 'see', at: 'plant' }, body: checkRequest, bodyBytes: mostBytes, answer: checkAnswer,
       handle: ({ body }) => {
         const read = plantText(body.text);
         return read.ok ? { faults: [], version: read.value.version } : { faults: read.fault };
       },
     }),
     route({
-      method: 'PUT', path: '/api/plant', summary: 'Puts a plant file in force', needs: { action: 'load-plant', at: 'plant' }, body: putRequest, bodyBytes: mostBytes,
+      method: 'PUT', path: '/api/plant', summary: 'Puts a plant file in force', needs: { action: 'load-plant', at: 'plant' }, body: putRequest, bodyBytes: mostBytes, answer: versionAnswer,
       handle: async ({ body: { text, was, why, by }, caller }) => {
         const who = actingName(caller, by);
         const read = plantText(text);

@@ -1,3 +1,4 @@
+import * as v from 'valibot';
 import { mayDo } from '../../core/access/may-do.ts';
 import type { Alarm } from '../../core/alarm/alarm.ts';
 import type { Act, ActFault } from '../../core/monitor/act.ts';
@@ -14,6 +15,8 @@ import type { Monitor } from '../../core/monitor/monitor.ts';
 import { seesLine, type Caller } from '../access/caller.ts';
 import type { HappeningFound, Page, Store } from '../store/store.ts';
 import { actingName } from './acting-name.ts';
+import { guaranteesAnswer, historyAnswer, pictureAnswer, runPathsAnswer, stripAnswer, togetherAnswer } from './answers/guarantee-answers.ts';
+import { alarmsAnswer, eventsAnswer } from './answers/happening-answers.ts';
 import { Conflict, NotFound } from './refusals.ts';
 import { acknowledgeRequest, alarmParams, alarmsQuery, eventsQuery, guaranteeParams, historyQuery, restartRequest, togetherQuery } from './request-schemas.ts';
 import { route, type AnyRoute } from './route.ts';
@@ -41,19 +44,19 @@ export function plantRoutes(host: ApiHost): readonly AnyRoute[] {
 
   return [
     route({
-      method: 'GET', path: '/api/guarantees', summary: 'Every guarantee as it stands now', needs: { action: 'see', at: 'somewhere' },
+      method: 'GET', path: '/api/guarantees', summary: 'Every guarantee as it stands now', needs: { action: 'see', at: 'somewhere' }, answer: guaranteesAnswer,
       handle: ({ caller }) =>
         host.monitor().watches
           .filter(({ guarantee }) => seesLine(caller, guarantee.line))
           .map((watch) => ({ card: cardOf(watch.guarantee, host.monitor().plant), view: viewOf(watch) })),
     }),
     route({
-      method: 'GET', path: '/api/guarantees/together', summary: 'Which guarantees are demonstrated, said of all together', needs: { action: 'see', at: 'somewhere' }, query: togetherQuery,
+      method: 'GET', path: '/api/guarantees/together', summary: 'Which guarantees are demonstrated, said of all together', needs: { action: 'see', at: 'somewhere' }, query: togetherQuery, answer: togetherAnswer,
       handle: ({ query: { tail }, caller }): Together => togetherOf(host.monitor().watches.filter(({ guarantee }) => seesLine(caller, guarantee.line)), tail as Tail),
     }),
     route({
       method: 'GET', path: '/api/guarantees/:id/history', summary: 'Bound, estimate and events of a guarantee over a time', needs: { action: 'see', at: lineOf },
-      params: guaranteeParams, query: historyQuery,
+      params: guaranteeParams, query: historyQuery, answer: historyAnswer,
       handle: async ({ params, query: { from, to, points } }): Promise<History> => {
         const { guarantee } = watchOf(params);
         const [steps, found] = await Promise.all([
@@ -65,20 +68,20 @@ export function plantRoutes(host: ApiHost): readonly AnyRoute[] {
       },
     }),
     route({
-      method: 'GET', path: '/api/guarantees/:id/strip', summary: "The window's units with its nonconforming ones", needs: { action: 'see', at: lineOf }, params: guaranteeParams,
+      method: 'GET', path: '/api/guarantees/:id/strip', summary: "The window's units with its nonconforming ones", needs: { action: 'see', at: lineOf }, params: guaranteeParams, answer: stripAnswer,
       handle: ({ params }): Strip => stripOf(watchOf(params)),
     }),
     route({
-      method: 'GET', path: '/api/guarantees/:id/picture', summary: "The picture that suits the guarantee's quantity", needs: { action: 'see', at: lineOf }, params: guaranteeParams,
+      method: 'GET', path: '/api/guarantees/:id/picture', summary: "The picture that suits the guarantee's quantity", needs: { action: 'see', at: lineOf }, params: guaranteeParams, answer: pictureAnswer,
       handle: ({ params }): Picture => watchOf(params).evidence.picture?.() ?? { kind: 'none' },
     }),
     route({
-      method: 'GET', path: '/api/guarantees/:id/run', summary: "Where the run's evidence and the change detector's gauge stood", needs: { action: 'see', at: lineOf }, params: guaranteeParams,
+      method: 'GET', path: '/api/guarantees/:id/run', summary: "Where the run's evidence and the change detector's gauge stood", needs: { action: 'see', at: lineOf }, params: guaranteeParams, answer: runPathsAnswer,
       handle: ({ params }): RunPaths => runPathsOf(watchOf(params)),
     }),
     route({
       method: 'POST', path: '/api/guarantees/:id/restart', summary: "Begins a guarantee's evidence anew", needs: { action: 'restart-evidence', at: lineOf },
-      params: guaranteeParams, body: restartRequest,
+      params: guaranteeParams, body: restartRequest, answer: v.strictObject({ restarted: v.string() }),
       handle: async ({ params, body: { by, reason }, caller }) => {
         const { guarantee } = watchOf(params);
         await host.act({ kind: 'restart', guarantee: guarantee.id, by: actingName(caller, by), reason });
@@ -86,16 +89,16 @@ export function plantRoutes(host: ApiHost): readonly AnyRoute[] {
       },
     }),
     route({
-      method: 'GET', path: '/api/alarms', summary: 'Ended alarms, newest first', needs: { action: 'see', at: 'somewhere' }, query: alarmsQuery,
+      method: 'GET', path: '/api/alarms', summary: 'Ended alarms, newest first', needs: { action: 'see', at: 'somewhere' }, query: alarmsQuery, answer: alarmsAnswer,
       handle: async ({ query, caller }): Promise<readonly Alarm[]> => (await host.store.endedAlarms(pageOf(query))).filter((alarm) => seesAlarm(caller, alarm, lineOfGuarantee)),
     }),
     route({
-      method: 'GET', path: '/api/alarms/standing', summary: 'Alarms that have not ended', needs: { action: 'see', at: 'somewhere' },
+      method: 'GET', path: '/api/alarms/standing', summary: 'Alarms that have not ended', needs: { action: 'see', at: 'somewhere' }, answer: alarmsAnswer,
       handle: ({ caller }) => host.monitor().desk.standing().filter((alarm) => seesAlarm(caller, alarm, lineOfGuarantee)),
     }),
     route({
       method: 'POST', path: '/api/alarms/:id/acknowledge', summary: 'Acknowledges a standing alarm',
-      needs: { action: 'acknowledge', at: ({ id }: { readonly id: number }) => lineOfGuarantee(standing(host, id).guarantee) }, params: alarmParams, body: acknowledgeRequest,
+      needs: { action: 'acknowledge', at: ({ id }: { readonly id: number }) => lineOfGuarantee(standing(host, id).guarantee) }, params: alarmParams, body: acknowledgeRequest, answer: v.strictObject({ acknowledged: v.number() }),
       handle: async ({ params: { id }, body: { by, note }, caller }) => {
         const fault = await host.act({ kind: 'acknowledge', alarm: id, by: actingName(caller, by), note });
         if (fault === 'no-such-alarm') throw new NotFound(`there is no standing alarm ${id}`);
@@ -104,7 +107,7 @@ export function plantRoutes(host: ApiHost): readonly AnyRoute[] {
       },
     }),
     route({
-      method: 'GET', path: '/api/events', summary: 'What was decided, newest first', needs: { action: 'see', at: 'somewhere' }, query: eventsQuery,
+      method: 'GET', path: '/api/events', summary: 'What was decided, newest first', needs: { action: 'see', at: 'somewhere' }, query: eventsQuery, answer: eventsAnswer,
       handle: async ({ query: { guarantee, kind, before, ...rest }, caller }): Promise<readonly HappeningFound[]> => {
         const found = await host.store.happenings({ ...rest, ...(guarantee === undefined ? {} : { guarantee }), ...(kind === undefined ? {} : { kind }), ...(before === undefined ? {} : { before }) });
         return found.filter(({ happening }) => seesHappening(caller, happening, lineOfGuarantee));

@@ -16,6 +16,12 @@ export interface Need<P = unknown> {
   readonly at: 'plant' | 'somewhere' | ((params: P) => string | undefined);
 }
 
+/**
+ * What is answered where all went well: JSON of a form (200), text of one of some media types (200), nothing (204), or the
+ * way to somewhere else (302).
+ */
+export type Answer = Schema | { readonly media: readonly `${string}/${string}`[] } | 'nothing' | 'elsewhere';
+
 /** What a route is asked, checked against its schemas. */
 export interface Asked<P extends Schema | undefined, Q extends Schema | undefined, B extends Schema | undefined> {
   readonly params: Read<P>;
@@ -41,8 +47,7 @@ export interface Route<P extends Schema | undefined = undefined, Q extends Schem
   readonly body?: B;
   /** Largest body, bytes; 65,536 when absent. */
   readonly bodyBytes?: number;
-  /** The form of the answer; a media type where it is not JSON. */
-  readonly answer?: Schema | `${string}/${string}`;
+  readonly answer: Answer;
   readonly handle: (asked: Asked<P, Q, B>) => unknown;
 }
 

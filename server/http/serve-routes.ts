@@ -16,10 +16,10 @@ export function serveRoutes(http: FastifyInstance, routes: readonly AnyRoute[], 
   }
 }
 
-function answered(one: AnyRoute, request: FastifyRequest, reply: FastifyReply, guard: Guard): unknown {
+async function answered(one: AnyRoute, request: FastifyRequest, reply: FastifyReply, guard: Guard): Promise<unknown> {
   const caller = guard.callerOf({ headers: request.headers, address: request.ip });
   const params = one.params && checked(one.params, request.params);
-  const asker = one.needs === 'nobody' ? caller : letIn(caller, one, params, request, guard);
+  const asker = one.needs === 'nobody' ? caller : await letIn(caller, one, params, request, guard);
   const query = one.query && checked(one.query, request.query);
   const body = one.body && checked(one.body, request.body);
   const asked = { params, query, body, caller: asker, request, reply };
@@ -27,7 +27,7 @@ function answered(one: AnyRoute, request: FastifyRequest, reply: FastifyReply, g
 }
 
 /** @throws NotSignedIn, NotAllowed (and that is on record) */
-function letIn(caller: Caller | undefined, { method, path, needs }: AnyRoute, params: unknown, request: FastifyRequest, guard: Guard): Caller {
+async function letIn(caller: Caller | undefined, { method, path, needs }: AnyRoute, params: unknown, request: FastifyRequest, guard: Guard): Promise<Caller> {
   if (caller === undefined) throw new NotSignedIn();
   const { action, at } = needs as Need;
   const doer = whoDoes(caller, action);
@@ -39,6 +39,6 @@ function letIn(caller: Caller | undefined, { method, path, needs }: AnyRoute, pa
     if (doer !== caller && caller.by !== undefined) guard.noteActed(caller.by);
     return doer;
   }
-  guard.noteRefused(doer, action, `${method} ${path}`);
+  await guard.noteRefused(doer, action, `${method} ${path}`);
   throw new NotAllowed(`Your roles do not allow this (${action}).`);
 }

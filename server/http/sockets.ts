@@ -19,6 +19,8 @@ export interface SocketHost {
   /** Largest message of a source, bytes. */
   readonly frameBytes: number;
   readonly senderOf: (token: string) => Promise<Sender | undefined>;
+  /** Puts on record that somebody came with a token nobody has. */
+  readonly tokenUnknown: (what: string, address: string) => Promise<void>;
   readonly onSource: (socket: WebSocket, sender: Sender) => void;
   readonly onDashboard: (socket: WebSocket, caller: Caller) => void;
   readonly guard: Guard;
@@ -70,7 +72,10 @@ export function serveSockets(server: Server, host: SocketHost): () => void {
     const token = bearerToken(request.headers);
     if (token === undefined) return refuse(socket, 401, 'token-missing');
     const sender = await host.senderOf(token);
-    if (sender === undefined) return refuse(socket, 401, 'token-unknown');
+    if (sender === undefined) {
+      await host.tokenUnknown('/source', host.hops.addressOf(request));
+      return refuse(socket, 401, 'token-unknown');
+    }
     sources.handleUpgrade(request, socket, head, (opened) => {
       opened.on('error', host.onError);
       host.onSource(opened, sender);
@@ -84,8 +89,8 @@ export function serveSockets(server: Server, host: SocketHost): () => void {
     const caller = host.guard.callerOf({ headers: request.headers, address: host.hops.addressOf(request) });
     if (caller === undefined) return refuse(socket, 401, 'not-signed-in');
     if (!mayDoSomewhere(caller, 'see')) {
-      host.guard.noteRefused(caller, 'see', '/live');
-      return refuse(socket, 403, 'not-allowed');
+      void host.guard.noteRefused(caller, 'see', '/live').then(() => refuse(socket, 403, 'not-allowed'));
+      return;
     }
     if (dashboards.clients.size >= host.mostDashboards) return refuse(socket, 503, 'too-many-dashboards');
     dashboards.handleUpgrade(request, socket, head, (opened) => {

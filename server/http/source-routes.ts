@@ -2,6 +2,7 @@ import * as v from 'valibot';
 import type { Source, SourceRegister } from '../store/source-register.ts';
 import { StoreError } from '../store/store-error.ts';
 import { actingName } from './acting-name.ts';
+import { sourceAnswer, sourcesAnswer, sourceTokenAnswer } from './answers/source-answers.ts';
 import { Conflict, NotFound } from './refusals.ts';
 import { BadRequest } from './request-schemas.ts';
 import { route, type AnyRoute } from './route.ts';
@@ -27,16 +28,16 @@ const manages = { action: 'manage-sources', at: 'plant' } as const;
 export function sourceRoutes(host: SourceRouteHost): readonly AnyRoute[] {
   const { sources } = host;
   return [
-    route({ method: 'GET', path: '/api/sources', summary: 'All sources', needs: manages, handle: async () => (await sources.list()).map((source) => shown(source, host.isConnected(source))) }),
+    route({ method: 'GET', path: '/api/sources', summary: 'All sources', needs: manages, answer: sourcesAnswer, handle: async () => (await sources.list()).map((source) => shown(source, host.isConnected(source))) }),
     route({
-      method: 'POST', path: '/api/sources', summary: 'Makes a source; its token is shown this once', needs: manages, body: makeRequest,
+      method: 'POST', path: '/api/sources', summary: 'Makes a source; its token is shown this once', needs: manages, body: makeRequest, answer: sourceTokenAnswer,
       handle: async ({ body: { name, stations, products, why, by }, caller }) => {
         const { source, token } = await told(sources.add({ name, stations, products, at: Date.now(), doer: { who: actingName(caller, by), why } }));
         return { source: shown(source, false), token };
       },
     }),
     route({
-      method: 'POST', path: '/api/sources/:name/renew', summary: 'A new token for a source; the old one may hold for a while beside it', needs: manages, params: nameParams, body: renewRequest,
+      method: 'POST', path: '/api/sources/:name/renew', summary: 'A new token for a source; the old one may hold for a while beside it', needs: manages, params: nameParams, body: renewRequest, answer: sourceTokenAnswer,
       handle: async ({ params: { name }, body: { overlapHours, why, by }, caller }) => {
         const oldUntil = overlapHours === 0 ? undefined : Date.now() + Math.round(overlapHours * 3_600_000);
         const { source, token } = await told(sources.rotate({ name, oldUntil, doer: { who: actingName(caller, by), why } }));
@@ -45,7 +46,7 @@ export function sourceRoutes(host: SourceRouteHost): readonly AnyRoute[] {
       },
     }),
     route({
-      method: 'POST', path: '/api/sources/:name/withdraw', summary: 'Refuses a source from now on, and ends its connection', needs: manages, params: nameParams, body: withdrawRequest,
+      method: 'POST', path: '/api/sources/:name/withdraw', summary: 'Refuses a source from now on, and ends its connection', needs: manages, params: nameParams, body: withdrawRequest, answer: sourceAnswer,
       handle: async ({ params: { name }, body: { why, by }, caller }) => {
         const source = await told(sources.revoke(name, Date.now(), { who: actingName(caller, by), why }));
         await host.endWithdrawn();
@@ -55,8 +56,8 @@ export function sourceRoutes(host: SourceRouteHost): readonly AnyRoute[] {
   ];
 }
 
-const shown = ({ id, name, stations, products, created, lastUsed, revoked, oldUntil }: Source, connected: boolean): object => ({
-  id, name, stations, products, made: created, lastUsed: lastUsed ?? null, revoked: revoked ?? null, oldTokenUntil: oldUntil ?? null, connected,
+const shown = ({ id, name, stations, products, created, lastUsed, revoked, oldUntil }: Source, connected: boolean): v.InferOutput<typeof sourceAnswer> => ({
+  id, name, stations: [...stations], products: [...products], made: created, lastUsed: lastUsed ?? null, revoked: revoked ?? null, oldTokenUntil: oldUntil ?? null, connected,
 });
 
 /** The register's refusals, as a request hears them. */

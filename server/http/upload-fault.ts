@@ -5,19 +5,23 @@ export class UploadFault extends Error {
   readonly status: number;
   readonly code: string;
   readonly details: Readonly<Record<string, string | number>>;
+  /** Of the row that was not taken, where it was that. */
+  readonly refusal: Refusal | undefined;
 
-  constructor(status: number, code: string, message: string, details: Readonly<Record<string, string | number>> = {}) {
+  constructor(status: number, code: string, message: string, details: Readonly<Record<string, string | number>> = {}, refusal?: Refusal) {
     super(message);
     this.status = status;
     this.code = code;
     this.details = details;
+    this.refusal = refusal;
   }
 }
 
 /** The fault that a refused row is. */
-export function faultOfRow({ code, sentence, field, value, expected, line }: Refusal): UploadFault {
+export function faultOfRow(refusal: Refusal): UploadFault {
+  const { code, sentence, field, value, expected, line } = refusal;
   const status = code === 'station-not-allowed' || code === 'product-not-allowed' ? 403 : code === 'frame-too-large' ? 413 : 400;
-  return new UploadFault(status, code, sentence, { line: line ?? 1, ...(field === '' ? {} : { field }), value, expected });
+  return new UploadFault(status, code, sentence, { line: line ?? 1, ...(field === '' ? {} : { field }), value, expected }, refusal);
 }
 
 export const faults = {

@@ -1,6 +1,7 @@
 import type { FastifyInstance, FastifyReply, FastifyRequest } from 'fastify';
 import type { IncomingMessage } from 'node:http';
 import { bearerToken } from '../ingest/bearer-token.ts';
+import type { Refusal } from '../../core/record/refusal.ts';
 import type { Sender } from '../pipeline/arrival.ts';
 import type { RowForm } from '../rows/row-form.ts';
 import { idempotencyKeyOf, longestKey } from './idempotency-key.ts';
@@ -13,7 +14,9 @@ export interface UploadRouteHost extends UploadHost {
   readonly senderOf: (token: string) => Promise<Sender | undefined>;
   /** Why no records are taken now. */
   readonly closedBecause: () => string | undefined;
-  readonly rowRefused: (sender: Sender) => void;
+  /** Puts on record that somebody came with a token nobody has. */
+  readonly tokenUnknown: (what: string, address: string) => Promise<void>;
+  readonly rowRefused: (sender: Sender, refusal: Refusal | undefined) => void;
 }
 
 const forms: Readonly<Record<string, RowForm>> = { 'application/x-ndjson': 'ndjson', 'text/csv': 'csv' };
@@ -41,7 +44,10 @@ async function answered(request: FastifyRequest, reply: FastifyReply, host: Uplo
   const token = bearerToken(request.headers);
   if (token === undefined) throw new UploadFault(401, 'token-missing', 'No token was sent; expected Authorization: Bearer …');
   const sender = await host.senderOf(token);
-  if (sender === undefined) throw new UploadFault(401, 'token-unknown', 'The token is not known, or was withdrawn.');
+  if (sender === undefined) {
+    await host.tokenUnknown('POST /source/records', request.ip);
+    throw new UploadFault(401, 'token-unknown', 'The token is not known, or was withdrawn.');
+  }
   const turn = host.desk.turnOf(sender);
   const run = new UploadRun(host, turn, keyOf(request));
   try {
@@ -49,7 +55,7 @@ async function answered(request: FastifyRequest, reply: FastifyReply, host: Uplo
     return await reply.send(run.sums);
   } catch (cause) {
     if (!(cause instanceof UploadFault)) throw cause;
-    if ('line' in cause.details && cause.status !== 409) host.rowRefused(sender);
+    if ('line' in cause.details && cause.status !== 409) host.rowRefused(sender, cause.refusal);
     return await sendFault(reply, cause, run.sums);
   } finally {
     turn.end();

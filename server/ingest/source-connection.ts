@@ -21,7 +21,7 @@ export interface SourceHost {
   readonly nextOf: (source: string) => number;
   readonly now: () => number;
   readonly frameRead: (records: number) => void;
-  readonly frameRefused: () => void;
+  readonly frameRefused: (refusal: Refusal) => void;
 }
 
 /** Answers a source may leave untaken, bytes: beyond that it is not read until it takes them. */
@@ -120,7 +120,7 @@ export class SourceConnection {
   }
 
   #refuse(refusal: Refusal): void {
-    this.#host.frameRefused();
+    this.#host.frameRefused(refusal);
     this.#answer(refusedMessage(refusal, this.#host.nextOf(this.sender.name)));
     if (endsConnection(refusal.code)) this.#close(refusal.code);
   }

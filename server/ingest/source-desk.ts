@@ -1,6 +1,7 @@
 import type { WebSocket } from 'ws';
 import type { SourceLimits } from '../../core/protocol/limits.ts';
 import type { RefusalCode } from '../../core/protocol/refusals.ts';
+import type { Refusal } from '../../core/record/refusal.ts';
 import type { Sender } from '../pipeline/arrival.ts';
 import type { PlantServer } from '../pipeline/plant-server.ts';
 import { hashOfToken } from '../store/source-token.ts';
@@ -14,7 +15,7 @@ export interface SourceDeskSetting {
   readonly limits: SourceLimits;
   /** For the operators' measures. */
   readonly frameRead: (records: number) => void;
-  readonly frameRefused: () => void;
+  readonly frameRefused: (sender: Sender, refusal: Refusal | undefined) => void;
 }
 
 /** All sources connected now; one connection a source. */
@@ -54,7 +55,7 @@ export class SourceDesk {
       nextOf: (source) => plant.monitor.sources.nextOf(source),
       now: () => plant.now,
       frameRead,
-      frameRefused: () => this.noteRefused(sender),
+      frameRefused: (refusal) => this.noteRefused(sender, refusal),
     });
     this.#connections.set(sender.id, { connection, sender });
     const leave = plant.flow.add(connection.reading);
@@ -74,8 +75,8 @@ export class SourceDesk {
   }
 
   /** A frame or upload of this source was refused: counted as bad data with the next report. */
-  noteRefused(sender: Sender): void {
-    this.#setting.frameRefused();
+  noteRefused(sender: Sender, refusal: Refusal | undefined): void {
+    this.#setting.frameRefused(sender, refusal);
     const known = this.#refused.get(sender.id);
     if (known) known.frames += 1;
     else this.#refused.set(sender.id, { sender, frames: 1 });

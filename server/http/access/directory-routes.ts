@@ -21,7 +21,7 @@ const sentBack = (fault: DirectoryFault): string => `/sign-in?fault=${fault}`;
 export function directoryRoutes(host: AccessHost, directory: Directory): readonly AnyRoute[] {
   return [
     route({
-      method: 'GET', path: '/api/sign-in/directory', summary: 'Sends the browser to the directory; who is signed in links their account', needs: 'nobody', answer: 'text/html',
+      method: 'GET', path: '/api/sign-in/directory', summary: 'Sends the browser to the directory; who is signed in links their account', needs: 'nobody', answer: 'elsewhere',
       handle: async ({ caller, request, reply }) => {
         const asker = caller as Caller | undefined;
         const begun = await directory.begin(`${placeOf(request).origin}${back}`, asker?.kind === 'account' ? asker.account : undefined).catch((cause: unknown) => {
@@ -33,7 +33,7 @@ export function directoryRoutes(host: AccessHost, directory: Directory): readonl
       },
     }),
     route({
-      method: 'GET', path: back, summary: 'Where the directory sends the browser back to', needs: 'nobody', answer: 'text/html',
+      method: 'GET', path: back, summary: 'Where the directory sends the browser back to', needs: 'nobody', answer: 'elsewhere',
       handle: async ({ request, reply }) => {
         reply.header('set-cookie', cookie('', isSecure(request), 0));
         let account: string;

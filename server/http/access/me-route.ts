@@ -2,6 +2,7 @@ import { actions, type Action } from '../../../core/access/action.ts';
 import { mayDo } from '../../../core/access/may-do.ts';
 import { whoDoes, type Caller } from '../../access/caller.ts';
 import { route, type AnyRoute } from '../route.ts';
+import { meAnswer } from './access-answers.ts';
 
 /** What may be done where: at the plant as a whole, and on which lines. */
 type May = Readonly<Record<Action, { readonly plant: boolean; readonly lines: 'all' | readonly string[] }>>;
@@ -22,7 +23,7 @@ export interface MeHost {
 /** GET /api/me: who asks, and what they may; open to all, so that a page knows whether to ask for a name. */
 export function meRoute(host: MeHost): AnyRoute {
   return route({
-    method: 'GET', path: '/api/me', summary: 'Who asks, and what they may do', needs: 'nobody',
+    method: 'GET', path: '/api/me', summary: 'Who asks, and what they may do', needs: 'nobody', answer: meAnswer,
     handle: ({ caller }) => ({
       access: host.access,
       firstAccount: host.access === 'accounts' && !host.hasAccounts(),

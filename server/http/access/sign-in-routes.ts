@@ -3,6 +3,7 @@ import { hashOfSecret } from '../../access/secret.ts';
 import { sessionCookie } from '../../access/session-cookie.ts';
 import { NotSignedIn } from '../refusals.ts';
 import { route, type AnyRoute } from '../route.ts';
+import { invitationLookAnswer, signedInAnswer, signInAnswer } from './access-answers.ts';
 import { cookieOf, isSecure, nameOf, originOf, type AccessHost } from './access-host.ts';
 import { acceptRequest, codeRequest, displaySignInRequest, signInRequest } from './access-schemas.ts';
 
@@ -14,7 +15,7 @@ export function signInRoutes(host: AccessHost): readonly AnyRoute[] {
   const { signIn, invitations, sessionSeconds } = host;
   return [
     route({
-      method: 'POST', path: '/api/sign-in', summary: 'Signs in by name and password', needs: 'nobody', body: signInRequest,
+      method: 'POST', path: '/api/sign-in', summary: 'Signs in by name and password', needs: 'nobody', body: signInRequest, answer: signInAnswer,
       handle: async ({ body: { name, password }, request, reply }) => {
         const account = await signIn.check(name, password, originOf(request));
         const ticket = host.passkeys.ticketFor(account);
@@ -24,7 +25,7 @@ export function signInRoutes(host: AccessHost): readonly AnyRoute[] {
       },
     }),
     route({
-      method: 'POST', path: '/api/sign-out', summary: 'Ends this session', needs: 'nobody',
+      method: 'POST', path: '/api/sign-out', summary: 'Ends this session', needs: 'nobody', answer: 'nothing',
       handle: async ({ caller, request, reply }) => {
         const { account, by } = (caller as Caller | undefined) ?? {};
         if (account !== undefined && by !== undefined) await signIn.end(account, nameOf(caller), '', (id) => id === by);
@@ -32,14 +33,14 @@ export function signInRoutes(host: AccessHost): readonly AnyRoute[] {
       },
     }),
     route({
-      method: 'POST', path: '/api/invitations/look', summary: 'What an invitation is for', needs: 'nobody', body: codeRequest,
+      method: 'POST', path: '/api/invitations/look', summary: 'What an invitation is for', needs: 'nobody', body: codeRequest, answer: invitationLookAnswer,
       handle: ({ body: { code } }) => {
         const [, { kind, grants, account, shownAs, expires }] = invitations.look(code);
         return { kind, grants, account: account === null ? null : (host.book.accounts.get(account)?.name ?? null), shownAs, expires };
       },
     }),
     route({
-      method: 'POST', path: '/api/invitations/accept', summary: 'Makes an account or a new password by an invitation', needs: 'nobody', body: acceptRequest,
+      method: 'POST', path: '/api/invitations/accept', summary: 'Makes an account or a new password by an invitation', needs: 'nobody', body: acceptRequest, answer: signedInAnswer,
       handle: async ({ body: { code, ...person }, request, reply }) => {
         const account = await invitations.accept(code, person);
         const begun = await signIn.begin(account, originOf(request), 'invitation');
@@ -47,7 +48,7 @@ export function signInRoutes(host: AccessHost): readonly AnyRoute[] {
       },
     }),
     route({
-      method: 'POST', path: '/api/display/sign-in', summary: 'Signs in a screen by its token', needs: 'nobody', body: displaySignInRequest,
+      method: 'POST', path: '/api/display/sign-in', summary: 'Signs in a screen by its token', needs: 'nobody', body: displaySignInRequest, answer: signedInAnswer,
       handle: ({ body: { token }, request, reply }) => {
         const hash = hashOfSecret(token);
         const found = host.book.displays.find((display) => display.hash === hash);

@@ -4,6 +4,7 @@ import type { AccessBook } from '../../access/access-book.ts';
 import { grantsOf } from '../../access/access-items.ts';
 import { NotAllowed } from '../refusals.ts';
 import { route, type AnyRoute } from '../route.ts';
+import { actingAnswer, terminalPeopleAnswer } from './access-answers.ts';
 import { nameOf, type AccessHost } from './access-host.ts';
 import { actAsRequest } from './access-schemas.ts';
 
@@ -20,7 +21,7 @@ export function terminalRoutes({ book, acting }: AccessHost): readonly AnyRoute[
   };
   return [
     route({
-      method: 'GET', path: '/api/terminal/people', summary: 'Who can act here by PIN', needs: sees,
+      method: 'GET', path: '/api/terminal/people', summary: 'Who can act here by PIN', needs: sees, answer: terminalPeopleAnswer,
       handle: ({ caller }) => {
         terminal(caller);
         return book.accounts.entries()
@@ -29,14 +30,14 @@ export function terminalRoutes({ book, acting }: AccessHost): readonly AnyRoute[
       },
     }),
     route({
-      method: 'POST', path: '/api/terminal/act-as', summary: 'Acts as somebody by their PIN for two minutes', needs: sees, body: actAsRequest,
+      method: 'POST', path: '/api/terminal/act-as', summary: 'Acts as somebody by their PIN for two minutes', needs: sees, body: actAsRequest, answer: actingAnswer,
       handle: async ({ body: { account, pin }, caller }) => {
         const { name, until } = await acting.actAs(terminal(caller), nameOf(caller), account, pin);
         return { name, until };
       },
     }),
     route({
-      method: 'DELETE', path: '/api/terminal/act-as', summary: 'Ends acting by PIN', needs: sees,
+      method: 'DELETE', path: '/api/terminal/act-as', summary: 'Ends acting by PIN', needs: sees, answer: 'nothing',
       handle: ({ caller, reply }) => {
         acting.end(terminal(caller));
         return reply.status(204).send();

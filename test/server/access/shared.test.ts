@@ -14,9 +14,9 @@ let olaf: Person;
 beforeEach(async () => {
   plant = await new Plant().open();
   serveRoutes(plant.http, [
-    route({ method: 'POST', path: '/acknowledge/:line', summary: '', params: onLine, needs: { action: 'acknowledge', at: ({ line }: OnLine) => line }, handle: ({ caller }) => ({ by: actingName(caller, undefined) }) }),
-    route({ method: 'GET', path: '/boards', summary: '', needs: { action: 'see', at: 'somewhere' }, handle: () => ({}) }),
-    route({ method: 'GET', path: '/boards/:line', summary: '', params: onLine, needs: { action: 'see', at: ({ line }: OnLine) => line }, handle: () => ({}) }),
+    route({ method: 'POST', path: '/acknowledge/:line', summary: '', params: onLine, needs: { action: 'acknowledge', at: ({ line }: OnLine) => line }, answer: v.looseObject({}), handle: ({ caller }) => ({ by: actingName(caller, undefined) }) }),
+    route({ method: 'GET', path: '/boards', summary: '', needs: { action: 'see', at: 'somewhere' }, answer: v.looseObject({}), handle: () => ({}) }),
+    route({ method: 'GET', path: '/boards/:line', summary: '', params: onLine, needs: { action: 'see', at: ({ line }: OnLine) => line }, answer: v.looseObject({}), handle: () => ({}) }),
   ], plant.access.guard);
   olaf = await plant.administrator();
 });

@@ -9,9 +9,9 @@ import { serveRoutes } from '../../../server/http/serve-routes.ts';
 
 const supervisorOfA: Caller = { kind: 'account', name: 'Ines Maurer', account: 'ines', by: 's1', cookie: true, grants: [{ role: 'supervisor', line: 'A' }] };
 const routes = [
-  route({ method: 'GET', path: '/open', summary: 'open', needs: 'nobody', handle: ({ caller }) => ({ name: (caller as Caller | undefined)?.name ?? 'nobody' }) }),
-  route({ method: 'GET', path: '/boards', summary: 'boards', needs: { action: 'see', at: 'somewhere' }, handle: () => 'boards' }),
-  route({ method: 'GET', path: '/changes', summary: 'changes', needs: { action: 'read-changes', at: 'plant' }, handle: () => 'changes' }),
+  route({ method: 'GET', path: '/open', summary: 'open', needs: 'nobody', answer: v.any(), handle: ({ caller }) => ({ name: (caller as Caller | undefined)?.name ?? 'nobody' }) }),
+  route({ method: 'GET', path: '/boards', summary: 'boards', needs: { action: 'see', at: 'somewhere' }, answer: v.any(), handle: () => 'boards' }),
+  route({ method: 'GET', path: '/changes', summary: 'changes', needs: { action: 'read-changes', at: 'plant' }, answer: v.any(), handle: () => 'changes' }),
   route({
     method: 'POST', path: '/lines/:line/acknowledge', summary: 'acknowledge', params: v.object({ line: v.string() }), body: v.strictObject({ note: v.string() }),
     needs: {
@@ -21,6 +21,7 @@ const routes = [
         return line;
       },
     },
+    answer: v.string(),
     handle: ({ body }) => body.note,
   }),
 ];
@@ -32,7 +33,7 @@ beforeEach(() => {
   http = fastify();
   refused = [];
   caller = supervisorOfA;
-  const guard: Guard = { callerOf: () => caller, noteRefused: (who, action, what) => refused.push(`${who.name ?? ''} ${action} ${what}`), noteActed: () => undefined };
+  const guard: Guard = { callerOf: () => caller, noteRefused: (who, action, what) => Promise.resolve(void refused.push(`${who.name ?? ''} ${action} ${what}`)), noteActed: () => undefined };
   serveRoutes(http, routes, guard);
 });
 afterEach(() => http.close());
