@@ -1,17 +1,7 @@
 import { requireInside, requireWhole } from '../bound/out-of-domain.ts';
+import { RunTally, type SimulatedUnits } from './run-tally.ts';
 import type { Uniform } from './seeded-uniform.ts';
 import type { Watch } from './watch.ts';
-
-/** A mean with its standard error, from the runs finished so far. */
-export interface SimulatedUnits {
-  /** mean units to the alarm; NaN before the first run is finished */
-  readonly units: number;
-  /** standard error of that mean; NaN before the second run is finished */
-  readonly standardError: number;
-  readonly runs: number;
-  /** share of the wanted runs that are finished, 0 to 1 */
-  readonly done: number;
-}
 
 export interface Simulation {
   readonly watch: Watch;
@@ -40,7 +30,7 @@ const mostApart = 2000;
 export function* simulateRunLength({ watch, runs, uniform }: Simulation, rate: number): Generator<SimulatedUnits, SimulatedUnits, undefined> {
   requireInside('rate', rate);
   requireWhole('runs', runs, 1);
-  const tally = new Tally(runs);
+  const tally = new RunTally(runs);
   const conforming = gapsAt(rate, uniform);
   watch.reset();
   let units = 0;
@@ -70,7 +60,7 @@ export function* simulateDelay({ watch, runs, uniform }: Simulation, normal: num
   requireInside('normal', normal);
   requireInside('rate', rate);
   requireWhole('runs', runs, 1);
-  const tally = new Tally(runs);
+  const tally = new RunTally(runs);
   const before = gapsAt(normal, uniform);
   const after = gapsAt(rate, uniform);
   watch.reset();
@@ -106,32 +96,4 @@ export function* simulateDelay({ watch, runs, uniform }: Simulation, normal: num
 function gapsAt(rate: number, uniform: Uniform): () => number {
   const perUnit = 1 / Math.log1p(-rate);
   return () => Math.floor(Math.log(uniform()) * perUnit);
-}
-
-class Tally {
-  count = 0;
-  #mean = 0;
-  #squares = 0;
-  readonly #wanted: number;
-
-  constructor(wanted: number) {
-    this.#wanted = wanted;
-  }
-
-  add(units: number): void {
-    this.count += 1;
-    const off = units - this.#mean;
-    this.#mean += off / this.count;
-    this.#squares += off * (units - this.#mean);
-  }
-
-  figure(): SimulatedUnits {
-    const { count } = this;
-    return {
-      units: count > 0 ? this.#mean : NaN,
-      standardError: Math.sqrt(this.#squares / (count - 1) / count),
-      runs: count,
-      done: count / this.#wanted,
-    };
-  }
 }

@@ -1,16 +1,20 @@
 import { Option, type Command } from 'commander';
 import { violatedCount } from '../../core/bound/critical-count.ts';
+import { violatedNonconformities } from '../../core/bound/critical-exposure.ts';
+import { amountOf } from '../../core/figure/amount.ts';
 import { exactOfText } from '../../core/figure/exact.ts';
 import { alarmPlan, type AlarmScene } from '../plan/alarm-plan.ts';
 import type { AlarmRule } from '../plan/alarm-rule.ts';
 import { cusumRule, detectorRule, windowRule } from '../plan/alarm-rules.ts';
+import { countedExposure, countedUnits, type Counted } from '../plan/counted.ts';
+import { meanDetectorRule } from '../plan/mean-alarm-rule.ts';
 import { budgetPlan, type NamedStream } from '../plan/budget-plan.ts';
 import { Cancelled } from '../plan/long-run.ts';
 import { planned } from '../plan/planned.ts';
 import { watchRun } from '../plan/run-watch.ts';
 import { CommandFault } from './exit-codes.ts';
 import { printPlan } from './print-plan.ts';
-import { badOption, required, toldNumber, toldPart, toldTail, toldWhole } from './told-figures.ts';
+import { badOption, required, toldExposure, toldNumber, toldPart, toldRange, toldRateIn, toldTail, toldWhole } from './told-figures.ts';
 
 interface AlarmTold {
   readonly rule?: 'window' | 'cusum' | 'detector';
@@ -19,6 +23,12 @@ interface AlarmTold {
   readonly worse?: readonly string[];
   readonly perDay?: string;
   readonly units?: string;
+  readonly exposure?: string;
+  readonly side?: 'at-least' | 'at-most';
+  readonly mean?: string;
+  readonly sigma?: string;
+  readonly range?: string;
+  readonly unit?: string;
   readonly count?: string;
   readonly confidence?: string;
   readonly batch?: string;
@@ -37,16 +47,22 @@ export function addAlarmAndBudget(plan: Command): void {
     .command('alarm')
     .description('how often an alarm setting calls falsely, and how late it calls')
     .addOption(new Option('--rule <rule>', 'what calls').choices(['window', 'cusum', 'detector']))
-    .option('--line <share>', "what the rule holds the line to: its guarantee line (or normal rate), e.g. '200 ppm'")
-    .option('--normal-rate <share>', 'rate of the line when it is well [default: the line]')
-    .option('--worse <share...>', 'rate after a change; may be repeated [default: 2, 3, 5 and 10 times the line]')
-    .option('--per-day <number>', 'units a day: adds false calls a month and times')
+    .option('--line <value>', "what the rule holds the line to: its guarantee line (or normal rate), e.g. '200 ppm', '2 per 100 m', or with --side a mean")
+    .option('--normal-rate <rate>', 'rate of the line when it is well [default: the line]')
+    .option('--worse <rate...>', 'rate (or mean) after a change; may be repeated [default: 2, 3, 5 and 10 times the line; half, 1, 2 and 3 sigma beyond it]')
+    .option('--per-day <number>', 'units (exposure, measurements) a day: adds false calls a month and times')
     .option('--units <number>', 'window rule: units in the window')
-    .option('--count <number>', 'window rule: nonconforming units that call')
+    .option('--exposure <amount>', "window rule of a rate: exposure in the window, e.g. '4600 m'")
+    .option('--count <number>', 'window rule: nonconforming units (nonconformities) that call')
     .option('--confidence <level>', 'window rule: in place of --count, the level at which the window shows the line violated')
-    .option('--batch <number>', 'window rule: units between looks [default: 1]')
+    .option('--batch <number>', 'window rule: units (exposure) between looks [default: at each]')
     .option('--ratio <number>', 'cusum: size of change it is tuned to [default: 2]')
-    .option('--between <number>', 'cusum and detector: wanted units between false calls')
+    .option('--between <number>', 'cusum and detector: wanted units (exposure, measurements) between false calls')
+    .addOption(new Option('--side <side>', 'detector of a mean: what the promise says').choices(['at-least', 'at-most']))
+    .option('--mean <number>', 'detector of a mean: mean of the line when it is well [default: the line]')
+    .option('--sigma <number>', 'detector of a mean: its standard deviation')
+    .option('--range <from..to>', 'detector of a mean: the ends between which every measurement lies, in place of a known sigma')
+    .option('--unit <text>', 'of a mean: unit of measure, for the sentence')
     .option('--runs <number>', 'simulated figures: runs at most [default: 4000]')
     .option('--json', 'print JSON');
   alarm.action(() => examineAlarm(alarm.opts<AlarmTold>()));
@@ -65,8 +81,10 @@ async function examineAlarm(told: AlarmTold): Promise<void> {
   const { watch, end } = watchRun();
   try {
     const answer = await planned(flags, () => {
-      const baseline = toldPart('line', required('line', told.line, 'the rate that the rule holds the line to'));
-      return alarmPlan(ruleOf(told, baseline), sceneOf(told, baseline), watch);
+      const line = required('line', told.line, 'the rate (or mean) that the rule holds the line to');
+      if (told.side !== undefined) return alarmPlan(meanRuleOf(told, line, told.side), meanSceneOf(told, line, told.side), watch);
+      const stream = streamTold(line);
+      return alarmPlan(ruleOf(told, stream), sceneOf(told, stream), watch);
     });
     printPlan(answer, told.json === true);
   } catch (cause) {
@@ -77,39 +95,93 @@ async function examineAlarm(told: AlarmTold): Promise<void> {
   }
 }
 
-function sceneOf({ normalRate, worse, perDay }: AlarmTold, baseline: number): AlarmScene {
-  const usual = [2, 3, 5, 10].map((times) => Number((times * baseline).toPrecision(12))).filter((rate) => rate < 1);
-  const normal = normalRate === undefined ? baseline : toldPart('normal-rate', normalRate);
-  const rates = worse?.map((text) => toldPart('worse', text)) ?? usual;
-  const better = rates.findIndex((rate) => !(rate > normal));
-  if (better >= 0) throw badOption('worse', worse?.[better] ?? String(rates[better]), `a rate above the normal rate ${normal}`);
-  return { normal, worse: rates, perDay: perDay === undefined ? undefined : toldWhole('per-day', perDay, 1) };
+/** What the rule holds the line to, and how that is told and said. */
+interface StreamTold {
+  readonly counted: Counted;
+  /** guaranteed fraction, or rate per unit of exposure */
+  readonly baseline: number;
+  /** a rate in the same terms */
+  readonly rate: (flag: string, text: string) => number;
+  /** a size in the same terms: whole units, or exposure */
+  readonly size: (flag: string, text: string) => number;
 }
 
-function ruleOf(told: AlarmTold, baseline: number): AlarmRule {
-  const runs = toldWhole('runs', told.runs ?? '4000', 2, 1_000_000);
-  const between = (): number => toldNumber('between', required('between', told.between, 'the wanted units between false calls'));
-  const { rule } = told;
+function streamTold(line: string): StreamTold {
+  const amount = amountOf(line);
+  if (amount === undefined) return { counted: countedUnits, baseline: toldPart('line', line), rate: toldPart, size: (flag, text) => toldWhole(flag, text, 1, 1e9) };
+  const { value, per, unit } = amount;
+  if (!(value > 0)) throw badOption('line', line, 'an amount above 0');
+  return { counted: countedExposure(amount), baseline: value / per, rate: (flag, text) => positive(flag, text, toldRateIn(flag, unit, text)), size: (flag, text) => toldExposure(flag, unit, text) };
+}
+
+function positive(flag: string, text: string, value: number): number {
+  if (value > 0) return value;
+  throw badOption(flag, text, 'a rate above 0');
+}
+
+function sceneOf({ normalRate, worse, perDay }: AlarmTold, { counted, baseline, rate, size }: StreamTold): AlarmScene {
+  const usual = [2, 3, 5, 10].map((times) => Number((times * baseline).toPrecision(12))).filter((at) => counted.grain !== 1 || at < 1);
+  const normal = normalRate === undefined ? baseline : rate('normal-rate', normalRate);
+  const rates = worse?.map((text) => rate('worse', text)) ?? usual;
+  const better = rates.findIndex((at) => !(at > normal));
+  if (better >= 0) throw badOption('worse', worse?.[better] ?? counted.rate(rates[better] ?? 0), `a rate above the normal rate ${counted.rate(normal)}`);
+  return { normal, worse: rates, perDay: perDay === undefined ? undefined : size('per-day', perDay) };
+}
+
+const runsOf = ({ runs }: AlarmTold): number => toldWhole('runs', runs ?? '4000', 2, 1_000_000);
+
+function ruleOf(told: AlarmTold, { counted, baseline, size }: StreamTold): AlarmRule {
+  const between = (): number => toldNumber('between', required('between', told.between, `the wanted ${counted.grain === 1 ? 'units' : `exposure in ${counted.unit}`} between false calls`));
+  const { rule, batch } = told;
   if (rule === undefined) throw new CommandFault('--rule is missing; expected window, cusum or detector');
   switch (rule) {
     case 'window': {
-      const units = toldWhole('units', required('units', told.units, 'the units in the window'), 2, 1e9);
-      return windowRule({ units, count: countOf(told, units, baseline) }, toldWhole('batch', told.batch ?? '1', 1), runs);
+      const window = windowSize(told, counted, size);
+      return windowRule(counted, { size: window, count: countOf(told, window, counted, baseline), batch: batch === undefined || batch === '1' ? undefined : size('batch', batch) }, runsOf(told));
     }
     case 'cusum':
-      return cusumRule(baseline, toldNumber('ratio', told.ratio ?? '2'), between());
+      return cusumRule(counted, baseline, toldNumber('ratio', told.ratio ?? '2'), between());
     case 'detector':
-      return detectorRule(baseline, between(), runs);
+      return detectorRule(counted, baseline, between(), runsOf(told));
   }
 }
 
-function countOf({ count, confidence }: AlarmTold, units: number, baseline: number): number {
+function windowSize({ units, exposure }: AlarmTold, { grain, unit }: Counted, size: StreamTold['size']): number {
+  if (grain === 1) return toldWhole('units', required('units', units, 'the units in the window'), 2, 1e9);
+  return size('exposure', required('exposure', exposure, `the exposure in the window, in ${unit}`));
+}
+
+function countOf({ count, confidence }: AlarmTold, size: number, { grain }: Counted, baseline: number): number {
+  const units = grain === 1;
   if (count !== undefined && confidence !== undefined) throw new CommandFault('--count and --confidence: give one; the other follows');
-  if (count !== undefined) return toldWhole('count', count, 1, units);
+  if (count !== undefined) return toldWhole('count', count, 1, units ? size : 1_000_000);
   const tail = toldTail('confidence', required('confidence', confidence, 'a confidence level, or --count'));
-  const violated = violatedCount(units, baseline, tail);
-  if (violated <= units) return violated;
-  throw badOption('units', String(units), 'a window large enough to show the line violated at this confidence');
+  const violated = units ? violatedCount(size, baseline, tail) : violatedNonconformities(size, baseline, tail);
+  if (!units || violated <= size) return violated;
+  throw badOption('units', String(size), 'a window large enough to show the line violated at this confidence');
+}
+
+function meanRuleOf(told: AlarmTold, line: string, side: 'at-least' | 'at-most'): AlarmRule {
+  if (told.rule !== 'detector') throw badOption('rule', told.rule ?? 'nothing', 'detector: it is what watches a mean');
+  const asked = {
+    line: toldNumber('line', line),
+    side,
+    sigma: toldNumber('sigma', required('sigma', told.sigma, 'the standard deviation of the measurements')),
+    range: told.range === undefined ? undefined : toldRange('range', told.range),
+    between: toldNumber('between', required('between', told.between, 'the wanted measurements between false calls')),
+    unit: told.unit,
+  };
+  return meanDetectorRule(asked, runsOf(told));
+}
+
+function meanSceneOf({ mean, worse, perDay, sigma }: AlarmTold, line: string, side: 'at-least' | 'at-most'): AlarmScene {
+  const normal = toldNumber('mean', mean ?? line);
+  const toBad = side === 'at-least' ? -1 : 1;
+  const usual = [0.5, 1, 2, 3].map((steps) => Number((toldNumber('line', line) + toBad * steps * toldNumber('sigma', sigma ?? '')).toPrecision(12)));
+  const means = worse?.map((text) => toldNumber('worse', text)) ?? usual;
+  const better = means.findIndex((at) => !(toBad * (at - normal) > 0));
+  if (better >= 0) throw badOption('worse', worse?.[better] ?? String(means[better]), `a mean ${side === 'at-least' ? 'below' : 'above'} the normal mean ${normal}`);
+  return { normal, worse: means, perDay: perDay === undefined ? undefined : toldWhole('per-day', perDay, 1) };
 }
 
 interface BudgetTold {

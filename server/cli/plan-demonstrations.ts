@@ -1,12 +1,15 @@
 import { Option, type Command } from 'commander';
-import { amountForms, amountOf, type Amount } from '../../core/figure/amount.ts';
+import { amountForms, amountOf } from '../../core/figure/amount.ts';
 import { fractionDemonstration, lotDemonstration, rateDemonstration, yieldDemonstration, type AskedDemonstration } from '../plan/demonstrations.ts';
 import { meanDemonstration } from '../plan/mean-demonstration.ts';
 import { planned } from '../plan/planned.ts';
+import { countedExposure, countedUnits } from '../plan/counted.ts';
+import { meanWindowFor, meanWindowOf } from '../plan/mean-window-plan.ts';
+import type { PlanAnswer } from '../plan/plan-answer.ts';
 import { windowFor, windowOf } from '../plan/window-plan.ts';
 import { CommandFault } from './exit-codes.ts';
 import { printPlan } from './print-plan.ts';
-import { badOption, required, toldNumber, toldPart, toldShare, toldTail, toldWhole } from './told-figures.ts';
+import { required, toldAmount, toldExposure, toldNumber, toldPart, toldRateIn, toldShare, toldTail, toldWhole } from './told-figures.ts';
 
 type Told = Readonly<Record<string, string | readonly string[] | boolean | undefined>>;
 
@@ -17,21 +20,6 @@ const line = (told: Told, what: string): string => required('line', one(told, 'l
 
 function askedOf(told: Told, truth: (text: string) => number): AskedDemonstration {
   return { tail: confidence(told), allowed: toldWhole('allowed', one(told, 'allowed') ?? '0', 0, 1_000_000), truths: many(told, 'rate').map(truth) };
-}
-
-function amountFrom(flag: string, text: string): Amount {
-  const amount = amountOf(text);
-  if (amount === undefined) throw badOption(flag, text, amountForms);
-  return amount;
-}
-
-/** A true rate in the unit of the line, per unit of exposure. */
-function rateIn(unit: string) {
-  return (text: string): number => {
-    const amount = amountFrom('rate', text);
-    if (amount.unit !== unit) throw badOption('rate', text, `a rate per ${unit}, as the line is`);
-    return amount.value / amount.per;
-  };
 }
 
 /** Adds the plans of demonstrations and windows. */
@@ -54,34 +42,36 @@ export function addDemonstrations(plan: Command): void {
 
   const rate = demonstration('rate', 'smallest exposure that demonstrates a rate of nonconformities', "e.g. '2 per 100 m'");
   act(rate, (told) => {
-    const amount = amountFrom('line', line(told, amountForms));
-    return rateDemonstration(amount, askedOf(told, rateIn(amount.unit)));
+    const amount = toldAmount('line', line(told, amountForms));
+    return rateDemonstration(amount, askedOf(told, (text) => toldRateIn('rate', amount.unit, text)));
   });
 
   const lot = demonstration('lot', 'smallest sample that demonstrates the nonconforming fraction of a lot', "e.g. '1 %'").option('--lot-size <number>', 'units in the lot');
   act(lot, (told) => lotDemonstration(toldWhole('lot-size', required('lot-size', one(told, 'lotSize'), 'a whole number of units'), 1), toldShare('line', line(told, 'a share of the lot')), askedOf(told, (text) => toldWhole('rate', text))));
 
   addMean(sub('mean', 'measurements that demonstrate a mean, where the process runs as supposed', 'in the unit of measure'));
-  addWindow(sub('window', 'the window that keeps a well line demonstrated; or what a given window does', "e.g. '200 ppm'"));
+  addWindow(sub('window', 'the window that keeps a well line demonstrated; or what a given window does', "e.g. '200 ppm', '2 per 100 m', or with --side a mean"));
 }
+
+const sideOption = (): Option => new Option('--side <side>', 'what a promise about a mean says').choices(['at-least', 'at-most']);
+const sideOf = (told: Told): 'at-least' | 'at-most' => (required('side', one(told, 'side'), 'at-least or at-most') === 'at-most' ? 'at-most' : 'at-least');
+const sigmaOf = (told: Told): { readonly sigma: number; readonly sigmaKnown: boolean } => ({
+  sigma: toldNumber('sigma', required('sigma', one(told, 'sigma'), 'the supposed standard deviation')),
+  sigmaKnown: told['sigmaKnown'] === true,
+});
 
 function addMean(mean: Command): void {
   mean
-    .addOption(new Option('--side <side>', 'what the promise says').choices(['at-least', 'at-most']))
+    .addOption(sideOption())
     .option('--mean <number>', 'mean at which the process is supposed to run')
     .option('--sigma <number>', 'standard deviation it is supposed to have')
     .option('--sigma-known', 'the bound will use this sigma (z), not the spread of the sample (t)')
     .option('--chance <share>', 'wanted chance of passing [default: 90 %]')
     .option('--unit <text>', 'unit of measure, for the sentence');
   act(mean, (told) => {
-    const side = required('side', one(told, 'side'), 'at-least or at-most');
     return meanDemonstration({
-      promise: { side: side === 'at-most' ? 'at-most' : 'at-least', line: toldNumber('line', line(told, 'a number in the unit of measure')) },
-      process: {
-        mean: toldNumber('mean', required('mean', one(told, 'mean'), 'the supposed mean')),
-        sigma: toldNumber('sigma', required('sigma', one(told, 'sigma'), 'the supposed standard deviation')),
-        sigmaKnown: told['sigmaKnown'] === true,
-      },
+      promise: { side: sideOf(told), line: toldNumber('line', line(told, 'a number in the unit of measure')) },
+      process: { mean: toldNumber('mean', required('mean', one(told, 'mean'), 'the supposed mean')), ...sigmaOf(told) },
       tail: confidence(told),
       chance: toldPart('chance', one(told, 'chance') ?? '90 %'),
       unit: one(told, 'unit'),
@@ -91,21 +81,49 @@ function addMean(mean: Command): void {
 
 function addWindow(window: Command): void {
   window
-    .option('--normal-rate <share>', 'the rate the line has when it is well: proposes a window')
-    .option('--units <number>', 'a window: says up to which normal rate it keeps a line demonstrated')
+    .option('--normal-rate <rate>', 'the rate the line has when it is well: proposes a window')
+    .option('--units <number>', 'a window in units (of a mean: in measurements): says up to which normal rate it keeps a line demonstrated')
+    .option('--exposure <amount>', "the same of a rate, e.g. '4600 m'")
+    .addOption(sideOption())
+    .option('--mean <number>', 'of a mean: the mean the line has when it is well, in place of --normal-rate')
+    .option('--sigma <number>', 'of a mean: its standard deviation')
+    .option('--sigma-known', 'of a mean: the bound will use this sigma (z), not the spread of the window (t)')
+    .option('--unit <text>', 'of a mean: unit of measure, for the sentence')
     .option('--lost <share>', 'share of the time a well line may stand not demonstrated [default: 1 %]');
   act(window, (told) => {
-    const wish = { line: toldShare('line', line(told, 'a share of units')), tail: confidence(told), lost: toldPart('lost', one(told, 'lost') ?? '1 %') };
-    const [normal, units] = [one(told, 'normalRate'), one(told, 'units')];
-    if (normal !== undefined && units !== undefined) throw new CommandFault('--normal-rate and --units: give one; the other is the answer');
-    if (normal !== undefined) return windowFor(wish, toldShare('normal-rate', normal));
-    return windowOf(wish, toldWhole('units', required('units', units, 'a window in units, or --normal-rate to have one proposed'), 1, 1e9));
+    const lost = toldPart('lost', one(told, 'lost') ?? '1 %');
+    if (told['side'] !== undefined) return meanWindow(told, lost);
+    const text = line(told, 'a share of units, an amount over an exposure, or with --side a mean');
+    const amount = amountOf(text);
+    const wish = { line: amount === undefined ? toldShare('line', text) : amount.value / amount.per, tail: confidence(told), lost };
+    if (amount === undefined) {
+      const normal = oneOf(told, 'normal-rate', 'units', 'a window in units');
+      return normal === undefined ? windowOf(wish, toldWhole('units', one(told, 'units') ?? '', 1, 1e9), countedUnits) : windowFor(wish, toldShare('normal-rate', normal), countedUnits);
+    }
+    const counted = countedExposure(amount);
+    const normal = oneOf(told, 'normal-rate', 'exposure', `a window in ${amount.unit}`);
+    return normal === undefined ? windowOf(wish, toldExposure('exposure', amount.unit, one(told, 'exposure') ?? ''), counted) : windowFor(wish, toldRateIn('normal-rate', amount.unit, normal), counted);
   });
 }
 
-function act(command: Command, answer: (told: Told) => ReturnType<typeof windowOf>): void {
+function meanWindow(told: Told, lost: ReturnType<typeof toldPart>): PlanAnswer {
+  const promise = { side: sideOf(told), line: toldNumber('line', line(told, 'a number in the unit of measure')) };
+  const asked = { promise, process: sigmaOf(told), tail: confidence(told), lost, unit: one(told, 'unit') };
+  const mean = oneOf(told, 'mean', 'units', 'a window in measurements');
+  return mean === undefined ? meanWindowOf(asked, toldWhole('units', one(told, 'units') ?? '', 1, 1e12)) : meanWindowFor(asked, toldNumber('mean', mean));
+}
+
+/** What the line is like when it is well, unless the window is told, to which it is the answer. */
+function oneOf(told: Told, normal: 'normal-rate' | 'mean', size: 'units' | 'exposure', what: string): string | undefined {
+  const [asked, window] = [one(told, normal === 'mean' ? 'mean' : 'normalRate'), one(told, size)];
+  if (asked !== undefined && window !== undefined) throw new CommandFault(`--${normal} and --${size}: give one; the other is the answer`);
+  if (asked === undefined) required(size, window, `${what}, or --${normal} to have one proposed`);
+  return asked;
+}
+
+function act(command: Command, answer: (told: Told) => PlanAnswer): void {
   command.action(async () => {
     const told = command.opts<Told>();
-    printPlan(await planned({ normal: 'normal-rate', yieldLine: 'line', tail: 'confidence', nonconforming: 'allowed', marked: 'rate' }, () => answer(told)), told['json'] === true);
+    printPlan(await planned({ normal: 'normal-rate', yieldLine: 'line', tail: 'confidence', nonconforming: 'allowed', marked: 'rate', mean: 'mean', n: 'units' }, () => answer(told)), told['json'] === true);
   });
 }

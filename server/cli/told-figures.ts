@@ -1,4 +1,4 @@
-import { finiteOf } from '../../core/figure/amount.ts';
+import { amountForms, amountOf, finiteOf, type Amount } from '../../core/figure/amount.ts';
 import { complementOf, doubleOf } from '../../core/figure/exact.ts';
 import { shareForms, shareOf } from '../../core/figure/share.ts';
 import type { Tail } from '../../core/units.ts';
@@ -42,12 +42,41 @@ export function toldPart(flag: string, text: string): Tail {
   throw badOption(flag, text, 'a share above 0 and below 100 %');
 }
 
+/** An amount over an exposure, value above 0. */
+export function toldAmount(flag: string, text: string): Amount {
+  const amount = amountOf(text);
+  if (amount === undefined) throw badOption(flag, text, amountForms);
+  return amount;
+}
+
+/** A rate per unit of an exposure that was told elsewhere. */
+export function toldRateIn(flag: string, unit: string, text: string): number {
+  const amount = toldAmount(flag, text);
+  if (amount.unit !== unit) throw badOption(flag, text, `a rate per ${unit}, as the line is`);
+  return amount.value / amount.per;
+}
+
+/** An exposure with its unit or without: '4600 m' or '4600'. @returns above 0 */
+export function toldExposure(flag: string, unit: string, text: string): number {
+  const [figure = '', ...rest] = text.trim().split(/ +/);
+  const value = finiteOf(figure);
+  if (value === undefined || !(value > 0) || (rest.length > 0 && rest.join(' ') !== unit)) throw badOption(flag, text, `an exposure above 0 in ${unit}, e.g. 4600 ${unit}`);
+  return value;
+}
+
 /** The tail of a confidence level: its exact complement. */
 export function toldTail(flag: string, text: string): Tail {
   const exact = shareOf(text);
   const tail = exact === undefined ? Number.NaN : doubleOf(complementOf(exact));
   if (tail > 0 && tail < 1) return tail as Tail;
   throw badOption(flag, text, 'a confidence level above 0 and below 100 %, e.g. 95 % or 0.95');
+}
+
+/** Two ends: '0..5'. */
+export function toldRange(flag: string, text: string): { readonly from: number; readonly to: number } {
+  const [from, to, ...more] = text.split('..').map((end) => finiteOf(end.trim()));
+  if (from === undefined || to === undefined || more.length > 0 || !(from < to)) throw badOption(flag, text, 'two numbers, the lower one first, e.g. 0..5');
+  return { from, to };
 }
 
 /** @throws CommandFault where the option was not given */

@@ -1,5 +1,4 @@
 import { writtenNumber } from '../../core/describe/rounded.ts';
-import { briefShare } from '../../core/describe/share-text.ts';
 import type { AlarmRule, MeanUnits, Simulating } from './alarm-rule.ts';
 import { barPicture } from './bar-picture.ts';
 import { runLong, type RunWatch } from './long-run.ts';
@@ -7,11 +6,11 @@ import type { PlanAnswer } from './plan-answer.ts';
 
 /** The line that the alarm setting is examined on. */
 export interface AlarmScene {
-  /** rate at which the line is well, above 0, below 1 */
+  /** rate (or mean) at which the line is well */
   readonly normal: number;
-  /** rates after a change for the worse */
+  /** rates (or means) after a change for the worse */
   readonly worse: readonly number[];
-  /** units a day; undefined: figures in units only */
+  /** units (exposure, measurements) a day; undefined: figures in those only */
   readonly perDay: number | undefined;
 }
 
@@ -27,22 +26,24 @@ export async function alarmPlan(rule: AlarmRule, { normal, worse, perDay }: Alar
   const delays: { readonly rate: number; readonly delay: MeanUnits }[] = [];
   for (const rate of worse) delays.push({ rate, delay: await settled(rule.delay(normal, rate), watch) });
   const perMonth = perDay === undefined ? undefined : (monthDays * perDay) / between.units;
+  const { unit, level, rate: written, assumes } = rule.said;
+  const times = level === 'rate' && normal > 0;
   const days = (units: number): string => (perDay === undefined ? '' : daysText(units / perDay));
   return {
     sentences: [
       rule.sentence,
-      `At its normal rate of ${briefShare(normal)} it calls falsely once in ${meanText(between)} units${perMonth === undefined ? '' : `, ${between.standing === 'at least' ? 'at most ' : ''}${writtenNumber(perMonth, 3)} times a month of ${monthDays} days at ${writtenNumber(perDay ?? 0, 15)} units a day`}.`,
+      `At its normal ${level} of ${written(normal)} it calls falsely once in ${meanText(between)} ${unit}${perMonth === undefined ? '' : `, ${between.standing === 'at least' ? 'at most ' : ''}${writtenNumber(perMonth, 3)} times a month of ${monthDays} days at ${writtenNumber(perDay ?? 0, 15)} ${unit} a day`}.`,
     ],
     table: {
-      head: ['rate after the change', 'times normal', 'units to the call', ...(perDay === undefined ? [] : ['time'])],
-      rows: delays.map(({ rate, delay }) => [briefShare(rate), writtenNumber(rate / normal, 3), meanText(delay), ...(perDay === undefined ? [] : [days(delay.units)])]),
+      head: [`${level} after the change`, ...(times ? ['times normal'] : []), `${unit} to the call`, ...(perDay === undefined ? [] : ['time'])],
+      rows: delays.map(({ rate, delay }) => [written(rate), ...(times ? [writtenNumber(rate / normal, 3)] : []), meanText(delay), ...(perDay === undefined ? [] : [days(delay.units)])]),
     },
-    picture: barPicture('Mean units', [
+    picture: barPicture(`Mean ${unit}`, [
       { name: 'between false calls', value: between.units, written: meanText(between) },
-      ...delays.map(({ rate, delay }) => ({ name: `to the call at ${briefShare(rate)}`, value: delay.units, written: meanText(delay) })),
+      ...delays.map(({ rate, delay }) => ({ name: `to the call at ${written(rate)}`, value: delay.units, written: meanText(delay) })),
     ]),
     notes: [
-      ['Assumes', 'Nonconforming units come one by one and independently; where they come in clusters, false calls are more frequent than said.'],
+      ['Assumes', assumes],
       ['Looks', 'Watched all the time: these are figures of all looks, not of one.'],
       ...rule.notes,
     ],
@@ -52,20 +53,21 @@ export async function alarmPlan(rule: AlarmRule, { normal, worse, perDay }: Alar
       normal,
       betweenFalseCalls: between,
       falseCallsPerMonth: perMonth,
-      unitsPerDay: perDay,
-      delays: delays.map(({ rate, delay }) => ({ rate, ...delay, days: perDay === undefined ? undefined : delay.units / perDay })),
+      ...(unit === 'units' ? { unitsPerDay: perDay } : { unit, perDay }),
+      delays: delays.map(({ rate, delay }) => ({ [level]: rate, ...delay, days: perDay === undefined ? undefined : delay.units / perDay })),
     },
   };
 }
 
 async function settled(figure: MeanUnits | Simulating, watch: RunWatch): Promise<MeanUnits> {
-  if (!('next' in figure)) return figure;
-  const { units, standardError } = await runLong(figure, watch, ({ runs, units: mean, standardError: error }) => runs >= enoughRuns && error < enoughError * mean);
-  return { units, standardError, standing: 'about' };
+  if (!('steps' in figure)) return figure;
+  const { units, standardError } = await runLong(figure.steps, watch, ({ runs, units: mean, standardError: error }) => runs >= enoughRuns && error < enoughError * mean);
+  return { units: units * figure.grain, standardError: standardError * figure.grain, standing: 'about' };
 }
 
 function meanText({ units, standardError, standing }: MeanUnits): string {
-  const figure = writtenNumber(Math.round(units) < 1e5 ? Math.round(units) : Number(units.toPrecision(4)), 4);
+  const whole = Math.round(units) < 1e5 ? (units < 100 ? Number(units.toPrecision(3)) : Math.round(units)) : Number(units.toPrecision(4));
+  const figure = writtenNumber(whole, 4);
   return `${standing === 'at least' ? 'at least ' : ''}${figure}${standardError === undefined ? '' : ` ± ${writtenNumber(Number(standardError.toPrecision(2)), 2)}`}`;
 }
 

@@ -1,4 +1,4 @@
-import type { SimulatedUnits } from '../../../core/run-length/simulated-run-length.ts';
+import type { SimulatedUnits } from '../../../core/run-length/run-tally.ts';
 
 /** Runs a simulation to its end. */
 export function finished(simulation: Generator<SimulatedUnits, SimulatedUnits, undefined>): SimulatedUnits {

@@ -53,6 +53,24 @@ describe('vouchline plan, windows', () => {
     expect(less.highestNormalRate).toBeLessThan(50e-6);
   });
 
+  it('of a rate, as exposure: forward and back', () => {
+    const forward = inJson('window', '--line', '2 per 100 m', '--normal-rate', '0.5 per 100 m', ...confidence) as { proposed: number; steady: number; unit: string };
+    expect(forward).toMatchObject({ unit: 'm' });
+    expect(forward.steady).toBeGreaterThanOrEqual(forward.proposed);
+    const back = inJson('window', '--line', '2 per 100 m', '--exposure', `${forward.steady} m`, ...confidence) as { highestNormalRate: number };
+    expect(back.highestNormalRate).toBeGreaterThanOrEqual(0.005);
+    expect(plan('window', '--line', '2 per 100 m', '--exposure', '1500', ...confidence).out).toContain('In 1500 m up to 20 nonconformities demonstrate at most 2 per 100 m at 95 %');
+    expect(plan('window', '--line', '2 per 100 m', '--exposure', '100 m', ...confidence).out).toContain('Not even 100 m without a nonconformity demonstrate 2 per 100 m');
+  });
+
+  it('of a mean, in measurements: forward and back', () => {
+    const asked = ['window', '--side', 'at-least', '--line', '1000', '--sigma', '3', ...confidence];
+    const { units } = inJson(...asked, '--mean', '1002') as { units: number };
+    expect((inJson(...asked, '--units', String(units)) as { nearestNormalMean: number }).nearestNormalMean).toBeLessThanOrEqual(1002);
+    expect((inJson(...asked, '--units', String(units - 1)) as { nearestNormalMean: number }).nearestNormalMean).toBeGreaterThan(1002);
+    expect(plan(...asked, '--mean', '1002', '--unit', 'ml').out).toContain('keeps a line at its normal mean of 1002 ml demonstrated 99.0 % of the time.');
+  });
+
   it('says that a window is too small', () => {
     expect(plan('window', '--line', '200 ppm', '--units', '100', ...confidence).out).toContain('Not even 100 units without a nonconforming one demonstrate 200 ppm');
   });
@@ -91,6 +109,49 @@ describe('vouchline plan, alarm settings', () => {
     expect(first).toEqual(inJson(...asked));
     expect((first['betweenFalseCalls'] as { units: number }).units).toBeGreaterThan(50_000);
     expect(inJson(...asked, '--normal-rate', '0.02 %')['betweenFalseCalls']).toEqual({ units: 50_000, standing: 'at least' });
+  });
+
+  it('of a rate: the same as of a fraction so small that units become exposure', () => {
+    type Answer = { count?: number; betweenFalseCalls: { units: number }; delays: { units: number }[] };
+    const rate = (rule: string, ...more: readonly string[]) => inJson('alarm', '--rule', rule, '--line', '1 per 1000 m', ...more) as Answer;
+    const fraction = (rule: string, ...more: readonly string[]) => inJson('alarm', '--rule', rule, '--line', '0.0000001', ...more) as Answer;
+    const window = rate('window', '--exposure', '10000 m', ...confidence);
+    const units = fraction('window', '--units', '100000000', ...confidence);
+    expect(window.count).toBe(units.count);
+    expect(window.betweenFalseCalls.units / (units.betweenFalseCalls.units / 1e4)).toBeCloseTo(1, 9);
+    const cusum = rate('cusum', '--between', '1000000');
+    expect(cusum.betweenFalseCalls.units / (fraction('cusum', '--between', '1e10').betweenFalseCalls.units / 1e4)).toBeCloseTo(1, 6);
+    const detector = rate('detector', '--between', '50000', '--worse', '5 per 1000 m', '--normal-rate', '0.5 per 1000 m');
+    expect(detector.betweenFalseCalls).toEqual({ units: 50_000, standing: 'at least' });
+    expect(detector.delays[0]!.units).toBeGreaterThan(200);
+    expect(detector.delays[0]!.units).toBeLessThan(5000);
+  });
+
+  it('of a rate watched by a CUSUM: what a plain simulation of it comes to', () => {
+    const answer = inJson('alarm', '--rule', 'cusum', '--line', '2 per 100 m', '--between', '20000') as { up: number; down: number; threshold: number; betweenFalseCalls: { units: number } };
+    let seed = 1;
+    const uniform = (): number => ((seed = (seed * 48_271) % 2_147_483_647) / 2_147_483_647); // S. K. Park, K. W. Miller 1988 (from memory)
+    const runs = 1500;
+    let metres = 0;
+    for (let run = 0; run < runs; run += 1) {
+      for (let sum = 0; sum < answer.threshold; ) {
+        const gap = -Math.log(uniform()) / 0.02;
+        metres += gap;
+        sum = Math.max(0, sum - gap * answer.down) + answer.up;
+      }
+    }
+    // The run length is nearly exponential: its standard error is 1 / sqrt(runs) of it; 4 of these.
+    expect(Math.abs(metres / runs / answer.betweenFalseCalls.units - 1)).toBeLessThan(4 / Math.sqrt(runs));
+  });
+
+  it('of a mean: guaranteed between false calls, simulated to the call', () => {
+    const asked = ['alarm', '--rule', 'detector', '--side', 'at-least', '--line', '1000', '--sigma', '3', '--mean', '1002', '--between', '100000', '--per-day', '20000'];
+    const answer = inJson(...asked) as { betweenFalseCalls: object; falseCallsPerMonth: number; delays: { mean: number; units: number }[] };
+    expect(answer.betweenFalseCalls).toEqual({ units: 100_000, standing: 'at least' });
+    expect(answer.falseCallsPerMonth).toBeCloseTo(6, 12);
+    expect(answer.delays.map(({ mean }) => mean)).toEqual([998.5, 997, 994, 991]);
+    expect(answer.delays[0]!.units).toBeGreaterThan(answer.delays[3]!.units);
+    expect(plan(...asked, '--range', '900..1100').out).toContain('by measurements from 900 to 1100');
   });
 
   it('reports progress on standard error while it takes its time, and Ctrl-C cancels it', async () => {
@@ -135,6 +196,22 @@ describe('vouchline plan names the option, what it held and what was expected', 
     [['mean', '--line', '1000', '--side', 'at-least', '--mean', '998', '--sigma', '3', ...confidence], '--mean is 998, expected a mean on the good side of 1000'],
     [['window', '--line', '200 ppm', ...confidence], '--units is missing'],
     [['window', '--line', '200 ppm', '--normal-rate', '300 ppm', ...confidence], '--normal-rate is 0.0003, expected 0 to below the line'],
+    [['window', '--line', '2 per 100 m', ...confidence], '--exposure is missing; expected a window in m, or --normal-rate'],
+    [['window', '--line', '2 per 100 m', '--exposure', '5 h', ...confidence], '--exposure: "5 h"; expected an exposure above 0 in m'],
+    [['window', '--line', '2 per 100 m', '--normal-rate', '1 per h', ...confidence], '--normal-rate: "1 per h"; expected a rate per m'],
+    [['window', '--line', '2 per 100 m', '--normal-rate', '3 per 100 m', ...confidence], '--normal-rate is 0.03, expected 0 to below the line'],
+    [['window', '--side', 'at-least', '--line', '1000', '--sigma', '3', ...confidence], '--units is missing; expected a window in measurements, or --mean'],
+    [['window', '--side', 'at-least', '--line', '1000', '--sigma', '3', '--mean', '999', ...confidence], '--mean is 999, expected a mean on the good side'],
+    [['window', '--side', 'at-least', '--line', '1000', '--sigma', '3', '--mean', '1001', '--units', '5', ...confidence], '--mean and --units: give one'],
+    [['alarm', '--rule', 'window', '--line', '2 per 100 m', ...confidence], '--exposure is missing'],
+    [['alarm', '--rule', 'detector', '--line', '0 per 100 m', '--between', '5'], '--line: "0 per 100 m"; expected an amount above 0'],
+    [['alarm', '--rule', 'detector', '--line', '2 per 100 m', '--between', '5000', '--worse', '0 per m'], '--worse: "0 per m"; expected a rate above 0'],
+    [['alarm', '--rule', 'detector', '--line', '2 per 100 m', '--between', '5000', '--worse', '1 per 100 m'], '--worse: "1 per 100 m"; expected a rate above the normal rate 2 per 100 m'],
+    [['alarm', '--rule', 'cusum', '--side', 'at-least', '--line', '1000', '--sigma', '3', '--between', '5000'], '--rule: "cusum"; expected detector'],
+    [['alarm', '--rule', 'detector', '--side', 'at-least', '--line', '1000', '--between', '5000'], '--sigma is missing'],
+    [['alarm', '--rule', 'detector', '--side', 'at-least', '--line', '1000', '--sigma', '0', '--between', '5000'], '--sigma is 0, expected'],
+    [['alarm', '--rule', 'detector', '--side', 'at-least', '--line', '1000', '--sigma', '3', '--between', '5000', '--worse', '1001'], '--worse: "1001"; expected a mean below the normal mean 1000'],
+    [['alarm', '--rule', 'detector', '--side', 'at-least', '--line', '1000', '--sigma', '3', '--between', '5000', '--range', '5'], '--range: "5"; expected two numbers'],
     [['alarm', '--line', '0.1 %'], '--rule is missing'],
     [['alarm', '--line', '0.1 %', '--rule', 'window', '--units', '100', ...confidence, '--count', '3'], '--count and --confidence: give one'],
     [['alarm', '--line', '0.1 %', '--rule', 'window', '--units', '2', '--confidence', '99.99999 %'], '--units: "2"; expected a window large enough'],
