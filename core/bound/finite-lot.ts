@@ -1,6 +1,6 @@
 import { exactDecimal } from '../numerics/exact-decimal.ts';
 import { lotTailAtMost } from '../numerics/exact-hypergeometric.ts';
-import { lnChance, lnHypergeometricLower, sumDownwards, type Draw } from '../numerics/hypergeometric-tail.ts';
+import { lnChance, lnHypergeometricLower, type Draw } from '../numerics/hypergeometric-tail.ts';
 import { lastWhere } from '../numerics/integer-search.ts';
 import type { Tail } from '../units.ts';
 import { fractionUpper } from './nonconforming-fraction.ts';
@@ -61,26 +61,66 @@ export function lotRefutes(marked: number, { nonconforming, sampled, lotSize }: 
 function mostBelieved(sample: LotSample, tail: Tail): number {
   const { nonconforming, sampled, lotSize } = sample;
   const most = lotSize - sampled + nonconforming;
-  return lastWhere((marked) => !lotRefutes(marked, sample, tail), nonconforming, most, startOf(sample, tail, most));
+  const tails = new LotTails(sample);
+  const believed = (marked: number): boolean => !lotTailAtMost(tails.lnLower(marked), nonconforming, tails.draw(marked), tail);
+  return lastWhere(believed, nonconforming, most, startOf(sample, tail, most, tails));
 }
 
 /** The bound of sampling with replacement, then a few Newton steps on ln(tail): one more marked unit takes (n - x)/(N - D) P(x). */
-function startOf(sample: LotSample, tail: Tail, most: number): number {
-  const { nonconforming: x, sampled, lotSize } = sample;
+function startOf({ nonconforming: x, sampled, lotSize }: LotSample, tail: Tail, most: number, tails: LotTails): number {
   if (x === sampled || sampled === lotSize) return most;
   const share = Math.sqrt(1 - sampled / lotSize);
   const seen = (x + 0.5) / sampled;
   let marked = Math.min(lotSize * (seen + share * (fractionUpper(x, sampled, tail) - seen)), most - 1);
   for (let i = 0; i < 4; i++) {
-    const draw = { size: lotSize, marked: Math.max(Math.round(marked), x + 1), drawn: sampled };
-    if (x * lotSize >= draw.marked * sampled) break;
-    const sum = sumDownwards(x, draw);
-    const gap = lnChance(x, draw) + Math.log(sum) - Math.log(tail);
-    const step = (gap * sum * (lotSize - draw.marked)) / (sampled - x);
-    marked = Math.min(Math.max(draw.marked + step, x), most);
+    const at = Math.max(Math.round(marked), x + 1);
+    if (x * lotSize >= at * sampled) break;
+    const step = (tails.lnLower(at) - Math.log(tail)) / tails.lossAt(at);
+    marked = Math.min(Math.max(at + step, x), most);
     if (Math.abs(step) < 0.5) break;
   }
   return marked;
+}
+
+/** ln P(X <= x) by the number marked in the lot: a neighbour of the last one asked for costs one chance in place of a sum. */
+class LotTails {
+  readonly #sample: LotSample;
+  #marked = -2;
+  #lnLower = 0;
+
+  constructor(sample: LotSample) {
+    this.#sample = sample;
+  }
+
+  draw(marked: number): Draw {
+    return { size: this.#sample.lotSize, marked, drawn: this.#sample.sampled };
+  }
+
+  lnLower(marked: number): number {
+    const ln = this.#ofNeighbour(marked) ?? lnHypergeometricLower(this.#sample.nonconforming, this.draw(marked));
+    this.#marked = marked;
+    this.#lnLower = ln;
+    return ln;
+  }
+
+  /** Share of the last tail asked for that one more marked unit takes away. @param marked the last one asked for */
+  lossAt(marked: number): number {
+    const { nonconforming: x, sampled, lotSize } = this.#sample;
+    return Math.exp(lnChance(x, this.draw(marked)) - this.#lnLower) * ((sampled - x) / (lotSize - marked));
+  }
+
+  #ofNeighbour(marked: number): number | undefined {
+    const { nonconforming: x, sampled, lotSize } = this.#sample;
+    const last = this.#lnLower;
+    if (!(last < 0 && last > -Infinity)) return undefined;
+    if (marked === this.#marked) return last;
+    if (marked === this.#marked + 1) {
+      const loss = this.lossAt(this.#marked);
+      return loss < 0.5 ? last + Math.log1p(-loss) : undefined;
+    }
+    if (marked === this.#marked - 1) return last + Math.log1p(Math.exp(lnChance(x, this.draw(marked)) - last) * ((sampled - x) / (lotSize - marked)));
+    return undefined;
+  }
 }
 
 function requireLotSample({ nonconforming, sampled, lotSize }: LotSample, tail: number): void {
