@@ -2,6 +2,7 @@ import { randomUUID } from 'node:crypto';
 import type { Server } from 'node:https';
 import type { AddressInfo } from 'node:net';
 import { join } from 'node:path';
+import { setImmediate } from 'node:timers/promises';
 import type { Logger } from 'pino';
 import type { Refusal } from '../core/record/refusal.ts';
 import { sourceLimits } from '../core/protocol/limits.ts';
@@ -31,7 +32,7 @@ import type { Sender } from './pipeline/arrival.ts';
 import { PlantServer } from './pipeline/plant-server.ts';
 import { PlantDesk } from './plant-desk.ts';
 import { plantFile, type PlantFileText } from './plant-file.ts';
-import { repeatEvery } from './repeat-every.ts';
+import { repeatEvery, repeatInTurn } from './repeat-every.ts';
 import type { Settings } from './settings/settings.ts';
 import { openStore } from './store/sqlite-store.ts';
 import type { Store } from './store/store.ts';
@@ -216,8 +217,8 @@ export async function serveFrom(store: Store, { settings, clock: clockSetting, d
       if (store.condition.kind === 'refused') plant.giveUp(store.condition.error);
       if (clock) plant.inbox.put({ kind: 'tick' });
     }),
-    repeatEvery(updateMs, () => {
-      board.refresh(plant.monitor, plant.now);
+    repeatInTurn(updateMs, async () => {
+      for (const _ of board.refreshing(plant.monitor, plant.now)) await setImmediate();
       dashboards.update(Date.now());
     }),
     ...(tls === undefined ? [] : [repeatEvery(10_000, tlsReload(http.server as unknown as Server, settings, log))]),

@@ -67,7 +67,7 @@ async function beat(nonconforming: readonly number[]): Promise<void> {
   monitor.takeFrame('leak-tester', frameOf(next, [{ kind: 'verdicts', origin, records: 10, time, nonconforming: Uint32Array.from(nonconforming) }]), undefined);
   next += 10;
   board.note(monitor.decisions().happenings, monitor.now);
-  board.refresh(monitor, monitor.now);
+  for (const _ of board.refreshing(monitor, monitor.now));
   wallNow += 100;
   desk.update(wallNow);
   await new Promise((resolve) => setImmediate(resolve));
