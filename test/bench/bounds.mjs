@@ -99,7 +99,7 @@ console.log(`| beyond a limit, n = 30 (jstat: one distribution value, of which a
 const everyCount = grid('poisson').filter(([count]) => count <= 1e6).map(([count, confidence, side]) => [count, confidence, side, tailOfConfidence(confidence)]);
 const whole = (of) => {
   let best = Infinity;
-  for (let pass = 0; pass < 4; pass += 1) {
+  for (let pass = 0; pass < 20; pass += 1) {
     const begin = process.hrtime.bigint();
     for (const one of everyCount) sink += of(one);
     best = Math.min(best, Number(process.hrtime.bigint() - begin) / everyCount.length);
