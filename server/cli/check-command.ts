@@ -1,17 +1,19 @@
 import { existsSync } from 'node:fs';
 import { join } from 'node:path';
 import { Command } from 'commander';
-import { checkChain, type ChainHead, type ChainState } from '../store/change-table.ts';
+import { checkChain, followChain, type ChainHead, type ChainState } from '../store/change-table.ts';
 import { openToRead } from '../store/database.ts';
 import { schemaVersionOf } from '../store/migrate.ts';
 import { storeErrorOf } from '../store/sqlite-fault.ts';
 import { CommandFault, exitCode } from './exit-codes.ts';
+import { exportedChain } from './exported-chain.ts';
 import { toldSettings, withSettings } from './told-settings.ts';
 
 const examples = `
 Examples:
   vouchline check --data /var/lib/vouchline                     also while a server runs on it
   vouchline check --data backup --head 12:9f86d081…             against a head noted elsewhere before
+  vouchline check --export changes.ndjson                       an export of the whole record, away from the plant
 
 Note the head it prints outside of the machine now and then: whoever may write the data directory could write the whole
 record anew, and only a noted head finds that.
@@ -20,10 +22,11 @@ Exit codes: 0 whole, 1 broken, 2 bad input, 3 the data cannot be read.`;
 
 export function checkCommand(): Command {
   const command = withSettings(new Command('check').description('verify that nothing in the record of changes was altered or taken out'), ['data']);
-  command.option('--head <number:hash>', 'a head printed earlier, to be found again').option('--json', 'print JSON').addHelpText('after', examples);
-  return command.action(() => {
-    const { head, json } = command.opts<{ head?: string; json?: boolean }>();
-    const state = chainOf(join(toldSettings(command).data, 'vouchline.db'), head === undefined ? undefined : headOf(head));
+  command.option('--head <number:hash>', 'a head printed earlier, to be found again').option('--export <file>', 'an export of the whole record (NDJSON) in place of a data directory; - for standard input').option('--json', 'print JSON').addHelpText('after', examples);
+  return command.action(async () => {
+    const { head, json, export: file } = command.opts<{ head?: string; json?: boolean; export?: string }>();
+    const noted = head === undefined ? undefined : headOf(head);
+    const state = file === undefined ? chainOf(join(toldSettings(command).data, 'vouchline.db'), noted) : followChain(await exportedChain(file), 0, noted);
     process.stdout.write(json === true ? `${JSON.stringify(state)}\n` : `${sentenceOf(state)}\n`);
     if (state.kind === 'broken') process.exitCode = exitCode.foundWrong;
   });

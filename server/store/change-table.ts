@@ -15,7 +15,8 @@ export type ChainState =
   | { readonly kind: 'whole'; readonly head: ChainHead }
   | { readonly kind: 'broken'; readonly at: number; readonly why: 'missing' | 'altered' | 'cut-off' | 'not-as-noted' };
 
-interface Row {
+/** A record with its canonical JSON and the hash that chains it. */
+export interface ChainedRow {
   readonly id: number;
   readonly body: string;
   readonly hash: Buffer;
@@ -26,7 +27,7 @@ export const beginning = Buffer.alloc(32);
 
 /** Adds a record; to be called within the transaction of what it records. `at` is wall time, ms since 1970-01-01 UTC. */
 export function appendChange(database: Database.Database, change: Change, at: number): void {
-  const last = database.prepare('SELECT hash FROM changes ORDER BY id DESC LIMIT 1').get() as Pick<Row, 'hash'> | undefined;
+  const last = database.prepare('SELECT hash FROM changes ORDER BY id DESC LIMIT 1').get() as Pick<ChainedRow, 'hash'> | undefined;
   const id = highestGiven(database) + 1;
   const body = canonicalJson({ id, at, ...change });
   database.prepare('INSERT INTO changes VALUES (?, ?, ?)').run(id, body, chainedHash(last?.hash ?? beginning, body));
@@ -40,14 +41,20 @@ export function appendChange(database: Database.Database, change: Change, at: nu
  * @param noted a head noted earlier, outside of the database
  */
 export function checkChain(database: Database.Database, noted?: ChainHead): ChainState {
+  const rows = database.prepare('SELECT id, body, hash FROM changes ORDER BY id').iterate() as IterableIterator<ChainedRow>;
+  return followChain(rows, highestGiven(database), noted);
+}
+
+/** Follows a chain wherever it is kept. @param rows by rising id @param highest number that was ever given, 0 where that is not known */
+export function followChain(rows: Iterable<ChainedRow>, highest: number, noted?: ChainHead): ChainState {
   let head: { id: number; hash: Buffer } = { id: 0, hash: beginning };
-  for (const row of database.prepare('SELECT id, body, hash FROM changes ORDER BY id').iterate() as IterableIterator<Row>) {
+  for (const row of rows) {
     if (row.id !== head.id + 1) return { kind: 'broken', at: head.id + 1, why: 'missing' };
     if (!row.hash.equals(chainedHash(head.hash, row.body))) return { kind: 'broken', at: row.id, why: 'altered' };
     if (row.id === noted?.id && row.hash.toString('hex') !== noted.hash) return { kind: 'broken', at: row.id, why: 'not-as-noted' };
     head = row;
   }
-  if (head.id < Math.max(highestGiven(database), noted?.id ?? 0)) return { kind: 'broken', at: head.id + 1, why: 'cut-off' };
+  if (head.id < Math.max(highest, noted?.id ?? 0)) return { kind: 'broken', at: head.id + 1, why: 'cut-off' };
   return { kind: 'whole', head: { id: head.id, hash: head.hash.toString('hex') } };
 }
 

@@ -1,4 +1,4 @@
-import { mkdtempSync, rmSync } from 'node:fs';
+import { mkdtempSync, rmSync, writeFileSync } from 'node:fs';
 import { tmpdir } from 'node:os';
 import { join } from 'node:path';
 import Database from 'better-sqlite3';
@@ -43,6 +43,34 @@ describe('vouchline check', () => {
   it('names the first record deleted from the file, the last one too', async () => {
     inFile('DELETE FROM changes WHERE id = 2');
     expect(await check()).toMatchObject({ code: 1, out: 'The record of changes is broken at record 2: it and all that followed are missing.\n' });
+  });
+
+  it('verifies an export of the whole record, wherever it lies', async () => {
+    const directory = dataDirectory(example);
+    try {
+      const served = await servedOn(directory.path);
+      const [guarantee] = (await (await fetch(`${served.address}/api/guarantees`)).json()) as { card: { id: string } }[];
+      for (const reason of ['new die', 'new “knife”']) {
+        await fetch(`${served.address}/api/guarantees/${guarantee!.card.id}/restart`, { method: 'POST', headers: { 'content-type': 'application/json' }, body: JSON.stringify({ by: 'Ines', reason }) });
+      }
+      const text = await (await fetch(`${served.address}/api/changes/export`)).text();
+      const { id, hash } = (await (await fetch(`${served.address}/api/changes/head`)).json()) as { id: number; hash: string };
+      await served.stop('the test is over');
+      const path = join(data, 'changes.ndjson');
+      const checked = (lines: readonly string[], ...more: readonly string[]): ReturnType<typeof vouchline> => {
+        writeFileSync(path, lines.join('\n'));
+        return vouchline(['check', '--export', path, ...more]);
+      };
+      const lines = text.trimEnd().split('\n');
+      expect(await checked(lines, '--head', `${id}:${hash}`)).toMatchObject({ code: 0, out: `The record of changes is whole: 3 records, head 3:${hash}\n` });
+      expect(await checked(lines.map((line) => line.replace('new die', 'old die')))).toMatchObject({ code: 1, out: expect.stringContaining('broken at record 2') as string });
+      expect(await checked(lines.filter((_, at) => at !== 1))).toMatchObject({ code: 1, out: 'The record of changes is broken at record 2: it is missing.\n' });
+      expect(await checked(lines.slice(1), '--head', `${id}:${hash}`)).toMatchObject({ code: 1, out: expect.stringContaining('broken at record 3: it and all that followed') as string });
+      expect(await checked(['{}', ...lines])).toMatchObject({ code: 2, err: expect.stringContaining('--export: line 1 is "{}"') as string });
+      expect(await checked(['id,at', ...lines])).toMatchObject({ code: 2, err: expect.stringContaining('--export: line 1') as string });
+    } finally {
+      directory.remove();
+    }
   });
 
   it('ends with 2 for a head or a directory that cannot be used', async () => {
