@@ -141,8 +141,8 @@ export function headline(formats: Formats, needing: number, all: number): string
 }
 
 /** What would take a change detector to its alarm, and what brings it back. */
-export function detectorWords(formats: Formats, { inARowToAlarm, conformingToHalfWay }: DetectorView): string {
-  const alarm = inARowToAlarm === undefined ? '' : `${counted(formats, inARowToAlarm, 'nonconforming unit')} in a row would raise it. `;
+export function detectorWords(formats: Formats, { inARowToAlarm, conformingToHalfWay }: DetectorView, card: GuaranteeCard): string {
+  const alarm = inARowToAlarm === undefined ? '' : `${counted(formats, inARowToAlarm, fault(card), faults(card))} in a row would raise it. `;
   const back = conformingToHalfWay === undefined || conformingToHalfWay === 0 ? '' : `Half way again after ${counted(formats, conformingToHalfWay, 'conforming unit')} in a row.`;
   return `${alarm}${back}`.trim();
 }

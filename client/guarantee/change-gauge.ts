@@ -15,7 +15,7 @@ export function changeGauge(formats: Formats, card: GuaranteeCard, view: Guarant
   return html`<section class="sheet part change-part ${detector.alarmed ? 'alarmed' : ''}"><h2>Change detector</h2>
     <svg class="gauge" viewBox="0 0 100 10" preserveAspectRatio="none" role="img" aria-label="${share} of the way to its alarm"><rect width=${100 * detector.gauge} height="10"></rect><line x1="50" x2="50" y1="0" y2="10"></line></svg>
     <p class="ends quiet"><span>at rest</span><span>half way</span><span>alarm</span></p>
-    <p>${detector.alarmed ? html`<b>Its alarm stands.</b> ` : nothing}${share} of the way ${detector.alarmed ? 'still, back at half way it returns' : 'to its alarm'}. ${detectorWords(formats, detector)}</p>
+    <p>${detector.alarmed ? html`<b>Its alarm stands.</b> ` : nothing}${share} of the way ${detector.alarmed ? 'still, back at half way it returns' : 'to its alarm'}. ${detectorWords(formats, detector, card)}</p>
     ${lately(formats, detector, paths)}
     ${detector.doubt === undefined ? nothing : html`<p class="warning"><b>Mind:</b> ${detector.doubt}</p>`}
     <details><summary>What does this mean?</summary>
@@ -27,7 +27,7 @@ export function changeGauge(formats: Formats, card: GuaranteeCard, view: Guarant
 function meaning(formats: Formats, card: GuaranteeCard, { betweenFalseCalls, kind }: DetectorView): string {
   if (card.scale.kind === 'measure') return `The gauge fills with every value on the bad side and empties with every good one; when it is full, the mean has become worse. A well line calls falsely at most once in ${counted(formats, betweenFalseCalls, 'value')} on average, however often anybody looks.`;
   const between = card.scale.kind === 'rate' ? `${formats.count(betweenFalseCalls)} ${card.scale.unit}` : counted(formats, betweenFalseCalls, 'unit');
-  return `The gauge fills with every nonconforming unit and empties while units conform; when it is full, the rate has risen. A well line calls falsely ${kind === 'cusum' ? 'about' : 'at most'} once in ${between} on average, however often anybody looks.`;
+  return `The gauge fills with every ${card.scale.kind === 'rate' ? 'nonconformity and empties where there is none' : 'nonconforming unit and empties while units conform'}; when it is full, the rate has risen. A well line calls falsely ${kind === 'cusum' ? 'about' : 'at most'} once in ${between} on average, however often anybody looks.`;
 }
 
 /** The gauge of the last hours as a line from rest to alarm; nothing before two marks. */

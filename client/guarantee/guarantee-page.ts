@@ -4,6 +4,8 @@ import { repeat } from 'lit/directives/repeat.js';
 import { switchMap, timer, type Subscription } from 'rxjs';
 import type { Actor } from '../access/actor.ts';
 import { roleMissing } from '../access/role-words.ts';
+import type { GuaranteeCard } from '../../core/view/guarantee-view.ts';
+import type { Strip } from '../../core/view/history.ts';
 import { byUrgency } from '../attention.ts';
 import '../alarms/alarm-card.ts';
 import type { Lane } from '../board/lane.ts';
@@ -31,6 +33,11 @@ import { windowFigures } from './window-figures.ts';
 /** How often the records behind the page are asked for, ms, and how many steps a history is drawn in. */
 const askEveryMs = 3000;
 const points = 240;
+
+/** Windows of exposure, measurements or time have no single units to show. */
+function hasUnits(card: GuaranteeCard, strip: Strip | undefined): boolean {
+  return strip === undefined ? card.scale.kind === 'share' && card.window.kind !== 'time' : strip.units > 0 || strip.full !== undefined;
+}
 
 /** One guarantee: where it stands, how it came there, and how that is known. */
 export class GuaranteePage extends LitElement {
@@ -80,8 +87,8 @@ export class GuaranteePage extends LitElement {
       <div class="columns">
         <div class="main">
           <section class="sheet part" aria-label="Over time">${this.#overTime(lane, formats, picture)}</section>
-          <section class="sheet part"><h2>Units of the window</h2><unit-strip .strip=${this.records?.strip} .formats=${formats}></unit-strip></section>
-          ${this.records?.picture === undefined || this.records.picture.kind === 'none' ? nothing : html`<section class="sheet part"><guarantee-picture .picture=${this.records.picture} .card=${lane.card} .formats=${formats}></guarantee-picture></section>`}
+          ${hasUnits(lane.card, this.records?.strip) ? html`<section class="sheet part"><h2>Units of the window</h2><unit-strip .strip=${this.records?.strip} .formats=${formats}></unit-strip></section>` : nothing}
+          ${this.records?.picture === undefined || this.records.picture.kind === 'none' ? nothing : html`<section class="sheet part"><guarantee-picture .picture=${this.records.picture} .card=${lane.card} .formats=${formats} .timeZone=${picture.plant.timeZone}></guarantee-picture></section>`}
           ${lane.view.run === undefined ? nothing : html`<section class="sheet part" aria-label="Evidence of the run"><run-evidence .card=${lane.card} .run=${lane.view.run} .paths=${this.records?.paths} .formats=${formats} .timeZone=${picture.plant.timeZone} .plantNow=${this.plantNow}></run-evidence></section>`}
           <div class="sheet part">${howComputed(formats, lane.card, lane.view)}</div>
         </div>
@@ -106,7 +113,7 @@ export class GuaranteePage extends LitElement {
       <div>
         <p class="word"><svg viewBox="0 0 16 16" aria-hidden="true">${stateMark(view.state)}</svg>${stateWord[view.state]}<b>${written(formats.figureBesideLine(card, view.bound))}</b></p>
         <p>${stateMeaning[view.state]}</p>
-        <p>${[view.state === 'unknown' ? view.remark : marginWords(formats, card, view), view.drift === undefined ? undefined : `${driftWord[view.drift]} over the last hour`].filter((part) => part !== undefined).map((part) => `${part}. `)}</p>
+        <p>${[view.state === 'unknown' ? view.remark : marginWords(formats, card, view), view.drift === undefined ? undefined : `${driftWord[view.drift]} over the last hour`].filter((part) => part !== undefined).map((part) => `${part.replace(/\.$/, '')}. `)}</p>
         ${view.remark === undefined || view.state === 'unknown' ? nothing : html`<p>${view.remark}</p>`}
         ${view.warnings.map((warning) => html`<p class="warning"><b>Mind:</b> ${warning}</p>`)}
       </div>

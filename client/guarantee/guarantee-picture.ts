@@ -4,21 +4,24 @@ import type { GuaranteeCard } from '../../core/view/guarantee-view.ts';
 import { written, type Formats } from '../format.ts';
 import { base } from '../look/base.ts';
 import { ElementWidth } from '../parts/element-width.ts';
-import { valueTicks } from './axis-ticks.ts';
+import { counted } from '../words.ts';
+import { timeTicks, valueTicks, zoneOffset } from './axis-ticks.ts';
 import { normalCurve } from './normal-curve.ts';
 
 type Distribution = Extract<Picture, { kind: 'distribution' }>;
 type Stations = Extract<Picture, { kind: 'stations' }>;
+type Steps = Extract<Picture, { kind: 'steps' }>;
 
-/** What suits the kind of guarantee: the values with their limit and model, or the stations side by side. */
+/** What suits the kind of guarantee: the values with their limit and model, the stations side by side, or a window of time part by part. */
 export class GuaranteePicture extends LitElement {
-  static override properties = { picture: { attribute: false }, card: { attribute: false }, formats: { attribute: false } };
+  static override properties = { picture: { attribute: false }, card: { attribute: false }, formats: { attribute: false }, timeZone: { attribute: false } };
 
   static override styles = [base, css`
     h2 { font-size: 1.05rem; margin-bottom: 0.4rem; }
     svg { display: block; }
     text { font-family: var(--face); font-size: 12.5px; fill: var(--quiet); }
     .bin { fill: var(--calm); opacity: 0.5; }
+    .bin.ground { opacity: 0.25; }
     .bin.out { fill: var(--harm-mark); opacity: 0.9; }
     .model { fill: none; stroke: var(--ink); stroke-width: 1.8; }
     .tail { fill: var(--harm-mark); opacity: 0.25; }
@@ -39,6 +42,7 @@ export class GuaranteePicture extends LitElement {
   declare picture: Picture | undefined;
   declare card: GuaranteeCard | undefined;
   declare formats: Formats | undefined;
+  declare timeZone: string | undefined;
   readonly #width = new ElementWidth(this);
 
   protected override render(): TemplateResult | typeof nothing {
@@ -49,6 +53,8 @@ export class GuaranteePicture extends LitElement {
         return nothing;
       case 'distribution':
         return html`<h2>Values of the window</h2>${this.#distribution(picture, formats)}`;
+      case 'steps':
+        return html`<h2>The window by time</h2>${this.#steps(picture, formats)}`;
       case 'stations':
         return html`<h2>Station by station</h2>${this.#stations(picture, formats, card)}`;
     }
@@ -93,6 +99,27 @@ export class GuaranteePicture extends LitElement {
 
   #distributionWords({ mean, sd, unit }: Distribution, total: number, formats: Formats): string {
     return `${formats.count(total)} values, mean ${formats.plain(mean)} ${unit}, standard deviation ${formats.plain(sd)} ${unit}`;
+  }
+
+  /** Nonconforming units of each part as a bar; parts in which nothing was inspected are left open. */
+  #steps({ from, stepMs, inspected, nonconforming }: Steps, formats: Formats): TemplateResult | typeof nothing {
+    const width = this.#width.px;
+    if (width === 0) return nothing;
+    const to = from + stepMs * inspected.length;
+    const most = Math.max(1, ...nonconforming);
+    const [top, bottom] = [18, 110];
+    const xOf = (at: number): number => 4 + ((at - from) / (to - from)) * (width - 8);
+    const bar = (part: number, kind: string, tall: number): SVGTemplateResult =>
+      svg`<rect class=${kind} x=${xOf(from + part * stepMs) + 0.5} width=${Math.max(1, xOf(from + stepMs) - xOf(from) - 1)} y=${bottom - tall} height=${tall}></rect>`;
+    const total = (counts: readonly number[]): number => counts.reduce((sum, count) => sum + count, 0);
+    const words = `${formats.count(total(nonconforming))} nonconforming among ${counted(formats, total(inspected), 'unit')}; at most ${formats.count(Math.max(0, ...nonconforming))} in ${formats.span(stepMs)}`;
+    const longSpan = to - from > 36 * 3_600_000;
+    return html`<svg width=${width} height="136" role="img" aria-label=${words}>
+      ${inspected.map((units, part) => (units === 0 ? nothing : bar(part, 'bin ground', 3)))}
+      ${nonconforming.map((count, part) => (count === 0 ? nothing : bar(part, 'bin', (count / most) * (bottom - top))))}
+      <line class="axis" x1="0" x2=${width} y1=${bottom} y2=${bottom}></line>
+      ${timeTicks(from, to, Math.max(2, Math.floor(width / 90)), zoneOffset(this.timeZone ?? 'UTC', to)).map((at) => svg`<text x=${Math.min(width - 30, Math.max(30, xOf(at)))} y=${bottom + 18} text-anchor="middle">${longSpan ? formats.day(at) : formats.minute(at)}</text>`)}
+    </svg><p class="said">${words}.</p>`;
   }
 
   #stations({ stations }: Stations, formats: Formats, card: GuaranteeCard): TemplateResult {

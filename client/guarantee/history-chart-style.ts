@@ -12,7 +12,7 @@ export const historyChartStyle = css`
   .hatch { stroke: var(--edge); stroke-width: 1.2; opacity: 0.6; }
   .line { stroke: var(--ink); stroke-width: 2.2; }
   .line-name, .name.strong { fill: var(--ink); font-weight: 650; }
-  .line-name { paint-order: stroke; stroke: var(--sheet); stroke-width: 3px; stroke-linejoin: round; }
+  .line-name, .inside { paint-order: stroke; stroke: var(--sheet); stroke-width: 3px; stroke-linejoin: round; }
   path { fill: none; stroke-linejoin: round; }
   .bound { stroke: var(--calm); stroke-width: 3; }
   .bound.undecided { stroke: var(--care-mark); stroke-width: 4; }

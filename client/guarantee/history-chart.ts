@@ -8,11 +8,25 @@ import { counted, promisedLimit, stateWord } from '../words.ts';
 import { timeTicks, valueTicks, zoneOffset } from './axis-ticks.ts';
 import { historyChartStyle } from './history-chart-style.ts';
 import { historyEvent, stoppedSpans } from './history-event.ts';
-import { historyFrame, type HistoryFrame } from './history-frame.ts';
+import { historyFrame, valueRange, type HistoryFrame } from './history-frame.ts';
 import { statePaths, valuePath } from './history-paths.ts';
 
 const stripHeight = 44;
 const eventHeight = 26;
+const mostTicks = 5;
+const pixelsALetter = 7;
+
+/** What one step holds, in words. */
+function inStep(formats: Formats, { scale }: GuaranteeCard, inspected: number, nonconforming: number): string {
+  switch (scale.kind) {
+    case 'share':
+      return `${counted(formats, inspected, 'unit')}, ${formats.count(nonconforming)} nonconforming in this step`;
+    case 'rate':
+      return `${counted(formats, nonconforming, 'nonconformity', 'nonconformities')} in ${formats.count(inspected)} ${scale.unit} in this step`;
+    case 'measure':
+      return `${counted(formats, inspected, 'value')} in this step`;
+  }
+}
 
 /** Bound, estimate and line over time; below them, on the same axis, what was nonconforming and what happened. */
 export class HistoryChart extends LitElement {
@@ -41,7 +55,9 @@ export class HistoryChart extends LitElement {
     const { card, history, formats } = this;
     if (card === undefined || history === undefined || formats === undefined || this.#width.px === 0) return html`<div class="room"></div>`;
     if (history.at.length === 0) return html`<p class="none quiet">No records in this span.</p>`;
-    const frame = historyFrame(this.#width.px, card, history);
+    const [low, high] = valueRange(card, history);
+    const labels = valueTicks(low, high, mostTicks).map((value) => written(formats.figure(card, value)).length);
+    const frame = historyFrame(this.#width.px, card, history, pixelsALetter * Math.max(0, ...labels));
     const step = Math.min(this.chosen ?? history.at.length - 1, history.at.length - 1);
     const height = frame.bottom + 14 + stripHeight + eventHeight + 26;
     return html`
@@ -52,7 +68,7 @@ export class HistoryChart extends LitElement {
         <svg width=${frame.width} height=${height} aria-hidden="true">
           <defs><clipPath id="panel"><rect x=${frame.left} y=${frame.top - 8} width=${frame.right - frame.left} height=${frame.bottom - frame.top + 8}></rect></clipPath>
           <pattern id="stopped" width="7" height="7" patternUnits="userSpaceOnUse" patternTransform="rotate(45)"><line x1="0" x2="0" y1="0" y2="7" class="hatch"></line></pattern></defs>
-          ${this.#ground(frame, card, history, formats)} ${this.#series(frame, card, history, formats)} ${this.#strip(frame, history)} ${this.#events(frame, history, formats)}
+          ${this.#ground(frame, card, history, formats)} ${this.#series(frame, card, history, formats)} ${this.#values(frame, card, formats)} ${this.#strip(frame, card, history)} ${this.#events(frame, history, formats)}
           ${this.chosen === undefined ? nothing : svg`<line class="cursor" x1=${frame.xOf(history.at[step] ?? 0)} x2=${frame.xOf(history.at[step] ?? 0)} y1=${frame.top} y2=${frame.bottom + 14 + stripHeight}></line>`}
         </svg>
       </div>`;
@@ -67,7 +83,7 @@ export class HistoryChart extends LitElement {
       formats.moment(at),
       `bound ${figure(history.bound[step])}`,
       `estimate ${figure(history.estimate[step])}`,
-      `${counted(formats, history.inspected[step] ?? 0, card.scale.kind === 'rate' ? card.scale.unit : 'unit', card.scale.kind === 'rate' ? card.scale.unit : 'units')}, ${formats.count(history.nonconforming[step] ?? 0)} nonconforming in this step`,
+      inStep(formats, card, history.inspected[step] ?? 0, history.nonconforming[step] ?? 0),
       ...(state === undefined ? [] : [stateWord[state].toLowerCase()]),
     ].join(', ');
   }
@@ -81,8 +97,7 @@ export class HistoryChart extends LitElement {
     return svg`
       <rect class="beyond" x=${left} y=${badTop} width=${right - left} height=${Math.max(0, badBottom - badTop)}></rect>
       ${stoppedSpans(history.events, history.to).map(([a, b]) => svg`<rect fill="url(#stopped)" x=${frame.xOf(a)} y=${top} width=${Math.max(1, frame.xOf(b) - frame.xOf(a))} height=${bottom + 14 + stripHeight - top}></rect>`)}
-      ${valueTicks(frame.low, frame.high, 5).map((value) => svg`<line class="grid" x1=${left} x2=${right} y1=${frame.yOf(value)} y2=${frame.yOf(value)}></line>
-        <text class="tick" x=${left === 8 ? left + 2 : left - 8} y=${frame.yOf(value) + (left === 8 ? -4 : 4)} text-anchor=${left === 8 ? 'start' : 'end'}>${written(formats.figure(card, value))}</text>`)}
+      ${valueTicks(frame.low, frame.high, mostTicks).map((value) => svg`<line class="grid" x1=${left} x2=${right} y1=${frame.yOf(value)} y2=${frame.yOf(value)}></line>`)}
       ${times.map((at) => svg`<line class="grid" x1=${frame.xOf(at)} x2=${frame.xOf(at)} y1=${top} y2=${bottom + 14 + stripHeight}></line>
         <text class="tick" x=${frame.xOf(at)} y=${bottom + 14 + stripHeight + eventHeight + 17} text-anchor="middle">${longSpan ? formats.day(at) : formats.minute(at)}</text>`)}`;
   }
@@ -101,6 +116,12 @@ export class HistoryChart extends LitElement {
       ${frame.left === 8 ? nothing : this.#names(frame, [['bound', last(history.bound)], ['estimate', last(history.estimate)], ['opposite bound', last(history.opposite)]])}`;
   }
 
+  /** Figures of the grid; in a narrow drawing they stand inside, over the lines. */
+  #values(frame: HistoryFrame, card: GuaranteeCard, formats: Formats): SVGTemplateResult[] {
+    const inside = frame.left === 8;
+    return valueTicks(frame.low, frame.high, mostTicks).map((value) => svg`<text class=${inside ? 'tick inside' : 'tick'} x=${inside ? frame.left + 2 : frame.left - 8} y=${frame.yOf(value) + (inside ? -4 : 4)} text-anchor=${inside ? 'start' : 'end'}>${written(formats.figure(card, value))}</text>`);
+  }
+
   /** Names at the right end of their lines, kept apart; one that would stand outside the panel is put at its edge. */
   #names(frame: HistoryFrame, named: readonly (readonly [string, number | undefined])[]): SVGTemplateResult[] {
     const placed = named
@@ -115,7 +136,8 @@ export class HistoryChart extends LitElement {
   }
 
   /** Nonconforming units: each of the present window as a stroke at its time; older ones as bars of their step. */
-  #strip(frame: HistoryFrame, history: History): SVGTemplateResult {
+  #strip(frame: HistoryFrame, card: GuaranteeCard, history: History): SVGTemplateResult | typeof nothing {
+    if (card.scale.kind === 'measure') return nothing; // Of a mean nothing is counted.
     const top = frame.bottom + 14;
     const base = top + stripHeight;
     const most = Math.max(4, ...history.nonconforming);
@@ -128,7 +150,7 @@ export class HistoryChart extends LitElement {
       })}
       ${ticks.map((at) => svg`<line class="stroke" x1=${frame.xOf(at)} x2=${frame.xOf(at)} y1=${top} y2=${top + 9}></line>`)}
       <line class="axis" x1=${frame.left} x2=${frame.right} y1=${base} y2=${base}></line>
-      ${frame.left === 8 ? nothing : svg`<text class="tick" x=${frame.left - 8} y=${base - 12} text-anchor="end">noncon-</text><text class="tick" x=${frame.left - 8} y=${base} text-anchor="end">forming</text>`}
+      ${frame.left === 8 ? nothing : svg`<text class="tick" x=${frame.left - 8} y=${base - 12} text-anchor="end">noncon-</text><text class="tick" x=${frame.left - 8} y=${base} text-anchor="end">${card.scale.kind === 'rate' ? 'formities' : 'forming'}</text>`}
     </g>`;
   }
 

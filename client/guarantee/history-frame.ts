@@ -32,9 +32,10 @@ export function valueRange(card: Pick<GuaranteeCard, 'guaranteeLine' | 'target' 
   return [Math.max(0, low), card.scale.kind === 'share' ? Math.min(1, high) : high];
 }
 
-export function historyFrame(width: number, card: GuaranteeCard, history: History): HistoryFrame {
+/** @param labelWidth of the widest figure at the left, px */
+export function historyFrame(width: number, card: GuaranteeCard, history: History, labelWidth: number): HistoryFrame {
   const narrow = width < 560;
-  const left = narrow ? 8 : 84;
+  const left = narrow ? 8 : Math.max(84, labelWidth + 12);
   const right = width - (narrow ? 8 : 104);
   const top = 26;
   const bottom = top + (narrow ? 190 : 250);

@@ -71,13 +71,16 @@ export class RunEvidencePart extends LitElement {
     const now = run.kept === undefined || run.broken === undefined ? undefined : { at: to, kept: run.kept, broken: run.broken };
     const at = [from, ...(paths?.run.at ?? []), ...(now ? [now.at] : [])];
     const line = (name: 'kept' | 'broken'): string => evidencePath(at, [0, ...(paths?.run[name] ?? []), ...(now ? [now[name]] : [])], xOf, scale.yOf);
+    const enough = run.enoughKept === run.enoughBroken
+      ? [{ y: scale.yOf(run.enoughKept), words: 'enough to say either' }]
+      : [{ y: scale.yOf(run.enoughKept), words: 'enough to say kept' }, { y: scale.yOf(run.enoughBroken), words: 'enough to say broken' }];
     const words = `Evidence that the guarantee is kept: ${oddsWords(formats, run.kept)}; that it is broken: ${oddsWords(formats, run.broken)}`;
     return html`<svg class="chart" width=${width} height=${height} role="img" aria-label=${words}>
       ${this.#ground(scale, { left, right, from, to, xOf }, formats)}
-      ${this.#enough(scale.yOf(run.enoughKept), 'enough to say kept', left, right, run.enoughKept === run.enoughBroken)}
-      ${run.enoughKept === run.enoughBroken ? nothing : this.#enough(scale.yOf(run.enoughBroken), 'enough to say broken', left, right, false)}
+      ${enough.map(({ y }) => svg`<line class="enough" x1=${left} x2=${right} y1=${y} y2=${y}></line>`)}
       <path class="kept" d=${line('kept')}></path><path class="broken" d=${line('broken')}></path>
       ${now ? svg`<circle class="kept" cx=${xOf(to)} cy=${scale.yOf(now.kept)} r="4"></circle><rect class="broken" x=${xOf(to) - 4} y=${scale.yOf(now.broken) - 4} width="8" height="8"></rect>` : nothing}
+      ${enough.map(({ y, words: said }) => svg`<text class="label" x=${left + 6} y=${y - 5}>${said}</text>`)}
     </svg>`;
   }
 
@@ -88,10 +91,6 @@ export class RunEvidencePart extends LitElement {
     return svg`${scale.ticks.map((power) => svg`<line class="grid" x1=${left} x2=${right} y1=${scale.yOf(power)} y2=${scale.yOf(power)}></line>
         <text class="tick" x=${left - 6} y=${scale.yOf(power) + 4} text-anchor="end">${powerLabel(power)}</text>`)}
       ${times.map((at) => svg`<text class="tick" x=${xOf(at)} y=${height - 8} text-anchor="middle">${longSpan ? formats.day(at) : formats.minute(at)}</text>`)}`;
-  }
-
-  #enough(y: number, words: string, left: number, right: number, both: boolean): SVGTemplateResult {
-    return svg`<line class="enough" x1=${left} x2=${right} y1=${y} y2=${y}></line><text class="label" x=${left + 6} y=${y - 5}>${both ? 'enough to say either' : words}</text>`;
   }
 }
 

@@ -10,6 +10,9 @@ const names: Readonly<Record<string, string>> = {
   runCount: 'Nonconformities in the run', runRecords: 'Records of the run', runValues: 'Values of the run', runMean: 'Mean of the run', critical: 'Most it can take',
 };
 
+/** Figures of single stations have a table of their own. */
+const ofStations = /^(inspected at |nonconforming at |limitingStation$)/;
+
 const readable = (name: string): string => {
   const words = name.replace(/([A-Z])/g, ' $1').replace(/[-_]/g, ' ').toLowerCase();
   return words.charAt(0).toUpperCase() + words.slice(1);
@@ -36,7 +39,7 @@ export function windowFigures(formats: Formats, card: GuaranteeCard, view: Guara
     ${row('Confidence level', formats.confidence(card.confidence))}
     ${row('Look rule', view.lookRule)}
     ${row('Window', windowWords(formats, card.window, card))}
-    ${Object.entries(view.figures).map(([name, value]) => row(names[name] ?? readable(name), inUnit(name, value)))}
+    ${Object.entries(view.figures).filter(([name]) => !ofStations.test(name)).map(([name, value]) => row(names[name] ?? readable(name), inUnit(name, value)))}
     ${view.product === undefined ? nothing : row('Product now', view.product)}
     ${view.lot === undefined ? nothing : row('Lot now', view.lot)}
     ${view.lineRunning === undefined ? nothing : row('Line', view.lineRunning ? 'running' : 'stopped')}

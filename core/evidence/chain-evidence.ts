@@ -19,6 +19,8 @@ export type StationEvidence = UnitEvidence | TimedUnitEvidence;
 export interface ChainSettings {
   /** Ids of the stations in line order, two or more. */
   readonly stations: readonly string[];
+  /** How people call them. */
+  readonly stationName: (id: string) => string;
   readonly tail: Parameters<typeof chainedYieldLower>[1];
   /** The window of one station, which reports to the weighing. */
   readonly stationOf: (weighing: Weighing) => StationEvidence;
@@ -119,8 +121,8 @@ export class ChainEvidence implements Evidence {
 
   warnings(): readonly string[] {
     const limiting = this.#limiting();
-    const clusters = this.#windows.flatMap((window, index) => window.warnings().map((text) => `${this.#settings.stations[index]}: ${text}`));
-    return limiting === undefined ? clusters : [`${limiting} holds the bound down most.`, ...clusters];
+    const clusters = this.#windows.flatMap((window, index) => window.warnings().map((text) => `${this.#nameOf(this.#settings.stations[index] ?? '')}: ${text}`));
+    return limiting === undefined ? clusters : [`${this.#nameOf(limiting)} holds the bound down most.`, ...clusters];
   }
 
   picture(): Picture {
@@ -129,7 +131,7 @@ export class ChainEvidence implements Evidence {
       kind: 'stations',
       stations: this.#counts().map(({ station, inspected, nonconforming }) => ({
         id: station,
-        name: station,
+        name: this.#nameOf(station),
         inspected,
         nonconforming,
         yield: inspected === 0 ? 0 : (inspected - nonconforming) / inspected,
@@ -161,6 +163,10 @@ export class ChainEvidence implements Evidence {
     for (const window of this.#windows) change(window);
     this.#changing = false;
     this.weigh(moment);
+  }
+
+  #nameOf(station: string): string {
+    return this.#settings.stationName(station);
   }
 
   /** Station without which the bound would stand highest; undefined while one has seen nothing, or none has lost a unit. */

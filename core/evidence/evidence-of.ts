@@ -26,8 +26,8 @@ import { UnitEvidence } from './unit-evidence.ts';
 import type { Weighing } from './weighing.ts';
 import { WholeLotsEvidence } from './whole-lots-evidence.ts';
 
-/** The running evidence that a guarantee asks for. */
-export function evidenceOf(guarantee: Guarantee, standing: Standing): Evidence {
+/** The running evidence that a guarantee asks for. @param stationName how people call a station */
+export function evidenceOf(guarantee: Guarantee, standing: Standing, stationName: (id: string) => string): Evidence {
   const { promise } = guarantee;
   switch (promise.quantity) {
     case 'nonconforming-fraction':
@@ -43,7 +43,7 @@ export function evidenceOf(guarantee: Guarantee, standing: Standing): Evidence {
     case 'chained-yield': {
       const { stations, tail } = guarantee;
       const stationOf = (weighing: Weighing): StationEvidence => unitsOf(guarantee, stationRule, weighing, {});
-      return new ChainEvidence({ stations, tail, stationOf }, new ChainRule(guarantee, promise.atLeast, promise.target), standing);
+      return new ChainEvidence({ stations, stationName, tail, stationOf }, new ChainRule(guarantee, promise.atLeast, promise.target), standing);
     }
     case 'rate':
       return new RecordEvidence(exposedRecords, recordsOf(guarantee, 2, () => new ExposureSum()), new RateRule(poissonRule(guarantee, { ...promise, line: promise.atMost })), standing);

@@ -2,6 +2,7 @@ import type { Finding } from '../record/part.ts';
 import { timeAt } from '../record/time-column.ts';
 import type { EpochMs } from '../units.ts';
 import type { Margin } from '../view/guarantee-view.ts';
+import type { Picture } from '../view/history.ts';
 import type { RecordIdentity, RecordRange } from '../window/record-identity.ts';
 import { endOfStep, type TimeSpan } from '../window/time-steps.ts';
 import { TimeWindow, type TimeWindowSnapshot } from '../window/time-window.ts';
@@ -32,6 +33,9 @@ export interface TimedUnitSnapshot {
   readonly began: number;
   readonly window: TimeWindowSnapshot;
 }
+
+/** Parts of the window that are drawn at most. */
+const mostParts = 120;
 
 /**
  * Evidence on a fraction of units in a window of the last span of time. Steps leave at the moment they are over, by the
@@ -117,6 +121,10 @@ export class TimedUnitEvidence implements Evidence {
 
   figures(): Readonly<Record<string, number>> {
     return countFigures(this.#rule, this.window.inspected, this.window.nonconforming);
+  }
+
+  picture(): Picture {
+    return this.window.inspected === 0 ? { kind: 'none' } : { kind: 'steps', ...this.window.parts(mostParts) };
   }
 
   ranges(): readonly RecordRange[] {

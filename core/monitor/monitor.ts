@@ -58,6 +58,7 @@ export class Monitor {
     this.desk = new AlarmDesk(tell);
     this.calendar = new ShiftCalendar(plant.shifts, plant.timeZone);
     this.streams = new StreamList(plant.lines.map(({ id }) => id));
+    const stationNames = new Map(plant.lines.flatMap(({ stations }) => stations.map(({ id, name }) => [id, name] as const)));
     this.watches = plant.guarantees.map(
       (guarantee) =>
         new Watch(guarantee, {
@@ -71,6 +72,7 @@ export class Monitor {
           mayBeDue: (at) => this.#clockwork.mayBeDue(at),
           plantVersion: () => this.plantVersion,
           sourceName: (index) => this.sources.nameOf(index),
+          stationName: (id) => stationNames.get(id) ?? id,
         }),
     );
     this.#routes = new Routes(plant, this.watches, this.streams);

@@ -17,4 +17,6 @@ export interface WatchSurroundings extends Surroundings {
   readonly mayBeDue: (at: number) => void;
   readonly plantVersion: () => string;
   readonly sourceName: (index: number) => string;
+  /** How people call a station. */
+  readonly stationName: (id: string) => string;
 }

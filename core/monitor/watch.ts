@@ -64,7 +64,7 @@ export class Watch {
       figures: () => decidingFigures(this),
       grounds: (rule, moment) => this.#grounds(rule, moment, decidingFigures(this)),
     });
-    this.evidence = evidenceOf(guarantee, this.standing);
+    this.evidence = evidenceOf(guarantee, this.standing, around.stationName);
     this.run = new GuaranteeRun(guarantee);
     this.change = guaranteeChangeOf(guarantee, {
       raised: (rule, moment, figures) => around.desk.raise(guarantee, rule, moment.at, () => this.#grounds(rule.kind, moment, figures)),

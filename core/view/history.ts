@@ -48,6 +48,15 @@ export type Picture =
       readonly model: { readonly verdict: 'fits' | 'does not fit' | 'too few values' | 'not used'; readonly sentence: string };
     }
   | {
+      /** A window of time in equal parts, oldest first. */
+      readonly kind: 'steps';
+      /** Start of the first part, and length of each, ms. */
+      readonly from: number;
+      readonly stepMs: number;
+      readonly inspected: readonly number[];
+      readonly nonconforming: readonly number[];
+    }
+  | {
       readonly kind: 'stations';
       readonly stations: readonly { readonly id: string; readonly name: string; readonly inspected: number; readonly nonconforming: number; readonly yield: number; readonly limiting: boolean }[];
     };

@@ -138,6 +138,25 @@ export class TimeWindow {
     return this.#steps.flatMap((step) => (step === undefined || step.inspected === 0 ? [] : [{ inspected: step.inspected, nonconforming: step.nonconforming }]));
   }
 
+  /**
+   * What was inspected over the window in equal parts of whole steps, oldest first.
+   *
+   * @param most parts, 1 or more
+   */
+  parts(most: number): { readonly from: number; readonly stepMs: number; readonly inspected: readonly number[]; readonly nonconforming: readonly number[] } {
+    const stepsEach = Math.ceil((this.#whole + 1) / most);
+    const count = Math.ceil((this.#whole + 1) / stepsEach);
+    const first = this.#present + 1 - count * stepsEach;
+    const inspected = new Array<number>(count).fill(0);
+    const nonconforming = new Array<number>(count).fill(0);
+    for (const [step, tally] of this.#covered()) {
+      const part = Math.floor((step - first) / stepsEach);
+      inspected[part] = (inspected[part] ?? 0) + tally.inspected;
+      nonconforming[part] = (nonconforming[part] ?? 0) + tally.nonconforming;
+    }
+    return { from: first * this.stepMs, stepMs: stepsEach * this.stepMs, inspected, nonconforming };
+  }
+
   /** Records in the window, as far as they are indexed, source by source. */
   ranges(): RecordRange[] {
     const ranges = [...this.#covered()].flatMap(([, tally]) => tally.ranges());

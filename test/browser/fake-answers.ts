@@ -35,6 +35,7 @@ export function historyOf({ card, view }: FakeGuarantee, from: number, to: numbe
 }
 
 export function stripOf({ card, view }: FakeGuarantee): Strip {
+  if (card.scale.kind !== 'share' || card.window.kind === 'time') return { guarantee: card.id, units: 0, full: undefined, nonconforming: [], left: 0 };
   const units = view.figures['inspected'] ?? 900;
   const count = Math.min(400, view.figures['nonconforming'] ?? view.figures['count'] ?? 2);
   return {
@@ -54,6 +55,11 @@ export function pictureOf({ card }: FakeGuarantee): Picture {
     ] };
   }
   const limit = card.specificationLimit;
+  if (card.window.kind === 'time' && limit === undefined) {
+    const { spanMs, stepMs } = card.window;
+    const parts = Math.min(120, Math.round(spanMs / stepMs));
+    return { kind: 'steps', from: plantStart - spanMs, stepMs: spanMs / parts, inspected: Array.from({ length: parts }, (_, part) => (part % 17 === 5 ? 0 : 290)), nonconforming: Array.from({ length: parts }, (_, part) => (part % 7 === 2 ? 1 + (part % 3) : 0)) };
+  }
   if (limit === undefined) return { kind: 'none' };
   const [mean, sd, unit] = card.quantity === 'mean' ? [251.42, 1.31, 'ml'] : card.id === 'pull-bh5' ? [1381.2, 51.4, 'N'] : [1.9, 0.14, 'N m'];
   const edges = Array.from({ length: 31 }, (_, index) => mean + sd * (index - 15) * 0.25);

@@ -46,6 +46,28 @@ describe('the page of a guarantee', () => {
     expect(await page.locator('.figures').innerText()).toMatch(/Upper bound\s+484\sppm/);
   });
 
+  it.each([
+    ['leak-bh4', 'Units of the window', ['The window by time']],
+    ['final-bh4', 'The window by time', ['Units of the window']],
+    ['chain-b', 'Station by station', ['The window by time']],
+    ['pull-bh5', 'Values of the window', []],
+    ['flaws-bh4', 'How this is computed', ['Units of the window', 'The window by time', 'Values of the window']],
+  ])('shows of %s what suits it: %s', async (id, shown, absent) => {
+    await open(id);
+    await page.getByRole('heading', { name: shown }).waitFor();
+    for (const heading of absent) expect(await page.getByRole('heading', { name: heading }).count(), heading).toBe(0);
+  });
+
+  it('writes figures of the axis whole, however long they are', async () => {
+    await open('flaws-bh4');
+    await page.getByText(/nonconformit(y|ies) in .* m in this step/).waitFor();
+    const cut = await page.locator('history-chart').evaluate((chart) => {
+      const edge = chart.getBoundingClientRect().left;
+      return [...chart.shadowRoot!.querySelectorAll('text')].filter((text) => text.getBoundingClientRect().left < edge - 0.5).map((text) => text.textContent);
+    });
+    expect(cut).toEqual([]);
+  });
+
   it("draws the run's evidence with what is enough, and the gauge's recent path", async () => {
     await open('leak-bh4');
     await page.locator('run-evidence path.broken').waitFor({ state: 'attached' });

@@ -78,7 +78,7 @@ describe('history', () => {
   });
 
   it('lines are broken where there is no value, and pieces of a state join', () => {
-    const frame = historyFrame(800, card(), history);
+    const frame = historyFrame(800, card(), history, 60);
     expect(valuePath(frame, history.at, history.bound).match(/M/g)).toHaveLength(2);
     const paths = statePaths(frame, history.at, history.bound, history.state);
     expect(paths.map((path) => path.state)).toEqual(['demonstrated', 'undecided']);

@@ -146,6 +146,7 @@ export const pictureAnswer: v.GenericSchema<Sent<Picture>> = v.variant('kind', [
     limit: v.optional(v.strictObject({ side: limitSide, value: number })),
     model: v.strictObject({ verdict: v.picklist(['fits', 'does not fit', 'too few values', 'not used']), sentence: text }),
   }),
+  v.strictObject({ kind: v.literal('steps'), from: moment, stepMs: number, inspected: v.array(whole), nonconforming: v.array(whole) }),
   v.strictObject({
     kind: v.literal('stations'),
     stations: v.array(v.strictObject({ id: text, name: text, inspected: whole, nonconforming: whole, yield: number, limiting: v.boolean() })),

@@ -142,6 +142,45 @@ describe('evidence on the fraction beyond a limit', () => {
   });
 });
 
+describe('the picture of values', () => {
+  const shown = (values: readonly number[], side = 'below', limit = 248) => {
+    const one = new WatchOne(`${beyond.replace('below: 248 ml', `${side}: ${limit} ml`)}, window: { units: 400 }, alarms: { ${quiet} }`);
+    one.take(fills(values));
+    const picture = one.watch.evidence.picture?.();
+    if (picture?.kind !== 'distribution') throw new Error('no distribution');
+    return picture;
+  };
+
+  it('has bins of whole steps of the values, so that it has no teeth', () => {
+    // 0.5 ml steps, each value as often as the next: bins of an eighth of the spread would hold now one, now none.
+    const { counts, edges } = shown(Array.from({ length: 400 }, (_, i) => 245 + (i % 20) / 2));
+    expect(counts).toEqual(Array.from({ length: 20 }, () => 20));
+    expect(edges[1]! - edges[0]!).toBeCloseTo(0.5, 12);
+  });
+
+  it('has no value on an edge: one on the limit stands on the side where it conforms', () => {
+    const { edges } = shown([247, 248, 248, 249, 251.5, 250, 250.5]);
+    expect(edges.some((edge) => Math.abs(edge - 247.75) < 1e-9)).toBe(true);
+  });
+
+  it('of values finer than its bins has an edge on the limit', () => {
+    const uniform = seededUniform(3);
+    const { edges } = shown(Array.from({ length: 400 }, () => 250 + 3 * uniform()));
+    expect(edges.some((edge) => Math.abs((edge - 248) / (edges[1]! - edges[0]!) - Math.round((edge - 248) / (edges[1]! - edges[0]!))) < 1e-6)).toBe(true);
+  });
+});
+
+describe('evidence on time', () => {
+  it('shows its window part by part', () => {
+    const one = new WatchOne(`station: A.leak, characteristic: tightness, quantity: nonconforming-fraction, at-most: 5 %, window: { time: 1 h, step: 10 min }, alarms: { ${quiet} }`);
+    expect(one.watch.evidence.picture?.()).toEqual({ kind: 'none' });
+    one.take(good(100));
+    const picture = one.watch.evidence.picture?.();
+    if (picture?.kind !== 'steps') throw new Error('no steps');
+    expect([picture.stepMs, picture.inspected.length, picture.inspected.reduce((a, b) => a + b), picture.nonconforming.reduce((a, b) => a + b)]).toEqual([600_000, 7, 100, 0]);
+  });
+});
+
 describe('evidence on a lot', () => {
   const plan = `station: A.leak, characteristic: outgoing, quantity: lot-fraction, at-most: 4 %, confidence: 90 %, alarms: { ${quiet} }`;
 
@@ -179,7 +218,7 @@ describe('evidence on a chain', () => {
     one.take(bad(40, 'cut'));
     expect([one.state, one.watch.evidence.figures()['limitingStation']]).toEqual(['violated', 1]);
     expect(one.watch.evidence.picture?.()).toMatchObject({ kind: 'stations', stations: [{ id: 'A.cutting', nonconforming: 40, limiting: true }, { id: 'A.leak', limiting: false }] });
-    expect(one.watch.evidence.warnings()[0]).toContain('A.cutting');
+    expect(one.watch.evidence.warnings()[0]).toBe('Cutting holds the bound down most.');
   });
 });
 

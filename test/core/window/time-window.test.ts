@@ -174,6 +174,19 @@ describe('a time window', () => {
   });
 });
 
+describe('the parts of a time window', () => {
+  it('are equal, cover it to the end of the present step, and hold what it holds', () => {
+    const window = new TimeWindow({ spanMs: 70, stepMs: 10 });
+    window.admitConforming(935, 0, 1, 5);
+    window.admitNonconforming(941, 0, 6, 2, 3);
+    window.admitConforming(1_000, 0, 7, 4);
+    window.admitNonconforming(1_007, 0, 11);
+    expect(window.parts(100)).toEqual({ from: 930, stepMs: 10, inspected: [5, 3, 0, 0, 0, 0, 0, 5], nonconforming: [0, 2, 0, 0, 0, 0, 0, 1] });
+    expect(window.parts(3)).toEqual({ from: 920, stepMs: 30, inspected: [8, 0, 5], nonconforming: [2, 0, 1] });
+    expect(window.parts(1)).toEqual({ from: 930, stepMs: 80, inspected: [13], nonconforming: [3] });
+  });
+});
+
 describe('the end of a step', () => {
   it('is where the first record of another step stands', () => {
     const steady = fc
