@@ -2,6 +2,7 @@ import { requireFinite } from '../bound/mean.ts';
 import { requirePositive, requireWhole } from '../bound/out-of-domain.ts';
 import { admitMean, newMeanDetector, type MeanDetectorState, type MeanDetectorTuning } from '../sequential/mean-detector.ts';
 import type { Uniform } from './seeded-uniform.ts';
+import { normalDeviates } from './normal-deviates.ts';
 import { RunTally, type SimulatedUnits } from './run-tally.ts';
 
 export interface MeanSimulation {
@@ -35,7 +36,7 @@ export function* simulateMeanDelay({ tuning, sigma, runs, uniform }: MeanSimulat
   requirePositive('sigma', sigma);
   requireWhole('runs', runs, 1);
   const tally = new RunTally(runs);
-  const deviate = deviates(uniform);
+  const deviate = normalDeviates(uniform);
   let state = newMeanDetector(tuning);
   const calm = (next: MeanDetectorState): boolean => next.alarms === state.alarms;
   let sinceCall = 0;
@@ -59,20 +60,4 @@ export function* simulateMeanDelay({ tuning, sigma, runs, uniform }: MeanSimulat
     if (steps % stepsPerReport === 0) yield tally.figure();
   }
   return tally.figure();
-}
-
-/** Standard normal deviates. @source G. E. P. Box, M. E. Muller 1958 (memory) */
-function deviates(uniform: Uniform): () => number {
-  let kept: number | undefined;
-  return () => {
-    if (kept !== undefined) {
-      const value = kept;
-      kept = undefined;
-      return value;
-    }
-    const radius = Math.sqrt(-2 * Math.log(uniform()));
-    const angle = 2 * Math.PI * uniform();
-    kept = radius * Math.sin(angle);
-    return radius * Math.cos(angle);
-  };
 }

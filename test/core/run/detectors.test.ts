@@ -2,7 +2,7 @@ import { describe, expect, it } from 'vitest';
 import { cusumPlan } from '../../../core/run-length/cusum-run-length.ts';
 import { seededUniform } from '../../../core/run-length/seeded-uniform.ts';
 import { admitFoundCusum, admitQuietCusum, newCusum } from '../../../core/sequential/cusum.ts';
-import { normals } from '../sequential/simulated-paths.ts';
+import { normalDeviates } from '../../../core/run-length/normal-deviates.ts';
 import { bad, cuts, fills, good, WatchOne } from '../evidence/watch-one.ts';
 
 const quiet = 'crossing: off, violation: off, silence: off, bad-data: off';
@@ -42,7 +42,7 @@ describe('a cumulative sum in the monitor', () => {
 describe('a detector of a mean', () => {
   const fill = 'station: A.filling, characteristic: fill, quantity: mean, at-least: 250 ml, target: 251 ml, window: run';
   const values = (mean: number, count: number, seed: number): number[] => {
-    const normal = normals(seededUniform(seed));
+    const normal = normalDeviates(seededUniform(seed));
     return Array.from({ length: count }, () => Math.max(246, Math.min(256, mean + normal())));
   };
 

@@ -1,7 +1,8 @@
 import { describe, expect, it } from 'vitest';
 import { seededUniform, type Uniform } from '../../../core/run-length/seeded-uniform.ts';
 import { admitMean, clearMeanAlarm, meanDetectorFrom, meanDetectorGauge, type MeanDetectorState, type MeanDetectorTuning, newMeanDetector, usualShifts, usualStakes } from '../../../core/sequential/mean-detector.ts';
-import { mostMisses, normals, paths } from './simulated-paths.ts';
+import { normalDeviates } from '../../../core/run-length/normal-deviates.ts';
+import { mostMisses, paths } from './simulated-paths.ts';
 
 const known: MeanDetectorTuning = {
   baseline: 10, watchesFor: 'risen', threshold: 500, model: { kind: 'known sigma', sigma: 2, shifts: usualShifts },
@@ -39,15 +40,15 @@ describe('the detector of a shifted mean', () => {
   /* 50 measurements a run. Chance of a false failure below 1e-8 a comparison. */
   it('calls within T measurements at most in the share T / threshold of runs while the mean holds', () => {
     const most = mostMisses(50 / 500);
-    const onLine = calls(known, 50, 14, (uniform) => { const normal = normals(uniform); return () => 10 + 2 * normal(); });
+    const onLine = calls(known, 50, 14, (uniform) => { const normal = normalDeviates(uniform); return () => 10 + 2 * normal(); });
     expect(onLine).toBeLessThanOrEqual(most);
     expect(onLine / paths).toBeGreaterThan(0.02);
-    expect(calls(known, 50, 15, (uniform) => { const normal = normals(uniform); return () => 9 + 2 * normal(); })).toBeLessThan(onLine);
+    expect(calls(known, 50, 15, (uniform) => { const normal = normalDeviates(uniform); return () => 9 + 2 * normal(); })).toBeLessThan(onLine);
     expect(calls(bounded, 50, 16, (uniform) => () => (uniform() < 0.4 ? 10 : 0))).toBeLessThanOrEqual(most);
   });
 
   it('calls soon after a shift', () => {
-    const shifted = calls(known, 50, 17, (uniform) => { const normal = normals(uniform); return () => 12 + 2 * normal(); });
+    const shifted = calls(known, 50, 17, (uniform) => { const normal = normalDeviates(uniform); return () => 12 + 2 * normal(); });
     expect(shifted).toBeGreaterThan(0.99 * paths);
     expect(calls(bounded, 50, 18, (uniform) => () => 4 * uniform())).toBeGreaterThan(0.99 * paths);
   });

@@ -5,7 +5,8 @@ import { admitBounded, allLooksBoundedLower, emptyBoundedRun } from '../../../co
 import { allLooksMeanDistance, logMeanEvidence, tuningFor } from '../../../core/sequential/mean-known-sigma.ts';
 import { allLooksMeanDistanceUnknownSigma, logMeanEvidenceUnknownSigma, usualTuning } from '../../../core/sequential/mean-unknown-sigma.ts';
 import type { Tail } from '../../../core/units.ts';
-import { integral, mostMisses, normals, paths } from './simulated-paths.ts';
+import { normalDeviates } from '../../../core/run-length/normal-deviates.ts';
+import { integral, mostMisses, paths } from './simulated-paths.ts';
 
 const alpha = 0.05 as Tail;
 /* A line of 0.1 with a standard deviation of 1; half of it and twice it lie on either side. */
@@ -48,7 +49,7 @@ describe('evidence on a mean, standard deviation known', () => {
   it.each([['on the line', line], ['at half of it', line / 2], ['at twice it', 2 * line]] as const)('with the mean %s no false claim is made more than once in twenty runs', (_, mean) => {
     const tuning = tuningFor(100, 1, alpha);
     const reach = Array.from({ length: 601 }, (_, n) => (n === 0 ? Infinity : n * allLooksMeanDistance(n, 1, alpha, tuning)));
-    const normal = normals(seededUniform(5));
+    const normal = normalDeviates(seededUniform(5));
     let claimedAbove = 0;
     let claimedBelow = 0;
     for (let path = 0; path < paths; path++) {
@@ -133,7 +134,7 @@ describe('evidence on a mean, standard deviation unknown', () => {
   }
 
   it('misses the mean of Gaussian and of evenly spread values at most once in twenty runs', () => {
-    const normal = normals(seededUniform(6));
+    const normal = normalDeviates(seededUniform(6));
     const gauss = missed(normal).lower;
     expect(gauss).toBeLessThanOrEqual(mostMisses(alpha));
     expect(gauss / paths).toBeGreaterThan(0.02);

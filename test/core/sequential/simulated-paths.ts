@@ -24,22 +24,6 @@ export function exposureAt(rate: number, uniform: Uniform): number {
   return -Math.log(uniform()) / rate;
 }
 
-/** Standard normal numbers, two from each pair of uniform ones. */
-export function normals(uniform: Uniform): () => number {
-  let spare: number | undefined;
-  return () => {
-    if (spare !== undefined) {
-      const value = spare;
-      spare = undefined;
-      return value;
-    }
-    const radius = Math.sqrt(-2 * Math.log(uniform()));
-    const angle = 2 * Math.PI * uniform();
-    spare = radius * Math.sin(angle);
-    return radius * Math.cos(angle);
-  };
-}
-
 /** Simpson's rule with 2 * halves steps. */
 export function integral(f: (x: number) => number, from: number, to: number, halves = 2000): number {
   const step = (to - from) / (2 * halves);
