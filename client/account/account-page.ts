@@ -7,6 +7,7 @@ import type { Formats } from '../format.ts';
 import { base } from '../look/base.ts';
 import { ownPage } from '../look/own-page.ts';
 import { ownDesk, type OwnDesk } from './own-desk.ts';
+import './own-lately.ts';
 import './own-passkeys.ts';
 import './own-password.ts';
 import './own-pin.ts';
@@ -40,7 +41,8 @@ export class AccountPage extends LitElement {
           ${this.directory === undefined ? nothing : html`<section class="sheet part"><h2>${this.directory}</h2><p class="quiet">Link your account once, and from then on you can sign in with ${this.directory} too.</p><p><a class="button" href="/api/sign-in/directory">Link the account</a></p></section>`}</div>
         <div><own-sessions .desk=${desk} .formats=${formats} .leave=${wiring.who.signOut}></own-sessions>
           <own-passkeys .desk=${desk} .hasPassword=${caller.hasPassword} .formats=${formats}></own-passkeys>
-          <own-tokens .desk=${desk} .caller=${caller} .formats=${formats}></own-tokens></div>
+          <own-tokens .desk=${desk} .caller=${caller} .formats=${formats}></own-tokens>
+          <own-lately .desk=${desk} .lines=${this.lines} .formats=${formats}></own-lately></div>
       </div>`;
   }
 }

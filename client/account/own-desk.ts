@@ -1,4 +1,5 @@
 import type { Action } from '../../core/access/action.ts';
+import type { RecordedChange } from '../../core/access/change.ts';
 import type { Ask } from '../ask.ts';
 
 /** A browser somebody is signed in with. */
@@ -30,6 +31,8 @@ export interface OwnPasskey {
 /** What a person does with their own account. Times are wall time, ms since 1970. */
 export interface OwnDesk {
   readonly sessions: () => Promise<readonly OwnSession[]>;
+  /** What happened to the account lately, newest first. */
+  readonly lately: () => Promise<readonly RecordedChange[]>;
   readonly endSession: (id: string) => Promise<void>;
   readonly endAllSessions: () => Promise<void>;
   readonly setPassword: (old: string, next: string) => Promise<void>;
@@ -53,6 +56,7 @@ const known = (password: string): { readonly password?: string } => (password ==
 
 export const ownDesk = (ask: Ask): OwnDesk => ({
   sessions: () => ask('GET', '/api/own/sessions'),
+  lately: () => ask('GET', '/api/own/changes'),
   endSession: (id) => ask('DELETE', path('sessions', id)),
   endAllSessions: () => ask('POST', '/api/own/sign-out-everywhere'),
   setPassword: (old, next) => ask('POST', '/api/own/password', { old, new: next }),

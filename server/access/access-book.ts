@@ -1,6 +1,6 @@
-import type { Change, ChangeKind } from '../../core/access/change.ts';
+import type { Change, ChangeKind, RecordedChange } from '../../core/access/change.ts';
 import type { Json } from '../../core/access/canonical-json.ts';
-import type { AccessFile, AccessItem } from './access-file.ts';
+import type { AccessFile, AccessItem, ChangeQuery } from './access-file.ts';
 import type { Passkey } from './access-items.ts';
 import { accountSchema, displaySchema, identitySchema, invitationSchema, passkeySchema, sessionSchema, tokenSchema } from './access-items.ts';
 import { Kept, type Staged } from './kept.ts';
@@ -45,6 +45,11 @@ export class AccessBook {
     const book = new AccessBook(file, now);
     for (const item of await file.items()) book.#keptOf(item)?.load(item);
     return book;
+  }
+
+  /** What stands on record. */
+  changes(query: Partial<ChangeQuery> & Pick<ChangeQuery, 'limit'>): Promise<readonly RecordedChange[]> {
+    return this.#file.changes({ from: 0, to: Number.MAX_SAFE_INTEGER, ...query });
   }
 
   /** Runs one change at a time: what it looked at is still so when it writes. */

@@ -1,6 +1,7 @@
 import { NotFound } from '../http/refusals.ts';
 import { BadRequest } from '../http/request-schemas.ts';
 import { changeOf, type AccessBook } from './access-book.ts';
+import type { RecordedChange } from '../../core/access/change.ts';
 import type { Account, ApiToken, StoredGrant } from './access-items.ts';
 import type { Action } from '../../core/access/action.ts';
 import { pinFault } from '../../core/access/pin-fault.ts';
@@ -10,6 +11,10 @@ import { TooManyTries } from './too-many-tries.ts';
 import { hashOfSecret, newId, newSecret } from './secret.ts';
 
 const day = 86_400_000;
+/** Records shown of what happened lately, and looked through for them where names begin alike. */
+const latest = 20;
+const searched = 200;
+const itemKinds = ['passkey', 'token'] as const;
 
 /** What people do with their own account. */
 export class OwnAccount {
@@ -70,6 +75,17 @@ export class OwnAccount {
       await this.#book.write([this.#book.tokens.dropped(token)], [changeOf('token', this.#account(id).shownAs, `token ${token}: ${kept.name}`, { actions: kept.actions }, null)]);
     });
     this.#book.ended([token]);
+  }
+
+  /** What happened to the account lately, newest first: sign-ins and tries, and every change of what it is signed in by. */
+  async lately(id: string): Promise<readonly RecordedChange[]> {
+    const { name, shownAs } = this.#account(id);
+    const [ofAccount, ...ofItems] = await Promise.all([
+      this.#book.changes({ holds: `account ${name}`, limit: searched }),
+      ...itemKinds.map((kind) => this.#book.changes({ kind, holds: shownAs, limit: latest })),
+    ]);
+    const own = [...ofAccount.filter(({ what }) => what === `account ${name}`), ...ofItems.flat().filter(({ who }) => who === shownAs)];
+    return own.sort((a, b) => b.id - a.id).slice(0, latest);
   }
 
   /** Makes sure again of who sits there, before another way in is opened; an account without a password has none to ask for. @throws BadRequest, TooManyTries */

@@ -166,6 +166,7 @@ const accessRoutes: readonly FakeRoute[] = [
   } },
   { method: 'DELETE', path: /^\/api\/invitations\/([^/]+)$/, needs: 'manage-accounts', does: ({ access, id }) => { for (const one of [...access.invitations.values()]) if (one.id === id) access.invitations.delete(one.code); return done; } },
   { method: 'GET', path: /^\/api\/own\/sessions$/, needs: 'keep-own-account', does: (asked) => ok([...asked.access.sessions.values()].filter(({ account }) => account === own(asked).id).map(({ id, made, lastSeen, address, agent }) => ({ id, made, lastSeen, address, agent, current: id === asked.caller.session?.id }))) },
+  { method: 'GET', path: /^\/api\/own\/changes$/, needs: 'keep-own-account', does: (asked) => ok(asked.access.changes.filter(({ kind, who, what }) => what === `account ${own(asked).name}` || (who === own(asked).shownAs && (kind === 'token' || kind === 'passkey'))).slice(0, 20)) },
   { method: 'DELETE', path: /^\/api\/own\/sessions\/([^/]+)$/, needs: 'keep-own-account', does: ({ access, id }) => { access.end(id); return done; } },
   { method: 'POST', path: /^\/api\/own\/sign-out-everywhere$/, needs: 'keep-own-account', does: (asked) => { for (const { id, account } of [...asked.access.sessions.values()]) if (account === own(asked).id) asked.access.end(id); return done; } },
   { method: 'POST', path: /^\/api\/own\/password$/, needs: 'keep-own-account', does: (asked) => { checkOwn(asked, 'old'); checkPassword('new', text(asked.body, 'new')); own(asked).password = text(asked.body, 'new'); return done; } },

@@ -176,6 +176,15 @@ describe('one’s own account', () => {
     expect(fake.access.sessions.size).toBe(0);
   });
 
+  it('shows what happened to it lately', async () => {
+    await show('/account');
+    fake.access.record('sign-in-failed', 'unknown', 'account ada', null, { by: 'password', address: '10.0.9.2' }, '');
+    await page.reload();
+    await page.getByText('Sign-in failed').first().waitFor();
+    await page.getByText(/by password, address 10\.0\.9\.2/).first().waitFor();
+    await page.getByText('If something here was not you').waitFor();
+  });
+
   it('shows a token once, copies it, and revokes it', async () => {
     await show('/account');
     await browser.context.grantPermissions(['clipboard-read', 'clipboard-write'], { origin: fake.url });

@@ -1,6 +1,7 @@
 import { NotAllowed, NotFound } from '../refusals.ts';
 import { route, type AnyRoute } from '../route.ts';
 import type { Caller } from '../../access/caller.ts';
+import { changesAnswer } from '../answers/record-answers.ts';
 import { sessionsAnswer, tokenAnswer, tokensAnswer } from './access-answers.ts';
 import { accountOf, nameOf, type AccessHost } from './access-host.ts';
 import { idParams, passwordRequest, passwordAgainRequest, pinRequest, tokenRequest } from './access-schemas.ts';
@@ -56,6 +57,10 @@ export function ownRoutes(host: AccessHost): readonly AnyRoute[] {
         await host.own.setPin(person(caller), password, undefined);
         return reply.status(204).send();
       },
+    }),
+    route({
+      method: 'GET', path: '/api/own/changes', summary: 'What happened to the own account lately, newest first', needs: own, answer: changesAnswer,
+      handle: ({ caller }) => host.own.lately(accountOf(caller)),
     }),
     route({
       method: 'GET', path: '/api/own/tokens', summary: 'Own API tokens', needs: own, answer: tokensAnswer,

@@ -8,6 +8,7 @@ import { csvLine } from '../../../server/http/change-csv.ts';
 import { openRegisterFile } from '../../../server/store/register-file.ts';
 import { leakPlant, verdictPart } from '../plants.ts';
 import { dataDirectory, servedOn, sourceTalk } from '../serving.ts';
+import { password } from './people.ts';
 import { SignedIn } from './signed-in.ts';
 
 let data: { path: string; remove: () => void };
@@ -94,6 +95,18 @@ describe('the plant file over HTTP', () => {
     expect(limitChanges([guarantee], [])).toEqual({ before: { a: { id: 'a', tail: 0.05 } }, after: { a: null } });
     expect(limitChanges([guarantee], [{ id: 'a', tail: 0.01 } as never])).toEqual({ before: { a: { tail: 0.05 } }, after: { a: { tail: 0.01 } } });
     expect(limitChanges([guarantee], [guarantee])).toEqual({ before: {}, after: {} });
+  });
+});
+
+describe('one’s own account', () => {
+  it('shows everybody what happened to theirs lately, and nothing of others', async () => {
+    const mette = await first.invite('mette', 'viewer', null);
+    await first.invite('mette-marie', 'viewer', null);
+    await mette.json('POST', '/api/own/tokens', { name: 'board', actions: ['see'], days: 1 });
+    await mette.ask('PUT', '/api/own/pin', { password, pin: '2846' });
+    await fetch(`${served.address}/api/sign-in`, { method: 'POST', headers: { 'content-type': 'application/json' }, body: JSON.stringify({ name: 'mette', password: 'not hers at all' }) });
+    const lately = await mette.json<RecordedChange[]>('GET', '/api/own/changes');
+    expect(lately.map(({ kind, what }) => `${kind} ${what.replace(/token .*:/, 'token:')}`)).toEqual(['sign-in-failed account mette', 'pin account mette', 'token token: board', 'sign-in account mette', 'account account mette']);
   });
 });
 
