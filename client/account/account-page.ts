@@ -38,11 +38,11 @@ export class AccountPage extends LitElement {
       <p class="lead">${grantsInWords(caller.grants, this.lines)}. Roles are given by an administrator.</p>
       <div class="columns">
         <div>${caller.hasPassword ? html`<own-password .desk=${desk}></own-password>` : nothing}<own-pin .desk=${desk} .hasPassword=${caller.hasPassword}></own-pin>
-          ${this.directory === undefined ? nothing : html`<section class="sheet part"><h2>${this.directory}</h2><p class="quiet">Link your account once, and from then on you can sign in with ${this.directory} too.</p><p><a class="button" href="/api/sign-in/directory">Link the account</a></p></section>`}</div>
+          ${this.directory === undefined ? nothing : html`<section class="sheet part"><h2>${this.directory}</h2><p class="quiet">Link your account once, and from then on you can sign in with ${this.directory} too.</p><p><a class="button" href="/api/sign-in/directory">Link the account</a></p></section>`}
+          <own-lately .desk=${desk} .lines=${this.lines} .formats=${formats}></own-lately></div>
         <div><own-sessions .desk=${desk} .formats=${formats} .leave=${wiring.who.signOut}></own-sessions>
           <own-passkeys .desk=${desk} .hasPassword=${caller.hasPassword} .formats=${formats}></own-passkeys>
-          <own-tokens .desk=${desk} .caller=${caller} .formats=${formats}></own-tokens>
-          <own-lately .desk=${desk} .lines=${this.lines} .formats=${formats}></own-lately></div>
+          <own-tokens .desk=${desk} .caller=${caller} .formats=${formats}></own-tokens></div>
       </div>`;
   }
 }

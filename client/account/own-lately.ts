@@ -4,6 +4,7 @@ import type { LineName } from '../access/role-words.ts';
 import { changeWord, differencesOf } from '../changes/change-words.ts';
 import type { Formats } from '../format.ts';
 import { base } from '../look/base.ts';
+import { form } from '../look/form.ts';
 import { ownPage } from '../look/own-page.ts';
 import { Loaded } from '../parts/loaded.ts';
 import type { OwnDesk } from './own-desk.ts';
@@ -11,7 +12,7 @@ import type { OwnDesk } from './own-desk.ts';
 /** What happened to one's own account lately, so that what one did not do oneself is seen. */
 export class OwnLately extends LitElement {
   static override properties = { desk: { attribute: false }, lines: { attribute: false }, formats: { attribute: false } };
-  static override styles = [base, ownPage];
+  static override styles = [base, form, ownPage];
 
   declare desk: OwnDesk;
   declare lines: readonly LineName[];
