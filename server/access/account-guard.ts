@@ -13,7 +13,7 @@ import { Sparing } from './sparing.ts';
 
 const minute = 60_000;
 /** Refusals on record a minute at most, of all callers; the same one once. */
-const mostRefused = 600;
+const mostRefused = 1_200;
 /** Places a display sees but nothing else. */
 const viewer = (line: string | null): readonly Grant[] => [{ role: 'viewer', line: line ?? undefined }];
 
