@@ -54,8 +54,8 @@ export class AlarmCard extends LitElement {
       <p class="grounds">${alarm.grounds.sentence}</p>
       ${alarm.response === '' || alarm.state.kind === 'ended' ? nothing : html`<p class="response"><b>What to do</b>${alarm.response}</p>`}
       <p class="times quiet">${this.#times(alarm, formats)}</p>
-      ${alarm.safetyRelevant && alarm.state.kind !== 'ended' ? html`<p class="caution"><b>${caution.title}.</b> ${caution.sentences.join(' ')}</p>` : nothing}
       ${isWaiting(alarm) ? this.#actions(alarm, name, this.actor) : nothing}
+      ${alarm.safetyRelevant && alarm.state.kind !== 'ended' ? html`<p class="caution"><b>${caution.title}.</b> ${caution.sentences.join(' ')}</p>` : nothing}
     </article>`;
   }
 

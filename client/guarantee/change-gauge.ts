@@ -15,13 +15,21 @@ export function changeGauge(formats: Formats, card: GuaranteeCard, view: Guarant
   return html`<section class="sheet part change-part ${detector.alarmed ? 'alarmed' : ''}"><h2>Change detector</h2>
     <svg class="gauge" viewBox="0 0 100 10" preserveAspectRatio="none" role="img" aria-label="${share} of the way to its alarm"><rect width=${100 * detector.gauge} height="10"></rect><line x1="50" x2="50" y1="0" y2="10"></line></svg>
     <p class="ends quiet"><span>at rest</span><span>half way</span><span>alarm</span></p>
-    <p>${detector.alarmed ? html`<b>Its alarm stands.</b> ` : nothing}${share} of the way ${detector.alarmed ? 'still, back at half way it returns' : 'to its alarm'}. ${detectorWords(formats, detector, card)}</p>
+    <p>${detector.alarmed ? html`<b>Its alarm stands.</b> ${returning(formats, card, detector)}` : `${share} of the way to its alarm. ${detectorWords(formats, detector, card)}`}</p>
     ${lately(formats, detector, paths)}
     ${detector.doubt === undefined ? nothing : html`<p class="warning"><b>Mind:</b> ${detector.doubt}</p>`}
     <details><summary>What does this mean?</summary>
       <p>${meaning(formats, card, detector)}</p>
       <p class="quiet">Method: ${kinds[detector.kind]}, against the ${detector.against === 'line' ? 'guarantee line' : 'declared normal rate'}.</p>
     </details></section>`;
+}
+
+/** When a standing alarm returns. */
+function returning(formats: Formats, { scale }: GuaranteeCard, { gauge, toReturn }: DetectorView): string {
+  if (toReturn === undefined) return `${formats.percent(gauge)} of the way still, back at half way it returns.`;
+  return scale.kind === 'rate'
+    ? `It returns after ${formats.count(Math.ceil(toReturn))} ${scale.unit} more without a nonconformity.`
+    : `It returns after ${formats.count(Math.ceil(toReturn))} units more if they all conform.`;
 }
 
 function meaning(formats: Formats, card: GuaranteeCard, { betweenFalseCalls, kind }: DetectorView): string {

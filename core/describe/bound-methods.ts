@@ -34,12 +34,12 @@ export const boundMethods = {
   },
   triedError: {
     name: 'three exact bounds together: rejects, and the errors as tried',
-    assumes: [steady, 'The seeded and the good units that were tried stand for those of the line.'],
+    assumes: [steady, 'Units tried, known to conform or not, stand for those of the line.'],
     source: "C. E. Bonferroni's inequality on the formula of W. J. Rogan, B. Gladen 1978 (seen cited)",
   },
   meldedError: {
     name: 'melded bound: rejects, and the errors as tried',
-    assumes: [steady, 'The seeded and the good units that were tried stand for those of the line.', 'Its coverage is measured, not proved.'],
+    assumes: [steady, 'Units tried, known to conform or not, stand for those of the line.', 'Its coverage is measured, not proved.'],
     source: 'D. M. Bayer, M. P. Fay, B. I. Graubard, arXiv 2205.13494 (abstract read)',
   },
   capability: { name: 'bound on a one-sided capability index', assumes: [normal], source: 'noncentral t distribution of the distance in standard deviations (definition)' },

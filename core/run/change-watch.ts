@@ -27,6 +27,8 @@ export interface ChangeWatch {
   inARowToAlarm(): number | undefined;
   /** Conforming units until the gauge is back at half way; undefined where it is not counted. */
   conformingToHalfWay(): number | undefined;
+  /** Conforming units (or exposure) until its alarm returns; undefined while none stands, or where that cannot be told. */
+  toReturn(): number | undefined;
   /** Forgets what it has seen; its alarm no longer stands. */
   beginAnew(): void;
   snapshot(): unknown;

@@ -92,6 +92,10 @@ export class CountWatch<S extends State> implements ChangeWatch {
     return Number.isFinite(units) ? units : undefined;
   }
 
+  toReturn(): number | undefined {
+    return this.#held === undefined || !Number.isFinite(this.#left) ? undefined : Math.max(0, this.#left);
+  }
+
   beginAnew(): void {
     this.#detector = { ...this.#by.fresh, alarms: this.#detector.alarms };
     this.#held = undefined;

@@ -6,6 +6,8 @@ export interface DetectorView {
   readonly alarmed: boolean;
   readonly inARowToAlarm: number | undefined;
   readonly conformingToHalfWay: number | undefined;
+  /** Conforming units (or exposure) until its alarm returns: back at half way, and long enough after the alarm. */
+  readonly toReturn: number | undefined;
   readonly betweenFalseCalls: number;
   readonly baseline: number;
   readonly against: 'line' | 'normal-rate';

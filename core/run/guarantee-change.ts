@@ -91,6 +91,7 @@ export class GuaranteeChange {
       alarmed: this.watch.alarmed,
       inARowToAlarm: this.watch.inARowToAlarm(),
       conformingToHalfWay: this.watch.conformingToHalfWay(),
+      toReturn: this.watch.toReturn(),
       betweenFalseCalls: this.rule.unitsBetweenFalseCalls,
       baseline: this.baseline,
       against: this.rule.baseline,

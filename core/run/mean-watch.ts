@@ -57,6 +57,10 @@ export class MeanWatch implements ChangeWatch {
     return undefined;
   }
 
+  toReturn(): undefined {
+    return undefined;
+  }
+
   beginAnew(): void {
     this.#detector = { ...this.#fresh, alarms: this.#detector.alarms };
     this.#held = undefined;

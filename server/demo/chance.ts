@@ -1,11 +1,11 @@
-/** A seeded source of chance for the demo: the same words give the same course, on every machine. */
+/** Chance that can be repeated, for the demo: the same words give the same numbers, on every machine. */
 export class Chance {
   #a: number;
   #b: number;
   #c: number;
   #d: number;
 
-  /** @param words what the course is for, e.g. the seed, a station and a minute: courses of different words are unrelated */
+  /** @param words what the numbers are for, e.g. a station and a minute: those of different words are unrelated */
   constructor(...words: readonly (string | number)[]) {
     const text = words.join('/');
     this.#a = scrambled(text, 1);

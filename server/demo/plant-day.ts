@@ -41,7 +41,7 @@ const clock = (hours: number, minutes = 0): number => hours * 60 + minutes;
 /** Minutes of a day. */
 export const dayMinutes = clock(24);
 
-/** The first day is told the same way whatever the seed: people are shown this one. */
+/** The first day is always told the same way: people are shown this one. */
 const firstDay: PlantDay = {
   troubles: [
     { station: 'B.leak-test', characteristic: 'tightness', from: clock(6, 28), until: clock(6, 44), course: 'sudden', level: 0.02 },

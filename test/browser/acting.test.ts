@@ -1,25 +1,14 @@
-import type { Page } from 'playwright-core';
-import { afterAll, afterEach, beforeAll, describe, expect, it } from 'vitest';
+import { describe, expect, it } from 'vitest';
 import type { FakeAccessOptions } from './fake-access.ts';
 import { signedInAs } from './fake-people.ts';
-import { startFake, type FakeServer } from './fake-server.ts';
-import { openBrowser, type Browser, type Size } from './open-browser.ts';
+import type { Size } from './open-browser.ts';
+import { fake, onFakePages, open, page, serve } from './fake-pages.ts';
 
-let browser: Browser;
-let fake: FakeServer;
-let page: Page;
-
-beforeAll(async () => { browser = await openBrowser(); });
-afterAll(async () => { await browser.close(); });
-afterEach(async () => {
-  await page.close();
-  await fake.stop();
-  expect(browser.errors).toEqual([]);
-});
+onFakePages({ served: false });
 
 async function show(path: string, as: string, part: FakeAccessOptions = {}, size: Size = 'desk'): Promise<void> {
-  fake = await startFake({ access: signedInAs(as, part) });
-  page = await browser.open(fake.url + path, size);
+  await serve({ access: signedInAs(as, part) });
+  await open(path, size);
 }
 
 const acknowledged = (): unknown[] => fake.posts.map(({ path, body }) => [path, body['by'], body['note']]);
@@ -132,8 +121,8 @@ describe('acting by PIN', () => {
 
 describe('open access', () => {
   it('is said plainly', async () => {
-    fake = await startFake();
-    page = await browser.open(fake.url, 'desk');
+    await serve();
+    await open('/', 'desk');
     await page.getByText('Open to everybody who reaches it').first().waitFor();
   });
 });

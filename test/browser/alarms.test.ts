@@ -1,27 +1,13 @@
-import type { Page } from 'playwright-core';
-import { afterAll, afterEach, beforeAll, beforeEach, describe, expect, it } from 'vitest';
+import { describe, expect, it } from 'vitest';
 import { caution } from '../../core/guarantee/caution.ts';
 import { alarms, plantStart } from './fake-plant.ts';
-import { startFake, type FakeServer } from './fake-server.ts';
-import { openBrowser, type Browser } from './open-browser.ts';
+import { fake, onFakePages, open, page, serve } from './fake-pages.ts';
 
-let browser: Browser;
-let fake: FakeServer;
-let page: Page;
-
-beforeAll(async () => { browser = await openBrowser(); });
-afterAll(async () => { await browser.close(); });
-beforeEach(async () => { fake = await startFake(); });
-afterEach(async () => {
-  await page.evaluate(() => { localStorage.clear(); });
-  await page.close();
-  await fake.stop();
-  expect(browser.errors).toEqual([]);
-});
+onFakePages({ served: true });
 
 describe('acknowledging', () => {
   it('asks once for the name, then takes one tap', async () => {
-    page = await browser.open(fake.url, 'phone');
+    await open('/', 'phone');
     await page.getByRole('button', { name: 'Acknowledge: BH-4 leak test' }).click();
     await page.getByLabel('Your name').fill('Ines Maurer');
     await page.getByLabel('Note').fill('Lot held');
@@ -35,7 +21,7 @@ describe('acknowledging', () => {
   });
 
   it('a name of blanks is not sent, and a refusal is shown with its reason', async () => {
-    page = await browser.open(`${fake.url}/alarms`, 'phone');
+    await open('/alarms', 'phone');
     await page.getByRole('button', { name: /^Acknowledge: BH-4/ }).click();
     await page.getByLabel('Your name').fill('   ');
     await page.getByRole('dialog').getByRole('button', { name: 'Acknowledge' }).click();
@@ -51,7 +37,7 @@ describe('acknowledging', () => {
 
 describe('the alarm list', () => {
   it('has the waiting ones first by priority, then those in hand, then the ended', async () => {
-    page = await browser.open(`${fake.url}/alarms`, 'phone');
+    await open('/alarms', 'phone');
     await page.locator('alarm-card').nth(3).waitFor();
     expect(await page.locator('alarm-card h3').allInnerTexts()).toEqual(['BH-4 leak test', 'Kit cap torque', 'BH-5 crimp pull-off force', 'BH-4 final inspection']);
     expect(await page.locator('h1').innerText()).toBe('2 alarms wait for acknowledgement');
@@ -59,13 +45,13 @@ describe('the alarm list', () => {
   });
 
   it('asks the server for older ones and stops when there are none', async () => {
-    page = await browser.open(`${fake.url}/alarms`, 'desk');
+    await open('/alarms', 'desk');
     await page.getByRole('button', { name: 'Show older alarms' }).click();
     await expect.poll(() => page.getByRole('button', { name: 'Show older alarms' }).count()).toBe(0);
   });
 
   it('has targets of at least 44 px for gloved hands', async () => {
-    page = await browser.open(`${fake.url}/alarms`, 'phone');
+    await open('/alarms', 'phone');
     await page.locator('alarm-card').nth(3).waitFor();
     const heights = await page.locator('alarm-card button').evaluateAll((all) => all.map((one) => one.getBoundingClientRect().height));
     expect(Math.min(...heights)).toBeGreaterThanOrEqual(44);
@@ -73,15 +59,15 @@ describe('the alarm list', () => {
 
   it('says so when nothing was ever raised', async () => {
     await fake.stop();
-    fake = await startFake({ noRecords: true });
-    page = await browser.open(`${fake.url}/alarms`, 'phone');
+    await serve({ noRecords: true });
+    await open('/alarms', 'phone');
     await page.getByText('Nothing has been raised.').waitFor();
   });
 });
 
 describe('a new alarm', () => {
   it('is told politely to those who hear the page, and shown until it is acknowledged', async () => {
-    page = await browser.open(`${fake.url}/guarantees/fill`, 'desk');
+    await open('/guarantees/fill', 'desk');
     await page.locator('guarantee-page h1').waitFor();
     expect(await page.locator('alarm-announcer .slip').count()).toBe(0);
     fake.tell([], [{ ...alarms[0]!, id: 50, guarantee: 'fill', rule: 'crossing', safetyRelevant: false, raisedAt: plantStart as never, times: 1 }]);
@@ -96,7 +82,7 @@ describe('a new alarm', () => {
 
 describe('what is safety-relevant', () => {
   it.each([['/', 'desk'], ['/', 'wall'], ['/alarms', 'phone'], ['/guarantees/leak-bh4', 'desk']] as const)('carries the caution in the same words at %s on a %s', async (path, size) => {
-    page = await browser.open(fake.url + path, size);
+    await open(path, size);
     await page.locator('line-board, alarm-card, guarantee-page').first().waitFor();
     for (const sentence of [caution.title, ...caution.sentences]) await page.getByText(sentence).first().waitFor();
   });

@@ -1,24 +1,14 @@
-import type { Page } from 'playwright-core';
-import { afterAll, afterEach, beforeAll, describe, expect, it } from 'vitest';
+import { describe, expect, it } from 'vitest';
 import { eight } from './fake-plant.ts';
-import { startFake, type FakeOptions, type FakeServer } from './fake-server.ts';
-import { openBrowser, type Browser, type Size } from './open-browser.ts';
+import type { FakeOptions } from './fake-server.ts';
+import type { Size } from './open-browser.ts';
+import { fake, onFakePages, open, page, serve } from './fake-pages.ts';
 
-let browser: Browser;
-let fake: FakeServer;
-let page: Page;
-
-beforeAll(async () => { browser = await openBrowser(); });
-afterAll(async () => { await browser.close(); });
-afterEach(async () => {
-  await page.close();
-  await fake.stop();
-  expect(browser.errors).toEqual([]);
-});
+onFakePages({ served: false });
 
 async function show(options: FakeOptions = {}, size: Size = 'desk', path = '/'): Promise<void> {
-  fake = await startFake(options);
-  page = await browser.open(fake.url + path, size);
+  await serve(options);
+  await open(path, size);
   await page.locator('line-board').waitFor();
 }
 
@@ -86,8 +76,8 @@ describe('the line board', () => {
   });
 
   it('moves them at last when nothing is done there, and leaves the focus in its lane', async () => {
-    fake = await startFake();
-    page = await browser.open('about:blank', 'desk');
+    await serve();
+    await open('about:blank', 'desk');
     await page.clock.install();
     await page.goto(fake.url);
     await page.clock.runFor(1000);

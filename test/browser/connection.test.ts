@@ -1,26 +1,13 @@
-import type { Page } from 'playwright-core';
-import { afterAll, afterEach, beforeAll, beforeEach, describe, expect, it } from 'vitest';
-import { startFake, type FakeServer } from './fake-server.ts';
-import { openBrowser, type Browser } from './open-browser.ts';
+import { describe, expect, it } from 'vitest';
+import { fake, onFakePages, open, page } from './fake-pages.ts';
 
-let browser: Browser;
-let fake: FakeServer;
-let page: Page;
-
-beforeAll(async () => { browser = await openBrowser(); });
-afterAll(async () => { await browser.close(); });
-beforeEach(async () => { fake = await startFake(); });
-afterEach(async () => {
-  await page.close();
-  await fake.stop();
-  expect(browser.errors).toEqual([]);
-});
+onFakePages({ served: true });
 
 const liveness = (): Promise<string> => page.locator('page-masthead dd b').innerText();
 
 describe('the connection', () => {
   it('when it is lost everything dims and says last known; when it returns the board resumes and is live', async () => {
-    page = await browser.open(fake.url, 'desk');
+    await open('/', 'desk');
     await page.locator('board-lane').first().waitFor();
     expect(await liveness()).toBe('Live');
     fake.cutLive();
@@ -38,7 +25,7 @@ describe('the connection', () => {
   });
 
   it('a server that falls silent is not live after three seconds, though the socket is open', async () => {
-    page = await browser.open('about:blank', 'desk');
+    await open('about:blank', 'desk');
     await page.clock.install();
     await page.goto(fake.url);
     await page.clock.runFor(1000);
@@ -52,7 +39,7 @@ describe('the connection', () => {
 
   it('without a server the page says so and keeps trying', async () => {
     fake.cutLive();
-    page = await browser.open(fake.url, 'phone');
+    await open('/', 'phone');
     await page.getByText('The server does not answer. Trying again.').waitFor();
     fake.returnLive();
     await page.locator('board-lane').first().waitFor({ timeout: 20_000 });

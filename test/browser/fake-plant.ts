@@ -37,7 +37,7 @@ const viewBase: GuaranteeView = {
   id: '', state: 'demonstrated', remark: undefined, since: plantStart - 95 * minute, lookRule: 'one look', estimate: 60e-6, bound: 148e-6,
   oppositeBound: 20e-6, allowance: { estimate: 0.3, bound: 0.74, opposite: 0.1, trail: [0.8, 0.79, 0.78, 0.77, 0.75, 0.74] },
   figures: { inspected: 50_000, nonconforming: 3 }, margin: { canTake: 2 }, newest: plantStart - 400, drift: 'steady',
-  product: 'BH-4', lot: undefined, alarmIds: [], lineRunning: true, warnings: [], detector: { kind: 'mixture', gauge: 0.34, alarmed: false, inARowToAlarm: 4, conformingToHalfWay: 0, betweenFalseCalls: 1_000_000, baseline: 200e-6, against: 'line', doubt: undefined },
+  product: 'BH-4', lot: undefined, alarmIds: [], lineRunning: true, warnings: [], detector: { kind: 'mixture', gauge: 0.34, alarmed: false, inARowToAlarm: 4, conformingToHalfWay: 0, toReturn: undefined, betweenFalseCalls: 1_000_000, baseline: 200e-6, against: 'line', doubt: undefined },
   oppositeLookRule: 'one look',
   run: fakeRun,
 };
@@ -62,7 +62,7 @@ export const eight: readonly FakeGuarantee[] = [
     allowance: { estimate: 1.55, bound: 2.42, opposite: 1.08, trail: [0.7, 0.71, 0.73, 0.76, 0.8, 0.9, 1.05, 1.2, 1.4, 1.6, 2, 2.42] },
     figures: { inspected: 48_210, nonconforming: 15 }, margin: { conformingToDemonstrate: 61_400 }, drift: 'rising', lot: 'L-2603-07', alarmIds: [41], oppositeLookRule: 'all looks',
     run: { ...fakeRun, decides: 'state', kept: -1.6, broken: 3.4, keptAt: undefined, brokenAt: plantStart - 6 * minute },
-    detector: { kind: 'mixture', gauge: 0.82, alarmed: true, inARowToAlarm: undefined, conformingToHalfWay: 5210, betweenFalseCalls: 1_000_000, baseline: 200e-6, against: 'line', doubt: 'Nonconforming units come in clusters now, so the distance between false calls no longer holds: it calls falsely more often. Find the common cause, or count events (clusters: merge-within) in the plant file.' },
+    detector: { kind: 'mixture', gauge: 0.82, alarmed: true, inARowToAlarm: undefined, conformingToHalfWay: 5210, toReturn: 9040, betweenFalseCalls: 1_000_000, baseline: 200e-6, against: 'line', doubt: 'Nonconforming units come in clusters now, so the distance between false calls no longer holds: it calls falsely more often. Find the common cause, or count events (clusters: merge-within) in the plant file.' },
     warnings: ['9 of the 15 nonconforming units came within 12 minutes; the window is not of one piece.'],
   }),
   guarantee({ id: 'pull-bh5', name: 'BH-5 crimp pull-off force', ...lineB, stationNames: ['Crimping'], product: 'bh-5', productName: 'Hose BH-5', characteristicName: 'pull-off force', quantity: 'fraction-beyond-limit', guaranteeLine: 300e-6, window: { kind: 'units', units: 4000 }, specificationLimit: { side: 'below', value: 1200, unit: 'N' } }, {

@@ -1,30 +1,16 @@
-import type { Page } from 'playwright-core';
-import { afterAll, afterEach, beforeAll, beforeEach, describe, expect, it } from 'vitest';
-import { startFake, type FakeServer } from './fake-server.ts';
-import { openBrowser, type Browser } from './open-browser.ts';
+import { describe, expect, it } from 'vitest';
+import { fake, onFakePages, open, page } from './fake-pages.ts';
 
-let browser: Browser;
-let fake: FakeServer;
-let page: Page;
+onFakePages({ served: true });
 
-beforeAll(async () => { browser = await openBrowser(); });
-afterAll(async () => { await browser.close(); });
-beforeEach(async () => { fake = await startFake(); });
-afterEach(async () => {
-  await page.evaluate(() => { localStorage.clear(); });
-  await page.close();
-  await fake.stop();
-  expect(browser.errors).toEqual([]);
-});
-
-const open = async (id: string): Promise<void> => {
-  page = await browser.open(`${fake.url}/guarantees/${id}`, 'desk');
+const show = async (id: string): Promise<void> => {
+  await open(`/guarantees/${id}`, 'desk');
   await page.locator('history-chart svg').waitFor();
 };
 
 describe('the page of a guarantee', () => {
   it('draws bound, estimate, line, nonconforming units and events on one axis', async () => {
-    await open('leak-bh4');
+    await show('leak-bh4');
     for (const what of ['path.bound.demonstrated', 'path.bound.undecided', 'path.estimate', '.line', '.strip .bar', '.strip .stroke', '.event']) {
       expect(await page.locator(`history-chart ${what}`).count(), what).toBeGreaterThan(0);
     }
@@ -33,7 +19,7 @@ describe('the page of a guarantee', () => {
   });
 
   it('asks for the span that was chosen', async () => {
-    await open('leak-bh4');
+    await show('leak-bh4');
     const asked = page.waitForRequest((request) => request.url().includes('/history') && span(request.url()) === 8 * 3_600_000);
     await page.getByLabel('8 h').check();
     await asked;
@@ -41,7 +27,7 @@ describe('the page of a guarantee', () => {
   const span = (url: string): number => Number(new URL(url).searchParams.get('to')) - Number(new URL(url).searchParams.get('from'));
 
   it('tells the figures, the method, the look rule, the assumptions and the source', async () => {
-    await open('leak-bh4');
+    await show('leak-bh4');
     for (const words of ['Exact binomial bound.', 'all looks.', 'Units are independent of one another.', 'C. J. Clopper, E. S. Pearson', 'Mind:']) await page.getByText(words).first().waitFor();
     expect(await page.locator('.figures').innerText()).toMatch(/Upper bound\s+484\sppm/);
   });
@@ -53,13 +39,13 @@ describe('the page of a guarantee', () => {
     ['pull-bh5', 'Values of the window', []],
     ['flaws-bh4', 'How this is computed', ['Units of the window', 'The window by time', 'Values of the window']],
   ])('shows of %s what suits it: %s', async (id, shown, absent) => {
-    await open(id);
+    await show(id);
     await page.getByRole('heading', { name: shown }).waitFor();
     for (const heading of absent) expect(await page.getByRole('heading', { name: heading }).count(), heading).toBe(0);
   });
 
   it('writes figures of the axis whole, however long they are', async () => {
-    await open('flaws-bh4');
+    await show('flaws-bh4');
     await page.getByText(/nonconformit(y|ies) in .* m in this step/).waitFor();
     const cut = await page.locator('history-chart').evaluate((chart) => {
       const edge = chart.getBoundingClientRect().left;
@@ -69,7 +55,7 @@ describe('the page of a guarantee', () => {
   });
 
   it("draws the run's evidence with what is enough, and the gauge's recent path", async () => {
-    await open('leak-bh4');
+    await show('leak-bh4');
     await page.locator('run-evidence path.broken').waitFor({ state: 'attached' });
     expect(await page.locator('run-evidence .enough').count()).toBe(2);
     await page.getByText(/Run 3, since .*begun by a restart: die changed \(Ines Maurer\)\. It decides the state\./).waitFor();
@@ -81,16 +67,16 @@ describe('the page of a guarantee', () => {
   });
 
   it('shows the picture that suits the quantity', async () => {
-    await open('pull-bh5');
+    await show('pull-bh5');
     await page.locator('guarantee-picture .limit').waitFor({ state: 'attached' });
     expect(await page.locator('guarantee-picture .model').count()).toBe(1);
     await page.close();
-    await open('chain-b');
+    await show('chain-b');
     await page.getByText('Leak test (limits the line)').waitFor();
   });
 
   it('reads out a step under the arrow keys', async () => {
-    await open('leak-bh4');
+    await show('leak-bh4');
     const chart = page.getByRole('slider');
     await chart.focus();
     await page.keyboard.press('Home');
@@ -100,7 +86,7 @@ describe('the page of a guarantee', () => {
   });
 
   it('restarts the evidence only with a name and a reason', async () => {
-    await open('pull-bh5');
+    await show('pull-bh5');
     await page.getByText('Restart the evidence').first().click();
     await page.getByLabel('Your name').fill('Ines Maurer');
     await page.getByLabel('Reason').fill(' ');
@@ -114,7 +100,7 @@ describe('the page of a guarantee', () => {
   });
 
   it('says so when no guarantee has that name', async () => {
-    page = await browser.open(`${fake.url}/guarantees/nothing`, 'desk');
+    await open('/guarantees/nothing', 'desk');
     await page.getByText('No guarantee is called nothing').waitFor();
   });
 });

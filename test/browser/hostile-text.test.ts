@@ -1,22 +1,10 @@
-import type { Page } from 'playwright-core';
-import { afterAll, afterEach, beforeAll, describe, expect, it } from 'vitest';
+import { describe, expect, it } from 'vitest';
 import type { FakeAccessOptions } from './fake-access.ts';
 import { changesOf, fullPlant, people } from './fake-people.ts';
-import { startFake, type FakeServer } from './fake-server.ts';
 import { hostile } from './hostile-text.ts';
-import { openBrowser, type Browser } from './open-browser.ts';
+import { fake, onFakePages, open, page, serve } from './fake-pages.ts';
 
-let browser: Browser;
-let fake: FakeServer;
-let page: Page;
-
-beforeAll(async () => { browser = await openBrowser(); });
-afterAll(async () => { await browser.close(); });
-afterEach(async () => {
-  await page.close();
-  await fake.stop();
-  expect(browser.errors).toEqual([]);
-});
+onFakePages({ served: false });
 
 const access = fullPlant({ changes: changesOf(40) });
 const doors: FakeAccessOptions = { access: 'accounts', accounts: people, directory: 'Plant directory', invitations: [{ id: 'i', code: 'c', kind: 'account', grants: [{ role: 'viewer', line: 'a' }], account: null, shownAs: 'Selma', made: 0, by: 'Ada', expires: 0 }] };
@@ -46,8 +34,8 @@ describe('script in a text is text', () => {
     ['/', 'board-lane', 8], ['/alarms', 'alarm-card', 8], ['/guarantees/leak-bh4', 'history-chart', 6], ['/guarantees/chain-b', 'guarantee-picture', 3],
     ['/account', 'own-tokens .rows', 4], ['/people', 'people-table', 8], ['/displays', '.rows', 4], ['/sources', '.rows', 4], ['/changes', 'change-list', 80],
   ])('at %s', async (path, ready, least) => {
-    fake = await startFake({ access, hostile: true });
-    page = await browser.open(fake.url + path, 'wide');
+    await serve({ access, hostile: true });
+    await open(path, 'wide');
     await page.locator(ready).first().waitFor();
     await isText(least);
     await page.locator('person-menu summary').click();
@@ -55,8 +43,8 @@ describe('script in a text is text', () => {
   });
 
   it('in the dialogs of an alarm, of a person, and of what is asked before', async () => {
-    fake = await startFake({ access, hostile: true });
-    page = await browser.open(`${fake.url}/alarms`, 'wide');
+    await serve({ access, hostile: true });
+    await open('/alarms', 'wide');
     await page.getByRole('button', { name: /^With a note/ }).first().click();
     await page.getByRole('dialog').waitFor();
     await isText(8);
@@ -68,8 +56,8 @@ describe('script in a text is text', () => {
   });
 
   it('at a shared screen', async () => {
-    fake = await startFake({ access: { ...access, as: 'bench' }, hostile: true });
-    page = await browser.open(fake.url, 'wide');
+    await serve({ access: { ...access, as: 'bench' }, hostile: true });
+    await open('/', 'wide');
     await page.getByRole('button', { name: /^Acknowledge/ }).first().click();
     await page.getByRole('button', { name: /^Ines/ }).click();
     await page.getByLabel(/^PIN of Ines/).waitFor();
@@ -81,15 +69,15 @@ describe('script in a text is text', () => {
   });
 
   it.each([['/sign-in', 'Sign in with'], ['/join#c', 'Your account']])('before one is in, at %s', async (path, ready) => {
-    fake = await startFake({ access: doors, hostile: true });
-    page = await browser.open(fake.url + path, 'wide');
+    await serve({ access: doors, hostile: true });
+    await open(path, 'wide');
     await page.getByText(ready).first().waitFor();
     await isText(1);
   });
 
   it('in what is refused', async () => {
-    fake = await startFake({ access: doors, hostile: true });
-    page = await browser.open(fake.url, 'wide');
+    await serve({ access: doors, hostile: true });
+    await open('/', 'wide');
     await page.getByLabel('Name', { exact: true }).fill(hostile);
     await page.getByLabel('Password', { exact: true }).fill('wrong');
     await page.getByRole('button', { name: 'Sign in', exact: true }).click();

@@ -1,22 +1,10 @@
-import type { Page } from 'playwright-core';
-import { afterAll, afterEach, beforeAll, describe, expect, it } from 'vitest';
+import { describe, expect, it } from 'vitest';
 import { axeFindings } from './axe-findings.ts';
 import type { FakeAccessOptions } from './fake-access.ts';
 import { changesOf, fullPlant, people } from './fake-people.ts';
-import { startFake, type FakeServer } from './fake-server.ts';
-import { openBrowser, type Browser } from './open-browser.ts';
+import { fake, onFakePages, open, page, serve } from './fake-pages.ts';
 
-let browser: Browser;
-let fake: FakeServer;
-let page: Page;
-
-beforeAll(async () => { browser = await openBrowser(); });
-afterAll(async () => { await browser.close(); });
-afterEach(async () => {
-  await page.close();
-  await fake.stop();
-  expect(browser.errors).toEqual([]);
-});
+onFakePages({ served: false });
 
 const inside = fullPlant({ changes: changesOf(120) });
 const before: FakeAccessOptions = { access: 'accounts', accounts: people, passkeys: true, directory: 'Hose plant directory', invitations: [{ id: 'i', code: 'c', kind: 'account', grants: [{ role: 'viewer', line: undefined }], account: null, shownAs: null, made: 0, by: '', expires: 0 }] };
@@ -27,16 +15,16 @@ const places: readonly (readonly [string, string, FakeAccessOptions])[] = [
 
 describe('axe finds nothing', () => {
   it.each(places.flatMap(([path, ready, access]) => (['light', 'dark'] as const).flatMap((theme) => (['wide', 'phone'] as const).map((size) => [path, theme, size, ready, access] as const))))('at %s, %s, %s', async (path, theme, size, ready, access) => {
-    fake = await startFake({ access });
-    page = await browser.open(fake.url + path, size, theme);
+    await serve({ access });
+    await open(path, size, theme);
     await page.locator(ready).first().waitFor();
     if (size === 'wide' && access === inside) await page.locator('person-menu summary').click();
     expect(await axeFindings(page)).toEqual([]);
   });
 
   it.each(['light', 'dark'] as const)('in the dialogs and where something is wrong, %s', async (theme) => {
-    fake = await startFake({ access: inside });
-    page = await browser.open(`${fake.url}/people`, 'wide', theme);
+    await serve({ access: inside });
+    await open('/people', 'wide', theme);
     await page.getByRole('button', { name: 'Make the link' }).click();
     await page.getByText('Tick at least one role.').waitFor();
     expect(await axeFindings(page)).toEqual([]);
@@ -50,8 +38,8 @@ describe('axe finds nothing', () => {
   });
 
   it.each(['light', 'dark'] as const)('at a shared screen while somebody acts, %s', async (theme) => {
-    fake = await startFake({ access: { ...inside, as: 'bench' } });
-    page = await browser.open(fake.url, 'phone', theme);
+    await serve({ access: { ...inside, as: 'bench' } });
+    await open('/', 'phone', theme);
     await page.getByRole('button', { name: /^Acknowledge/ }).first().click();
     await page.getByRole('button', { name: 'Ines Maurer' }).waitFor();
     expect(await axeFindings(page)).toEqual([]);
@@ -66,8 +54,8 @@ describe('axe finds nothing', () => {
 
 describe('on a phone 320 px wide', () => {
   it.each(places)('%s does not scroll sideways', async (path, ready, access) => {
-    fake = await startFake({ access });
-    page = await browser.open(fake.url + path, 'narrow');
+    await serve({ access });
+    await open(path, 'narrow');
     await page.locator(ready).first().waitFor();
     const widths = await page.evaluate(() => {
       const roots: (Document | ShadowRoot)[] = [document];
@@ -83,8 +71,8 @@ describe('on a phone 320 px wide', () => {
   });
 
   it('nor do the board with its person, and the dialogs', async () => {
-    fake = await startFake({ access: inside });
-    page = await browser.open(fake.url, 'narrow');
+    await serve({ access: inside });
+    await open('/', 'narrow');
     await page.locator('board-lane').first().waitFor();
     await page.locator('person-menu summary').click();
     const panel = await page.locator('person-menu .panel').boundingBox();
@@ -99,8 +87,8 @@ describe('on a phone 320 px wide', () => {
 
 describe('by keyboard', () => {
   it('one gets from the board to the people, changes a role, and is back where one was', async () => {
-    fake = await startFake({ access: inside });
-    page = await browser.open(fake.url, 'wide');
+    await serve({ access: inside });
+    await open('/', 'wide');
     await page.locator('board-lane').first().waitFor();
     const tabTo = async (name: string): Promise<void> => {
       for (let step = 0; step < 60; step += 1) {

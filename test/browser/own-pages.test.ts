@@ -1,26 +1,14 @@
-import type { Page } from 'playwright-core';
-import { afterAll, afterEach, beforeAll, describe, expect, it } from 'vitest';
+import { describe, expect, it } from 'vitest';
 import type { FakeAccessOptions } from './fake-access.ts';
 import { changesOf, fullPlant, signedInAs } from './fake-people.ts';
-import { startFake, type FakeServer } from './fake-server.ts';
-import { openBrowser, type Browser, type Size } from './open-browser.ts';
+import type { Size } from './open-browser.ts';
+import { browser, fake, onFakePages, open, page, serve } from './fake-pages.ts';
 
-let browser: Browser;
-let fake: FakeServer;
-let page: Page;
-
-beforeAll(async () => { browser = await openBrowser(); });
-afterAll(async () => { await browser.close(); });
-afterEach(async () => {
-  await page.close();
-  await browser.context.clearCookies();
-  await fake.stop();
-  expect(browser.errors).toEqual([]);
-});
+onFakePages({ served: false });
 
 async function show(path: string, access: FakeAccessOptions = fullPlant(), size: Size = 'wide'): Promise<void> {
-  fake = await startFake({ access });
-  page = await browser.open(fake.url + path, size);
+  await serve({ access });
+  await open(path, size);
 }
 
 const dialog = () => page.getByRole('dialog').last();
@@ -224,9 +212,9 @@ describe('one’s own account', () => {
   });
 
   it('adds a passkey, signs in with it, and removes it', async () => {
-    fake = await startFake({ access: fullPlant() });
+    await serve({ access: fullPlant() });
     const address = fake.url.replace('127.0.0.1', 'localhost'); // a passkey belongs to a name, not to an address
-    page = await browser.open(`${address}/account`, 'wide');
+    await open(`${address}/account`, 'wide');
     const devtools = await browser.context.newCDPSession(page);
     await devtools.send('WebAuthn.enable');
     await devtools.send('WebAuthn.addVirtualAuthenticator', { options: { protocol: 'ctap2', transport: 'internal', hasResidentKey: true, hasUserVerification: true, isUserVerified: true, automaticPresenceSimulation: true } });
@@ -361,8 +349,8 @@ describe('what is empty or fails', () => {
   });
 
   it.each([['/people', '**/api/accounts', 'The accounts'], ['/displays', '**/api/displays', 'The displays'], ['/sources', '**/api/sources', 'The sources'], ['/changes', '**/api/changes?*', 'The record'], ['/account', '**/api/own/sessions', 'Your sessions']])('%s says what could not be read, and tries again', async (path, asked, what) => {
-    fake = await startFake({ access: fullPlant() });
-    page = await browser.open('about:blank', 'wide');
+    await serve({ access: fullPlant() });
+    await open('about:blank', 'wide');
     await page.route(asked, (route) => route.fulfill({ status: 503, body: '{"message":"the disk is full"}' }), { times: 1 });
     await page.goto(fake.url + path);
     const failed = page.locator('.failed').filter({ hasText: `${what} could not be read: the disk is full.` });

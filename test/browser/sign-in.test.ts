@@ -1,28 +1,15 @@
-import type { Page } from 'playwright-core';
-import { afterAll, afterEach, beforeAll, describe, expect, it } from 'vitest';
+import { describe, expect, it } from 'vitest';
 import type { FakeAccessOptions, FakeInvitation } from './fake-access.ts';
 import { day } from './fake-access.ts';
 import { people, signedInAs } from './fake-people.ts';
-import { startFake, type FakeServer } from './fake-server.ts';
-import { openBrowser, type Browser, type Size } from './open-browser.ts';
+import type { Size } from './open-browser.ts';
+import { browser, fake, onFakePages, open, page, serve } from './fake-pages.ts';
 
-let browser: Browser;
-let fake: FakeServer;
-let page: Page;
-
-beforeAll(async () => { browser = await openBrowser(); });
-afterAll(async () => { await browser.close(); });
-afterEach(async () => {
-  await page.evaluate(() => { localStorage.clear(); sessionStorage.clear(); });
-  await page.close();
-  await browser.context.clearCookies();
-  await fake.stop();
-  expect(browser.errors).toEqual([]);
-});
+onFakePages({ served: false });
 
 async function show(path: string, access: FakeAccessOptions, size: Size = 'desk'): Promise<void> {
-  fake = await startFake({ access });
-  page = await browser.open(fake.url + path, size);
+  await serve({ access });
+  await open(path, size);
 }
 
 const accounts: FakeAccessOptions = { access: 'accounts', accounts: people };
@@ -228,7 +215,7 @@ describe('a display', () => {
     const walls = (): Promise<boolean> => page.evaluate(() => document.documentElement.classList.contains('wall'));
     expect(await walls()).toBe(true);
     await fake.stop();
-    fake = await startFake({ access: signedInAs('bench') });
+    await serve({ access: signedInAs('bench') });
     await page.goto(fake.url);
     await page.getByRole('button', { name: /^Acknowledge/ }).first().waitFor();
     expect(await walls()).toBe(false);

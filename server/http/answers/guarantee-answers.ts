@@ -51,6 +51,7 @@ const detector: v.GenericSchema<Sent<DetectorView>> = v.strictObject({
   alarmed: v.boolean(),
   inARowToAlarm: v.optional(whole),
   conformingToHalfWay: v.optional(whole),
+  toReturn: v.optional(v.pipe(number, v.description('Conforming units (or exposure) until its alarm returns.'))),
   betweenFalseCalls: number,
   baseline: number,
   against: v.picklist(['line', 'normal-rate']),

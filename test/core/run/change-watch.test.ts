@@ -53,6 +53,18 @@ describe('a deterioration alarm', () => {
     expect((returned.at - raised.at) / 1_000).toBeLessThan(600);
   });
 
+  it('[J2] says how many conforming units are still to come until then, and is right', () => {
+    const burst = Array.from({ length: 9 }, (_, k) => 1_000 + k);
+    const monitor = monitorOf([verdicts(1_050, burst, monday)]);
+    const [watch] = monitor.watches;
+    const left = watch!.change!.view(false).toReturn!;
+    expect(left).toBeGreaterThan(0);
+    monitor.takeFrame('tester', frameOf(1_051, [verdicts(left - 1, [], monday + 1_050_000)]), undefined);
+    expect([watch!.change!.watch.alarmed, watch!.change!.view(false).toReturn]).toEqual([true, 1]);
+    monitor.takeFrame('tester', frameOf(1_050 + left, [verdicts(1, [], monday + 1_050_000 + (left - 1) * 1_000)]), undefined);
+    expect([watch!.change!.watch.alarmed, watch!.change!.view(false).toReturn]).toEqual([false, undefined]);
+  });
+
   it('[J3] is not moved by late records or corrections, and a restart begins its detector anew', () => {
     const gauge = (monitor: Monitor): number => monitor.watches[0]!.change!.watch.gauge();
     const monitor = monitorOf([verdicts(100, [50, 60], monday), { kind: 'lost', records: 20, at: monday, station: 'A.leak-test', reason: 'overrun' }, verdicts(10, [], monday)]);

@@ -9,9 +9,9 @@ const drawn = <T>(draw: (chance: Chance) => T): T[] => {
 const meanOf = (values: readonly number[]): number => values.reduce((sum, value) => sum + value, 0) / values.length;
 
 // The limits are five standard errors of a law with these moments: a sound generator fails one of them about once in
-// a million seeds, and the seed is fixed.
+// a million choices of words, and the words are fixed.
 describe('the demo\'s source of chance', () => {
-  it('runs the same course for the same words, another for others', () => {
+  it('gives the same numbers for the same words, others for others', () => {
     const course = (...words: (string | number)[]): number[] => {
       const chance = new Chance(...words);
       return Array.from({ length: 8 }, () => chance.share());
