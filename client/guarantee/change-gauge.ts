@@ -25,11 +25,12 @@ export function changeGauge(formats: Formats, card: GuaranteeCard, view: Guarant
 }
 
 /** When a standing alarm returns. */
-function returning(formats: Formats, { scale }: GuaranteeCard, { gauge, toReturn }: DetectorView): string {
+function returning(formats: Formats, { scale }: GuaranteeCard, { gauge, toReturn, conformingToHalfWay = 0 }: DetectorView): string {
+  const halfWay = conformingToHalfWay > 0 && scale.kind === 'share' ? ` Half way back after ${formats.count(conformingToHalfWay)} of them.` : '';
   if (toReturn === undefined) return `${formats.percent(gauge)} of the way still, back at half way it returns.`;
   return scale.kind === 'rate'
     ? `It returns after ${formats.count(Math.ceil(toReturn))} ${scale.unit} more without a nonconformity.`
-    : `It returns after ${formats.count(Math.ceil(toReturn))} units more if they all conform.`;
+    : `It returns after ${formats.count(Math.ceil(toReturn))} units more if they all conform.${halfWay}`;
 }
 
 function meaning(formats: Formats, card: GuaranteeCard, { betweenFalseCalls, kind }: DetectorView): string {

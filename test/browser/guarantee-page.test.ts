@@ -63,6 +63,7 @@ describe('the page of a guarantee', () => {
     await page.getByText('however often anybody looks. It has counted every record since the run began').waitFor();
     expect(await page.locator('.lately path').getAttribute('d')).toMatch(/^M0\.00 /);
     await page.getByText('Its alarm stands.').waitFor();
+    await page.getByText('It returns after 9,040 units more if they all conform. Half way back after 5,210 of them.').waitFor();
     await page.getByText('the distance between false calls no longer holds').waitFor();
   });
 
